@@ -1,0 +1,1 @@
+"""What ``make.py`` needs to write the invented manuscripts."""

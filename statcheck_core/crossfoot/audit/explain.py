@@ -1,0 +1,179 @@
+"""Conventions of testing that explain a p which does not follow as it stands.
+
+A one-sided test halves p, a correction for several comparisons multiplies it, an adjustment of
+the degrees of freedom lowers them. Where the text states one of these the identities know; here
+they are recognised where the text is silent. An explained disagreement is a doubt, not a conflict.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from typing import NamedTuple
+
+from crossfoot.audit.case import Case, make_case
+from crossfoot.audit.faults import Fault, boxed, implied
+from crossfoot.audit.narrow import Step, chosen, evaluate, narrow
+from crossfoot.laws import ONE_SIDED
+from crossfoot.laws.interval import EVERYTHING, Interval, meet
+
+#: The most comparisons that a multiplied p is taken to be corrected for. Ten times is not among
+#: them: it can't be told from a decimal point that moved.
+MOST = 9
+
+#: A p is precise enough to be recognised as a multiple if its interval is no wider than this
+#: share of it; a coarser one is a multiple of anything.
+PRECISE = 0.02
+
+_SINGLE = Interval(1.0, 1.0)
+_HALVED = (
+    "The printed p fits a one-sided test {}; the text does not say that the test is one-sided."
+)
+_UNSIGNED = ("F", "F_change", "chi2")
+
+
+class Explanation(NamedTuple):
+    """What would explain that p does not follow.
+
+    Attributes
+    ----------
+    text
+        A sentence or two.
+    factor
+        How many times the two-sided, uncorrected p the printed one is; None where it is no
+        multiple of it.
+    """
+
+    text: str
+    factor: float | None
+
+
+def explanations(case: Case, faults: Sequence[Fault]) -> list[Explanation | None]:
+    """Return for each fault what would explain it, if something does.
+
+    Once p is explained by itself, what else rests on it is judged by the p so explained.
+    """
+    found = [_explained(case, fault) for fault in faults]
+    known = [explanation for explanation in found if explanation and explanation.factor]
+    return [
+        explanation or next((k for k in known if _fits_factor(case, fault, k)), None)
+        for explanation, fault in zip(found, faults, strict=True)
+    ]
+
+
+def _explained(case: Case, fault: Fault) -> Explanation | None:
+    step = _test(case, fault)
+    if step is None:
+        halved = Explanation(_HALVED.format("in the direction found"), 0.5)
+        silent = "two-sided" not in case.shape.context
+        return halved if silent and _fits_factor(case, fault, halved) else None
+    return (
+        _one_sided(case, fault)
+        or _two_sided(case, fault)
+        or _multiplied(case, fault, step)
+        or _lowered(case, step)
+    )
+
+
+def _test(case: Case, fault: Fault) -> Step | None:
+    """Return the step of a fault that gives the printed p from a statistic, if it has one."""
+    bindings = case.plan.bindings
+    for step in chosen(case.plan.steps, fault.used):
+        test = step.form.gives == "p" and bindings[step.binding].identity.slug in ONE_SIDED
+        if test and step.target in fault.cells:
+            return step
+    return None
+
+
+def _one_sided(case: Case, fault: Fault) -> Explanation | None:
+    if "two-sided" in case.shape.context:
+        return None
+    for side, words, factor in (
+        (1, "in the direction found", 0.5),
+        (2, "in the other direction", None),
+    ):
+        if fits_side(case, fault, side):
+            return Explanation(_HALVED.format(words), factor)
+    return None
+
+
+def _two_sided(case: Case, fault: Fault) -> Explanation | None:
+    if "one-sided" not in case.shape.context or not fits_side(case, fault, 0):
+        return None
+    return Explanation(
+        "The printed p is that of a two-sided test, while the text speaks of a one-sided one.", None
+    )
+
+
+def fits_side(case: Case, fault: Fault, side: int) -> bool:
+    """Say whether the readings of a fault agree if the test is taken as one- or two-sided."""
+    context = {*case.shape.context} - {"one-sided", "two-sided"} | (
+        {"one-sided"} if side else set()
+    )
+    other = make_case(case.claim, case.shape._replace(context=tuple(sorted(context)), side=side))
+    plan = other.plan
+    step = _test(other, fault._replace(used=plan.strict | plan.doubtful))
+    if step is None or evaluate(step, boxed(other, fault.cells)) == EVERYTHING:
+        return False
+    mask = plan.strict | plan.doubtful if fault.unstated else plan.strict
+    return narrow(plan.steps, boxed(other, fault.cells), mask).failed is None
+
+
+def factors(printed: Interval, recomputed: Interval) -> list[int]:
+    """Return the small whole numbers that turn a recomputed p into the printed one."""
+    low, high = recomputed
+    return [
+        factor
+        for factor in range(2, MOST + 1)
+        if meet(printed, Interval(min(1.0, factor * low), min(1.0, factor * high)))
+    ]
+
+
+def _multiplied(case: Case, fault: Fault, step: Step) -> Explanation | None:
+    printed = case.box[step.target]
+    if not 0 < printed.low <= printed.high <= printed.low * (1 + PRECISE):
+        return None
+    if step.form.takes[0] in _UNSIGNED and case.box[step.inputs[1]] != _SINGLE:
+        return None
+    recomputed = implied(case, step.target, fault.used, fault.cells)
+    found = factors(printed, recomputed) if recomputed is not None else []
+    if not found:
+        return None
+    return Explanation(
+        f"The printed p is {found[0]} times as large, as a correction for {found[0]} comparisons "
+        "would make it; the text mentions none.",
+        float(found[0]),
+    )
+
+
+def _lowered(case: Case, step: Step) -> Explanation | None:
+    """Recognise p of degrees of freedom that are lowered, though printed without that.
+
+    The factor of Greenhouse and Geisser lies between 1/df1 and 1.
+    """
+    if step.form.takes[0] != "F" or "repeated-measures" not in case.shape.context:
+        return None
+    df1, df2 = (case.box[cell] for cell in step.inputs[1:])
+    if not 1 < df1.low == df1.high:
+        return None
+    lowest = Interval(df2.low / df1.high, df2.high / df1.low)
+    most = step.value(case.box[step.inputs[0]], _SINGLE, lowest)
+    least = evaluate(step, case.box)
+    if meet(case.box[step.target], Interval(least.low, most.high)) is None:
+        return None
+    return Explanation(
+        "The printed p fits degrees of freedom that are lowered for unequal variances of the "
+        "differences between measurements; the text does not say that they are.",
+        None,
+    )
+
+
+def _fits_factor(case: Case, fault: Fault, known: Explanation) -> bool:
+    """Say whether a fault goes away if p is taken as explained."""
+    assert known.factor is not None
+    for cell in fault.cells:
+        if case.plan.cells[cell].quantity == "p":
+            box = boxed(case, fault.cells)
+            low, high = box[cell]
+            box[cell] = Interval(low / known.factor, min(1.0, high / known.factor))
+            return narrow(case.plan.steps, box, fault.used).failed is None
+    return False

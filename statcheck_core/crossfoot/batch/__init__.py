@@ -1,0 +1,1 @@
+"""Many files: which ones, their bytes, and a report for each."""

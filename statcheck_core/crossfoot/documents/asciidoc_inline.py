@@ -1,0 +1,129 @@
+"""The inline markup of AsciiDoc to visible text."""
+
+from __future__ import annotations
+
+import re
+
+from crossfoot.documents.edits import MOST_MARKS, Edit, Marks, Pairs, apply_edits
+from crossfoot.documents.mathtext import show_math
+from crossfoot.documents.tags import entity_at
+from crossfoot.documents.visible import OPAQUE, Builder
+
+_MARK = Marks(
+    "\\+slafpkbmixhcn<{[^~*_`#& ",
+    r"\\(?P<escape>[^A-Za-z0-9\s])|(?P<pass>\+{3}(?P<plus3>[^+\n]{1,500})\+{3})"
+    r"|(?P<macro>(?P<name>stem|latexmath|asciimath|footnote|footnoteref|pass|kbd|btn|menu|image|xref|link"
+    r"|https?|indexterm2?|cite|icon|anchor):(?P<target>[^\s\[\]:]{0,500})\[(?P<body>(?:[^\[\]\\]|\\.|\[[^\[\]\n]{0,300}\]){0,2000})\])"
+    r"|(?P<ref><<[^<>\n]{1,200}>>)|(?P<attribute>\{[a-zA-Z0-9][\w-]{0,40}(?::[^{}\n]{0,60})?\})"
+    r"|(?P<role>\[(?P<roles>[\w.#%, -]{1,60})\](?=\#{1,2}[^\s#]))"
+    r"|(?P<script>[\^~])(?P<raised>[^\s^~]{1,40})(?P=script)"
+    r"|(?P<pair>\*\*?|__?|``?|\#\#?)|(?P<entity>&(?=[#A-Za-z]))|(?P<break> \+$)",
+    re.M,
+)
+
+_KNOWN = {
+    "nbsp": " ",
+    "lt": "<",
+    "gt": ">",
+    "amp": "&",
+    "plus": "+",
+    "startsb": "[",
+    "endsb": "]",
+    "vbar": "|",
+    "caret": "^",
+    "asterisk": "*",
+    "tilde": "~",
+    "backslash": "\\",
+    "empty": "",
+    "sp": " ",
+    "zwsp": "",
+    "deg": "°",
+}
+
+
+def show_inline(
+    out: Builder, source: str, start: int, end: int, line_edits: list[Edit] | None = None
+) -> None:
+    """Show ``source[start:end]``, with edits that the lines call for."""
+    walk = _Walk(source, start, end)
+    walk.pairs.edits.extend(line_edits or ())
+    position = start
+    left = MOST_MARKS
+    while left and (found := _MARK.next(source, position, end)):
+        left -= 1
+        position = walk.mark(found)
+    apply_edits(out, source, start, end, walk.pairs.edits)
+
+
+class _Walk:
+    """Writes down what each mark does."""
+
+    def __init__(self, source: str, start: int, end: int) -> None:
+        self.source = source
+        self.end = end
+        self.pairs = Pairs(source, start, end)
+        self.edits = self.pairs.edits
+        self.struck = False  # whether the role before says so
+
+    def mark(self, found: re.Match[str]) -> int:
+        """Handle a mark and return where to go on."""
+        if found["pair"]:
+            self.pair(found["pair"], *found.span())
+        elif found["macro"]:
+            self.macro(found)
+        elif found["script"]:
+            self.script(found)
+        elif found["entity"]:
+            entity = entity_at(self.source, found.start(), self.end)
+            if entity:
+                self.edits.append(Edit(found.start(), entity[1], entity[0]))
+                return entity[1]
+        elif found["escape"]:
+            self.edits.append(Edit(found.start(), found.start() + 1))
+        elif found["role"]:
+            self.struck = "line-through" in found["roles"]
+            self.edits.append(Edit(*found.span()))
+        elif found["attribute"]:
+            shown = _KNOWN.get(found["attribute"][1:-1], OPAQUE)
+            self.edits.append(Edit(*found.span(), shown))
+        elif found["pass"]:
+            self.around(found, "plus3")
+        else:
+            self.edits.append(Edit(*found.span(), OPAQUE if found["ref"] else ""))
+        return found.end()
+
+    def around(self, found: re.Match[str], group: str, shown: tuple[str, str] = ("", "")) -> None:
+        """Put ``shown`` in place of what stands around a group."""
+        self.edits.append(Edit(found.start(), found.start(group), shown[0]))
+        self.edits.append(Edit(found.end(group), found.end(), shown[1]))
+
+    def pair(self, mark: str, at: int, after: int) -> None:
+        """Handle a mark of emphasis, code or highlighting; a double one acts within words."""
+        if mark[0] == "#" and self.struck:
+            self.pairs.struck(mark, at, after)
+            self.struck = self.pairs.after(after) != " " and not self.pairs.before(at).isalnum()
+        else:
+            self.pairs.mark(mark, at, after, tight=len(mark) == 1)
+
+    def script(self, found: re.Match[str]) -> None:
+        """Raise or lower; stars alone are marks of significance."""
+        if found["script"] == "^" and set(found["raised"]) <= set("*†‡"):
+            self.around(found, "raised")
+        else:
+            self.around(found, "raised", ("^{" if found["script"] == "^" else "_{", "}"))
+
+    def macro(self, found: re.Match[str]) -> None:
+        """Handle a macro: a formula, a footnote, a link."""
+        name = found["name"]
+        if name in ("stem", "latexmath", "asciimath"):
+            out = Builder()
+            show_math(out, self.source, *found.span("body"))
+            self.edits.append(Edit(*found.span(), out.build()))
+        elif name.startswith("footnote"):
+            self.around(found, "body", (" (", ")") if found["body"] else ("", ""))
+        elif (
+            name in ("link", "xref", "http", "https", "pass", "kbd", "indexterm2") and found["body"]
+        ):
+            self.around(found, "body")
+        else:
+            self.edits.append(Edit(*found.span(), OPAQUE))

@@ -1,0 +1,97 @@
+"""The inline markup of Typst to visible text."""
+
+from __future__ import annotations
+
+import re
+
+from crossfoot.documents.edits import MOST_MARKS, Edit, Marks, Pairs, apply_edits
+from crossfoot.documents.typst_math import show_typst_math
+from crossfoot.documents.visible import OPAQUE, Builder
+
+_MARK = Marks(
+    "\\/`$#[]*_~-<@",
+    r"\\(?P<escape>[^A-Za-z0-9\s]|\n)|(?P<comment>(?<!:)//[^\n]*|/\*(?:[^*]|\*(?!/)){0,5000}\*/)"
+    r"|`(?P<raw>[^`\n]{1,1000})`|\$(?P<math>(?:[^$\\]|\\[\s\S]){1,5000})\$"
+    r"|(?P<function>\#(?P<name>[A-Za-z][\w.-]{0,60})(?P<args>\((?:[^()\"]|\"[^\"\n]{0,500}\""
+    r"|\((?:[^()\"]|\"[^\"\n]{0,500}\"){0,500}\)){0,500}\))?(?P<open>\[)?)"
+    r"|(?P<hash>\#\()|(?P<bracket>[\[\]])|(?P<pair>[*_])|(?P<space>~)|(?P<dash>-{2,3}(?!-))"
+    r"|(?P<label><[A-Za-z][\w:.-]{0,60}>)|(?P<ref>(?<![\w])@[A-Za-z][\w:.-]{0,60}(?:\[[^\[\]\n]{0,60}\])?)",
+)
+
+#: Functions with what stands around their content.
+_AROUND = {"super": ("^{", "}"), "sub": ("_{", "}"), "footnote": (" (", ")")}
+
+
+def show_inline(
+    out: Builder, source: str, start: int, end: int, line_edits: list[Edit] | None = None
+) -> None:
+    """Show ``source[start:end]``, with edits that the lines call for."""
+    walk = _Walk(source, start, end)
+    walk.pairs.edits.extend(line_edits or ())
+    position = start
+    left = MOST_MARKS
+    while left and (found := _MARK.next(source, position, end)):
+        left -= 1
+        position = walk.mark(found)
+    apply_edits(out, source, start, end, walk.pairs.edits)
+
+
+class _Walk:
+    """Writes down what each mark does."""
+
+    def __init__(self, source: str, start: int, end: int) -> None:
+        self.source = source
+        self.end = end
+        self.pairs = Pairs(source, start, end)
+        self.edits = self.pairs.edits
+        self.brackets: list[tuple[str | None, int]] = []  # what closes each; where it opened
+
+    def mark(self, found: re.Match[str]) -> int:
+        """Handle a mark and return where to go on."""
+        if found["pair"]:
+            self.pairs.mark(found["pair"], *found.span())
+        elif found["math"] is not None:
+            out = Builder()
+            show_typst_math(out, self.source, *found.span("math"))
+            self.edits.append(Edit(*found.span(), out.build()))
+        elif found["function"]:
+            self.function(found)
+        elif found["bracket"]:
+            self.bracket(found["bracket"], *found.span())
+        elif found["raw"] is not None:
+            self.edits.append(Edit(found.start(), found.start() + 1))
+            self.edits.append(Edit(found.end() - 1, found.end()))
+        elif found["escape"]:
+            self.edits.append(Edit(found.start(), found.start() + 1))
+        elif found["dash"]:
+            self.edits.append(Edit(*found.span(), "–" if len(found["dash"]) == 2 else "—"))
+        elif found["space"]:
+            self.edits.append(Edit(*found.span(), " "))
+        else:
+            shown = OPAQUE if found["ref"] or found["hash"] else ""
+            self.edits.append(Edit(*found.span(), shown))
+        return found.end()
+
+    def function(self, found: re.Match[str]) -> None:
+        """Handle a function: its content is shown, its value is unknown."""
+        name = found["name"]
+        if not found["open"]:
+            self.edits.append(Edit(*found.span(), OPAQUE))
+            return
+        before, close = _AROUND.get(name, ("", ""))
+        stars = re.compile(r"[*†‡\\]{1,9}\]").match(self.source, found.end(), self.end)
+        if name == "super" and stars:
+            before, close = "", ""
+        self.edits.append(Edit(*found.span(), before))
+        self.brackets.append((None if name == "strike" else close, found.start()))
+
+    def bracket(self, char: str, at: int, after: int) -> None:
+        """Follow brackets: those of text stay, those of content go."""
+        if char == "[":
+            self.brackets.append(("]", at))
+        elif self.brackets:
+            close, start = self.brackets.pop()
+            if close is None:
+                self.edits.append(Edit(start, after))
+            elif close != "]":
+                self.edits.append(Edit(at, after, close))

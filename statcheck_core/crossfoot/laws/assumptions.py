@@ -1,0 +1,238 @@
+"""What identities assume, and the contexts in a text that break or state an assumption."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from typing import NamedTuple
+
+#: What may be recognised around a claim, each with what it says.
+CONTEXTS: Mapping[str, str] = {
+    "one-sided": "The text says that the test or the interval is one-sided.",
+    "two-sided": "The text says that the test is two-sided.",
+    "robust": "Standard errors are robust to unequal variances or to clusters.",
+    "weighted": "The fit weights its cases.",
+    "instrumental": "The fit uses instruments, as two-stage least squares does.",
+    "mixed": "The model has random effects, or is fitted to clusters by estimating equations.",
+    "survey": "Estimates account for the design of a survey.",
+    "generalised": "The model is a generalised linear one, or is fitted by maximum likelihood.",
+    "no-intercept": "The model has no intercept.",
+    "adjusted-df": "Degrees of freedom are adjusted, as Welch, Satterthwaite or "
+    "Greenhouse and Geisser do.",
+    "adjusted-p": "p values are adjusted for the number of comparisons.",
+    "pseudo-r2": "What is called R² is an analogue of it or is not taken within the sample of "
+    "the fit.",
+    "quoted": "The result is quoted from another work.",
+    "assumption-test": "The test is of an assumption of the model, not of the model.",
+    "repeated-measures": "The same cases are measured more than once.",
+    "by-subject": "The analysis takes the means of subjects.",
+    "by-item": "The analysis takes the means of items.",
+    "imputed": "Missing values are imputed and the results pooled.",
+    "rank-correlation": "The correlation is one of ranks.",
+    "resampled": "p values or intervals come from permutations or the bootstrap.",
+    "corrected-statistic": "The statistic, or its p value alone, carries a correction.",
+    "variance-ratio": "F compares two variances, so that its p takes both tails.",
+    "other-null": "The tests are against another value than zero.",
+    "partial-sums": "Each sum of squares is what its effect adds to all others (type II or III), "
+    "so that they need not add up.",
+    "default-stars": "Marks of significance have no legend and are taken for the usual levels.",
+    "joint": "One expression speaks of several results together.",
+}
+
+
+class Assumption(NamedTuple):
+    """Something that must hold for an identity to hold.
+
+    Attributes
+    ----------
+    key
+        Its name.
+    text
+        What is assumed, as a sentence.
+    broken_by
+        Contexts under any of which it does not hold, or is not sure enough.
+    stated_by
+        Contexts under any of which the text states that it holds.
+    """
+
+    key: str
+    text: str
+    broken_by: frozenset[str] = frozenset()
+    stated_by: frozenset[str] = frozenset()
+
+
+def _assumption(key: str, text: str, broken_by: str = "", stated_by: str = "") -> Assumption:
+    return Assumption(key, text, frozenset(broken_by.split()), frozenset(stated_by.split()))
+
+
+_ASSUMPTIONS = (
+    _assumption(
+        "one-result",
+        "The numbers describe one and the same result.",
+        "joint",
+    ),
+    _assumption(
+        "least-squares",
+        "The model is linear and fitted by ordinary least squares.",
+        "weighted instrumental mixed survey generalised pseudo-r2 imputed",
+    ),
+    _assumption(
+        "intercept",
+        "The model has an intercept.",
+        "no-intercept",
+    ),
+    _assumption(
+        "overall",
+        "F tests all slopes of the model together, and R² is of the same model.",
+        "assumption-test",
+    ),
+    _assumption(
+        "classical-errors",
+        "Standard errors are the classical ones, of errors with equal variances.",
+        "robust survey resampled",
+    ),
+    _assumption(
+        "within-sample",
+        "R² is the share of the sum of squares that a fit with an intercept accounts for, taken "
+        "in the sample of the fit.",
+        "no-intercept instrumental pseudo-r2",
+    ),
+    _assumption(
+        "two-sided",
+        "The test is two-sided.",
+        "one-sided",
+        "two-sided",
+    ),
+    _assumption(
+        "directed",
+        "The test is one-sided.",
+        "two-sided",
+        "one-sided",
+    ),
+    _assumption(
+        "reference-distribution",
+        "The p value is the tail area of the distribution that the statistic is named after.",
+        "resampled",
+    ),
+    _assumption(
+        "upper-tail",
+        "p is the upper tail area of F.",
+        "variance-ratio",
+    ),
+    _assumption(
+        "zero-null",
+        "The test asks whether the coefficient is zero.",
+        "other-null",
+    ),
+    _assumption(
+        "product-moment",
+        "The correlation is Pearson's.",
+        "rank-correlation",
+    ),
+    _assumption(
+        "uncorrected-statistic",
+        "The p value belongs to the statistic as printed, not to a corrected one.",
+        "corrected-statistic",
+    ),
+    _assumption(
+        "unadjusted-p",
+        "The p value is not adjusted for the number of comparisons.",
+        "adjusted-p",
+    ),
+    _assumption(
+        "df-as-used",
+        "The degrees of freedom as printed are those of the reference distribution.",
+        "adjusted-df imputed",
+    ),
+    _assumption(
+        "unadjusted-df",
+        "The degrees of freedom are the counts of the design, without adjustment.",
+        "adjusted-df imputed mixed survey",
+    ),
+    _assumption(
+        "no-missing-cases",
+        "The number of cases printed is that of the cases in the fit.",
+        "imputed",
+    ),
+    _assumption(
+        "independent-cases",
+        "Each case is one row of the analysis.",
+        "repeated-measures by-item mixed",
+    ),
+    _assumption(
+        "counted-predictors",
+        "The number of predictors counts slopes, so that a factor counts once for each level but "
+        "one.",
+    ),
+    _assumption(
+        "fixed-effects",
+        "The effects are fixed and F is the ratio of the effect's mean square to the error's.",
+        "mixed survey generalised robust instrumental imputed resampled",
+    ),
+    _assumption(
+        "one-way",
+        "The effect is the only one in the design.",
+        "repeated-measures mixed",
+    ),
+    _assumption(
+        "orthogonal-effects",
+        "Sums of squares are sequential, or the design is balanced, so that they add up.",
+        "partial-sums",
+    ),
+    _assumption(
+        "nested-models",
+        "The smaller model is the larger one without some predictors, fitted to the same cases.",
+    ),
+    _assumption(
+        "symmetric-limits",
+        "The limits lie at equal distances from the estimate.",
+        "resampled generalised mixed",
+    ),
+    _assumption(
+        "t-limits",
+        "The limits are taken from the t distribution rather than from the normal one.",
+        "resampled generalised mixed survey instrumental imputed",
+    ),
+    _assumption(
+        "wald-limits",
+        "The limits of the ratio are those of the coefficient, its estimate plus or minus a "
+        "multiple of its standard error, raised to powers of e.",
+        "resampled",
+    ),
+    _assumption(
+        "limits-of-ratio",
+        "The interval is that of the odds ratio, not of the coefficient.",
+    ),
+    _assumption(
+        "fisher-limits",
+        "The limits are Fisher's, of the inverse hyperbolic tangent of r.",
+        "resampled rank-correlation",
+    ),
+    _assumption(
+        "single-interval",
+        "The interval covers one estimate at its level, not several estimates together.",
+        "adjusted-p",
+    ),
+    _assumption(
+        "limits-of-beta",
+        "The interval is that of the standardised coefficient.",
+    ),
+    _assumption(
+        "limits-of-difference",
+        "The interval is that of the difference that p tests.",
+    ),
+    _assumption(
+        "error-of-coefficient",
+        "The standard error is that of the coefficient, not of the odds ratio.",
+    ),
+    _assumption(
+        "wald-statistic",
+        "χ² is the square of the coefficient over its standard error.",
+    ),
+    _assumption(
+        "error-of-beta",
+        "The standard error is that of the standardised coefficient.",
+    ),
+)
+
+#: Every assumption by its key.
+ASSUMPTIONS: Mapping[str, Assumption] = {item.key: item for item in _ASSUMPTIONS}

@@ -1,0 +1,185 @@
+"""Confidence intervals of coefficients: their limits and their centre."""
+
+from __future__ import annotations
+
+from crossfoot.laws.arithmetic import (
+    add,
+    at_least,
+    at_most,
+    between,
+    complement,
+    divide,
+    half_width,
+    hull,
+    magnitude,
+    middle,
+    multiply,
+    scale,
+    subtract,
+)
+from crossfoot.laws.declare import COEFFICIENT, Solution, form, identity
+from crossfoot.laws.identity import Form
+from crossfoot.laws.interval import Interval
+
+
+def _t_critical(level: Interval, df: Interval) -> Interval:
+    from crossfoot.laws import areas  # imports SciPy
+
+    return areas.critical(level, df)
+
+
+def _any_critical(level: Interval, df: Interval) -> Interval:
+    """Return all from the normal critical value to that of t."""
+    return hull(z_critical(level), _t_critical(level, df))
+
+
+def z_critical(level: Interval) -> Interval:
+    """Return the normal critical value of a confidence level."""
+    from crossfoot.laws import areas  # imports SciPy
+
+    return areas.critical(level, areas.NORMAL)
+
+
+def _t_level(multiple: Interval, df: Interval) -> Interval:
+    from crossfoot.laws import areas  # imports SciPy
+
+    return complement(areas.of_t(multiple, df))
+
+
+def _any_level(multiple: Interval, df: Interval) -> Interval:
+    from crossfoot.laws import areas  # imports SciPy
+
+    return hull(_t_level(multiple, df), complement(areas.of_z(multiple)))
+
+
+def _other_limit(b: Interval, limit: Interval) -> Interval:
+    return subtract(scale(b, 2.0), limit)
+
+
+def _from_error(
+    critical: Solution, level: Solution, symbol: str, remark: str, assumed: str
+) -> tuple[Form, ...]:
+    """Return the forms of b ± critical value times SE, for one way to take the critical value."""
+
+    def low(b: Interval, se: Interval, df: Interval, ci_level: Interval) -> Interval:
+        return subtract(b, multiply(critical(ci_level, df), se))
+
+    def high(b: Interval, se: Interval, df: Interval, ci_level: Interval) -> Interval:
+        return add(b, multiply(critical(ci_level, df), se))
+
+    def error(low: Interval, high: Interval, df: Interval, ci_level: Interval) -> Interval:
+        return divide(half_width(low, high), critical(ci_level, df))
+
+    def level_of(low: Interval, high: Interval, se: Interval, df: Interval) -> Interval:
+        return level(magnitude(divide(half_width(low, high), se)), df)
+
+    def make(gives: str, formula: str, takes: str, value: Solution) -> Form:
+        text = formula.replace("c", symbol, 1) + remark
+        return form(gives, text, takes, value, assumed=assumed, unless="odds_ratio")
+
+    return (
+        make("ci_low", "lower limit = b − c·SE", "b se df ci_level", low),
+        make("ci_high", "upper limit = b + c·SE", "b se df ci_level", high),
+        make("se", "SE = (upper limit − lower limit)/2c", "ci_low ci_high df ci_level", error),
+        make("b", "b = upper limit − c·SE", "ci_high se df ci_level", low),
+        make("b", "b = lower limit + c·SE", "ci_low se df ci_level", high),
+        make(
+            "ci_level",
+            "level = P(abs(T(df)) < c), c = (upper limit − lower limit)/2SE",
+            "ci_low ci_high se df",
+            level_of,
+        ),
+    )
+
+
+CI_FROM_SE = identity(
+    "ci-from-se",
+    "interval from the standard error",
+    "limits = b ± t*·SE",
+    "ci_low ci_high b se df ci_level",
+    (
+        *_from_error(_any_critical, _any_level, "c", ", c from z* to t*", ""),
+        *_from_error(_t_critical, _t_level, "t*", "", "t-limits"),
+    ),
+    needs="symmetric-limits single-interval df-as-used",
+    assumption="The limits are the estimate plus or minus a critical value times its standard "
+    "error: that of t with the printed degrees of freedom or, in large samples, the normal one.",
+    source="NIST/SEMATECH e-Handbook of Statistical Methods, section 1.3.5.2; Draper and Smith "
+    "1998, Applied Regression Analysis, 3rd edition, chapter 1",
+    explanation="A confidence interval reaches a critical value times the standard error to each "
+    "side of the estimate. Where it does not, a limit, the estimate or SE is misprinted, the "
+    "level is another, or the interval was found in another way.",
+    kinds=f"{COEFFICIENT} mean-comparison",
+)
+
+
+CI_CENTRE = identity(
+    "ci-centre",
+    "estimate at the centre of its interval",
+    "b = (lower limit + upper limit)/2",
+    "b ci_low ci_high beta",
+    (
+        form("b", "lower limit ≤ b ≤ upper limit", "ci_low ci_high", between, unless="odds_ratio"),
+        form("ci_low", "lower limit ≤ b", "b", at_most, unless="odds_ratio"),
+        form("ci_high", "upper limit ≥ b", "b", at_least, unless="odds_ratio"),
+        form(
+            "b",
+            "b = (lower limit + upper limit)/2",
+            "ci_low ci_high",
+            middle,
+            needs="symmetric-limits",
+            unless="odds_ratio",
+        ),
+        form(
+            "ci_low",
+            "lower limit = 2b − upper limit",
+            "b ci_high",
+            _other_limit,
+            needs="symmetric-limits",
+            unless="odds_ratio",
+        ),
+        form(
+            "ci_high",
+            "upper limit = 2b − lower limit",
+            "b ci_low",
+            _other_limit,
+            needs="symmetric-limits",
+            unless="odds_ratio",
+        ),
+        form(
+            "beta",
+            "β = (lower limit + upper limit)/2",
+            "ci_low ci_high",
+            middle,
+            assumed="symmetric-limits limits-of-beta",
+            unless="b odds_ratio",
+        ),
+        form(
+            "ci_low",
+            "lower limit = 2β − upper limit",
+            "beta ci_high",
+            _other_limit,
+            assumed="symmetric-limits limits-of-beta",
+            unless="b odds_ratio",
+        ),
+        form(
+            "ci_high",
+            "upper limit = 2β − lower limit",
+            "beta ci_low",
+            _other_limit,
+            assumed="symmetric-limits limits-of-beta",
+            unless="b odds_ratio",
+        ),
+    ),
+    needs="",
+    assumption="The interval is that of the estimate printed beside it, and its limits lie at "
+    "equal distances from it.",
+    source="NIST/SEMATECH e-Handbook of Statistical Methods, section 1.3.5.2",
+    explanation="An interval that is the estimate plus or minus something has the estimate at its "
+    "centre. Where it does not, one of the three is misprinted, a sign is lost, or the interval "
+    "comes from resampling.",
+    kinds=f"{COEFFICIENT} mean-comparison",
+)
+
+
+IDENTITIES = (CI_FROM_SE, CI_CENTRE)

@@ -1,0 +1,200 @@
+"""Odds ratios, and the Wald tests of the coefficients that they are powers of."""
+
+from __future__ import annotations
+
+import math
+
+from crossfoot.laws.arithmetic import (
+    add,
+    at_least,
+    at_most,
+    between,
+    divide,
+    exponential,
+    logarithm,
+    multiply,
+    negative,
+    root,
+    scale,
+    square,
+    subtract,
+)
+from crossfoot.laws.declare import COEFFICIENT, form, identity
+from crossfoot.laws.interval import EVERYTHING, Interval
+from crossfoot.laws.limits import z_critical
+
+_SINGLE = Interval(1.0, 1.0)
+_RATIO = "wald-limits limits-of-ratio"
+_WALD = f"{_RATIO} error-of-coefficient"
+
+
+def _reach(se: Interval, level: Interval) -> Interval:
+    return multiply(z_critical(level), se)
+
+
+# Without an odds ratio the limits are those of b: these forms take it to speak only beside it.
+
+
+def _low(b: Interval, se: Interval, level: Interval, _: Interval) -> Interval:
+    return exponential(add(b, negative(_reach(se, level))))
+
+
+def _high(b: Interval, se: Interval, level: Interval, _: Interval) -> Interval:
+    return exponential(add(b, _reach(se, level)))
+
+
+def _middle(low: Interval, high: Interval) -> Interval:
+    return exponential(scale(add(logarithm(low), logarithm(high)), 0.5))
+
+
+def _other_limit(ratio: Interval, limit: Interval) -> Interval:
+    return exponential(subtract(scale(logarithm(ratio), 2.0), logarithm(limit)))
+
+
+def _error(z: Interval, b: Interval) -> Interval:
+    return divide(b, z)
+
+
+# Beside an odds ratio SE may be that of the ratio. These forms take it to speak only there.
+
+
+def _z_beside(b: Interval, se: Interval, _: Interval) -> Interval:
+    return divide(b, se)
+
+
+def _b_beside(z: Interval, se: Interval, _: Interval) -> Interval:
+    return multiply(z, se)
+
+
+def _error_beside(z: Interval, b: Interval, _: Interval) -> Interval:
+    return divide(b, z)
+
+
+def _z_of_ratio(ratio: Interval, se: Interval) -> Interval:
+    return divide(logarithm(ratio), se)
+
+
+def _wald(b: Interval, se: Interval, df: Interval) -> Interval:
+    return square(divide(b, se)) if df == _SINGLE else EVERYTHING
+
+
+def _wald_error(chi2: Interval, b: Interval, df: Interval) -> Interval:
+    # Any magnitude of b/√χ², b's sign aside.
+    if df != _SINGLE:
+        return EVERYTHING
+    return root(divide(square(b), chi2))
+
+
+def _wald_b(chi2: Interval, se: Interval, df: Interval) -> Interval:
+    return multiply(root(chi2), se) if df == _SINGLE else EVERYTHING
+
+
+def _side(ratio: Interval) -> Interval:
+    if ratio.low > 1:
+        return Interval(0.0, math.inf)
+    return Interval(-math.inf, 0.0) if ratio.high < 1 else EVERYTHING
+
+
+def _ratio_side(z: Interval) -> Interval:
+    if z.low > 0:
+        return Interval(1.0, math.inf)
+    return Interval(-math.inf, 1.0) if z.high < 0 else EVERYTHING
+
+
+ODDS_RATIO = identity(
+    "odds-ratio",
+    "odds ratio, its interval and its Wald test",
+    "OR = exp(b), z = b/SE, limits = exp(b ± z*·SE)",
+    "odds_ratio b z se ci_low ci_high ci_level chi2 df",
+    (
+        form("odds_ratio", "OR = exp(b)", "b", exponential),
+        form("b", "b = ln OR", "odds_ratio", logarithm),
+        form("z", "z has the sign of ln OR", "odds_ratio", _side),
+        form("odds_ratio", "OR > 1 where z > 0", "z", _ratio_side),
+        form("z", "z = b/SE", "b se", divide, unless="odds_ratio"),
+        form("b", "b = z·SE", "z se", multiply, unless="odds_ratio"),
+        form("se", "SE = b/z", "z b", _error, unless="odds_ratio"),
+        form("z", "z = b/SE", "b se odds_ratio", _z_beside, assumed="error-of-coefficient"),
+        form("b", "b = z·SE", "z se odds_ratio", _b_beside, assumed="error-of-coefficient"),
+        form("se", "SE = b/z", "z b odds_ratio", _error_beside, assumed="error-of-coefficient"),
+        form(
+            "z",
+            "z = ln OR/SE",
+            "odds_ratio se",
+            _z_of_ratio,
+            assumed="error-of-coefficient",
+            unless="b",
+        ),
+        form(
+            "chi2",
+            "χ² = (b/SE)², df = 1",
+            "b se df",
+            _wald,
+            assumed="wald-statistic error-of-coefficient",
+        ),
+        form(
+            "se",
+            "SE = abs(b)/√χ², df = 1",
+            "chi2 b df",
+            _wald_error,
+            assumed="wald-statistic error-of-coefficient",
+        ),
+        form(
+            "b",
+            "b = ±√χ²·SE, df = 1",
+            "chi2 se df",
+            _wald_b,
+            assumed="wald-statistic error-of-coefficient",
+            mirrored=True,
+        ),
+        form("odds_ratio", "lower limit ≤ OR ≤ upper limit", "ci_low ci_high", between, unless="b"),
+        form("ci_low", "lower limit ≤ OR", "odds_ratio", at_most, unless="b"),
+        form("ci_high", "upper limit ≥ OR", "odds_ratio", at_least, unless="b"),
+        form(
+            "ci_low",
+            "lower limit = exp(b − z*·SE)",
+            "b se ci_level odds_ratio",
+            _low,
+            assumed=_WALD,
+        ),
+        form(
+            "ci_high",
+            "upper limit = exp(b + z*·SE)",
+            "b se ci_level odds_ratio",
+            _high,
+            assumed=_WALD,
+        ),
+        form(
+            "odds_ratio",
+            "OR = √(lower limit·upper limit)",
+            "ci_low ci_high",
+            _middle,
+            assumed=_RATIO,
+        ),
+        form(
+            "ci_low",
+            "lower limit = OR²/upper limit",
+            "odds_ratio ci_high",
+            _other_limit,
+            assumed=_RATIO,
+        ),
+        form(
+            "ci_high",
+            "upper limit = OR²/lower limit",
+            "odds_ratio ci_low",
+            _other_limit,
+            assumed=_RATIO,
+        ),
+    ),
+    needs="zero-null",
+    assumption="b is the coefficient of a logistic model, z or χ² its Wald test, and the interval "
+    "that of the ratio, symmetric in logarithms.",
+    source="Hosmer, Lemeshow and Sturdivant 2013, Applied Logistic Regression, 3rd edition, "
+    "chapters 1 and 3",
+    explanation="An odds ratio is e raised to the coefficient, and its limits are e raised to the "
+    "limits of the coefficient, so that the ratio is their geometric mean. Where it is not, a "
+    "number is misprinted, or the interval is a profile or bootstrap one or that of b.",
+    kinds=COEFFICIENT,
+)
+
+IDENTITIES = (ODDS_RATIO,)

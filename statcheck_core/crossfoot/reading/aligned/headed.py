@@ -1,0 +1,254 @@
+"""Tables whose columns are named in a line of headings."""
+
+from __future__ import annotations
+
+import itertools
+from collections.abc import Sequence
+from typing import NamedTuple
+
+from crossfoot.reading.aligned.lines import (
+    MARKS,
+    NOTE,
+    Line,
+    Token,
+    Word,
+    headish,
+    is_value,
+    tokens_of,
+    values_of,
+    words_of,
+)
+
+#: Roles that do not make a line one of headings.
+_WEAK = frozenset({"label", "n", "mean", "sd", "r", "R"})
+
+
+class Columns(NamedTuple):
+    """The columns of a table: the headings, and from where to where each reaches."""
+
+    labels: tuple[Token, ...]
+    heads: tuple[Token, ...]
+    spans: tuple[tuple[int, int], ...]
+
+
+class Row(NamedTuple):
+    """A row: its label and, for each column, what stands in it."""
+
+    line: int
+    label: Word | None
+    cells: tuple[Word | None, ...]
+
+
+def headings_in(text: str, line: Line) -> Columns | None:
+    """Return the columns that a line names, or None where it is no line of headings."""
+    if not headish(line.text):
+        return None
+    words = words_of(text, line.start, line.end)
+    if not 2 <= len(words) <= 40:
+        return None
+    tokens = tokens_of(text, words)
+    known = [t for t in tokens if t.heading.roles and t.heading.roles[0] not in _WEAK]
+    others = [t for t in tokens if not t.heading.roles]
+    if len(known) < 2 or len(others) > len(known) + 1 or any(is_value(t.text) for t in others):
+        return None
+    if any(sign in t.text for t in others for sign in "=;{}"):
+        return None
+    first = next(
+        i for i, t in enumerate(tokens) if t.heading.roles and t.heading.roles != ("label",)
+    )
+    heads: list[Token] = []
+    for token in tokens[first:]:
+        heads += _limits(token)
+    offset = line.start
+    spans = tuple((t.start - offset, t.end - offset) for t in heads)
+    return Columns(tuple(tokens[:first]), tuple(heads), spans)
+
+
+def _limits(token: Token) -> list[Token]:
+    """Return two headings for one that stands over both limits of an interval."""
+    if token.heading.roles != ("ci_low", "ci_high"):
+        return [token]
+    middle = (token.start + token.end) // 2
+    level = token.heading.level
+    low = token.heading._replace(roles=("ci_low",), level=level)
+    high = token.heading._replace(roles=("ci_high",), level=level)
+    return [
+        Token(token.text, token.start, middle, low),
+        Token(token.text, middle, token.end, high),
+    ]
+
+
+def rows_below(
+    text: str, lines: Sequence[Line], first: int, columns: Columns
+) -> tuple[list[Row], Columns, int]:
+    """Return the rows under a line of headings, its columns, and the line after the rows.
+
+    Parameters
+    ----------
+    text, lines
+        The text and its lines.
+    first
+        The line after the headings.
+    columns
+        From :func:`headings_in`.
+    """
+    raw: list[tuple[int, list[Word], list[Word]]] = []
+    number = first
+    end = first
+    blanks = 0
+    while number < len(lines):
+        line = lines[number]
+        if line.blank or line.rule:
+            blanks += line.blank
+            if blanks > 1 and line.blank and lines[number - 1].blank:
+                break
+            number += 1
+            continue
+        label, values = _parted(text, line)
+        if NOTE.match(line.text) or any(is_value(word.text) and "." in word.text for word in label):
+            break
+        if not values:
+            if not _section(line, raw, number, end):
+                break
+            raw.append((number, label, []))
+            number += 1
+            continue
+        if headings_in(text, line) is not None:
+            break
+        raw.append((number, label, values))
+        number += 1
+        end = number
+        blanks = 0
+    raw = [item for item in raw if item[0] < end]
+    columns = _with_unnamed(
+        columns, [len(_with_marks(text, values)) for _, _, values in raw if values]
+    )
+    return _placed(text, lines, raw, columns, first), columns, end
+
+
+def _with_unnamed(columns: Columns, counts: Sequence[int]) -> Columns:
+    """Take words before the first known heading for headings too, if rows have as many values."""
+    if not counts:
+        return columns
+    usual = max(set(counts), key=counts.count)
+    extra = usual - len(columns.heads)
+    if not 0 < extra <= len(columns.labels):
+        return columns
+    moved = columns.labels[-extra:]
+    offset = columns.heads[0].start - columns.spans[0][0]
+    spans = tuple((token.start - offset, token.end - offset) for token in moved)
+    return Columns(columns.labels[:-extra], (*moved, *columns.heads), (*spans, *columns.spans))
+
+
+def _section(line: Line, raw: Sequence[object], number: int, end: int) -> bool:
+    """Say whether a line without numbers may name a part of the table."""
+    return len(line.text.strip()) <= 40 and number - end <= 1 and "=" not in line.text and bool(raw)
+
+
+def _parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
+    """Return the words of a row's label and its values, told from the right."""
+    words = values_of(text, words_of(text, line.start, line.end))
+    cut = len(words)
+    while cut > 0 and is_value(words[cut - 1].text):
+        cut -= 1
+    return words[:cut], words[cut:]
+
+
+def _placed(
+    text: str,
+    lines: Sequence[Line],
+    raw: Sequence[tuple[int, list[Word], list[Word]]],
+    columns: Columns,
+    first: int,
+) -> list[Row]:
+    """Assign values to columns: in order where there is one for each, else by their place."""
+    width = len(columns.heads)
+    spans = list(columns.spans)
+    loose = _collapsed(text, lines, raw)
+    prepared: list[tuple[int, list[Word], list[Word]]] = []
+    for number, label, values in raw:
+        values = _with_marks(text, values)
+        extra = len(values) - width
+        if extra > 0 and all(word.text.strip("()") != "" for word in values[:extra]):
+            label, values = [*label, *values[:extra]], values[extra:]
+        prepared.append((number, label, values))
+        if len(values) == width and not loose:
+            offset = lines[number].start
+            spans = [
+                (min(a, word.start - offset), max(b, word.end - offset))
+                for (a, b), word in zip(spans, values, strict=True)
+            ]
+    rows: list[Row] = []
+    named = columns.labels[0].start - lines[first - 1].start if columns.labels else 0
+    for number, label, values in prepared:
+        offset = lines[number].start
+        left = spans[0][0]
+        if len(label) > 1 and label[0].end - offset < named and label[0].text.isdigit():
+            label = label[1:]  # the number of the row, before its name
+        while (
+            len(values) > 0
+            and len(values) < width
+            and not loose
+            and values[0].end - offset <= left
+            and label
+        ):
+            label, values = [*label, values[0]], values[1:]
+        cells = _assigned(values, spans, offset, loose)
+        name = (
+            Word(text[label[0].start : label[-1].end], label[0].start, label[-1].end)
+            if label
+            else None
+        )
+        rows.append(Row(number, name, tuple(cells)))
+    return rows
+
+
+def _with_marks(text: str, values: Sequence[Word]) -> list[Word]:
+    """Join marks that stand after a number, as a column without heading, to the number."""
+    joined: list[Word] = []
+    for word in values:
+        if joined and MARKS.fullmatch(word.text) and word is values[-1] and len(values) > 1:
+            if word.text != ".":
+                last = joined[-1]
+                joined[-1] = Word(text[last.start : word.end], last.start, word.end)
+        else:
+            joined.append(word)
+    return joined
+
+
+def _collapsed(
+    text: str, lines: Sequence[Line], raw: Sequence[tuple[int, list[Word], list[Word]]]
+) -> bool:
+    """Say whether alignment is lost: all values of all rows are one space apart."""
+    rows = [values for _, _, values in raw if len(values) > 1]
+    return (
+        len(rows) > 0
+        and all(b.start - a.end == 1 for values in rows for a, b in itertools.pairwise(values))
+        and len({len(lines[number].text) for number, _, _ in raw}) > 1
+    )
+
+
+def _assigned(
+    values: Sequence[Word], spans: Sequence[tuple[int, int]], offset: int, loose: bool
+) -> list[Word | None]:
+    cells: list[Word | None] = [None] * len(spans)
+    if len(values) == len(spans) or loose:
+        for index, word in enumerate(values[: len(spans)]):
+            cells[index] = word
+        return cells
+    least = 0
+    for index, word in enumerate(values):
+        most = len(spans) - (len(values) - index)
+        choice = max(
+            range(least, most + 1), key=lambda c: _nearness(word, spans[c], offset), default=least
+        )
+        if choice < len(cells):
+            cells[choice] = word
+        least = choice + 1
+    return cells
+
+
+def _nearness(word: Word, span: tuple[int, int], offset: int) -> tuple[int, int]:
+    start, end = word.start - offset, word.end - offset
+    overlap = min(end, span[1]) - max(start, span[0])
+    return min(overlap, 1), -min(abs(end - span[1]), abs(start - span[0]))

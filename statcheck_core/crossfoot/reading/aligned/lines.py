@@ -1,0 +1,150 @@
+"""Lines of aligned text: where they stand and which words they hold."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Sequence
+from typing import NamedTuple
+
+from crossfoot.reading.numerals import NUMERAL
+from crossfoot.reading.tables import headings
+from crossfoot.reading.tables.headings import Heading
+
+_INK = re.compile(r"\S+")
+#: Words that a line of headings has; two of them make it worth a closer look.
+_HEADISH = re.compile(
+    r"(?i:\bdf\d?\b|\bdof\b|ddof|\bsum|\bmean[\s_]?sq|\bsq(?:uares?)?\b|\bcoeff?(?:icient)?s?\b|\bestimates?\b|std|standard|\berr(?:or)?\b|r-?sq"
+    r"|value|\bsig\b|\bprob\b|pr\s?\(?>|p>|p-unc|\bbeta\b|\bss\b|\bms\b|\bse\b|conf\.|\bci\b|chi|\bfg\b|\bgl\b|ddl|\bexp\(|stat\b|\bobservations)"
+    r"|\b[FtTzZpPbBRr]\b|β|η|R\^?2|R²|[%\]]"
+)
+RULE = re.compile(r"[-=_+*~─━═|:. ]*(?:[-=_*~─━═]{3}|-\+-)[-=_+*~─━═|:. ]*")
+_VALUE = re.compile(
+    rf"(?:[<>≤≥=]\s?)?(?:\d{{1,4}}(?:\.\d+)?, )?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?"
+    rf" ?(?:\(df\s?=\s?\d+(?:[;,]\s?\d+)?\))?"
+    rf"|\({NUMERAL}\)\*{{0,3}}|\[{NUMERAL}[,;]?|{NUMERAL}\]|\[{NUMERAL}[,;]\s?{NUMERAL}\]"
+    r"|NA|NaN|nan|N/A|--?|—|–|\.|\*{1,4}|ns"
+)
+#: Lines after a table that explain it.
+NOTE = re.compile(
+    r"\s*(?:signif|note|anm|source:|legend|\*{1,3}\s?p?\s?[<=]|†|[a-e]\.\s"
+    r"|.{0,40}in parenthes|.{0,40}in brackets|(?:robust )?standard errors)",
+    re.IGNORECASE,
+)
+_STARS = re.compile(r"\*{1,4}|†|\+")
+MARKS = re.compile(r"\*{1,4}|†|\.")
+
+
+class Word(NamedTuple):
+    """A run of text without space, in places of the whole text."""
+
+    text: str
+    start: int
+    end: int
+
+
+class Line(NamedTuple):
+    """A line: its place without the line feed."""
+
+    start: int
+    end: int
+    text: str
+
+    @property
+    def blank(self) -> bool:
+        """Whether nothing stands on it."""
+        return not self.text.strip()
+
+    @property
+    def rule(self) -> bool:
+        """Whether it only rules off."""
+        return RULE.fullmatch(self.text) is not None and not self.blank
+
+
+class Token(NamedTuple):
+    """A heading in a line of headings, with what it says."""
+
+    text: str
+    start: int
+    end: int
+    heading: Heading
+
+
+def lines_of(text: str) -> list[Line]:
+    """Return the lines of a text."""
+    lines: list[Line] = []
+    start = 0
+    for line in text.split("\n"):
+        lines.append(Line(start, start + len(line), line))
+        start += len(line) + 1
+    return lines
+
+
+def words_of(text: str, start: int, end: int) -> list[Word]:
+    """Return the words of a stretch; bars between columns are none."""
+    return [
+        Word(found.group(), *found.span())
+        for found in _INK.finditer(text, start, end)
+        if found.group() not in {"|", "│", "||"}
+    ]
+
+
+def headish(line: str) -> bool:
+    """Say whether a line may hold headings."""
+    if len(line) > 400 or not line.strip():
+        return False
+    found = _HEADISH.findall(line, 0)
+    return len(found) >= 2
+
+
+def tokens_of(text: str, words: Sequence[Word]) -> list[Token]:
+    """Return the headings of a line: known names, as long as can be, and other words."""
+    tokens: list[Token] = []
+    number = 0
+    while number < len(words):
+        first = words[number]
+        best = number
+        heading = headings.NOTHING
+        for last in range(min(number + 5, len(words)) - 1, number - 1, -1):
+            if last > number and _wide(words, number, last):
+                continue
+            phrase = " ".join(word.text for word in words[number : last + 1]).strip("|")
+            found = headings.parse(phrase)
+            if found.roles:
+                best, heading = last, found
+                break
+        end = words[best].end
+        tokens.append(Token(text[first.start : end], first.start, end, heading))
+        number = best + 1
+    return tokens
+
+
+def _wide(words: Sequence[Word], first: int, last: int) -> bool:
+    """Say whether words stand too far apart to be one name."""
+    return any(
+        b.start - a.end > 2
+        for a, b in zip(words[first:last], words[first + 1 : last + 1], strict=False)
+    )
+
+
+def is_value(word: str) -> bool:
+    """Say whether a word can stand in a column of numbers."""
+    return len(word) <= 40 and _VALUE.fullmatch(word) is not None
+
+
+def values_of(text: str, words: Sequence[Word]) -> list[Word]:
+    """Join what belongs to one value: a relation and its number, limits in brackets."""
+    joined: list[Word] = []
+    for word in words:
+        last = joined[-1] if joined else None
+        if last is not None and (
+            last.text in {"<", ">", "<=", ">=", "≤", "≥", "="}
+            or (last.text[-1] == "," and last.text[:-1].replace(".", "", 1).isdigit())
+            or (last.text[0] == "[" and last.text[-1] in ",;" and word.text[-1] == "]")
+            or ("(df" in last.text and ")" not in last.text)
+            or word.text.startswith("(df")
+            or (_STARS.fullmatch(word.text) is not None and last.text[-1].isdigit())
+        ):
+            joined[-1] = Word(text[last.start : word.end], last.start, word.end)
+        else:
+            joined.append(word)
+    return joined

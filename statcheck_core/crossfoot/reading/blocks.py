@@ -1,0 +1,182 @@
+"""From a block of a document to its claims: a pure function of its source, so it is remembered."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Callable, Sequence
+from typing import NamedTuple
+
+from crossfoot.documents import show, table
+from crossfoot.documents.visible import Builder, Visible, compose, place
+from crossfoot.memo import remembered
+from crossfoot.model import Claim, Reading, Span
+from crossfoot.reading.cues import CUES, Cues, cues_in
+from crossfoot.reading.fold import fold
+
+#: Nothing is read in a block without one of these: a relation, or a word or markup that stands
+#: for one. Substrings, since a search for each is faster than one pattern for all.
+_SIGNS = tuple("=<>≤≥≈＝＜＞≦≧⩽⩾≪≫¼⫽⬍⬎ϭϽϾ")
+_WORDS = (
+    "alue", "aleur", "alor", "tatistic", "quare", "R-Sq", "reedom", "arian", "aryans", "Streuung",
+    "Wert", "waarde", "värde", "verdi", "værdi", "설명력", "方差", "分散", "变异", "MSE", "RSE",
+    "bservations", " obs", "95 %", "95%", "Sig.", "mong ", "ample of", " df", "d.f.", "elitysaste",
+    "ariânc", "libert", "liberd", "):", "]:", ") of ", " p of ",
+)  # fmt: skip
+_ASCII_WORDS = tuple(word for word in _WORDS if word.isascii())
+_MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")
+_RELATED = re.compile(
+    r"[=<>≤≥≈¼~∼;]\s{0,40}[-+]?\s?[.,·]?[\dn]|[)\]}pPFtr]:\s?[.\d]|[)pPFtr²]\sof\s[.\d]|[pP][bo]0?[.]\d"
+)
+_BEFORE, _AFTER = 100, 80
+_DIGITS = "0123456789"
+_SPACED = re.compile(r"\d \. \d|[=<>] \. \d|\d \d \d|, \d \d \)")
+_SPACED_RUN = re.compile(r"(?:[\w.,()=<>≤≥+−-] ){5,}[\w.,()=<>≤≥](?!\w)")
+_INK = re.compile(r"\S+")
+#: Contexts that words must stand near a result to mean.
+NEAR = frozenset(cue.context for cue in CUES if cue.near)
+#: A heading that a table without any of the words above has.
+_HEADS = re.compile(r"(?i:\b(?:df\d?|ss|ms)\b|ddof|estimate|corrected|std|sum of sq)")
+
+
+class BlockReading(NamedTuple):
+    """What a block says: its claims, in source places from its start, and its cues."""
+
+    claims: tuple[Claim, ...]
+    cues: Cues
+
+
+@remembered
+def read_block(
+    language: str, kind: str, source: str, definitions: tuple[tuple[str, str], ...] = ()
+) -> BlockReading:
+    """Return the claims of a block.
+
+    Parameters
+    ----------
+    language, kind, source, definitions
+        As in :class:`~crossfoot.model.Document` and :class:`~crossfoot.model.Block`; the result
+        depends on nothing else.
+    """
+    aligned = kind == "verbatim" or (language == "plain" and _may_be_aligned(source))
+    if kind == "code" or not _may_hold(source, kind, aligned):
+        return BlockReading((), cues_in(source))
+    if kind == "table":
+        from crossfoot.reading.tables import table_claims
+
+        found = table(language, source, definitions)
+        visible, folded = found.visible, fold(found.visible.text)
+        claims = table_claims(found, _prose(folded, visible.text))
+    else:
+        visible = squeezed(show(language, kind, source, definitions))
+        folded = fold(visible.text)
+        claims = tuple(_printed(visible, folded) if aligned else _claims(folded, visible.text))
+    return BlockReading(tuple(_placed(claim, visible) for claim in claims), cues_in(folded))
+
+
+def _printed(visible: Visible, folded: str) -> Sequence[Claim]:
+    """Read text that may be aligned in columns, as what a program prints is."""
+    from crossfoot.reading.printouts import printout_claims
+
+    return printout_claims(visible, _prose(folded, visible.text))
+
+
+def _prose(folded: str, shown: str) -> Callable[[int, int], list[Claim]]:
+    """Return what reads a stretch of the text as prose, with the contexts of the whole of it."""
+    whole = cues_in(folded).contexts - NEAR
+
+    def read(start: int, end: int) -> list[Claim]:
+        found = _claims(folded[start:end], shown[start:end])
+        return [_moved(claim, start, whole) for claim in found]
+
+    return read
+
+
+def _moved(claim: Claim, by: int, contexts: frozenset[str]) -> Claim:
+    if any(reading.quantity == "df1" and reading.low > 1 for reading in claim.readings):
+        contexts -= {"adjusted-p"}  # corrections concern comparisons of one degree of freedom
+    return claim._replace(
+        span=Span(claim.span[0] + by, claim.span[1] + by),
+        readings=tuple(
+            reading._replace(span=Span(reading.span[0] + by, reading.span[1] + by))
+            for reading in claim.readings
+        ),
+        context=tuple(sorted({*claim.context, *contexts})),
+    )
+
+
+def _claims(folded: str, shown: str) -> list[Claim]:
+    zones = _zones(folded)
+    if not zones:
+        return []
+    # Imported once something may be read: a document without a result pays for nothing.
+    from crossfoot.reading.claims import claims_of
+    from crossfoot.reading.grouping import group
+    from crossfoot.reading.scanner import items_in
+
+    items = items_in(folded, zones)
+    return claims_of(group(folded, items), folded, shown) if items else []
+
+
+def _may_hold(source: str, kind: str, aligned: bool) -> bool:
+    """Say, cheaply and without a miss, whether anything can be read in a block."""
+    if source.isascii() and not any(digit in source for digit in _DIGITS):
+        return False
+    if kind == "table" or (aligned and _HEADS.search(source) is not None):
+        return True
+    return any(mark in source for mark in (*_SIGNS, *_WORDS, *_MARKUP))
+
+
+def _may_be_aligned(source: str) -> bool:
+    """Say whether a text can hold a table: wide gaps, or the headings of one."""
+    return "  " in source or "\t" in source or _HEADS.search(source) is not None
+
+
+def _zones(text: str) -> list[tuple[int, int]]:
+    """Return the stretches of a folded text in which items may stand.
+
+    They lie around each relation that a number follows, and each word that stands for one.
+    """
+    hits = [match.start() for match in _RELATED.finditer(text)]
+    for word in _ASCII_WORDS if text.isascii() else _WORDS:
+        at = text.find(word)
+        while at >= 0:
+            hits.append(at)
+            at = text.find(word, at + len(word))
+    hits.sort()
+    zones: list[tuple[int, int]] = []
+    for hit in hits:
+        start, end = max(0, hit - _BEFORE), min(len(text), hit + _AFTER)
+        if zones and start <= zones[-1][1]:
+            zones[-1] = (zones[-1][0], end)
+        else:
+            zones.append((start, end))
+    return zones
+
+
+def squeezed(visible: Visible) -> Visible:
+    """Close up mathematics that a converter spaced out: ``F ( 1 , 2 8 7 ) = 2 . 7 3``."""
+    text = visible.text
+    if (" . " not in text and " , " not in text) or _SPACED.search(text) is None:
+        return visible
+    out = Builder()
+    done = 0
+    for run in _SPACED_RUN.finditer(text):
+        if _SPACED.search(run.group()) is None:
+            continue
+        out.keep(text, done, run.start())
+        for char in _INK.finditer(text, *run.span()):
+            out.keep(text, *char.span())
+        done = run.end()
+    out.keep(text, done, len(text))
+    return compose(visible, out.build())
+
+
+def _placed(claim: Claim, visible: Visible) -> Claim:
+    """Turn places in visible text into places in the source."""
+    readings = tuple(_placed_reading(reading, visible) for reading in claim.readings)
+    given = tuple(_placed_reading(reading, visible) for reading in claim.given)
+    return claim._replace(span=place(visible, *claim.span), readings=readings, given=given)
+
+
+def _placed_reading(reading: Reading, visible: Visible) -> Reading:
+    return reading._replace(span=Span(*place(visible, *reading.span)))

@@ -1,0 +1,158 @@
+"""Degrees of freedom: in brackets, lowered, flattened, or told beside the word."""
+
+from __future__ import annotations
+
+import re
+from typing import NamedTuple
+
+from crossfoot.reading.items import Item, Part, Text
+from crossfoot.reading.lazily import lazily
+from crossfoot.reading.notation import Name
+from crossfoot.reading.values import AND, COUNT, count_at, value_after
+
+BRACKETS = re.compile(
+    r"\s?(?:\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
+    r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?_\{(?P<more>[^{}\n]{1,12})\})?"
+    r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
+)
+_FLAT_PAIR = re.compile(
+    r"\s?_?(?P<a>\d{1,4}(?:\.\d+)?)\s?[,;/]\s?(?P<b>\d{1,6}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])"
+)
+_FLAT_ONE = re.compile(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
+_SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
+_DF = r"(?:d\.?f\.?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
+_ARGUMENT = re.compile(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
+_TOTAL = re.compile(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
+_SEPARATORS = tuple(
+    re.compile(pattern)
+    for pattern in (r"\s?;\s{0,9}", r"\s?/\s?", rf"\s{AND}\s", r"\s?,\s{1,9}", r",")
+)
+_PAIR = lazily(
+    rf"\s*+(?:[=:]\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
+)
+_PAIR_BEFORE = lazily(
+    rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
+    r"(?P<b>\d+(?:[.,]\d+)?)\s?\)?\s?$"
+)
+_ONE_BEFORE = lazily(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")
+_TRAILING_PAIR = lazily(rf"\*{{0,4}}\s?\((?P<a>{COUNT})\s?[,;]\s?(?P<b>{COUNT})\)")
+_ONE_DECIMAL = lazily(r"\s?[=:]?\s?\d+,\d+(?!\d)")
+_F_BEFORE = lazily(r"(?<![A-Za-z])F(?![A-Za-z])")
+#: How far before "degrees of freedom" their numbers may stand, in characters.
+_REACH = 24
+
+
+class Degrees(NamedTuple):
+    """Degrees of freedom after a name.
+
+    ``parts`` is empty where the text prints none there; ``end`` is where they end; ``possible``
+    is False where brackets hold something that can't be any, so that the name is no test.
+    """
+
+    parts: tuple[Part, ...]
+    end: int
+    possible: bool = True
+
+
+def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
+    """Return the degrees of freedom that stand at ``at``.
+
+    ``keys`` names them: two for F, one for t and r, one and perhaps the sample size for χ².
+    """
+    two = "df2" in keys
+    match = BRACKETS.match(text.folded, at)
+    if match is None:
+        return _flattened(text, at, two=two)
+    group = next(g for g in ("round", "square", "lowered", "sub") if match[g] is not None)
+    inner = match[group].translate(_SUBSCRIPTS) if group == "sub" else match[group]
+    pieces = _pieces(inner.rstrip(" ,;"))
+    start = match.start(group)
+    if match["more"]:
+        pieces.append((match["more"], match.start("more") - start))
+    refused = Degrees((), match.end(), possible=False)
+    parts: list[Part] = []
+    for number, (piece, offset) in enumerate(pieces):
+        total = _TOTAL.fullmatch(piece)
+        argument = total or _ARGUMENT.fullmatch(piece)
+        if argument is None:  # `t(INCOME) = …` names a predictor; `F(x, y)` is a function
+            return Degrees((), match.end(), possible=not two and not piece.isalpha())
+        if total is None and number >= len(keys):
+            return refused
+        quantity = "n" if total else keys[number]
+        part = count_at(
+            text, argument["number"], start + offset + argument.start("number"), quantity
+        )
+        if part is None or part.low <= 0:
+            return refused
+        parts.append(part)
+    if two and len(parts) < 2 and group != "round":
+        return refused
+    return Degrees(tuple(parts), match.end())
+
+
+def pair_behind(text: Text, end: int) -> tuple[tuple[Part, ...], int]:
+    """Return the bare bracketed pair of ``F = 5.12 (3, 44)``, and where it ends."""
+    match = _TRAILING_PAIR().match(text.folded, end)
+    parts = _both(text, match) if match is not None else ()
+    return (parts, match.end()) if match is not None and parts else ((), end)
+
+
+def read_degrees(text: Text, name: Name) -> Item | None:
+    """Read ``df = 3, 71``, ``3 and 44 degrees of freedom``, ``df = 12`` or ``47 df``."""
+    folded, start, end = text.folded, name.match.start(), name.match.end()
+    match = None if _is_decimal(text, start, end) else _PAIR().match(folded, end)
+    match = match or _PAIR_BEFORE().search(folded, max(0, start - _REACH), start)
+    if match is not None:
+        parts = _both(text, match)
+        if not parts:
+            return None
+        return Item("df-pair", parts, min(start, match.start()), max(end, match.end()))
+    value = value_after(text, end, "df", name)
+    if value is not None:
+        return Item("df", (value,), start, value.end)
+    match = _ONE_BEFORE().search(folded, max(0, start - _REACH // 2), start)
+    part = count_at(text, match["a"], match.start("a"), "df") if match is not None else None
+    return Item("df", (part,), part.start, end) if part is not None else None
+
+
+def _is_decimal(text: Text, start: int, end: int) -> bool:
+    """Say whether ``df = 38,6`` is one number: the comma is decimal, and no F stands before."""
+    if not text.decimal_comma or _ONE_DECIMAL().match(text.folded, end) is None:
+        return False
+    return _F_BEFORE().search(text.folded, max(0, start - 40), start) is None
+
+
+def _flattened(text: Text, at: int, *, two: bool) -> Degrees:
+    """Degrees of freedom that lost their subscript: ``F1,58 =``, ``t28 =``."""
+    match = (_FLAT_PAIR if two else _FLAT_ONE).match(text.folded, at)
+    if match is None:
+        return Degrees((), at)
+    if two:
+        parts = _both(text, match)
+    else:
+        one = count_at(text, match["a"], match.start("a"), "df")
+        parts = (one,) if one is not None else ()
+    if not parts or any(part.low <= 0 for part in parts):
+        return Degrees((), match.end(), possible=False)
+    return Degrees(parts, match.end())
+
+
+def _both(text: Text, match: re.Match[str]) -> tuple[Part, ...]:
+    first = count_at(text, match["a"], match.start("a"), "df1")
+    second = count_at(text, match["b"], match.start("b"), "df2")
+    return (first, second) if first is not None and second is not None else ()
+
+
+def _pieces(inner: str) -> list[tuple[str, int]]:
+    """Split the inside of brackets into arguments with their offsets.
+
+    A semicolon or slash, ``and``, or a comma before a space separates; a comma alone does only
+    where nothing else does.
+    """
+    for separator in _SEPARATORS:
+        cuts = list(separator.finditer(inner))
+        if cuts:
+            starts = [0, *(cut.end() for cut in cuts)]
+            stops = [*(cut.start() for cut in cuts), len(inner)]
+            return [(inner[a:b], a) for a, b in zip(starts, stops, strict=True)]
+    return [(inner, 0)]

@@ -1,0 +1,171 @@
+"""Whether a group of numbers is a reported result, or only looks like one.
+
+Look-alikes are many: functions and their values, labels of figures and roads, thresholds,
+parameters of algorithms. A result needs a name with what belongs to it.
+"""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Sequence
+from itertools import pairwise
+
+from crossfoot.reading.items import Item, Part
+from crossfoot.reading.lazily import lazily
+
+_STATISTICAL = lazily(
+    r"anova|regress|effect|interact|signific|varian|model|test|differ|predict|explain|estimat"
+    r"|analys|correlat|coefficient|quadrat",
+    re.IGNORECASE,
+)
+_FIT = lazily(
+    r"regress|model|varian|\bfit|predict|explain|account|correlat|adjusted|determination|squared?\b|quadrat"
+    r"|modell|modèle|varianz|回归|回帰|決定",
+    re.IGNORECASE,
+)
+_EFFECT = lazily(r"effect|interact|differ|main|signific", re.IGNORECASE)
+#: A name, its bracket, and arguments written without spaces.
+_CALL = lazily(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
+#: "If t(28) = 2.05 were found …"
+_SUPPOSED = lazily(
+    r"(?:\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what))\s(?:an?\s|the\s)?$"
+)
+_DECIMALS = re.compile(r"[.,·]\d")
+#: Between a coefficient and a p that alone supports it: nothing but list marks.
+_LIST_MARKS = re.compile(r"[\s,;()\[\]]{1,4}")
+_SUPPORT = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omega2"})
+#: Fewer degrees of freedom than this are more often the indices of a matrix.
+_FEWEST = 3.0
+
+
+def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
+    """Say whether a group is a reported result.
+
+    Parameters
+    ----------
+    anchor
+        The quantity of its test, or None.
+    items
+        Its items, settled.
+    text
+        The folded text of the block.
+    """
+    quantities = {part.quantity for item in items for part in item.parts}
+    if any(p.quantity == "df" and p.high < _LEAST_DF for item in items for p in item.parts):
+        return False
+    if not items or _in_call(text, items[0].start):
+        return False
+    if anchor in {"F", "F_change"}:
+        return _is_f_test(anchor, items, quantities, text)
+    if anchor in {"t", "z", "chi2", "r"}:
+        return _is_test(anchor, items, quantities, text)
+    if anchor in {"b", "β", "beta", "odds_ratio"}:
+        return _is_coefficient(items, quantities, text)
+    return {"vif", "tolerance"} <= quantities or _is_fit(items, text)
+
+
+_LEAST_DF = 0.9
+
+
+def _in_call(text: str, start: int) -> bool:
+    """Say whether a place stands among the arguments of a call: ``plot(x, t=2.5, p=.03)``."""
+    opened = text.rfind("(", max(0, start - 60), start)
+    if opened < 1 or text.find(")", opened, start) >= 0 or opened + 1 == start:
+        return False
+    return _CALL().search(text, max(0, opened - 30), start) is not None
+
+
+def _has_p(items: Sequence[Item]) -> bool:
+    p = next((item for item in items if item.head == "p"), None)
+    return p is not None and _is_probability(p.parts[0])
+
+
+def _is_probability(part: Part) -> bool:
+    """Say whether a number can be meant as a probability, if perhaps misprinted."""
+    return part.high <= 1.0 if part.relation in "<≤" else part.high >= 0.0 and part.low <= 1.5
+
+
+def _spelt(text: str, part: Part) -> bool:
+    return _DECIMALS.search(text, part.start, part.end) is not None
+
+
+def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str) -> bool:
+    test = next(item for item in items if item.head == anchor)
+    value = next(part for part in test.parts if part.quantity in {"F", "F_change"})
+    has_p = _has_p(items)
+    if {"by-subject", "by-item"} & set(test.flags):
+        return has_p
+    support = has_p or bool(quantities & _SUPPORT)
+    if "df2" not in quantities:
+        if value.relation == "=":
+            return support
+        bound = "plural" in test.flags or _EFFECT().search(text) is not None
+        return not has_p and bound and value.relation in "<≤>≥"
+    error = next(p for item in items for p in item.parts if p.quantity == "df2")
+    if support or "lower" in test.flags or error.high < _FEWEST:
+        return support
+    return _spelt(text, value) or (
+        value.relation != "=" and _STATISTICAL().search(text) is not None
+    )
+
+
+def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str) -> bool:
+    test = next(item for item in items if item.head == anchor)
+    value = next(part for part in test.parts if part.quantity == anchor)
+    has_p = _has_p(items)
+    if not has_p and _SUPPOSED().search(text, max(0, test.start - 12), test.start):
+        return False
+    if anchor == "r":
+        has_p = has_p and _p_is_near(items, test, text)
+        counted = bool(quantities & {"df", "n"})
+        possible = value.high >= -1.0 and value.low <= 1.0
+        if counted and not has_p and "df" not in quantities and not _side_by_side(items, text):
+            return False
+        return _spelt(text, value) and (has_p or counted) and (possible or "df" in quantities)
+    if anchor == "z":
+        return has_p or bool(quantities & {"b", "beta", "se", "odds_ratio"})
+    flat = any(part.quantity == "df" and text[part.start - 1].isalpha() for part in test.parts)
+    by_unit = {"by-subject", "by-item"} & set(test.flags)
+    if (flat or by_unit or text[test.start] == "T") and not has_p:
+        return False
+    if "df" in quantities:
+        return has_p or _spelt(text, value) or _STATISTICAL().search(text) is not None
+    return has_p or (anchor == "t" and bool(quantities & {"b", "beta", "se"}))
+
+
+def _p_is_near(items: Sequence[Item], test: Item, text: str) -> bool:
+    """Say whether p follows a test, or stands right before it."""
+    p = next(item for item in items if item.head == "p")
+    before = text[p.end : test.start]
+    return p.start > test.start or _LIST_MARKS.fullmatch(before) is not None
+
+
+def _side_by_side(items: Sequence[Item], text: str) -> bool:
+    """Say whether all items stand in one list, with nothing but marks between."""
+    return all(_LIST_MARKS.fullmatch(text, a.end, b.start) for a, b in pairwise(items))
+
+
+def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> bool:
+    if not any(_spelt(text, part) for item in items for part in item.parts):
+        return False
+    if quantities & {"se", "ci_low", "t", "z"}:
+        return True
+    # With a p alone beside it, the two must stand in one list: `(β = .31, p = .001)`.
+    for first, second in pairwise(items):
+        if second.head == "p" and first.parts[-1].relation == "=":
+            between = text[first.end : second.start]
+            if "\n" not in between and _LIST_MARKS.fullmatch(between):
+                return _has_p(items)
+    return False
+
+
+def _is_fit(items: Sequence[Item], text: str) -> bool:
+    """Say whether an R² without a test is one: with another quantity, or where words tell so."""
+    shares = [item for item in items if item.head in {"R2", "R2_adj", "R2_change"}]
+    printed = [
+        item
+        for item in shares
+        if "percent" not in item.flags
+        and re.search(r"[.,%]\d|%", text[item.parts[-1].start : item.parts[-1].end])
+    ]
+    return bool(printed) and (len(items) > 1 or _FIT().search(text) is not None)

@@ -1,0 +1,294 @@
+"""From items to groups: which numbers speak of one test or model.
+
+Tests (F, t, r, χ², z, and coefficients) are anchors. What stands between two anchors is cut where
+the text between neighbours separates most, so that an R² may stand before or after its F, and a p
+follows its statistic.
+"""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Sequence
+from itertools import pairwise
+from typing import NamedTuple
+
+from crossfoot.reading.items import Item
+
+_ANCHORS = frozenset({"F", "F_change", "t", "r", "z", "chi2", "b", "β", "beta", "odds_ratio"})
+_COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
+#: What belongs to no claim of its own, so it follows its anchor rather than leads the next.
+_FOLLOWS = frozenset(
+    {"p", "d", "se", "ci", "eta2", "eta2_partial", "omega2", "ms", "df", "df-pair", "df1", "df2"}
+)
+_MODEL_ONLY = frozenset({"R2", "R2_adj", "R2_change", "R", "f2", "s"})
+#: Of those, the ones that lead a test only right before it.
+_TRAILS = frozenset({"p", "se", "ci", "ms"})
+_NEAR = 3.0
+#: A gap this strong never lies inside a claim.
+APART = 9.0
+
+_WORD = re.compile(r"[^\W\d_]{2,}")
+_SENTENCE_END = re.compile(r"[.!?][)\]\"”’']?\s+(?=[^\W\d_]|$)|[.!?]\s*$|。")
+_ENDS = ".!?。"
+#: How far around a result its sentence is looked for, in characters.
+_REACH = 600
+_ABBREVIATION = re.compile(
+    r"\b(?:adj|approx|ca|cf|e\.g|Eq|et al|Fig|i\.e|No|resp|vs|Tab|z\.B|bzw|ca|p|pp|n\.s)\.\s*$"
+)
+_LINK = frozenset(
+    {
+        "with",
+        "and",
+        "adjusted",
+        "adj",
+        "the",
+        "of",
+        "multiple",
+        "an",
+        "overall",
+        "total",
+        "partial",
+        "mit",
+        "avec",
+        "con",
+        "med",
+        "met",
+        "com",
+        "note",
+        "whole",
+        "model",
+    }
+)
+_BULLET = re.compile(r"\n\s*(?:[•*+-]|\d+[.)])\s")
+
+
+class Group(NamedTuple):
+    """Items of one claim, in printed order; ``anchor`` is the test's quantity, or None."""
+
+    items: tuple[Item, ...]
+    anchor: str | None
+
+
+def gap(text: str, first: Item, second: Item) -> float:
+    """Return how strongly the text between two items separates them.
+
+    0 for a comma or bracket, about 1 a word, :data:`APART` or more between sentences.
+    """
+    between = text[first.end : second.start]
+    if not between.strip(" ,()[]"):
+        return 0.25 if between.strip(" ,") else 0.1
+    words = [word for word in _WORD.findall(between) if word.lower() not in _LINK]
+    bullets = len(_BULLET.findall(between))
+    strength = 0.1 + min(len(words), 6) + 2.5 * between.count(";")
+    if bullets:
+        return 1.5 * bullets + 0.3 * min(len(words), 8)
+    end = _SENTENCE_END.search(between)
+    if end is not None and not _ABBREVIATION.search(between, 0, end.end()):
+        strength = max(strength, APART if words else 1.5)
+    elif between.count(")") > between.count("("):
+        strength += 1.0
+    if re.search(r"\b(?:and|und|et|y|e|en|och|og|while|but|whereas)\b", between):
+        strength += 1.5
+    return strength
+
+
+def group(text: str, items: Sequence[Item]) -> list[Group]:
+    """Split items into the groups that each describe one test or model.
+
+    Parameters
+    ----------
+    text
+        Folded visible text that the items were read from.
+    items
+        In printed order.
+    """
+    gaps = [gap(text, a, b) for a, b in pairwise(items)]
+    anchors = _anchors(items, gaps)
+    if not anchors:
+        return _runs(items, gaps, 0, len(items))
+    groups: list[Group] = []
+    cuts = [_first_cut(items, gaps, anchors[0])]
+    for left, right in pairwise(anchors):
+        cuts.append(_cut(items, gaps, left, right))
+    cuts.append((_last_cut(items, gaps, anchors[-1]), len(items)))
+    if cuts[0][1] > 0:
+        groups += _runs(items, gaps, 0, cuts[0][1])
+    for number, anchor in enumerate(anchors):
+        start, stop = cuts[number][1], cuts[number + 1][0]
+        groups.append(Group(tuple(items[start:stop]), items[anchor.statistic].head))
+        after = cuts[number + 1][1]
+        if stop < after:
+            groups += _runs(items, gaps, stop, after)
+    return groups
+
+
+class _Anchor(NamedTuple):
+    """The items from ``first`` to ``last`` name one test; ``statistic`` is the test itself."""
+
+    first: int
+    last: int
+    statistic: int
+
+
+def _anchors(items: Sequence[Item], gaps: Sequence[float]) -> list[_Anchor]:
+    found: list[_Anchor] = []
+    for index, item in enumerate(items):
+        if item.head not in _ANCHORS:
+            continue
+        if found and _joins(items, gaps, found[-1], index):
+            last = found.pop()
+            statistic = last.statistic if items[last.statistic].head not in _COEFFICIENT else index
+            found.append(_Anchor(last.first, index, statistic))
+        else:
+            found.append(_Anchor(index, index, index))
+    return found
+
+
+def _joins(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor, index: int) -> bool:
+    """Say whether the item at ``index`` belongs to an anchor that has begun: b with its β and t."""
+    heads = {items[i].head for i in range(anchor.first, index)}
+    head = items[index].head
+    own = {items[i].head for i in range(anchor.first, anchor.last + 1)}
+    widest = max(gaps[anchor.last : index], default=0.0)
+    if head == "odds_ratio" and head not in heads and widest <= 0.5:
+        return not own & {"F", "F_change", "r"}  # b, its test, its p, and the ratio
+    if "p" in {items[i].head for i in range(anchor.last, index)}:
+        # `t(96) = …, p = …, β = …` is one test; a β that a t of its own follows is the next.
+        return (
+            head in _COEFFICIENT and own <= {"t", "z"} and widest < _gap_to_test(items, gaps, index)
+        )
+    if head in {"t", "z", "chi2"}:
+        return bool(own & _COEFFICIENT) and not own & {"t", "z", "chi2"} and widest <= 8.0
+    if head in _COEFFICIENT:
+        return head not in heads and own <= _COEFFICIENT | {"t", "z"} and widest <= 1.5
+    return False
+
+
+def _gap_to_test(items: Sequence[Item], gaps: Sequence[float], index: int) -> float:
+    """Return the widest gap up to the t or z that comes before the next coefficient, or 0.6."""
+    widest = 0.0
+    for number in range(index + 1, len(items)):
+        widest = max(widest, gaps[number - 1])
+        if items[number].head in {"t", "z"}:
+            return min(widest, 0.6)
+        if items[number].head in _COEFFICIENT:
+            break
+    return 0.6
+
+
+def _first_cut(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor) -> tuple[int, int]:
+    """Return where the group of the first anchor starts, twice."""
+    start = anchor.first
+    while start > 0 and _may_lead(items, gaps, start, anchor):
+        start -= 1
+    return start, start
+
+
+def _may_lead(items: Sequence[Item], gaps: Sequence[float], start: int, anchor: _Anchor) -> bool:
+    item = items[start - 1]
+    if gaps[start - 1] >= (_NEAR if item.head in _TRAILS else APART):
+        return False
+    taken = {items[i].head for i in range(start, anchor.last + 1)}
+    return item.head not in taken
+
+
+def _last_cut(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor) -> int:
+    """Return where the group of the last anchor stops."""
+    taken = {items[i].head for i in range(anchor.first, anchor.last + 1)}
+    stop = anchor.last + 1
+    while stop < len(items) and gaps[stop - 1] < APART and items[stop].head not in taken:
+        taken.add(items[stop].head)
+        stop += 1
+    return stop
+
+
+def _cut(
+    items: Sequence[Item], gaps: Sequence[float], left: _Anchor, right: _Anchor
+) -> tuple[int, int]:
+    """Return where the left anchor's group stops and the right one's starts.
+
+    Of all cuts between the anchors the cheapest is taken: weak gaps cost when cut, as does a
+    quantity that its group already has, or a p that would lead.
+    """
+    low, high = left.last + 1, right.first
+    if low == high:
+        return low, low
+    best, place = float("inf"), low
+    left_heads = [items[i].head for i in range(left.first, left.last + 1)]
+    for cut in range(low, high + 1):
+        cost = -gaps[cut - 1]
+        heads = left_heads + [items[i].head for i in range(low, cut)]
+        cost += 6.0 * (len(heads) - len(set(heads)))
+        ahead = [items[i].head for i in range(cut, right.last + 1)]
+        cost += 6.0 * (len(ahead) - len(set(ahead)))
+        cost += 3.0 * sum(head in _FOLLOWS for head in ahead[: high - cut])
+        if items[left.statistic].head not in {"F", "F_change"}:
+            cost += 2.0 * sum(items[i].head in _MODEL_ONLY for i in range(low, cut))
+        if cost < best - 1e-9:
+            best, place = cost, cut
+    stop = start = place
+    taken = set(left_heads)
+    for index in range(low, place):
+        if gaps[index - 1] >= APART or (items[index].head in taken and items[index].head != "n"):
+            stop = index
+            break
+        taken.add(items[index].head)
+    taken = {items[i].head for i in range(right.first, right.last + 1)}
+    for index in range(high - 1, place - 1, -1):
+        if gaps[index] >= APART or items[index].head in taken:
+            start = index + 1
+            break
+        taken.add(items[index].head)
+    else:
+        start = place
+    return stop, max(start, stop)
+
+
+def _runs(items: Sequence[Item], gaps: Sequence[float], start: int, stop: int) -> list[Group]:
+    """Group items without a test: neighbours that name different quantities."""
+    groups: list[Group] = []
+    run: list[Item] = []
+    for index in range(start, stop):
+        item = items[index]
+        if run and (gaps[index - 1] >= APART or item.head in {other.head for other in run}):
+            groups.append(Group(tuple(run), None))
+            run = []
+        run.append(item)
+    return [*groups, Group(tuple(run), None)] if run else groups
+
+
+def sentence_around(text: str, start: int, end: int) -> tuple[int, int]:
+    """Return the bounds of the sentence, or bullet, that ``text[start:end]`` stands in."""
+    first = _sentence_start(text, max(0, start - _REACH), start)
+    bullet = text.rfind("\n", first, start)
+    while bullet >= 0:
+        if _BULLET.match(text, bullet):
+            first = bullet + 1
+            break
+        bullet = text.rfind("\n", first, bullet)
+    limit = min(len(text), end + _REACH)
+    following = _SENTENCE_END.search(text, end, limit)
+    last = following.start() + 1 if following else limit
+    next_bullet = _BULLET.search(text, end, last)
+    return first, next_bullet.start() if next_bullet else last
+
+
+def same_sentence(text: str, first: tuple[int, int], second: tuple[int, int]) -> bool:
+    """Say whether two places of a text stand in one sentence."""
+    (_, start), (end, _) = sorted((first, second))
+    match = _SENTENCE_END.search(text, start, max(start, end))
+    return match is None or bool(
+        _ABBREVIATION.search(text, max(0, match.start() - 12), match.end())
+    )
+
+
+def _sentence_start(text: str, first: int, start: int) -> int:
+    """Return where the last sentence that begins in ``text[first:start]`` does, else ``first``."""
+    at = start
+    while True:
+        at = max(text.rfind(mark, first, at) for mark in _ENDS)
+        if at < 0:
+            return first
+        match = _SENTENCE_END.match(text, at, start + 1)
+        if match is not None and not _ABBREVIATION.search(text, max(0, at - 12), at + 2):
+            return min(match.end(), start)

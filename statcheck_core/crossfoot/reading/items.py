@@ -1,0 +1,56 @@
+"""What reading finds in a text before anything is grouped: parts and items."""
+
+from __future__ import annotations
+
+from typing import NamedTuple
+
+#: Quantities that are counts: exact when printed without decimals.
+WHOLE = frozenset({"n", "k", "df", "df1", "df2"})
+
+
+class Text(NamedTuple):
+    """Folded visible text of a block, and whether it writes decimals with a comma."""
+
+    folded: str
+    decimal_comma: bool = False
+
+
+class Part(NamedTuple):
+    """One number of an item: a reading that has no claim yet, placed in the folded text."""
+
+    quantity: str
+    relation: str
+    start: int
+    end: int
+    low: float
+    high: float
+    term: str | None = None
+
+
+class Item(NamedTuple):
+    """What one name in the text says.
+
+    Attributes
+    ----------
+    head
+        The quantity that the name names, or a scanner's word for several at once (``ci``,
+        ``df-pair``) or for what needs its neighbours to be settled (``β``).
+    parts
+        Its numbers in printed order.
+    start, end
+        Place of the name and all its numbers.
+    flags
+        Contexts that the name itself states, or scanner's words: ``plural`` (one name for several
+        tests), ``listed`` (one of several numbers of one name), ``percent`` (told as explained
+        variance), ``told`` (a sample size in words), ``lower`` (a lower-case f).
+    """
+
+    head: str
+    parts: tuple[Part, ...]
+    start: int
+    end: int
+    flags: tuple[str, ...] = ()
+
+
+#: Flags that speak to the scanner and are no contexts of a claim.
+SCANNER_FLAGS = frozenset({"plural", "listed", "percent", "told", "lower"})

@@ -1,0 +1,331 @@
+"""How quantities are named in print: one declaration a notation.
+
+Patterns run over folded visible text (see :mod:`crossfoot.reading.fold`), where raised text
+stands in ``^{…}`` and lowered text in ``_{…}``. From this table come the scanner, the examples in
+the documentation and the tests that try each example.
+"""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterator
+from functools import cache
+from typing import NamedTuple
+
+_SQUARED = r"(?:\s?²|\s?\^\s?(?:\{\s?2\s?\}|2)|2(?![\d.,]?\d))"
+_SUB = r"(?:\s?_\{[^{}\n]{1,14}\}|_[a-zA-Z]{1,6}|[₀-₉]{1,2})"
+_DF = (
+    r"(?:(?i:d\.?\s?f\.?|dof|degrees?\sof\sfreedom|grados\sde\slibertad|gradi\sdi\slibertà"
+    r"|graus\sde\sliberdade|degrés\sde\sliberté|gdl)|ddl|g\.?l\.?|FG|Freiheitsgrade?n?"
+    r"|vrijheidsgraden|frihetsgrader|自由度)"
+)
+
+
+class Notation(NamedTuple):
+    """One way to name a quantity.
+
+    Attributes
+    ----------
+    quantity
+        Key of the quantity, or a scanner's word for what needs a decision later (``ci``,
+        ``R2-percent``, ``df-pair``).
+    pattern
+        Regular expression for the name alone.
+    wordy
+        Whether the name is words, so that ``is``, ``:`` or plain space may stand for ``=``.
+    initials
+        The characters the name can start with; they decide which patterns are tried at a word.
+    example
+        A result in which the name stands, shown in the documentation and tried by a test.
+    """
+
+    quantity: str
+    pattern: str
+    wordy: bool
+    initials: str
+    example: str
+
+
+NOTATIONS: tuple[Notation, ...] = (
+    Notation(
+        "F_change",
+        r"(?:Δ\s?F|delta[\s-]F|F[\s-]?(?i:inc|change)|F\s?_?\{?(?:change|inc|Δ)\}?|F\s?for\s(?:the\s)?change(?:\sin\sR(?:²|\^\{?2\}?|2))?)"
+        r"(?![a-z])",
+        False,
+        "ΔFdp",
+        "ΔR² = .07, ΔF(1, 96) = 9.58, p = .003",
+    ),
+    Notation(
+        "p",
+        r"(?:(?i:sig(?:nificance|nifikanz)?\.?(?:\s?F)?(?:\s?change)|significance\s?F)"
+        r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
+        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P\s?>\s?\|[tz]\||Sig\.(?:\s?\(2-tailed\))?)",
+        True,
+        "sSPp",
+        "Prob > F = 0.0312, F(2, 57) = 3.69",
+    ),
+    Notation(
+        "F",
+        r"(?:[Ff][\s-](?i:value|statistic|stat|ratio|test|Wert|waarde|v[äæ]rde[tn]?|verdien?|værdien?)"
+        r"(?:\svs\.\sconstant\smodel)?|(?:valeur|valor|valore|estad[ií]stico)\s(?:de\s)?F"
+        r"|F\s?Statistic|F_onewayResult\(statistic)",
+        True,
+        "Ffve",
+        "The F-value of 4.22 with 2 and 42 degrees of freedom gave a p-value of 0.021",
+    ),
+    Notation(
+        "p",
+        r"(?:[pP](?:s|'s)?[\s-]?(?i:values?|Werte?|waarden?|v[äæ]rde[tn]?|verdi(?:er)?|værdi(?:er)?|val|unc)"
+        r"|(?:valeurs?|val[ou]re?s?|valori)[\s-](?:de\s)?p|pvalue|Prob\.)",
+        True,
+        "pPv",
+        "F(2, 57) = 3.90, p-value: .026",
+    ),
+    Notation(
+        "F",
+        r"(?:F(?:s|'s)?(?![\w²'-])|F(?:[12₁₂]|_\{[12]\})(?=\s?\()|F(?=[\d_₀-₉])|f(?=\s?\())",
+        False,
+        "Ff",
+        "F(2, 57) = 3.90, p = .026",
+    ),
+    Notation(
+        "R2_change",
+        rf"(?:(?:Δ|delta[\s-]?)\s?_?\{{?\s?[Rr]{_SQUARED}\}}?|[Rr]{_SQUARED}(?:\s?_\{{)?[\s-]?(?:change|inc(?:rement)?(?![a-z])|Δ)\}}?"
+        rf"|R[\s-]?(?i:squared?|sq)[\s-](?i:change)|(?:change|increase|increment)\sin\s[Rr]{_SQUARED})",
+        False,
+        "ΔdRrci",
+        "ΔR² = .07, ΔF(1, 96) = 9.58, p = .003",
+    ),
+    Notation(
+        "R2",
+        rf"(?:(?i:multiple\s|sample\s)?[Rr][\s-](?i:squared?|sq|quadrat|quadro|cuadrad[oa]|carr[ée]|kva?drat|kwadraat)(?![a-z])|(?i:coefficient\sof\sdetermination)(?!\s?\(?,?\s?[Rr])|(?i:multiple\s)?R\s?\u0304?{_SUB}?{_SQUARED}{_SUB}?"
+        rf"|r{_SUB}?{_SQUARED}{_SUB}?)",
+        True,
+        "RrmsMcC",
+        "R² = .21, F(3, 96) = 8.74, p < .001",
+    ),
+    Notation(
+        "eta2_partial",
+        rf"(?:(?:(?i:partial|part\.)\s|p\s?(?=η))(?:eta|η)[\s-]?(?:squared|{_SQUARED})|(?:η|n|\?|Î·|<U\+03B7>)\s?_?\{{?p\}}?\s?(?:{_SQUARED}|Â²)"
+        rf"|(?:η|𝜂|Î·|<U\+03B7>)\s?(?:{_SQUARED}|Â²)\s*_?\{{?\s?\(?(?:ₚ|p|part(?:ial)?|partiel|parziale|parcial)\)?\}}?(?![a-z])"
+        rf"|(?:η|eta){_SQUARED}\s(?:partiel|parziale|parcial|partiell)|np2|n2p|hp2|h2p|g2p|gp2|[ηg]\s?p\s?2|(?<=[;,]\s)[hZ]2(?=\s?=\s?0?\.\d))",
+        False,
+        "pη𝜂nÎ<e?ghZ",
+        "F(2, 57) = 3.90, p = .026, ηp² = .12",
+    ),
+    Notation(
+        "eta2",
+        rf"(?:η\s?{_SQUARED}|[eE]ta[\s-](?:squared|sq)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
+        False,
+        "ηe",
+        "F(2, 57) = 3.90, p = .026, η² = .12",
+    ),
+    Notation(
+        "omega2",
+        rf"(?:ω\s?{_SQUARED}|omega[\s-]squared)(?!\s?_)",
+        False,
+        "ωo",
+        "F(2, 57) = 3.90, p = .026, ω² = .09",
+    ),
+    Notation(
+        "f2",
+        rf"(?:Cohen's\s)?f{_SQUARED}(?!\s?[(\w])",
+        False,
+        "fC",
+        "R² = .21, f² = .27, F(3, 96) = 8.51",
+    ),
+    Notation(
+        "chi2",
+        rf"(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq|deux|quadrat[o]?|cuadrado|kwadraat|två|kvadrat)|khi²|(?i:chi)\^?2|X-squared|χ)(?!\s?/\s?df)",
+        True,
+        "χXcCkKjq",
+        "χ²(1, N = 120) = 8.47, p = .004",
+    ),
+    Notation(
+        "ci",
+        r"(?:(?:(?:CI|KI|IC|BI)\s?(?:à\s|al\s|del\s|di\s)?_?\{?(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?\}?|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{0,3}"
+        r"(?:CIs?|KI|IC|BI|confidence\s(?:intervals?|limits?)|Konfidenzintervall|intervalle?\sde\sconfiance"
+        r"|intervalo\sde\sconfian[zç]a|intervallo\sdi\sconfidenza|betrouwbaarheidsinterval|konfidensintervall?))(?![a-z])|CI(?=\s?[:=]?\s?[\[(]\s?[-+]?[.\d]|:\s?[-+]?[.\d]))",
+        True,
+        "CKIB56789ic",
+        "b = 0.42, SE = 0.11, 95% CI [0.20, 0.64], t(96) = 3.82",
+    ),
+    Notation(
+        "df1",
+        r"(?:df_?\{?1\}?|df\s?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
+        True,
+        "dnDN",
+        "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
+    ),
+    Notation(
+        "df2",
+        r"(?:df_?\{?2\}?|df\s?\(?(?:den(?:om)?|error|residuals?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
+        r"|Df\s?Residuals|(?i:(?:error|residual)\s(?:df|degrees\sof\sfreedom)))",
+        True,
+        "dnDeErR",
+        "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
+    ),
+    Notation("df", _DF + r"(?![a-z12])", True, "dgFfv自D", "t = -1.926; df = 21.4; P = 0.068"),
+    Notation(
+        "s",
+        r"(?:(?i:residual\s(?:standard|std\.?)\s(?:error|deviation)|root\s(?:mean\ssquared?(?:\serror)?|MSE))|RMSE|RSE|SEE"
+        r"|(?i:standard\serror\sof\s(?:the\s)?(?:estimate|regression))|S(?=\s=\s[\d.]+\s+R-Sq)|s(?=\s?=\s?[\d.]))",
+        True,
+        "rRsS",
+        "residual standard error = 4.653, R² = .3251, F(2, 57) = 13.73",
+    ),
+    Notation(
+        "se",
+        r"(?:(?i:(?:robust\s)?(?:std\.?|standard)\s(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.|Standardfehler|erreur[\s-]type|error\sestándar|erro\spadrão|errore\sstandard|standaardfout|standardfe(?:l|il|jl)|E[EPS](?=\s?=)|(?:SE|se)(?:\s?_\{?\w{1,4}\}?|\s[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
+        True,
+        "rsSReE",
+        "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
+    ),
+    Notation(
+        "odds_ratio",
+        r"(?:adjusted\s)?(?:a?OR|odds\sratios?)(?![a-zA-Z])",
+        True,
+        "aOo",
+        "OR = 1.84, 95% CI [1.20, 2.82], p = .005",
+    ),
+    Notation(
+        "d",
+        r"(?:(?:Cohen's\s)?(?:d_\{?\w\}?|d)|(?:Hedges'?s?\s)?g|φ|ϕ|Cramér's\sV|Cramer's\sV|V|ε\s?²|M_?diff|Δ?M)(?![\w²'.-])",
+        False,
+        "CdHgφϕVεMΔ",
+        "t(58) = 2.05, p = .045, d = 0.54, 95% CI [0.01, 1.06]",
+    ),
+    Notation("vif", r"VIF(?![a-z])", False, "V", "tolerance = .54, VIF = 1.85"),
+    Notation("tolerance", r"[Tt]olerance(?![a-z])", False, "tT", "tolerance = .54, VIF = 1.85"),
+    Notation(
+        "b-se",
+        r"[bBβ]\s?\((?:SE|s\.e\.|S\.E\.)\)",
+        False,
+        "bBβ",
+        "B(SE) = 0.81 (0.30), t(90) = 2.70, p = .008",
+    ),
+    Notation(
+        "beta",
+        r"(?:[sS]tandardi[sz]ed\s(?:coefficients?\s)?(?:β|b|beta)?|std\.?\s(?:β|beta))(?![a-z])",
+        False,
+        "sS",
+        "standardised β = .35, t(96) = 3.82, p < .001",
+    ),
+    Notation(
+        "β",
+        rf"(?:β|ß|beta)\u0302?{_SUB}?(?:\([\w .:*×-]{{1,30}}\))?(?![a-z])",
+        False,
+        "βßb",
+        "β = .35, t(96) = 3.82, p < .001",
+    ),
+    Notation(
+        "b",
+        rf"(?:[bB]{_SUB}?\d?(?![\w²^.])|(?i:(?:regression\s)?coef(?:f\.?|ficients?)?|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
+        True,
+        "bBrRcCpPeEsSihl",
+        "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
+    ),
+    Notation(
+        "n",
+        r"(?:[Nn]{1}(?:obs)?(?:_\{?(?:total|obs)\}?)?(?![\w²^.'-])|(?i:(?:no\.|number|num\.?)\s?(?:of\s)?obs(?:ervations|\.)?)|(?i:sample\ssize|observations))",
+        False,
+        "nNsSoO",
+        "N = 58. R = .643, R² = .414, F(2, 55) = 19.40",
+    ),
+    Notation(
+        "R",
+        r"(?i:multiple\s(?:correlation\s)?)?R(?![\w²^.\u0304-])",
+        False,
+        "Rm",
+        "R = .643, R² = .414, F(2, 55) = 19.40",
+    ),
+    Notation(
+        "r",
+        r"(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.'-])|r(?=_\{?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])",
+        False,
+        "rPpcSρ",
+        "r(98) = .41, p < .001",
+    ),
+    Notation(
+        "t",
+        r"(?:(?:[tT][\s-](?i:value|statistic|stat|ratio|test|Wert|waarde|värde|verdi|værdi)|TtestResult\(statistic|Ttest_indResult\(statistic)(?![a-z])"
+        r"|t(?:s|'s)?(?![\w²'-])|t[12](?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}\s?=))",
+        False,
+        "tT",
+        "t(47) = 2.20, p = .033",
+    ),
+    Notation(
+        "z",
+        r"(?:(?:Wald\s)?[zZ](?:[\s-](?:value|score|statistic))?)(?![\w²'-])",
+        False,
+        "zZW",
+        "b = 0.61, SE = 0.22, z = 2.77, p = .006",
+    ),
+    Notation(
+        "ms-error",
+        r"(?:MSE|MSe|MS_?\{?(?:e|error|res(?:idual)?|within)\}?)(?![a-z])",
+        False,
+        "M",
+        "F(1, 26) = 6.56, MSE = 37.63, p = .017",
+    ),
+    Notation(
+        "p",
+        r"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}?)?(?![\w²'])",
+        False,
+        "pP",
+        "F(2, 57) = 3.90, p = .026",
+    ),
+)
+
+
+_INITIALS = "".join(sorted(set("".join(n.initials for n in NOTATIONS))))
+#: How names begin that have three letters or more in a row: most words of a text are passed over
+#: by this alone.
+_FIRST_LETTERS = """
+adj aor bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dof err est eta fch fin fre fri
+fst gdl gra hed hel inc jic khi kik kji lut mdi mse msr msw mul nob num obs odd ome pad par pbo
+pco pea pen pfd pho poi pon ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam see sem
+sig slo spe sta std ste tol tte val vif vri wal
+"""
+_OPENINGS = frozenset(_FIRST_LETTERS.split())
+_WORD_START = re.compile(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я])[{re.escape(_INITIALS)}]")
+
+
+@cache
+def _starting(initial: str) -> re.Pattern[str]:
+    """Return the pattern of all names that can start so."""
+    return re.compile(
+        "|".join(f"(?P<n{i}>{n.pattern})" for i, n in enumerate(NOTATIONS) if initial in n.initials)
+    )
+
+
+class Name(NamedTuple):
+    """A name found in a text."""
+
+    notation: Notation
+    match: re.Match[str]
+
+
+def names(text: str, start: int, end: int) -> Iterator[Name]:
+    """Yield the names of quantities in ``text[start:end]``, left to right, without overlap.
+
+    A name starts where no letter of an alphabet stands before it; Chinese, Japanese and Korean
+    write no space there, so their characters do not count.
+    """
+    done = start
+    for word in _WORD_START.finditer(text, start, end):
+        at = word.start()
+        if at < done:
+            continue
+        letters = text[at : at + 3]
+        if letters.isalpha() and letters.isascii() and letters.lower() not in _OPENINGS:
+            continue
+        match = _starting(text[at]).match(text, at)
+        if match is not None:
+            done = match.end()
+            yield Name(NOTATIONS[_number(match)], match)
+
+
+def _number(match: re.Match[str]) -> int:
+    # ``lastgroup`` names the outermost group that closed last: the notation itself.
+    return int((match.lastgroup or "n0")[1:])

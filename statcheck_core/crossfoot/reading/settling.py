@@ -1,0 +1,158 @@
+"""Settling groups: what was printed once for several, what a name meant, what is no result."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterable, Sequence
+
+from crossfoot.reading.genuine import is_result
+from crossfoot.reading.grouping import Group
+from crossfoot.reading.items import Item, Part
+
+_TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
+#: An interval right behind one of these is the interval of that effect size.
+_OWN_INTERVAL = frozenset(
+    {"d", "eta2", "eta2_partial", "omega2", "R2", "R2_adj", "R2_change", "f2"}
+)
+#: A residual standard deviation is read beside one of these.
+_WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
+
+
+def shared(groups: Sequence[Group]) -> Iterable[Group]:
+    """Deal out what is printed once for several tests.
+
+    ``32% and 40% … F = …, F = …, respectively; both ps < .001``: listed percentages go to the
+    tests in order, listed p values likewise, and one plural p to each test that has none.
+    """
+    tests = [number for number, group in enumerate(groups) if group.anchor in _TESTS]
+    shares = [
+        item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
+    ]
+    given = _p_in_order(groups, tests)
+    deal = shares if len(shares) == len(tests) > 1 else []
+    for number, group in enumerate(groups):
+        items = [item for item in group.items if item not in deal]
+        if number in given:
+            own = given[number]
+            items = [item for item in items if item.head != "p"] + ([own] if own else [])
+        elif given and group.anchor is None:
+            items = [item for item in items if item not in given.values()]
+        if deal and number in tests:
+            items.insert(0, deal[tests.index(number)])
+        if items:
+            yield Group(tuple(items), group.anchor)
+
+
+def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item | None]:
+    """Return the p of each test where tests are followed by as many p, or one for all."""
+    ps = [
+        (number, item)
+        for number, group in enumerate(groups)
+        for item in group.items
+        if item.head == "p"
+    ]
+    bare = [
+        number for number in tests if not any(item.head == "p" for item in groups[number].items)
+    ]
+    if len(tests) < 2 or not bare or not ps or ps[0][0] < tests[-1]:
+        return {}
+    if len(ps) == len(tests):
+        return {number: item for number, (_, item) in zip(tests, ps, strict=True)}
+    if len(ps) == 1 and "plural" in ps[0][1].flags:
+        return dict.fromkeys(tests, ps[0][1])
+    # More p than one, and not one for each: whose they are is not said.
+    return {tests[-1]: None} if len(ps) > 1 else {}
+
+
+def settle(group: Group, text: str) -> Group | None:
+    """Drop what does not belong, settle names that need the others, or refuse the group."""
+    items = [_renamed(item, group) for item in group.items]
+    items = _own_interval(items, group.anchor)
+    items = _one_sample_size(items, text)
+    if not {item.head for item in items} & _WITH_S:
+        items = [item for item in items if item.head != "s"]
+    items = [item for item in items if not _doubled(item, items)]
+    if group.anchor in {"F", "F_change"}:
+        items = _df_of_f(items)
+    return Group(tuple(items), group.anchor) if is_result(group.anchor, items, text) else None
+
+
+def _renamed(item: Item, group: Group) -> Item:
+    heads = {other.head for other in group.items}
+    if item.head == "β":
+        plain = "b" in heads or "odds_ratio" in heads
+        known = (not plain and heads & {"se", "ci"}) or any(p.quantity == "se" for p in item.parts)
+        quantity = "b" if known and not plain else "beta"
+        parts = tuple(p._replace(quantity=quantity) if p.quantity == "β" else p for p in item.parts)
+        return item._replace(head=quantity, parts=parts)
+    if item.head == "F" and "R2_change" in heads and "R2" not in heads and "F_change" not in heads:
+        parts = tuple(
+            p._replace(quantity="F_change") if p.quantity == "F" else p for p in item.parts
+        )
+        return item._replace(parts=parts)
+    return item
+
+
+def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
+    """Drop an interval that belongs to an effect size, and the effect sizes that are not read."""
+    kept = []
+    for number, item in enumerate(items):
+        before = items[number - 1].head if number else None
+        if item.head == "ci" and (before in _OWN_INTERVAL or anchor in {"F", "F_change", "chi2"}):
+            continue
+        kept.append(item)
+    return [item for item in kept if item.head != "d"]
+
+
+def _doubled(item: Item, items: Sequence[Item]) -> bool:
+    """Say whether another item of the group already tells what this one does."""
+    if "adjusted-p" in item.flags:
+        return any(other.head == "p" and "adjusted-p" not in other.flags for other in items)
+    if "percent" in item.flags:
+        own = item.parts[0]
+        return any(
+            other is not item
+            and other.parts
+            and other.parts[0].quantity in {"R2", "R2_adj"}
+            and (other.parts[0].quantity == own.quantity or _same(other.parts[0], own))
+            for other in items
+        )
+    return False
+
+
+def _same(first: Part, second: Part) -> bool:
+    """Say whether two numbers are one number at different precision."""
+    return (
+        first.low <= (second.low + second.high) / 2 <= first.high
+        or second.low <= (first.low + first.high) / 2 <= second.high
+    )
+
+
+def _one_sample_size(items: list[Item], text: str) -> list[Item]:
+    """Drop group sizes: a small n that another n accompanies, or that is less than its df."""
+    most = max((p.low for i in items for p in i.parts if p.quantity in {"df2", "df"}), default=0.0)
+    kept = []
+    for item in items:
+        if item.head == "n" and (text[item.start] == "n" or "told" in item.flags):
+            around = text[max(0, item.start - 160) : item.end + 160]
+            several = len(re.findall(r"(?<![A-Za-z])n\s?=\s?\d", around)) > 1
+            if several or item.parts[0].high <= most:
+                continue
+        kept.append(item)
+    return kept
+
+
+def _df_of_f(items: list[Item]) -> list[Item]:
+    """Give an F the degrees of freedom that stand apart from it, each once."""
+    have = {p.quantity for i in items if i.head != "df" for p in i.parts}
+    kept = []
+    for number, item in enumerate(items):
+        if item.head == "df":
+            after_s = number > 0 and items[number - 1].head == "s"
+            quantity = "df2" if after_s or "df1" in have else "df1"
+            if quantity in have:
+                continue
+            have.add(quantity)
+            item = item._replace(parts=(item.parts[0]._replace(quantity=quantity),))
+        kept.append(item)
+    return kept

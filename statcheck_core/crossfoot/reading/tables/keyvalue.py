@@ -1,0 +1,72 @@
+"""Tables of labels and values that summarise one model."""
+
+from __future__ import annotations
+
+import itertools
+from collections.abc import Sequence
+
+from crossfoot.reading.tables import headings
+from crossfoot.reading.tables.contents import content_of, is_blank
+from crossfoot.reading.tables.fits import FIT, Entry, Model, entries_of, model_claims
+from crossfoot.reading.tables.grid import Box
+from crossfoot.reading.tables.making import Found, Sheet
+
+_ROLES = FIT | {"p", "se"}
+#: A summary has no more rows, so that a list of a thousand numbers is none.
+_MOST = 60
+
+
+def key_values(sheet: Sheet) -> Found | None:
+    """Return the claim of a summary in labels and values, or None where it is none."""
+    panel = sheet.panel
+    if panel.width not in {2, 3, 4, 6} or not panel.rows or len(panel.rows) > _MOST:
+        return None
+    entries: list[Entry] = []
+    contexts: list[str] = []
+    read: set[int] = set()
+    boxes: list[Box] = []
+    for number, row in enumerate((*panel.heads, *panel.rows), start=-len(panel.heads)):
+        for head, box in _pairs(row):
+            heading = headings.parse_label(head.text)
+            if not heading.roles or heading.roles[0] not in _ROLES:
+                continue
+            if heading.roles == ("se",):
+                heading = heading._replace(roles=("s",))
+            found = entries_of(sheet, heading, head, box, contexts)
+            entries += found
+            if found:
+                boxes += [head, box]
+                read.add(number)
+    if "robust" in sheet.legend.contexts:
+        return _apart(sheet, entries, boxes, contexts, read)
+    model = Model(sheet.title or "model", tuple(entries), tuple(boxes), tuple(contexts))
+    claims = model_claims(sheet, [model])
+    return Found(tuple(claims), frozenset(read)) if claims else None
+
+
+def _apart(
+    sheet: Sheet,
+    entries: Sequence[Entry],
+    boxes: Sequence[Box],
+    contexts: Sequence[str],
+    read: set[int],
+) -> Found | None:
+    """Keep a robust F apart from R², which says nothing of it."""
+    test = tuple(entry for entry in entries if entry.role in {"F", "df1", "df2", "p"})
+    rest = tuple(entry for entry in entries if entry not in test)
+    models = [
+        Model("F", test, tuple(boxes), tuple(contexts)),
+        Model("model", rest, tuple(boxes), tuple(contexts)),
+    ]
+    claims = model_claims(sheet, models, with_coefficients=True)
+    return Found(tuple(claims), frozenset(read)) if claims else None
+
+
+def _pairs(row: Sequence[Box]) -> list[tuple[Box, Box]]:
+    """Return the labels of a row, each with the value beside it."""
+    pairs: list[tuple[Box, Box]] = []
+    for head, box in itertools.pairwise(row):
+        valued = not is_blank(box.text) and content_of(box.text) is not None
+        if head.text and valued and content_of(head.text) is None:
+            pairs.append((head, box))
+    return pairs

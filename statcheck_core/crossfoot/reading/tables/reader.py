@@ -1,0 +1,143 @@
+"""From a table to its claims: each panel goes to the recogniser that knows it."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Callable, Iterable, Sequence
+
+from crossfoot.documents.table import Table
+from crossfoot.model import Claim
+from crossfoot.reading.cues import CUES, cues_in
+from crossfoot.reading.fold import fold
+from crossfoot.reading.tables import legend as legends
+from crossfoot.reading.tables.anova import anova, bare
+from crossfoot.reading.tables.coefficients import coefficients
+from crossfoot.reading.tables.columns import columns_of, writes_comma
+from crossfoot.reading.tables.correlations import correlations
+from crossfoot.reading.tables.grid import Panel, panels_of
+from crossfoot.reading.tables.keyvalue import key_values
+from crossfoot.reading.tables.making import Found, Sheet
+from crossfoot.reading.tables.results import results
+from crossfoot.reading.tables.sidebyside import side_by_side
+from crossfoot.reading.tables.summaries import summaries
+from crossfoot.reading.tables.together import joined
+
+#: Reads a stretch of the visible text as prose; places count in the whole text.
+Prose = Callable[[int, int], Sequence[Claim]]
+
+_RECOGNISERS: tuple[Callable[[Sheet], Found | None], ...] = (
+    correlations,
+    anova,
+    coefficients,
+    summaries,
+    side_by_side,
+    key_values,
+    results,
+    bare,
+)
+_TITLE = re.compile(
+    r"\s*((?:Table|Tabelle|Tableau|Tabla|Tabela|Tabell?a?|表)\s?[A-Z]?\d{0,3}(?:[.-]\d{1,3})?)(?![\w])",
+    re.IGNORECASE,
+)
+_STATED = re.compile(r"[=<>≤≥≈]\s?[-+]?\s?[.,]?\d")
+#: Contexts that words must stand near a result to mean.
+_NEAR = frozenset(cue.context for cue in CUES if cue.near)
+#: Longest caption or note that is looked at, in code points.
+_LONGEST_NOTE = 4000
+_NOTE_ROW = re.compile(
+    r"\(?(?:notes?|source|anm(?:erkung)?|remarque|nota)\b\.?\s?:?.{0,3}|[*†‡].{0,12}[<=].*|.{0,4}signif\..*",
+    re.IGNORECASE,
+)
+
+
+def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, ...]:
+    """Return the claims of a table, in places of its visible text.
+
+    Parameters
+    ----------
+    table
+        The table.
+    prose
+        Reads what is written out: notes, captions, cells with whole results.
+    lead
+        Words before the table that speak of it, where they are no part of it.
+    """
+    folded = fold(table.visible.text)
+    panels = panels_of(table, folded)
+    stretches = _stretches(table, panels)
+    legend = legends.legend_of(folded, stretches)
+    words = " ".join([lead, *(folded[start:end] for start, end in stretches)])
+    if lead:
+        legend = legend._replace(contexts=legend.contexts | cues_in(lead).contexts - _NEAR)
+    title = _title(folded, table)
+    found: list[Claim] = []
+    for panel in panels:
+        heads = " ".join(box.text for row in panel.heads for box in row)
+        sheet = Sheet(
+            table.visible.text, folded, panel, columns_of(panel), legend, writes_comma(panel),
+            title, f"{words} {heads}",
+        )  # fmt: skip
+        known = _recognised(sheet)
+        found += known.claims
+        found += _written_out(panel, known.rows, stretches, prose, folded)
+    notes = [
+        c
+        for start, end in stretches
+        if _STATED.search(folded, start, end)
+        for c in prose(start, end)
+    ]
+    return tuple(joined(found, notes))
+
+
+def _recognised(sheet: Sheet) -> Found:
+    for recognise in _RECOGNISERS:
+        found = recognise(sheet)
+        if found is not None:
+            return found
+    return Found(())
+
+
+def _stretches(table: Table, panels: Sequence[Panel]) -> list[tuple[int, int]]:
+    """Return where caption and notes stand; the last rows may be notes too."""
+    spans = [table.caption] if table.caption else []
+    spans += table.notes
+    found = [(start, min(end, start + _LONGEST_NOTE)) for start, end in spans]
+    for panel in panels:
+        for row in panel.rows[-6:]:
+            filled = [box for box in row if box.text]
+            wide = filled and (
+                (len(filled) == 1 and len(filled[0].text) > 20)
+                or _NOTE_ROW.fullmatch(filled[0].text)
+            )
+            if wide and not any(box.end - box.start > _LONGEST_NOTE for box in filled):
+                found += [(box.start, box.end) for box in filled]
+    return sorted(set(found))
+
+
+def _title(folded: str, table: Table) -> str:
+    if table.caption is None:
+        return ""
+    match = _TITLE.match(folded, table.caption.start, table.caption.end)
+    return table.visible.text[match.start(1) : match.end(1)] if match else ""
+
+
+def _written_out(
+    panel: Panel,
+    read: frozenset[int],
+    stretches: Iterable[tuple[int, int]],
+    prose: Prose,
+    folded: str,
+) -> list[Claim]:
+    """Read the rows whose cells hold whole results, as far as nothing else has read them."""
+    notes = set(stretches)
+    claims: list[Claim] = []
+    left = [row for index, row in enumerate(panel.rows) if index not in read]
+    for row in (*panel.heads, *left):
+        number = max(box.row for box in row)
+        filled = [box for box in row if box.text and box.row == number]
+        if not filled or any((box.start, box.end) in notes for box in filled):
+            continue
+        start, end = filled[0].start, filled[-1].end
+        if _STATED.search(folded, start, end):
+            claims += prose(start, end)
+    return claims

@@ -1,0 +1,147 @@
+"""Rows of test results: an effect with F, a comparison with t, and the like."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+
+from crossfoot.model import Claim, Reading
+from crossfoot.reading.tables.columns import labels_of, roles_in, side_by_side
+from crossfoot.reading.tables.contents import NONE, content_of
+from crossfoot.reading.tables.making import Column, Found, Sheet, claim, head_df, marked, reading
+from crossfoot.reading.tables.rows import kind_of, label_of
+
+_KINDS = {
+    "F": "effect",
+    "t": "mean-comparison",
+    "chi2": "frequency",
+    "r": "correlation",
+    "z": "mean-comparison",
+}
+_EFFECT_SIZES = frozenset({"eta2", "eta2_partial", "omega2"})
+_ROLES = frozenset({*_KINDS, "df", "df1", "df2", "p", "n", *_EFFECT_SIZES})
+_NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2", "se"})
+
+
+def results(sheet: Sheet) -> Found | None:
+    """Return the claims of a table of tests, a row each, or None where it is none."""
+    roles = roles_in(sheet.columns)
+    if roles & _NEVER or not roles & set(_KINDS):
+        return None
+    claims: list[Claim] = []
+    rows: set[int] = set()
+    for group in side_by_side(sheet.columns, _ROLES):
+        own = {role for column in group for role in column.heading.roles}
+        tests = [key for key in _KINDS if key in own]
+        if len(tests) == 1 and _supported(tests[0], own, group):
+            found = _rows(sheet, group, tests[0])
+            claims += found.claims
+            rows |= found.rows
+    return Found(tuple(claims), frozenset(rows)) if claims else None
+
+
+def _supported(test: str, roles: set[str], columns: Sequence[Column]) -> bool:
+    """Say whether headings make a test: a letter alone is none."""
+    degrees = bool(roles & {"df", "df1", "df2"}) or any(c.heading.df for c in columns)
+    if test in {"z", "r"}:
+        return "p" in roles and (test == "z" or degrees or "n" in roles)
+    return degrees and ("p" in roles or bool(roles & _EFFECT_SIZES) or test == "F")
+
+
+def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
+    labels = labels_of(sheet.panel, sheet.columns)
+    has_p = any(column.heading.roles == ("p",) for column in columns)
+    claims: list[Claim] = []
+    rows: set[int] = set()
+    waiting: list[int] = []
+    for index, row in enumerate(sheet.panel.rows):
+        words = [row[c.number] for c in labels if row[c.number].text]
+        label = label_of(", ".join(box.text for box in words))
+        cells: dict[str, Reading] = {}
+        contexts: list[str] = []
+        for column in columns:
+            box = row[column.number]
+            _read(sheet, column, box.text, box.start, test, cells, contexts, has_p=has_p)
+        if (
+            test == "F"
+            and "F" not in cells
+            and "p" not in cells
+            and kind_of(label) in {"error", "blank"}
+        ):
+            error = cells.get("df1") or cells.get("df2")
+            if error is not None:
+                given = (error._replace(quantity="df2"),)
+                for number in waiting:
+                    if not any(r.quantity == "df2" for r in claims[number].readings):
+                        claims[number] = claims[number]._replace(given=given)
+                waiting = []
+                rows.add(index)
+            continue
+        if test not in cells or len(cells) < 2 or not _possible(cells):
+            continue
+        boxes = (*words, *(row[c.number] for c in columns))
+        found = claim(sheet, _KINDS[test], label or test, cells.values(), boxes, contexts=contexts)
+        waiting.append(len(claims))
+        claims.append(found)
+        rows.add(index)
+    return Found(tuple(claims), frozenset(rows))
+
+
+def _possible(cells: dict[str, Reading]) -> bool:
+    p = cells.get("p")
+    return p is None or (p.high >= 0 and p.low <= 1.5 and p.low < p.high)
+
+
+def _read(
+    sheet: Sheet,
+    column: Column,
+    text: str,
+    start: int,
+    test: str,
+    cells: dict[str, Reading],
+    contexts: list[str],
+    *,
+    has_p: bool,
+) -> None:
+    content = content_of(text, start) or NONE
+    roles = column.heading.roles
+    one = "df1" if test == "F" else "df"
+    numbers = content.numbers
+    if roles == ("df",) and len(numbers) == 2 and test == "F":
+        roles = ("df1", "df2")
+    elif (
+        roles == ("df",)
+        and len(numbers) == 1
+        and test == "F"
+        and (pair := _glued(numbers[0].literal))
+    ):
+        first = numbers[0]._replace(literal=pair[0], end=numbers[0].start + len(pair[0]))
+        numbers = (first, numbers[0]._replace(literal=pair[1], start=numbers[0].end - len(pair[1])))
+        roles = ("df1", "df2")
+    if len(roles) == 2 and roles[1] == "df" and len(numbers) == 3:
+        roles = (roles[0], "df1", "df2")
+    for role, number in zip(roles, numbers, strict=False):
+        quantity = one if role == "df" else role
+        if quantity not in _ROLES:
+            continue
+        found = reading(sheet, number, quantity)
+        if found is not None:
+            cells.setdefault(quantity, found)
+    names = ("df1", "df2") if test == "F" else ("df",)
+    for name, number in zip(names, content.df, strict=False):
+        found = reading(sheet, number, name)
+        if found is not None:
+            cells.setdefault(name, found)
+    if numbers and roles[:1] == (test,):
+        for found in head_df(sheet, column, names):
+            cells.setdefault(found.quantity, found)
+    mark, default = marked(sheet, content, beside_p=has_p)
+    if mark is not None and roles[:1] in {(test,), ("p",)}:
+        cells.setdefault("p" if mark.term is None else "stars", mark)
+        contexts += ["default-stars"] if default else []
+    contexts += column.heading.contexts
+
+
+def _glued(literal: str) -> tuple[str, str] | None:
+    """Return both degrees of freedom of ``2,87``."""
+    first, comma, second = literal.partition(",")
+    return (first, second) if comma and first.isdigit() and second.isdigit() else None

@@ -1,0 +1,158 @@
+"""Relations and numbers: what follows a name."""
+
+from __future__ import annotations
+
+import re
+
+from crossfoot.reading import numerals
+from crossfoot.reading.fold import HARD_SPACE
+from crossfoot.reading.items import WHOLE, Part, Text
+from crossfoot.reading.lazily import lazily
+from crossfoot.reading.notation import Name
+from crossfoot.reading.numerals import NUMERAL
+
+#: Words that join two numbers of a list.
+AND = r"(?:and|und|et|y|e|en|och|og|&)"
+#: A count as printed inside brackets or beside "degrees of freedom".
+COUNT = r"\d{1,3}(?:[, ]\d{3})+(?!\d)|\d+(?:[.,]\d+)?"
+
+_SIGN = (
+    r"(?:=\s?[<>≤≥](?![<>=])|<\s?=|>\s?=|=\s?<|<{1,3}(?![/<!])|>{1,3}|[=≤≥≈¼]"
+    r"|&lt;|&gt;|(?:is|was|were)?\s?(?:less|lower|smaller|greater|larger|higher|more)\sthan|below|under|above)"
+)
+_VERB = (
+    r"(?:of|by|was|is|are|were|equals?|equal(?:led)?\sto|being|von|war|ist|betrug|de|était|van|di|av|på|var|fue|fut|foi|è|é|es|est|vaut|oli)"
+    r"(?:\s(?:only|about|just|approximately))?"
+)
+_RELATION = re.compile(rf"\s*+(?:\(\s*+)?(?P<sign>{_SIGN})\s*+(?=[-+]?\s?[.,·]?\d|n\.?\s?s)")
+# "<", ">" and "=" as some journals' fonts come out of a PDF.
+_DAMAGED = lazily(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
+_DAMAGE = {"b": "<", "o": "<", "N": ">", "~": "≈", "∼": "≈"}
+_WORDS = re.compile(
+    rf"\s++{_VERB}\s++(?=[-+]?\s?[.,·]?\d)|\s?:\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
+)
+_SPACES = re.compile(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
+# A worked line, `= 1 − (1−.90)(20)/17 = .882`: only the last value counts.
+_TERM = r"(?:[\d\s.,/()+×*·^²-]|_?\{[^{}=]{1,14}\}|MS[EBWR]?|SS[EBWRT]?|R|[nk](?![a-z]))"
+_WORKED = lazily(
+    rf"\s*+=\s*+(?P<formula>{_TERM}{{3,70}}=\s*+(?:{_TERM}{{3,60}}=\s*+)?)(?P<value>{NUMERAL})"
+)
+_OPERATION = lazily(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
+_NUMERAL = re.compile(NUMERAL)
+_NOT_SIGNIFICANT = re.compile(r"n\.?\s?s\.?(?![a-z])")
+_UNIT = re.compile(
+    r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
+    r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?)(?![\w=(.'-]|\s?[=<>(])"
+)
+_GLUED = re.compile(r"[A-Za-z_°]|[.,:]\d|\s?[×x/]\s?\(?\d")
+_COUNT_SPACES = {0x20: HARD_SPACE}
+_GROUPED = re.compile(r",\d{3}(?!\d)")
+
+#: Quantities that have no unit: a unit behind the number makes it something else.
+_UNITLESS = frozenset(
+    {"F", "p", "t", "r", "z", "chi2", "R", "R2", "R2_adj", "R2_change", "F_change", "β", "beta"}
+)
+#: Of those, the ones that may be printed as a percentage.
+_SHARES = frozenset({"R2", "R2_adj", "R2_change", "p"})
+#: Quantities for which a worked line is followed to its end.
+_MAY_BE_WORKED = frozenset(
+    {"F", "R2", "R2_adj", "R2_change", "F_change", "t", "f2", "eta2", "eta2_partial"}
+)
+
+
+def value_after(text: Text, at: int, quantity: str, name: Name) -> Part | None:
+    """Return the relation and number that stand at ``at``, after ``name`` and its brackets."""
+    folded = text.folded
+    if quantity in _MAY_BE_WORKED and _has_second_sign(folded, at):
+        worked = _WORKED().match(folded, at)
+        if worked is not None and _OPERATION().search(worked["formula"]):
+            return number_at(text, worked.start("value"), quantity, "=")
+    match = _RELATION.match(folded, at)
+    if match is not None:
+        return number_at(text, match.end(), quantity, _relation(match["sign"]))
+    damaged = _DAMAGED().match(folded, at) if quantity == "p" else None
+    if damaged is not None:
+        return number_at(text, damaged.end(), quantity, _DAMAGE[damaged["sign"]])
+    match = _WORDS.match(folded, at)
+    if match is None and _may_stand_bare(folded, quantity, name):
+        match = _SPACES.match(folded, at)
+    if match is None:
+        return None
+    return number_at(text, match.end(), quantity, match["sign"] or "=")
+
+
+def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
+    """Return the numeral at ``at``, unless what follows makes it something else.
+
+    ``n.s.`` is a number of p: above the usual level.
+    """
+    folded = text.folded
+    match = _NUMERAL.match(folded, at)
+    if match is None:
+        insignificant = _NOT_SIGNIFICANT.match(folded, at)
+        if insignificant is None or quantity != "p":
+            return None
+        return not_significant(*insignificant.span())
+    end = match.end()
+    if _GLUED.match(folded, end) or (quantity in _UNITLESS and _UNIT.match(folded, end)):
+        return None
+    numeral = numerals.parse(
+        match.group(), decimal_comma=text.decimal_comma, whole=quantity in WHOLE
+    )
+    if numeral is None or (numeral.percent and quantity in _UNITLESS - _SHARES):
+        return None
+    return Part(quantity, relation, at, end, *numerals.bounds(relation, numeral))
+
+
+def known_number(text: Text, match: re.Match[str], group: str, quantity: str) -> Part | None:
+    """Return a matched numeral whose neighbours are known to be fine."""
+    numeral = numerals.parse(match[group], decimal_comma=text.decimal_comma)
+    if numeral is None:
+        return None
+    return Part(quantity, "=", *match.span(group), numeral.low, numeral.high)
+
+
+def count_at(text: Text, literal: str, at: int, quantity: str) -> Part | None:
+    """Return a count that stands at ``at``; decimals make it a rounded number."""
+    comma = text.decimal_comma or ("," in literal and _GROUPED.search(literal) is None)
+    numeral = numerals.parse(literal.translate(_COUNT_SPACES), decimal_comma=comma, whole=True)
+    if numeral is None:
+        return None
+    return Part(quantity, "=", at, at + len(literal), numeral.low, numeral.high)
+
+
+def not_significant(start: int, end: int) -> Part:
+    """Return what ``n.s.`` at a place says of p, at the usual level."""
+    return Part("p", ">", start, end, 0.05, float("inf"))
+
+
+def _has_second_sign(folded: str, at: int) -> bool:
+    """Say, cheaply, whether a worked line can stand at ``at``: two ``=`` with a sum between."""
+    first = folded.find("=", at, at + 4)
+    return first >= 0 and folded.find("=", first + 1, first + 140) >= 0
+
+
+def _may_stand_bare(folded: str, quantity: str, name: Name) -> bool:
+    """Say whether a number may follow a name with nothing but space between."""
+    if name.notation.wordy and len(name.match.group()) > 1:
+        return True
+    return quantity == "se" and folded[name.match.start() - 1 : name.match.start()] == "("
+
+
+def _relation(sign: str) -> str:
+    """Return the canonical relation for what is printed."""
+    plain = "".join(sign.split())
+    if "than" in plain or plain.isalpha():
+        less = any(word in plain for word in ("less", "lower", "smaller", "below", "under"))
+        return "<" if less else ">"
+    if plain in {"&lt;", "&gt;"}:
+        return "<" if plain == "&lt;" else ">"
+    if plain in {"<=", "≤", "=≤"}:
+        return "≤"
+    if plain in {">=", "≥", "=≥"}:
+        return "≥"
+    if "<" in plain:
+        return "<"
+    if ">" in plain:
+        return ">"
+    return "≈" if plain == "≈" else "="

@@ -1,0 +1,131 @@
+"""What a scan costs, beside a baseline of the same run.
+
+``pytest tests/benchmarks/test_scan.py -s`` prints a line each: what was measured, what is aimed at.
+Nothing here fails for being slow; what is asserted is that the work was done.
+"""
+
+from __future__ import annotations
+
+import os
+import subprocess
+import sys
+import time
+from collections.abc import Callable, Sequence
+from pathlib import Path
+from typing import Any
+
+import pytest
+
+from benchmarks.drafts import draft
+from crossfoot.audit import audit_claim
+from crossfoot.reading import read_block
+from crossfoot.reading.cues import cues_in
+from crossfoot.scan import scan_text
+
+MEGABYTE = 1_000_000
+ROUNDS = 5
+
+#: Prints the most memory, in kilobytes, that scanning a file took.
+MEMORY = """
+import resource, sys
+from crossfoot.batch.files import scan_file
+report = scan_file(sys.argv[1])
+assert len(report.claims) > 4000
+print(resource.getrusage(resource.RUSAGE_SELF).ru_maxrss)
+"""
+
+
+def best(work: Callable[[], object], rounds: int = ROUNDS) -> float:
+    """Return the shortest time of several, in seconds."""
+    times = []
+    for _ in range(rounds):
+        start = time.perf_counter()
+        work()
+        times.append(time.perf_counter() - start)
+    return min(times)
+
+
+def run(arguments: Sequence[str]) -> str:
+    done = subprocess.run(
+        [sys.executable, *arguments],
+        capture_output=True,
+        text=True,
+        check=False,
+        env={**os.environ, "PYTHONIOENCODING": "utf-8"},
+    )
+    assert done.returncode in (0, 1), done.stderr
+    return done.stdout
+
+
+def forget() -> None:
+    for memory in (read_block, cues_in, audit_claim):
+        memory.cache_clear()
+
+
+def say(benchmark: Any, what: str, measured: str, aim: str) -> None:
+    benchmark.extra_info.update(what=what, measured=measured, aim=aim)
+    print(f"\n{what}: {measured} (aim: {aim})")
+
+
+def cold(benchmark: Any, path: Path, baseline: str) -> float:
+    """Return how many times as long as a baseline a scan in a new process takes."""
+    base = best(lambda: run(["-c", baseline]), 7)
+    scan = ["-m", "crossfoot", "scan", str(path)]
+    benchmark.pedantic(lambda: run(scan), rounds=7, warmup_rounds=1)
+    return best(lambda: run(scan), 7) / base
+
+
+def test_a_file_without_a_result(benchmark: Any, tmp_path: Path) -> None:
+    path = tmp_path / "plain.md"
+    path.write_text("# Notes\n\n" + "Nothing is reported here, only words.\n\n" * 40)
+    assert "no reported result" in run(["-m", "crossfoot", "scan", str(path)])
+    ratio = cold(benchmark, path, "pass")
+    say(benchmark, "cold scan, no result, against a bare interpreter", f"{ratio:.1f}", "6")
+
+
+def test_a_draft(benchmark: Any, tmp_path: Path) -> None:
+    path = tmp_path / "draft.md"
+    path.write_text(draft(40_000, 2_000), "utf-8")
+    assert "20 results found: 20 agree" in run(["-m", "crossfoot", "scan", str(path)])
+    ratio = cold(benchmark, path, "import scipy.special")
+    say(benchmark, "cold scan of 40 KB against importing SciPy's special", f"{ratio:.2f}", "1.3")
+
+
+def test_a_megabyte(benchmark: Any) -> None:
+    text = draft(MEGABYTE, 2_000)
+    scan_text(text[:20_000])  # SciPy is imported by now
+    report = benchmark.pedantic(scan_text, (text,), setup=forget, rounds=ROUNDS)
+    assert len(report.claims) > 450
+    assert not any(placed.audited.findings for placed in report.claims)
+
+    def whole() -> None:
+        forget()
+        scan_text(text)
+
+    rate = len(text) / MEGABYTE / best(whole)
+    say(benchmark, "1 MB, a result every 2 KB", f"{rate:.1f} MB/s", "5 MB/s")
+    again = best(lambda: scan_text(text)) * 1000
+    print(f"the same text again, all of it remembered: {again:.1f} ms")
+
+
+@pytest.mark.parametrize("break_lines", [True, False], ids=["paragraphs", "one line"])
+def test_growth(benchmark: Any, break_lines: bool) -> None:
+    times = []
+    for size in (MEGABYTE // 10, MEGABYTE, 10 * MEGABYTE):
+        text = draft(size, 2_000, break_lines=break_lines)
+
+        def whole(text: str = text) -> None:
+            forget()
+            scan_text(text)
+
+        times.append(best(whole, 1) / len(text) * MEGABYTE)
+    benchmark.pedantic(forget, rounds=1)
+    measured = ", ".join(f"{seconds:.2f}" for seconds in times)
+    say(benchmark, "seconds a megabyte at 0.1, 1 and 10 MB", measured, "the same")
+
+
+def test_memory(benchmark: Any, tmp_path: Path) -> None:
+    path = tmp_path / "long.md"
+    path.write_text(draft(10 * MEGABYTE, 2_000), "utf-8")
+    used = int(benchmark.pedantic(run, (["-c", MEMORY, str(path)],), rounds=1)) / 1024
+    say(benchmark, "memory for a file of 10 MB", f"{used:.0f} MB", "300 MB")
