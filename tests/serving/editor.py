@@ -32,7 +32,7 @@ ENVIRONMENT = {
     ),
 }
 #: Seconds within which anything must have happened.
-PATIENCE = 60.0
+PATIENCE = 120.0
 
 _numbers = itertools.count(1)
 
