@@ -46,6 +46,7 @@ def said(low: float, high: float, like: str = "", apart: tuple[float, float] | N
         (5e-324, math.inf, "57", "at least 0"),
         (58, 61, "57", "between 58 and 61"),
         (math.inf, math.inf, "1.2", "beyond all bounds"),
+        (-math.inf, math.inf, "1.2", "of any value"),
         (-math.inf, -math.inf, "1.2", "beyond all bounds"),
         (0.0485, 0.0491, "", "between 0.0485 and 0.0491"),
         (3.335, 3.3739, "", "between 3.335 and 3.374"),

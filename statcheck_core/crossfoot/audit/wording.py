@@ -45,7 +45,7 @@ def between(interval: Interval, like: Numeral = PLAIN, apart: Interval | None = 
     Parameters
     ----------
     interval
-        What the quantity can be; not unbounded on both sides.
+        What the quantity can be.
     like
         A numeral whose hand is followed: decimal mark, percent sign, no zero before the mark.
     apart
@@ -64,6 +64,8 @@ def between(interval: Interval, like: Numeral = PLAIN, apart: Interval | None = 
         apart = Interval(apart.low * 100, apart.high * 100)
     if low == math.inf or high == -math.inf:
         return "beyond all bounds"
+    if high == math.inf and low == -math.inf:
+        return "of any value"
     if high == math.inf:
         return f"at least {_styled(_bound(low, False, like, apart), like)}"
     if low > -math.inf and high - low <= _CLOSE * max(abs(low), abs(high)):

@@ -85,7 +85,7 @@ _LONGEST_NOTE = 1500
 _MOST_NOTES = 3
 
 
-def together(blocks: Sequence[Block], text: str) -> tuple[Block, ...]:
+def together(blocks: Sequence[Block], text: str, kind: str = "table") -> tuple[Block, ...]:
     """Return the blocks, each table with its caption and notes.
 
     Parameters
@@ -94,15 +94,17 @@ def together(blocks: Sequence[Block], text: str) -> tuple[Block, ...]:
         Of ``text``, in order.
     text
         The text of the document.
+    kind
+        Of the blocks that take others in; tables in plain text are ``verbatim``.
     """
-    if not any(block.kind == "table" for block in blocks):
+    if not any(block.kind == kind for block in blocks):
         return tuple(blocks)
     joined: list[Block] = []
     number = 0
     while number < len(blocks):
         block = blocks[number]
         number += 1
-        if block.kind != "table":
+        if block.kind != kind:
             joined.append(block)
             continue
         start = _caption(joined, text)
@@ -117,7 +119,7 @@ def together(blocks: Sequence[Block], text: str) -> tuple[Block, ...]:
                 following += 1
         number = following
         first = block.start if start is None else start
-        joined.append(Block("table", first, text[first:end]))
+        joined.append(Block(kind, first, text[first:end]))
     return tuple(joined)
 
 
@@ -178,7 +180,7 @@ def _trails(blocks: Sequence[Block], number: int) -> bool:
         or not is_caption(block.source)
     ):
         return False
-    above_next = number + 1 < len(blocks) and blocks[number + 1].kind == "table"
+    above_next = number + 1 < len(blocks) and blocks[number + 1].kind in {"table", "verbatim"}
     return not above_next
 
 

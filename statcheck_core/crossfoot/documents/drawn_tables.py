@@ -151,7 +151,7 @@ def _columns(source: str, lines: list[tuple[int, int]]) -> list[tuple[int, int]]
         line = source[start:end]
         if DASHES.fullmatch(line):
             return [found.span() for found in re.finditer(r"[-=]+", line)]
-        if "|" in line:
+        if "|" in line and (DELIMITER.fullmatch(line) or GRID.fullmatch(line)):
             return None
     return None
 

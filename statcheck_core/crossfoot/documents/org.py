@@ -213,6 +213,8 @@ def _handle(pairs: Pairs, found: re.Match[str], notes: list[int]) -> None:
     edits = pairs.edits
     kind = found.lastgroup
     if found["mark"]:
+        if found["mark"] in (pairs.before(found.start()), pairs.after(found.end())):
+            return  # stars in a row are marks of significance
         if found["mark"] == "+":
             pairs.struck("+", *found.span())
         else:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 
+from crossfoot.documents.captions import together
 from crossfoot.documents.format import Comment, Definitions, Reader
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.visible import Visible, verbatim
@@ -51,7 +52,7 @@ def split(text: str) -> tuple[Block, ...]:
         position = after
     if start >= 0:
         blocks += [Block("verbatim", start, text[start:end]), *waiting]
-    return tuple(blocks)
+    return together(blocks, text, "verbatim")
 
 
 def _breaks(text: str) -> list[tuple[int, int]]:

@@ -121,7 +121,7 @@ def _may_hold(source: str, kind: str, aligned: bool) -> bool:
     """Say, cheaply and without a miss, whether anything can be read in a block."""
     if source.isascii() and not any(digit in source for digit in _DIGITS):
         return False
-    if kind == "table" or (aligned and _HEADS.search(source) is not None):
+    if kind == "table" or (aligned and _may_be_aligned(source)):
         return True
     return any(mark in source for mark in (*_SIGNS, *_WORDS, *_MARKUP))
 

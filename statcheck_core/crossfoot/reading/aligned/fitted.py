@@ -11,8 +11,10 @@ from crossfoot.reading.aligned.lines import Line, Word, is_value, values_of, wor
 from crossfoot.reading.tables.fits import is_fit
 from crossfoot.reading.tables.rows import kind_of
 
+#: What two spaces or a tab part.
+_FIELD = re.compile(r"\S+(?: \S+)*")
 #: A relation is a sentence's, but for the one in ``(df = 2; 191)``.
-_STATED = re.compile(r"(?<!df)(?<!df )=")
+_STATED = re.compile(r"(?<!df)(?<!df )=(?![^()]*\))")
 #: How many lines above the first row of fit are looked at for coefficients.
 _REACH = 400
 
@@ -62,10 +64,24 @@ def models_around(
         first += 1
     if first == last:
         return None
+    body = first
+    first = _with_titles(text, lines, first, free)
     parted = [
         _parted(text, line) for line in lines[first : last + 1] if not line.rule and not line.blank
     ]
     return Bare(first, last, _columns(text, lines, parted))
+
+
+def _with_titles(text: str, lines: Sequence[Line], first: int, free: Sequence[bool]) -> int:
+    """Take in the line above that names the columns: words, wide apart, and no numbers."""
+    above = first - 1
+    while above >= 0 and lines[above].rule:
+        above -= 1
+    if above < 0 or not free[above] or first - above > 2 or lines[above].blank:
+        return first
+    fields = _FIELD.findall(lines[above].text)
+    indented = lines[above].text[:2].isspace()
+    return above if fields and (len(fields) > 1 or indented) else first
 
 
 def _names_fit(text: str, label: Sequence[Word]) -> bool:

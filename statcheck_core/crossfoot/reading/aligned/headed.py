@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import itertools
+import re
 from collections.abc import Sequence
 from typing import NamedTuple
 
@@ -18,7 +19,12 @@ from crossfoot.reading.aligned.lines import (
     values_of,
     words_of,
 )
+from crossfoot.reading.tables.headings import NOTHING
 
+#: What two spaces or a tab part.
+_FIELD = re.compile(r"\S+(?: \S+)*")
+#: A relation that is not in brackets.
+_STATED = re.compile(r"=(?![^()]*\))")
 #: Roles that do not make a line one of headings.
 _WEAK = frozenset({"label", "n", "mean", "sd", "r", "R"})
 
@@ -57,25 +63,50 @@ def headings_in(text: str, line: Line) -> Columns | None:
         i for i, t in enumerate(tokens) if t.heading.roles and t.heading.roles != ("label",)
     )
     heads: list[Token] = []
+    spans: list[tuple[int, int]] = []
     for token in tokens[first:]:
-        heads += _limits(token)
-    offset = line.start
-    spans = tuple((t.start - offset, t.end - offset) for t in heads)
-    return Columns(tuple(tokens[:first]), tuple(heads), spans)
+        start, end = token.start - line.start, token.end - line.start
+        if token.heading.roles == ("ci_low", "ci_high"):
+            # One heading over both limits.
+            heads += [token, token]
+            spans += [(start, (start + end) // 2), ((start + end) // 2, end)]
+        else:
+            heads.append(token)
+            spans.append((start, end))
+    return Columns(tuple(tokens[:first]), tuple(heads), tuple(spans))
 
 
-def _limits(token: Token) -> list[Token]:
-    """Return two headings for one that stands over both limits of an interval."""
-    if token.heading.roles != ("ci_low", "ci_high"):
-        return [token]
-    middle = (token.start + token.end) // 2
-    level = token.heading.level
-    low = token.heading._replace(roles=("ci_low",), level=level)
-    high = token.heading._replace(roles=("ci_high",), level=level)
-    return [
-        Token(token.text, token.start, middle, low),
-        Token(token.text, middle, token.end, high),
+def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
+    """Return the columns of a matrix whose columns are numbered, or named as its rows are."""
+    line = lines[number]
+    fields = [
+        Token(found.group(), line.start + found.start(), line.start + found.end(), NOTHING)
+        for found in _FIELD.finditer(line.text)
     ]
+    if not 2 <= len(fields) <= 40 or _STATED.search(line.text):
+        return None
+    names: set[str] = set()
+    rows = 0
+    for below in lines[number + 1 : number + 42]:
+        if below.rule:
+            continue
+        label, values = _parted(text, below)
+        if not label or (not values and rows > 1):
+            break
+        names.add(text[label[0].start : label[-1].end].lower())
+        rows += 1
+    counts = [field.text.strip("().") for field in fields]
+    numbered = [count for count in counts if count.isdigit()]
+    named = [field for field in fields if field.text.lower() in names]
+    if rows < 2 or not (
+        len(numbered) > 1
+        and numbered == [str(i + 1) for i in range(len(numbered))]
+        or len(named) > 1
+    ):
+        return None
+    first = 1 if fields[0].text.lower() not in names and not counts[0].isdigit() else 0
+    spans = tuple((token.start - line.start, token.end - line.start) for token in fields[first:])
+    return Columns(tuple(fields[:first]), tuple(fields[first:]), spans)
 
 
 def rows_below(
@@ -132,12 +163,27 @@ def _with_unnamed(columns: Columns, counts: Sequence[int]) -> Columns:
         return columns
     usual = max(set(counts), key=counts.count)
     extra = usual - len(columns.heads)
+    if extra < 0:
+        return _with_whole_intervals(columns)
     if not 0 < extra <= len(columns.labels):
         return columns
     moved = columns.labels[-extra:]
     offset = columns.heads[0].start - columns.spans[0][0]
     spans = tuple((token.start - offset, token.end - offset) for token in moved)
     return Columns(columns.labels[:-extra], (*moved, *columns.heads), (*spans, *columns.spans))
+
+
+def _with_whole_intervals(columns: Columns) -> Columns:
+    """Take both limits for one column where rows have fewer values than there are headings."""
+    heads: list[Token] = []
+    spans: list[tuple[int, int]] = []
+    for token, span in zip(columns.heads, columns.spans, strict=True):
+        if heads and token is heads[-1]:
+            spans[-1] = (spans[-1][0], span[1])
+        else:
+            heads.append(token)
+            spans.append(span)
+    return Columns(columns.labels, tuple(heads), tuple(spans))
 
 
 def _section(line: Line, raw: Sequence[object], number: int, end: int) -> bool:

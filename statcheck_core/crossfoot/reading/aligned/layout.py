@@ -32,6 +32,10 @@ _HOPE = re.compile(
 )
 
 
+_RELATED = re.compile(r"[=<>≤≥≈]|\bp-value\b")
+_CASES = re.compile(r"\(?\b[Nn]\s?=\s?[\d,]+\)?")
+
+
 class Layout(NamedTuple):
     """What aligned text holds.
 
@@ -51,7 +55,7 @@ def layout(visible: Visible) -> Layout:
     """Return the tables of aligned text, and the stretches that are none."""
     text = "\t".join(fold(part) for part in visible.text.split("\t"))
     lines = lines_of(text)
-    if len(lines) > _LONGEST or len(lines) < 1 or _HOPE.search(text) is None:
+    if len(lines) > _LONGEST or ("\t" not in text and _HOPE.search(text) is None):
         return Layout((), ((0, len(text)),))
     return _Finder(visible, text, lines).run()
 
@@ -64,6 +68,8 @@ class _Finder:
         self.text = text
         self.lines = list(lines)
         self.free = [not line.blank for line in lines]
+        #: Lines that may start a table without known headings: wide gaps, and none in the line before.
+        self.wide = [_is_wide(line) for line in lines]
         #: Lines whose right end was parted from them.
         self.cut: set[int] = set()
         self.tables: list[tuple[int, Table]] = []
@@ -95,10 +101,30 @@ class _Finder:
             yield start, end
 
     def take(self, first: int, last: int, table: Table) -> None:
-        """Add a table that stands on some lines."""
+        """Add a table that stands on some lines, with the line that names it."""
+        title = self.title(first)
+        if title is not None:
+            line = self.lines[title]
+            table = table._replace(caption=Span(line.start, line.end))
+            self.free[title] = False
         self.tables.append((self.lines[first].start, table))
         for number in range(first, last + 1):
             self.free[number] = False
+
+    def title(self, first: int) -> int | None:
+        """Return the line that names the table below it: one of words, without a result."""
+        above = first - 1
+        while (
+            above >= 0 and first - above < 4 and (self.lines[above].rule or self.lines[above].blank)
+        ):
+            above -= 1
+        if above < 0 or not self.free[above] or above in self.cut:
+            return None
+        text = self.lines[above].text
+        if self.lines[above].blank or self.lines[above].rule or len(text) > 200:
+            return None
+        stated = _RELATED.search(_CASES.sub("", text)) is not None
+        return None if stated or text.count("  ") > 4 or ">" in text[:3] else above
 
     def side_blocks(self) -> None:
         """Part labels with values, at the right ends of lines, from what stands to their left."""
@@ -133,6 +159,8 @@ class _Finder:
             self.take(listing.first, listing.last, self.table(header, rows, after=listing.last + 1))
             return listing.last + 1
         columns = headed.headings_in(self.text, self.lines[number])
+        if columns is None and self.wide[number]:
+            columns = headed.matrix_in(self.text, self.lines, number)
         if columns is None:
             return number + 1
         rows_found, columns, end = headed.rows_below(self.text, self.lines, number + 1, columns)
@@ -207,6 +235,9 @@ class _Finder:
         cells: list[Cell] = []
         for row, places in enumerate((*heads, *rows)):
             for column, place in enumerate(places):
+                if row < len(heads) and place and column and places[column - 1] == place:
+                    cells[-1] = cells[-1]._replace(columns=cells[-1].columns + 1)
+                    continue
                 start, end = place or (0, 0)
                 cells.append(Cell(start, end, row, column, head=row < len(heads)))
         notes = self.notes(after) if after is not None else ()
@@ -227,6 +258,11 @@ class _Finder:
 
 def _place(word: Word | Token | None) -> tuple[int, int] | None:
     return (word.start, word.end) if word is not None else None
+
+
+def _is_wide(line: Line) -> bool:
+    """Say whether a line has three fields, wide apart."""
+    return len(line.text) <= 300 and len(line.text.strip().replace("\t", "  ").split("  ", 3)) > 2
 
 
 def _completes(line: Line) -> bool:

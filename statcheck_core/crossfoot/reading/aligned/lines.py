@@ -21,7 +21,8 @@ RULE = re.compile(r"[-=_+*~─━═|:. ]*(?:[-=_*~─━═]{3}|-\+-)[-=_+*~─
 _VALUE = re.compile(
     rf"(?:[<>≤≥=]\s?)?(?:\d{{1,4}}(?:\.\d+)?, )?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?"
     rf" ?(?:\(df\s?=\s?\d+(?:[;,]\s?\d+)?\))?"
-    rf"|\({NUMERAL}\)\*{{0,3}}|\[{NUMERAL}[,;]?|{NUMERAL}\]|\[{NUMERAL}[,;]\s?{NUMERAL}\]"
+    rf"|[(\[]{NUMERAL}[)\]]\*{{0,3}}|\[{NUMERAL}[,;]?|{NUMERAL}\]"
+    rf"|(?:{NUMERAL}\*{{0,4}} ?)?[(\[]{NUMERAL}(?:[,;]\s?{NUMERAL})?[)\]]\*{{0,3}}|{NUMERAL} (?:to|–) {NUMERAL}"
     r"|NA|NaN|nan|N/A|--?|—|–|\.|\*{1,4}|ns"
 )
 #: Lines after a table that explain it.
@@ -121,7 +122,7 @@ def tokens_of(text: str, words: Sequence[Word]) -> list[Token]:
 def _wide(words: Sequence[Word], first: int, last: int) -> bool:
     """Say whether words stand too far apart to be one name."""
     return any(
-        b.start - a.end > 2
+        b.start - a.end > 1
         for a, b in zip(words[first:last], words[first + 1 : last + 1], strict=False)
     )
 
@@ -132,19 +133,38 @@ def is_value(word: str) -> bool:
 
 
 def values_of(text: str, words: Sequence[Word]) -> list[Word]:
-    """Join what belongs to one value: a relation and its number, limits in brackets."""
+    """Join what belongs to one value: a relation and its number, a number in brackets, limits."""
     joined: list[Word] = []
     for word in words:
-        last = joined[-1] if joined else None
-        if last is not None and (
-            last.text in {"<", ">", "<=", ">=", "≤", "≥", "="}
-            or (last.text[-1] == "," and last.text[:-1].replace(".", "", 1).isdigit())
-            or (last.text[0] == "[" and last.text[-1] in ",;" and word.text[-1] == "]")
-            or ("(df" in last.text and ")" not in last.text)
-            or word.text.startswith("(df")
-            or (_STARS.fullmatch(word.text) is not None and last.text[-1].isdigit())
-        ):
+        if joined and _belongs(joined[-1].text, word.text, word.start - joined[-1].end):
+            last = joined[-1]
             joined[-1] = Word(text[last.start : word.end], last.start, word.end)
         else:
             joined.append(word)
     return joined
+
+
+def _belongs(last: str, word: str, gap: int) -> bool:
+    """Say whether a word goes on with the value that ``last`` has begun."""
+    if last in _RELATIONS or "(df" in last and ")" not in last or word.startswith("(df"):
+        return True
+    if last[-1] in ",;" and (
+        last[0] in "[(" and word[-1] in ")]" or last[:-1].replace(".", "", 1).isdigit()
+    ):
+        return True
+    if gap > 1 or not _ENDS.search(last):
+        return last.endswith((" to", " –", " -")) and gap == 1 and word[0] in "-.0123456789"
+    if word in {"to", "–"}:
+        return True
+    return (
+        _STARS.fullmatch(word) is not None
+        or _ENCLOSED.fullmatch(word) is not None
+        or word[0] in "(["
+        and word[-1] in ",;"
+    )
+
+
+_RELATIONS = frozenset({"<", ">", "<=", ">=", "≤", "≥", "="})
+#: What a number ends with.
+_ENDS = re.compile(r"\d[a-e]?\*{0,4}$")
+_ENCLOSED = re.compile(rf"[(\[]{NUMERAL}[)\]]\*{{0,3}}|[(\[]{NUMERAL}[,;–-]{NUMERAL}[)\]]")

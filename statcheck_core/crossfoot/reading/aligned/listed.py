@@ -30,53 +30,71 @@ class Listing(NamedTuple):
 
 
 def separated(lines: Sequence[Line], number: int) -> Listing | None:
-    """Return the table that starts with a line of names between commas, tabs or the like."""
+    """Return the table whose cells are parted by tabs, bars, semicolons or commas.
+
+    Tabs and bars part nothing else; commas and semicolons need a line of names before the rows.
+    """
     line = lines[number]
-    for mark in ("\t", ";", ",", "|"):
-        if line.text.count(mark) < 2:
-            continue
+    for mark in ("\t", "|", ";", ","):
         header = _cells(line, mark)
-        roles = [
-            headings.parse(line.text[a - line.start : b - line.start].strip('"')).roles
-            for a, b in header
-        ]
-        strong = [r for r in roles if r and r[0] not in _WEAK]
-        if len(strong) < 2 or 2 * len([r for r in roles if r]) < len(roles):
+        if len(header) < (2 if mark == "\t" else 3):
+            continue
+        if mark in ";," and not _names(line, header):
             continue
         rows: list[tuple[Place | None, ...]] = []
         last = number
         for index in range(number + 1, len(lines)):
             below = lines[index]
-            if mark == "|" and below.rule:
+            if below.rule:
                 continue
             cells = _cells(below, mark)
-            if below.blank or not 2 <= len(cells) <= len(header) + 1:
+            alone = mark == "\t" and not cells and len(below.text) <= 60
+            if below.blank or not (alone or 2 <= len(cells) <= len(header) + 1):
                 break
+            if alone:
+                cells = [(below.start, below.end)]
             rows.append(tuple(cells))
             last = index
-        if rows:
+        if any(len(row) > 1 for row in rows):
             width = max(len(header), *(len(row) for row in rows))
-            return Listing(
-                number, last, _padded(header, width), tuple(_padded(row, width) for row in rows)
-            )
+            padded = tuple(_padded(row, width) for row in rows)
+            return Listing(number, last, _padded(header, width), padded)
     return None
 
 
+def _names(line: Line, header: Sequence[Place]) -> bool:
+    """Say whether most cells of a line name what a column holds."""
+    texts = [line.text[a - line.start : b - line.start].strip('"') for a, b in header]
+    roles = [headings.parse(text).roles for text in texts]
+    strong = [r for r in roles if r and r[0] not in _WEAK]
+    return len(strong) >= 2 and 2 * len([r for r in roles if r]) >= len(roles)
+
+
+_PARTS = {
+    "\t": re.compile(r"\t"),
+    "|": re.compile(r"(?:^|(?<=\s))\|(?=\s|$)"),
+    ";": re.compile(r";"),
+    ",": re.compile(r","),
+}
+
+
 def _cells(line: Line, mark: str) -> list[Place]:
+    """Return the cells of a line between marks; those at its ends enclose nothing."""
     text = line.text
+    if mark not in text or len(text) > 2000:
+        return []
+    edges = [found.span() for found in _PARTS[mark].finditer(text)]
+    starts = [0, *(end for _, end in edges)]
+    stops = [*(start for start, _ in edges), len(text)]
     places: list[Place] = []
-    at = 0
-    parts = text.split(mark)
-    for part in parts:
-        start = at + len(part) - len(part.lstrip(' "'))
-        end = at + len(part.rstrip(' "'))
-        places.append((line.start + start, line.start + max(start, end)))
-        at += len(part) + 1
+    for start, stop in zip(starts, stops, strict=True):
+        part = text[start:stop]
+        first = start + len(part) - len(part.lstrip(' "'))
+        last = start + len(part.rstrip(' "'))
+        places.append((line.start + first, line.start + max(first, last)))
     if mark == "|":
-        if text.lstrip().startswith("|"):
-            places = places[1:]
-        if text.rstrip().endswith("|"):
-            places = places[:-1]
+        places = places[1:] if text.lstrip().startswith("|") else places
+        places = places[:-1] if text.rstrip().endswith("|") else places
     return places
 
 

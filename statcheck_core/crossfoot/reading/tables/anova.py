@@ -387,8 +387,15 @@ def _tested_otherwise(line: Line, effects: Sequence[Line], error: Line | None) -
 
 
 def _denominator(line: Line, effects: Sequence[Line]) -> Line | None:
+    """Return the one other row that F is tested against, if its digits leave no doubt."""
     fitting = [other for other in effects if other is not line and _fits(line, other)]
-    return fitting[0] if len(fitting) == 1 else None
+    return fitting[0] if len(fitting) == 1 and _sharp(line) and _sharp(fitting[0]) else None
+
+
+def _sharp(line: Line) -> bool:
+    """Say whether a row prints its mean square to two digits at least."""
+    square = _ms(line)
+    return square is not None and square[1] - square[0] <= 0.05 * square[1]
 
 
 def _fits(line: Line, other: Line) -> bool | None:

@@ -21,6 +21,10 @@ _SAMPLE = 60
 def columns_of(panel: Panel) -> tuple[Column, ...]:
     """Return the columns of a panel."""
     columns = [_column(panel, index) for index in range(panel.width)]
+    for index in range(1, len(columns)):
+        same = columns[index].box is columns[index - 1].box and columns[index].heading.roles
+        if same and all(is_blank(row[index].text) for row in panel.rows[:_SAMPLE]):
+            columns[index] = columns[index]._replace(heading=NOTHING)  # spanned, but empty
     return tuple(_split_intervals(panel, columns))
 
 

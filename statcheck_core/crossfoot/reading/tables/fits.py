@@ -48,7 +48,7 @@ def is_fit(label: str) -> bool:
 
 def _is_letter(label: str) -> bool:
     """Say whether a label is a letter that may name a variable as well."""
-    return len(label.strip()) == 1 and label.strip() not in "NF"
+    return len(label.strip()) == 1 and label.strip() not in "NnF"
 
 
 def fit_rows(sheet: Sheet, groups: Sequence[Sequence[Column]], names: Sequence[str]) -> Found:

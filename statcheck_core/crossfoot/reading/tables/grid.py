@@ -112,6 +112,11 @@ def is_number(text: str) -> bool:
     return not is_blank(text) and content_of(text) is not None
 
 
+def _is_datum(text: str) -> bool:
+    """Say whether a cell holds numbers that are no heading, as ``2.5 %`` is."""
+    return is_number(text) and not headings.parse(text).roles
+
+
 def _heads(matrix: list[tuple[Box, ...]], position: int, declared: int) -> int:
     """Return the index of the first row below the header that starts at ``position``."""
     row = position
@@ -143,7 +148,7 @@ def _may_be_head(row: tuple[Box, ...], follows: bool) -> bool:
         return False
     if _counts_columns([box.text for box in filled]):
         return True
-    if any(is_number(box.text) for box in filled if box.column > 0):
+    if any(_is_datum(box.text) for box in filled if box.column > 0):
         return False
     if not follows:
         return True
