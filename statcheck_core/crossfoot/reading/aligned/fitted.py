@@ -64,7 +64,6 @@ def models_around(
         first += 1
     if first == last:
         return None
-    body = first
     first = _with_titles(text, lines, first, free)
     parted = [
         _parted(text, line) for line in lines[first : last + 1] if not line.rule and not line.blank

@@ -93,14 +93,15 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
         label, values = _parted(text, below)
         if not label or (not values and rows > 1):
             break
+        if len(values) > len(fields):
+            return None
         names.add(text[label[0].start : label[-1].end].lower())
         rows += 1
     counts = [field.text.strip("().") for field in fields]
     numbered = [count for count in counts if count.isdigit()]
     named = [field for field in fields if field.text.lower() in names]
     if rows < 2 or not (
-        len(numbered) > 1
-        and numbered == [str(i + 1) for i in range(len(numbered))]
+        (len(numbered) > 1 and numbered == [str(i + 1) for i in range(len(numbered))])
         or len(named) > 1
     ):
         return None

@@ -68,7 +68,7 @@ class _Finder:
         self.text = text
         self.lines = list(lines)
         self.free = [not line.blank for line in lines]
-        #: Lines that may start a table without known headings: wide gaps, and none in the line before.
+        #: Lines that may start a table without known headings: wide gaps, none in the line before.
         self.wide = [_is_wide(line) for line in lines]
         #: Lines whose right end was parted from them.
         self.cut: set[int] = set()

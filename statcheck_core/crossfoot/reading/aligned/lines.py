@@ -22,7 +22,8 @@ _VALUE = re.compile(
     rf"(?:[<>≤≥=]\s?)?(?:\d{{1,4}}(?:\.\d+)?, )?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?"
     rf" ?(?:\(df\s?=\s?\d+(?:[;,]\s?\d+)?\))?"
     rf"|[(\[]{NUMERAL}[)\]]\*{{0,3}}|\[{NUMERAL}[,;]?|{NUMERAL}\]"
-    rf"|(?:{NUMERAL}\*{{0,4}} ?)?[(\[]{NUMERAL}(?:[,;]\s?{NUMERAL})?[)\]]\*{{0,3}}|{NUMERAL} (?:to|–) {NUMERAL}"
+    rf"|(?:{NUMERAL}\*{{0,4}} ?)?[(\[]{NUMERAL}(?:[,;]\s?{NUMERAL})?[)\]]\*{{0,3}}"
+    rf"|{NUMERAL} (?:to|–) {NUMERAL}"
     r"|NA|NaN|nan|N/A|--?|—|–|\.|\*{1,4}|ns"
 )
 #: Lines after a table that explain it.
@@ -146,10 +147,11 @@ def values_of(text: str, words: Sequence[Word]) -> list[Word]:
 
 def _belongs(last: str, word: str, gap: int) -> bool:
     """Say whether a word goes on with the value that ``last`` has begun."""
-    if last in _RELATIONS or "(df" in last and ")" not in last or word.startswith("(df"):
+    if last in _RELATIONS or ("(df" in last and ")" not in last) or word.startswith("(df"):
         return True
+    opened = max(last.rfind("("), last.rfind("[")) > max(last.rfind(")"), last.rfind("]"))
     if last[-1] in ",;" and (
-        last[0] in "[(" and word[-1] in ")]" or last[:-1].replace(".", "", 1).isdigit()
+        (opened and word[-1] in ")]") or last[:-1].replace(".", "", 1).isdigit()
     ):
         return True
     if gap > 1 or not _ENDS.search(last):
@@ -159,8 +161,7 @@ def _belongs(last: str, word: str, gap: int) -> bool:
     return (
         _STARS.fullmatch(word) is not None
         or _ENCLOSED.fullmatch(word) is not None
-        or word[0] in "(["
-        and word[-1] in ",;"
+        or (word[0] in "([" and word[-1] in ",;")
     )
 
 

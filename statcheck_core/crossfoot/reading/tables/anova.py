@@ -365,14 +365,19 @@ def _short(effects: Sequence[Line], error: Line | None, total: Line) -> bool:
     """Say whether the table leaves a row out: both df and sums of squares fall short."""
     if error is None:
         return False
-    missing = []
+    short = []
     for quantity in ("df", "ss"):
-        parts = [_number(line, quantity) for line in (*effects, error)]
-        whole = _number(total, quantity)
-        if whole is None or None in parts:
+        parts = [line.cells.get(quantity) or line.cells.get(_DF[quantity]) for line in (*effects, error)]
+        whole = total.cells.get(quantity) or total.cells.get(_DF[quantity])
+        known = [part for part in parts if part is not None]
+        if whole is None or len(known) < len(parts):
             return False
-        missing.append(whole - sum(part or 0.0 for part in parts))
-    return missing[0] >= 1 and missing[1] > 0.002 * (_number(total, "ss") or 0.0)
+        short.append(whole.low - sum(part.high for part in known))
+    return short[0] >= 1 and short[1] > 0
+
+
+#: Under what other name a row may print its degrees of freedom.
+_DF = {"df": "df1", "ss": "ss"}
 
 
 def _untested(line: Line) -> dict[str, Reading]:
