@@ -65,7 +65,7 @@ def spoilt() -> Iterator[Spoilt]:
     sure = [family for family in FAMILIES if not family.doubtful]
     each = math.ceil(SPOILT / len(RULES) / len(sure))
     for family in sure:
-        for claim, true in claims(family, each * 2, 50):
+        for claim, true in claims(family, each * 3, 50):
             for rule in RULES.values():
                 made = rule(claim, true, rng)
                 if made is not None and rng.random() < 0.5:
