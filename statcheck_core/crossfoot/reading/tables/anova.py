@@ -367,7 +367,9 @@ def _short(effects: Sequence[Line], error: Line | None, total: Line) -> bool:
         return False
     short = []
     for quantity in ("df", "ss"):
-        parts = [line.cells.get(quantity) or line.cells.get(_DF[quantity]) for line in (*effects, error)]
+        parts = [
+            line.cells.get(quantity) or line.cells.get(_DF[quantity]) for line in (*effects, error)
+        ]
         whole = total.cells.get(quantity) or total.cells.get(_DF[quantity])
         known = [part for part in parts if part is not None]
         if whole is None or len(known) < len(parts):
