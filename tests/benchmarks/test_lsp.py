@@ -1,14 +1,12 @@
-"""How fast the language server is, measured from outside over its pipes.
+"""How fast the server answers: raw figures beside what is aimed at; nothing fails for being slow.
 
-The limits are those an author feels: a screen shows a new picture every 16 ms. Each figure is the
-best of a few rounds. Where other programs keep the machine busy, what passes on the clock is
-theirs; then the limits are those of the time that the server itself computes, which is measured
-beside it.
+Every figure is the 95th percentile of all runs of a fixed number, none left out and none repeated
+until it fits. Nothing is corrected for a slow or busy machine: how long importing pygls takes in
+the same run is printed beside the figures, so that a reader can judge the machine.
 """
 
 from __future__ import annotations
 
-import os
 import subprocess
 import sys
 import time
@@ -21,7 +19,8 @@ import pytest
 from serving.editor import COMMAND, ENVIRONMENT
 from serving.wire import Wire, wire
 
-ROUNDS = 3
+#: Runs of each kind.
+TIMES = 300
 
 WORDS = (
     "The plots that the crew marked in spring were visited again in autumn, and whoever came by "
@@ -48,8 +47,8 @@ def manuscript(size: int, every: int = 1500) -> str:
 
 
 LARGE = manuscript(1_000_000)
-#: 2,000 lines of some 60 characters.
-DRAFT = manuscript(120_000, 900).replace(". ", ".\n")
+#: 2,000 lines of some 60 characters, by how many characters lie between two results.
+DRAFTS = {every: manuscript(120_000, every).replace(". ", ".\n") for every in (900, 1500)}
 
 
 class Open:
@@ -100,14 +99,6 @@ class Figure(NamedTuple):
     def __str__(self) -> str:
         return f"{self.clock:.2f} ms ({self.work:.2f} ms of work)"
 
-    def within(self, limit: float) -> bool:
-        return self.clock <= limit or (busy() and self.work <= limit)
-
-
-def busy() -> bool:
-    """Say whether more runs on this machine than this test, which takes one core or two."""
-    return os.getloadavg()[0] > 2.0
-
 
 def work_of(process: int) -> float:
     """Return the seconds that all threads of a process have computed; 0 where nobody tells."""
@@ -117,21 +108,19 @@ def work_of(process: int) -> float:
     return sum(int((t / "schedstat").read_text().split()[0]) for t in tasks.iterdir()) / 1e9
 
 
-async def percentile(server: Wire, work: Callable[[], Awaitable[Any]], times: int = 100) -> Figure:
-    """Return how long something takes, in the best of a few rounds."""
+async def percentile(
+    server: Wire, work: Callable[[], Awaitable[Any]], times: int = TIMES
+) -> Figure:
+    """Return the 95th percentile of how long something takes."""
     process = server.process.pid
-    best = Figure(float("inf"), float("inf"))
-    for _ in range(ROUNDS):
-        clocks, works = [], []
-        for _ in range(times):
-            used, start = work_of(process), time.perf_counter()
-            await work()
-            clocks.append(time.perf_counter() - start)
-            works.append(work_of(process) - used)
-        number = int(0.95 * times)
-        clock, used = sorted(clocks)[number] * 1000, sorted(works)[number] * 1000
-        best = Figure(min(best.clock, clock), min(best.work, used))
-    return best
+    clocks, works = [], []
+    for _ in range(times):
+        used, start = work_of(process), time.perf_counter()
+        await work()
+        clocks.append(time.perf_counter() - start)
+        works.append(work_of(process) - used)
+    number = int(0.95 * times)
+    return Figure(sorted(clocks)[number] * 1000, sorted(works)[number] * 1000)
 
 
 @pytest.mark.asyncio
@@ -152,25 +141,24 @@ async def test_an_edit_is_answered_before_the_next_picture(record_property: Any)
         }
         hover = await percentile(server, lambda: server.ask("textDocument/hover", place))
         completion = await percentile(server, lambda: server.ask("textDocument/completion", place))
-        draft = Open(server, "file:///draft.md", DRAFT)
-        await draft.read()
-        short = await percentile(server, draft.edit)
+        drafts = {}
+        for every, text in DRAFTS.items():
+            draft = Open(server, f"file:///draft-{every}.md", text)
+            await draft.read()
+            drafts[every] = await percentile(server, draft.edit)
         assert await server.end() == 0
-    figures = {
-        "first": first,
-        "edit": edit,
-        "hover": hover,
-        "completion": completion,
-        "draft": short,
+    told = {
+        "first reading of 1 MB": str(first),
+        "edit of 1 MB (aim: 16 ms)": str(edit),
+        "first reading over edit (aim: 30)": f"{first.clock / edit.clock:.0f}",
+        "hover (aim: 5 ms)": str(hover),
+        "completion (aim: 5 ms)": str(completion),
+        **{f"edit of a draft, every {k} (aim: 5 ms)": str(v) for k, v in drafts.items()},
+        "importing pygls": f"{min(importing() for _ in range(5)) * 1000:.0f} ms",
     }
-    for name, value in figures.items():
-        record_property(name, str(value))
-    print(", ".join(f"{name} {value}" for name, value in figures.items()))
-    assert edit.within(16)
-    assert edit.clock <= first.clock / 30 or edit.work <= first.work / 30
-    assert hover.within(5)
-    assert completion.within(5)
-    assert short.within(5)
+    for name, value in told.items():
+        record_property(name, value)
+        print(f"\n{name}: {value}", end="")
 
 
 @pytest.mark.asyncio
@@ -195,6 +183,32 @@ async def test_a_burst_of_edits_leaves_no_stale_work_behind(record_property: Any
     assert taken < 100 * single
 
 
+IMPORTING = [
+    sys.executable,
+    "-c",
+    "import pygls.lsp.server, sys; print(flush=True); sys.stdin.read()",
+]
+
+
+def until_first_line(command: list[str], said: bytes, start: float) -> float:
+    with subprocess.Popen(
+        command, stdin=subprocess.PIPE, stdout=subprocess.PIPE, env=ENVIRONMENT
+    ) as process:
+        assert process.stdin is not None
+        assert process.stdout is not None
+        process.stdin.write(said)
+        process.stdin.flush()
+        process.stdout.readline()
+        taken = time.perf_counter() - start
+        process.kill()
+    return taken
+
+
+def importing() -> float:
+    """Return the seconds in which a fresh interpreter imports pygls."""
+    return until_first_line(IMPORTING, b"", time.perf_counter())
+
+
 def resident(process: int) -> float:
     """Return the megabytes that a process holds."""
     pages = int(Path(f"/proc/{process}/statm").read_text().split()[1])
@@ -206,7 +220,7 @@ def resident(process: int) -> float:
 async def test_memory_stays_flat_over_many_edits(record_property: Any) -> None:
     async with wire() as server:
         await server.begin()
-        draft = Open(server, "file:///draft.md", DRAFT)
+        draft = Open(server, "file:///draft.md", DRAFTS[900])
         await draft.read()
         for _ in range(2000):
             await draft.edit()
@@ -227,29 +241,10 @@ def test_the_start_takes_hardly_longer_than_importing_the_protocol(record_proper
     )
     message = b"Content-Length: %d\r\n\r\n%b" % (len(body), body)
 
-    def importing() -> float:
-        start = time.perf_counter()
-        code = "import pygls.lsp.server, sys; print(flush=True); sys.stdin.read()"
-        return until_first_line([sys.executable, "-c", code], b"", start)
-
     def starting() -> float:
         return until_first_line(COMMAND, message, time.perf_counter())
 
-    def until_first_line(command: list[str], said: bytes, start: float) -> float:
-        with subprocess.Popen(
-            command, stdin=subprocess.PIPE, stdout=subprocess.PIPE, env=ENVIRONMENT
-        ) as process:
-            assert process.stdin is not None
-            assert process.stdout is not None
-            process.stdin.write(said)
-            process.stdin.flush()
-            process.stdout.readline()
-            taken = time.perf_counter() - start
-            process.kill()
-        return taken
-
-    pairs = [(importing(), starting()) for _ in range(7)]
+    pairs = [(importing(), starting()) for _ in range(12)]
     least, most = min(pair[0] for pair in pairs), min(pair[1] for pair in pairs)
     record_property("start", f"{most / least:.2f} of importing pygls")
-    print(f"importing {least * 1000:.0f} ms, starting {most * 1000:.0f} ms")
-    assert most <= 1.15 * least
+    print(f"\nstart over importing pygls (aim: 1.15): {most / least:.2f}")

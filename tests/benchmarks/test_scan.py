@@ -20,10 +20,20 @@ from benchmarks.drafts import draft
 from crossfoot.audit import audit_claim
 from crossfoot.reading import read_block
 from crossfoot.reading.cues import cues_in
-from crossfoot.scan import scan_text
+from crossfoot.scan import claims_of, scan_text
 
 MEGABYTE = 1_000_000
 ROUNDS = 5
+
+#: Results, and what looks like them, without end in one paragraph.
+DENSE = [
+    "R2 = .3, ",
+    "p = .03, ",
+    "n = 3, ",
+    "β = .3, t(5) = 2.1, ",
+    "F(1, 58) = 4.2, R² = .3; ",
+    "32% and 40% of the variance F(1, 58) = 4.2, ",
+]
 
 #: Prints the most memory, in kilobytes, that scanning a file took.
 MEMORY = """
@@ -122,6 +132,19 @@ def test_growth(benchmark: Any, break_lines: bool) -> None:
     benchmark.pedantic(forget, rounds=1)
     measured = ", ".join(f"{seconds:.2f}" for seconds in times)
     say(benchmark, "seconds a megabyte at 0.1, 1 and 10 MB", measured, "the same")
+
+
+@pytest.mark.parametrize("unit", DENSE)
+def test_growth_of_one_dense_paragraph(benchmark: Any, unit: str) -> None:
+    times = []
+    for number in (1000, 2000, 4000):
+        forget()
+        start = time.perf_counter()
+        claims_of(unit * number, "markdown")
+        times.append(time.perf_counter() - start)
+    benchmark.pedantic(forget, rounds=1)
+    measured = ", ".join(f"{seconds:.2f}" for seconds in times)
+    say(benchmark, f"{unit!r} 1,000, 2,000 and 4,000 times", measured, "twice as long each time")
 
 
 def test_memory(benchmark: Any, tmp_path: Path) -> None:

@@ -113,6 +113,10 @@ def _kind(anchor: str | None, quantities: set[str], sentence: str) -> str:
     }.get(anchor or "", "overall-model")
 
 
+#: Effects of one fit stand no further apart, in claims.
+_SIBLINGS = 12
+
+
 def _overall(claims: list[Claim], text: str) -> list[Claim]:
     """Take back "overall" from an F with R² that is one of several effects of a model.
 
@@ -120,11 +124,11 @@ def _overall(claims: list[Claim], text: str) -> list[Claim]:
     fit, and only an F with more df than each of the others can be the one it fixes.
     """
     settled = []
-    for claim in claims:
+    for number, claim in enumerate(claims):
         if claim.kind == "overall-model" and _value(claim, "df2") is not None:
             siblings = [
                 other
-                for other in claims
+                for other in claims[max(0, number - _SIBLINGS) : number + _SIBLINGS]
                 if other is not claim
                 and same_sentence(text, claim.span, other.span)
                 and other.kind in {"effect", "overall-model"}

@@ -65,6 +65,15 @@ def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
 
 
 _LEAST_DF = 0.9
+#: How far around a group words are looked for, in characters: so that the cost of a long
+#: paragraph grows with its length and not with its square.
+_REACH = 400
+
+
+def _near(words: re.Pattern[str], items: Sequence[Item], text: str) -> bool:
+    """Say whether words stand around a group of items."""
+    first = max(0, min(item.start for item in items) - _REACH)
+    return words.search(text, first, max(item.end for item in items) + _REACH) is not None
 
 
 def _in_call(text: str, start: int) -> bool:
@@ -99,14 +108,12 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
     if "df2" not in quantities:
         if value.relation == "=":
             return support
-        bound = "plural" in test.flags or _EFFECT().search(text) is not None
+        bound = "plural" in test.flags or _near(_EFFECT(), items, text)
         return not has_p and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
     if support or "lower" in test.flags or error.high < _FEWEST:
         return support
-    return _spelt(text, value) or (
-        value.relation != "=" and _STATISTICAL().search(text) is not None
-    )
+    return _spelt(text, value) or (value.relation != "=" and _near(_STATISTICAL(), items, text))
 
 
 def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str) -> bool:
@@ -129,7 +136,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     if (flat or by_unit or text[test.start] == "T") and not has_p:
         return False
     if "df" in quantities:
-        return has_p or _spelt(text, value) or _STATISTICAL().search(text) is not None
+        return has_p or _spelt(text, value) or _near(_STATISTICAL(), items, text)
     return has_p or (anchor == "t" and bool(quantities & {"b", "beta", "se"}))
 
 
@@ -168,4 +175,4 @@ def _is_fit(items: Sequence[Item], text: str) -> bool:
         if "percent" not in item.flags
         and re.search(r"[.,%]\d|%", text[item.parts[-1].start : item.parts[-1].end])
     ]
-    return bool(printed) and (len(items) > 1 or _FIT().search(text) is not None)
+    return bool(printed) and (len(items) > 1 or _near(_FIT(), items, text))

@@ -27,6 +27,9 @@ _NEAR = 3.0
 #: A gap this strong never lies inside a claim.
 APART = 9.0
 
+#: More items than this between two tests are none of either's, but for the nearest.
+_CROWD = 40
+
 _WORD = re.compile(r"[^\W\d_]{2,}")
 _SENTENCE_END = re.compile(r"[.!?][)\]\"”’']?\s+(?=[^\W\d_]|$)|[.!?]\s*$|。")
 _ENDS = ".!?。"
@@ -213,6 +216,8 @@ def _cut(
     low, high = left.last + 1, right.first
     if low == high:
         return low, low
+    if high - low > _CROWD:  # no two tests share so many numbers
+        return _last_cut(items, gaps, left), _first_cut(items, gaps, right)[0]
     best, place = float("inf"), low
     left_heads = [items[i].head for i in range(left.first, left.last + 1)]
     for cut in range(low, high + 1):

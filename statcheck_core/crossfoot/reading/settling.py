@@ -29,16 +29,17 @@ def shared(groups: Sequence[Group]) -> Iterable[Group]:
         item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
     ]
     given = _p_in_order(groups, tests)
-    deal = shares if len(shares) == len(tests) > 1 else []
+    deal = dict(zip(tests, shares, strict=True)) if len(shares) == len(tests) > 1 else {}
+    dealt, handed = set(deal.values()), set(given.values())
     for number, group in enumerate(groups):
-        items = [item for item in group.items if item not in deal]
+        items = [item for item in group.items if item not in dealt]
         if number in given:
             own = given[number]
             items = [item for item in items if item.head != "p"] + ([own] if own else [])
         elif given and group.anchor is None:
-            items = [item for item in items if item not in given.values()]
-        if deal and number in tests:
-            items.insert(0, deal[tests.index(number)])
+            items = [item for item in items if item not in handed]
+        if number in deal:
+            items.insert(0, deal[number])
         if items:
             yield Group(tuple(items), group.anchor)
 
