@@ -7,7 +7,6 @@ from __future__ import annotations
 
 import asyncio
 from collections.abc import Callable, Iterable, Iterator, Sequence
-from concurrent.futures import ThreadPoolExecutor
 from typing import NamedTuple
 
 from lsprotocol import types
@@ -18,6 +17,7 @@ from crossfoot_lsp.languages import format_of, is_text
 from crossfoot_lsp.names import path_of
 from crossfoot_lsp.snapshot import Part, Snapshot, in_a_row
 from crossfoot_lsp.text import Text
+from crossfoot_lsp.workers import Workers
 
 #: An edit this long makes much of a document new.
 _LARGE = 50_000
@@ -56,7 +56,7 @@ class Entry:
         self._cold = self._cold or cold
         self._reading = None
 
-    async def report(self, workers: ThreadPoolExecutor) -> Report | None:
+    async def report(self, workers: Workers) -> Report | None:
         """Return the report on the newest version; whoever asks shares one reading of it.
 
         None means that it was superseded meanwhile.
@@ -66,7 +66,8 @@ class Entry:
             return self._known[1]
         if self._reading is None:
             loop = asyncio.get_running_loop()
-            self._reading = loop.run_in_executor(workers, snapshot.read, self._cold)
+            threads = workers.long if self._cold else workers.short
+            self._reading = loop.run_in_executor(threads, snapshot.read, self._cold)
         report = await asyncio.shield(self._reading)
         if report is None or self.snapshot is not snapshot:
             return None
@@ -92,7 +93,7 @@ class Store:
 
     def __init__(
         self,
-        workers: ThreadPoolExecutor,
+        workers: Workers,
         configuration: Configuration,
         encoding: str,
         changed: Callable[[str], object],

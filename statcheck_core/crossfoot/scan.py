@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from bisect import bisect_right
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from typing import NamedTuple
 
 from crossfoot import documents
@@ -89,8 +89,10 @@ class _Scope:
             self.alpha = alpha
 
     def apply(self, claim: Claim, noted: frozenset[str]) -> Claim:
-        inherited = (self.document | self.section | noted) - _opposed(claim.context)
         alpha = claim.alpha or self.section_alpha or self.alpha
+        inherited = self.document or self.section or noted
+        if inherited:
+            inherited = (self.document | self.section | noted) - _opposed(claim.context)
         if not inherited and alpha == claim.alpha:
             return claim
         return claim._replace(context=tuple(sorted({*claim.context, *inherited})), alpha=alpha)
@@ -105,23 +107,30 @@ def _opposed(context: Iterable[str]) -> set[str]:
 def _audited(document: Document, assumed: Sequence[Assume], settings: Settings) -> Iterator[Placed]:
     scope = _Scope(assumed)
     number = 0
+    audit: Callable[[Claim, float], Audited] | None = None
+    language, definitions, level = document.language, document.definitions, settings.alpha
     for index, block in enumerate(document.blocks):
+        kind, start, source, _ = block
         if assumed:
-            scope.reach(block.start)
-        if block.kind == "heading":
+            scope.reach(start)
+        if kind == "heading":
             scope.heading(block)
-        reading = read_block(document.language, block.kind, block.source, document.definitions)
+        reading = read_block(language, kind, source, definitions)
         if reading.claims:
-            # Imported with the first claim: a document without a result pays for nothing.
-            from crossfoot.audit import audit_claim
-
+            audit = audit or _auditor()
             noted = _note_below(document, index)
             for claim in reading.claims:
                 number += 1
-                audited = audit_claim(scope.apply(claim, noted), settings.alpha)
-                yield Placed(f"c{number}", block.start, audited)
+                yield Placed(f"c{number}", start, audit(scope.apply(claim, noted), level))
         elif reading.cues.contexts or reading.cues.alpha:
             scope.spread(spreading(block.source), reading.cues.alpha)
+
+
+def _auditor() -> Callable[[Claim, float], Audited]:
+    """Import what audits, with the first claim: a document without a result pays for nothing."""
+    from crossfoot.audit import audit_claim
+
+    return audit_claim
 
 
 def _note_below(document: Document, index: int) -> frozenset[str]:
@@ -135,7 +144,7 @@ def _note_below(document: Document, index: int) -> frozenset[str]:
 
 
 def _remarks(document: Document) -> tuple[list[Allow | Assume], list[Problem]]:
-    if "crossfoot" not in document.text and "Crossfoot" not in document.text:
+    if "rossfoot" not in document.text:
         return [], []
     remarks: list[Allow | Assume] = []
     problems: list[Problem] = []

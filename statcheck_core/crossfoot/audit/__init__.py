@@ -15,7 +15,7 @@ from crossfoot.audit.derive import Derivation, Derived
 from crossfoot.audit.derive import derive as _derive
 from crossfoot.audit.verdict import judge
 from crossfoot.memo import remembered
-from crossfoot.model import Audited, Claim
+from crossfoot.model import Audited, Claim, Span
 
 
 @remembered
@@ -31,9 +31,27 @@ def audit_claim(claim: Claim, alpha: float = 0.05) -> Audited:
 
     Notes
     -----
-    The result depends on nothing else and is remembered.
+    The result depends on nothing else and is remembered; also for the claim at another place,
+    to which it moves with each character that is typed before it.
     """
+    return _judged(_nowhere(claim), alpha)._replace(claim=claim)
+
+
+@remembered
+def _judged(claim: Claim, alpha: float) -> Audited:
     return judge(claim, alpha)
+
+
+def _nowhere(claim: Claim) -> Claim:
+    """Return a claim without its place, on which nothing that is found about it depends."""
+    return claim._replace(
+        span=_NO_PLACE,
+        readings=tuple([reading._replace(span=_NO_PLACE) for reading in claim.readings]),
+        given=tuple([reading._replace(span=_NO_PLACE) for reading in claim.given]),
+    )
+
+
+_NO_PLACE = Span(0, 0)
 
 
 @lru_cache(maxsize=4096)
