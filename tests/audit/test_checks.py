@@ -105,3 +105,23 @@ def test_a_one_sided_text_is_taken_at_its_word() -> None:
 def test_the_same_identity_bound_twice_speaks_if_one_does() -> None:
     found = checks("anova-table: F:size=4.00 df1:size=2 p:size=.029 F:kind=1.00 df1:kind=1 df2=30")
     assert found["p-from-f"] == "agrees"
+
+
+@pytest.mark.parametrize(
+    "text",
+    [
+        "coefficient: b=-0.56 se=0.21 chi2(1)=7.11 p=.008",
+        "coefficient: b=-0.56 se=0.21 chi2(1)=7.11 p=.008 ci_low=-0.97 ci_high=-0.15",
+        "coefficient: b=-0.56 se=0.21 z=-2.67 df=40 p=.0077",
+        "coefficient: b=0.94 se=0.08 t(40)=-0.75 p=.46 ci_low=0.78 ci_high=1.10 [other-null]",
+        "coefficient: b=-0.30 se=0.08 z=-3.75 p<.001 ci_low=0.63 ci_high=0.87 [generalised]",
+        "coefficient: se=0.31 z=1.52 p=.13 ci_low=0.90 ci_high=2.20 [ratio-scale]",
+    ],
+)
+def test_what_is_of_another_test_or_number_is_no_conflict(text: str) -> None:
+    assert not any("conflict" in outcome or "doubt" in outcome for outcome in checks(text).values())
+
+
+def test_an_interval_of_an_estimate_that_is_not_printed_makes_a_doubt() -> None:
+    found = checks("coefficient: se=0.5 t(38)=1.1 p=.28 ci_low=2.4 ci_high=4.4 ci_level=95%")
+    assert found["ci-against-p"] == "doubt: The interval is that of the estimate that is tested."

@@ -56,7 +56,7 @@ effect: F(2,114)=3.40 p=.049 [repeated-measures] -> doubt p-from-f p
 effect: F(2,114)=3.40 p=.149 [repeated-measures] -> reversal p-from-f p
 effect: F(1,114)=3.40 p=.149 [repeated-measures two-sided] -> conflict p-from-f p
 coefficient: b=1.20 p=.040 ci_low=-.10 ci_high=2.50 ci_level=95% -> doubt ci-against-p p
-coefficient: p=.040 ci_low=-.10 ci_high=2.50 ci_level=95% [two-sided] -> reversal ci-against-p p
+coefficient: b=1.2 p=.040 ci_low=-.1 ci_high=2.5 ci_level=95% [two-sided] -> reversal ci-against-p p
 coefficient: b=1.00 se=.50 df=58 p=.025 -> doubt p-from-t p
 
 # the whole model

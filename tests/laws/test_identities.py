@@ -73,7 +73,7 @@ def test_names_what_is_known(identity: Identity):
         assert set(form.takes) <= set(identity.quantities)
         assert {*form.assumed, *form.needs} <= set(ASSUMPTIONS)
         assert set(form.kinds) <= set(identity.kinds)
-        assert set(form.unless) <= set(QUANTITIES)
+        assert {*form.beside, *form.unless} <= set(QUANTITIES)
 
 
 @pytest.mark.parametrize("identity", ALL, ids=lambda i: i.slug)
@@ -130,6 +130,7 @@ def speaks(identity: Identity, form: Form, scene: Scenario, values: Values) -> b
     return (
         scene.kind in (form.kinds or identity.kinds)
         and {form.gives, *form.takes} <= set(values)
+        and set(form.beside) <= set(values)
         and not set(form.unless) & set(values)
         and not {*identity.needs, *form.needs, *form.assumed} & scene.broken
     )

@@ -443,7 +443,10 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
         _one("one degree", "coefficient", squared_t),
         _one("several degrees", "coefficient", joint_f),
     ),
-    "signs": (_one("row", "coefficient", skewed_limits),),
+    "signs": (
+        _one("row", "coefficient", skewed_limits),
+        _one("estimate unnamed", "coefficient", without(skewed_limits, "b")),
+    ),
     "r-from-slope": (
         _one("one predictor", "overall-model", slope),
         _one("several predictors", "overall-model", several_slopes),
@@ -452,6 +455,7 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     "ci-from-se": (
         _one("t limits", "coefficient", coefficient),
         _one("normal limits", "coefficient", normal_limits, "t-limits"),
+        _one("estimate unnamed", "coefficient", without(coefficient, "b")),
     ),
     "ci-centre": (
         _one("row", "coefficient", coefficient),
@@ -460,7 +464,7 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     ),
     "ci-against-p": (
         _one("row", "coefficient", coefficient),
-        _one("difference", "mean-comparison", coefficient),
+        _one("difference", "mean-comparison", without(coefficient, "b")),
         _one("ratio", "coefficient", ratio),
     ),
     "ci-from-r": (

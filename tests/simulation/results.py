@@ -226,6 +226,7 @@ def _logistic(rng: Generator, size: int) -> Values:
     return {
         "b": b, "se": se, "z": z, "p": 2 * special.ndtr(-abs(z)), "odds_ratio": np.exp(b),
         "ci_low": np.exp(b - reach), "ci_high": np.exp(b + reach), "ci_level": np.full(size, 0.95),
+        "chi2": z**2, "df": np.ones(size),
     }  # fmt: skip
 
 
@@ -285,7 +286,10 @@ FAMILIES = (
            share=0.25),
     Family("logistic", "coefficient", _logistic,
            ("b se z p", "odds_ratio ci_low ci_high ci_level p", "b se z p odds_ratio",
-            "b se p odds_ratio ci_low ci_high"), ("generalised",)),
+            "b se p odds_ratio ci_low ci_high", "b se chi2 df p", "b chi2 df p odds_ratio",
+            "b se z p ci_low ci_high"), ("generalised",)),
+    Family("Wald", "coefficient", _logistic,
+           ("b se chi2 df p", "b se chi2 df p odds_ratio", "b se z df p", "chi2 df p"), share=2),
     Family("change", "model-change", _change,
            ("R2 R2_change F_change df1 df2 p", "R2_change F_change df1 df2 p",
             "R2 R2_change df1 df2 p", "R2 R2_change f2"), share=4),

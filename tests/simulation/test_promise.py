@@ -112,6 +112,7 @@ def speaks(identity: Identity, form: Form, claim: Claim, printed: Mapping[str, I
     needs = {*identity.needs, *form.needs, *form.assumed} - ({"df-as-used"} if decimal else set())
     return (
         claim.kind in (form.kinds or identity.kinds)
+        and printed.keys() >= set(form.beside)
         and printed.keys().isdisjoint(form.unless)
         and not any(ASSUMPTIONS[key].broken_by.intersection(claim.context) for key in needs)
     )

@@ -68,6 +68,9 @@ DERIVED: Mapping[str, str] = {
     "frequency": "chi2 p",
 }
 
+#: Beside one of these, and no t, degrees of freedom are those of χ², and p is of no t.
+_WITHOUT_T = frozenset({"chi2", "z", "odds_ratio"})
+
 #: The row of a table that a formal name speaks of.
 _ROWS = {
     "ss_model": "model",
@@ -96,8 +99,12 @@ def bind_prose(identity: Identity, cells: Sequence[Cell], unprinted: frozenset[s
     unprinted
         Quantities that may have a cell though they are not printed.
     """
+    names = names_of(identity)
+    quantities = {cell.quantity for cell in cells}
+    if "chi2" not in names and "t" not in quantities and not quantities.isdisjoint(_WITHOUT_T):
+        names = tuple(name for name in names if name != "df")
     found: dict[str, Cell] = {}
-    for name in names_of(identity):
+    for name in names:
         if name in FORMAL:
             cell = _formal_cell(name, cells)
         else:

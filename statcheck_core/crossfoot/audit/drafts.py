@@ -72,6 +72,7 @@ def speaks(draft: Draft, kind: str, printed: Set[Cell], quantities: Set[str]) ->
     """
     return (
         kind in (draft.form.kinds or draft.identity.kinds)
+        and quantities >= set(draft.form.beside)
         and quantities.isdisjoint(draft.form.unless)
         and (draft.gives in printed or (bool(draft.form.takes) and not bounds(draft.form)))
     )

@@ -31,6 +31,7 @@ CONTEXTS: Mapping[str, str] = {
     "resampled": "p values or intervals come from permutations or the bootstrap.",
     "corrected-statistic": "The statistic, or its p value alone, carries a correction.",
     "variance-ratio": "F compares two variances, so that its p takes both tails.",
+    "ratio-scale": "The text speaks of a ratio or an area, whose null value is not zero.",
     "other-null": "The tests are against another value than zero.",
     "partial-sums": "Each sum of squares is what its effect adds to all others (type II or III), "
     "so that they need not add up.",
@@ -217,8 +218,14 @@ _ASSUMPTIONS = (
         "The interval is that of the standardised coefficient.",
     ),
     _assumption(
-        "limits-of-difference",
-        "The interval is that of the difference that p tests.",
+        "limits-of-coefficient",
+        "The interval is that of the coefficient, and not of its exponential or of another number.",
+        "ratio-scale generalised",
+    ),
+    _assumption(
+        "limits-of-estimate",
+        "The interval is that of the estimate that is tested.",
+        "ratio-scale generalised",
     ),
     _assumption(
         "error-of-coefficient",

@@ -87,13 +87,26 @@ def _same_side(first: str, second: str) -> tuple[Form, Form]:
     )
 
 
-def _side_of_limits(name: str) -> Form:
-    return form(
-        name,
-        f"{symbol(name)} has the sign of both limits",
-        "ci_low ci_high",
-        _side_of_interval,
-        unless="odds_ratio",
+def _side_of_limits(name: str) -> tuple[Form, Form]:
+    text = f"{symbol(name)} has the sign of both limits"
+    return (
+        form(
+            name,
+            text,
+            "ci_low ci_high",
+            _side_of_interval,
+            needs="limits-of-coefficient",
+            beside="b",
+            unless="odds_ratio",
+        ),
+        form(
+            name,
+            text,
+            "ci_low ci_high",
+            _side_of_interval,
+            assumed="limits-of-estimate",
+            unless="b odds_ratio",
+        ),
     )
 
 
@@ -108,8 +121,8 @@ SIGNS = identity(
         *_same_side("beta", "t"),
         *_same_side("b", "z"),
         *_same_side("beta", "z"),
-        _side_of_limits("t"),
-        _side_of_limits("z"),
+        *_side_of_limits("t"),
+        *_side_of_limits("z"),
     ),
     needs="zero-null",
     assumption="They are of one coefficient, and t or z tests that it is zero.",

@@ -20,6 +20,7 @@ def form(
     assumed: str = "",
     needs: str = "",
     kinds: str = "",
+    beside: str = "",
     unless: str = "",
     mirrored: bool = False,
 ) -> Form:
@@ -37,6 +38,7 @@ def form(
         tuple(assumed.split()),
         tuple(needs.split()),
         tuple(kinds.split()),
+        tuple(beside.split()),
         tuple(unless.split()),
         mirrored,
     )

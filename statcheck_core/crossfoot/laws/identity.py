@@ -6,7 +6,8 @@ evaluated whenever the quantities it takes are known, and each must be met by th
 gives. A form speaks
 
 * of the claims of its own ``kinds`` (of the identity's, where it names none),
-* unless one of the quantities in ``unless`` is printed too, which would change its meaning,
+* where all quantities in ``beside`` are printed too, and none of those in ``unless``: either
+  changes the meaning of the others,
 * unless the context of the claim breaks an assumption in the ``needs`` of the identity or of the
   form, or one in ``assumed``.
 
@@ -46,8 +47,8 @@ class Form(NamedTuple):
         Assumptions that this form needs beyond those of its identity.
     kinds
         The kinds of claim that this form speaks of; empty for those of its identity.
-    unless
-        Quantities beside which the form is silent.
+    beside, unless
+        Quantities that must be printed for the form to speak, and those that must not.
     mirrored
         The form gives a magnitude: the quantity lies in ``value(…)`` or in its mirror image at
         the other side of zero.
@@ -60,6 +61,7 @@ class Form(NamedTuple):
     assumed: tuple[str, ...] = ()
     needs: tuple[str, ...] = ()
     kinds: tuple[str, ...] = ()
+    beside: tuple[str, ...] = ()
     unless: tuple[str, ...] = ()
     mirrored: bool = False
 

@@ -73,22 +73,27 @@ def _from_error(
     def level_of(low: Interval, high: Interval, se: Interval, df: Interval) -> Interval:
         return level(magnitude(divide(half_width(low, high), se)), df)
 
-    def make(gives: str, formula: str, takes: str, value: Solution) -> Form:
+    def make(gives: str, formula: str, takes: str, value: Solution, unnamed: bool = False) -> Form:
         text = formula.replace("c", symbol, 1) + remark
-        return form(gives, text, takes, value, assumed=assumed, unless="odds_ratio")
+        if unnamed:
+            sure = f"{assumed} limits-of-estimate"
+            return form(gives, text, takes, value, assumed=sure, unless="b odds_ratio")
+        needs = "limits-of-coefficient"
+        return form(
+            gives, text, takes, value, assumed=assumed, needs=needs, beside="b", unless="odds_ratio"
+        )
 
+    error_text = "SE = (upper limit − lower limit)/2c"
+    level_text = "level = P(abs(T(df)) < c), c = (upper limit − lower limit)/2SE"
     return (
         make("ci_low", "lower limit = b − c·SE", "b se df ci_level", low),
         make("ci_high", "upper limit = b + c·SE", "b se df ci_level", high),
-        make("se", "SE = (upper limit − lower limit)/2c", "ci_low ci_high df ci_level", error),
+        make("se", error_text, "ci_low ci_high df ci_level", error),
+        make("se", error_text, "ci_low ci_high df ci_level", error, unnamed=True),
         make("b", "b = upper limit − c·SE", "ci_high se df ci_level", low),
         make("b", "b = lower limit + c·SE", "ci_low se df ci_level", high),
-        make(
-            "ci_level",
-            "level = P(abs(T(df)) < c), c = (upper limit − lower limit)/2SE",
-            "ci_low ci_high se df",
-            level_of,
-        ),
+        make("ci_level", level_text, "ci_low ci_high se df", level_of),
+        make("ci_level", level_text, "ci_low ci_high se df", level_of, unnamed=True),
     )
 
 
@@ -171,7 +176,7 @@ CI_CENTRE = identity(
             unless="b odds_ratio",
         ),
     ),
-    needs="",
+    needs="limits-of-coefficient",
     assumption="The interval is that of the estimate printed beside it, and its limits lie at "
     "equal distances from it.",
     source="NIST/SEMATECH e-Handbook of Statistical Methods, section 1.3.5.2",

@@ -61,21 +61,26 @@ def _level_of_p(null: float) -> Solution:
 
 
 def _against_p(
-    null: float, beside: str = "", *, assumed: str = "", kinds: str = "", unless: str = ""
+    null: float,
+    *,
+    assumed: str = "",
+    needs: str = "",
+    kinds: str = "",
+    beside: str = "",
+    unless: str = "",
 ) -> tuple[Form, ...]:
-    """Return the forms for one null value; ``beside`` must be printed for them to speak."""
+    """Return the forms for one null value."""
 
     def make(gives: str, takes: str, value: Solution) -> Form:
-        def silent(*arguments: Interval) -> Interval:
-            return value(*arguments[:3])
-
         return form(
             gives,
             f"interval excludes {null:g} where p < 1 − level",
-            f"{takes} {beside}",
-            silent,
+            takes,
+            value,
             assumed=assumed,
+            needs=needs,
             kinds=kinds,
+            beside=beside,
             unless=unless,
         )
 
@@ -91,16 +96,26 @@ CI_AGAINST_P = identity(
     "ci-against-p",
     "interval against p",
     "interval excludes 0 where p < 1 − level",
-    "p ci_low ci_high ci_level odds_ratio",
+    "p ci_low ci_high ci_level",
     (
-        *_against_p(0.0, kinds=COEFFICIENT, unless="odds_ratio"),
         *_against_p(
             0.0,
-            assumed="limits-of-difference",
-            kinds="mean-comparison",
-            unless="odds_ratio r eta2 eta2_partial omega2",
+            needs="limits-of-coefficient",
+            kinds=COEFFICIENT,
+            beside="b",
+            unless="odds_ratio",
         ),
-        *_against_p(1.0, "odds_ratio", assumed="limits-of-ratio wald-limits", kinds=COEFFICIENT),
+        *_against_p(
+            0.0,
+            assumed="limits-of-estimate",
+            unless="b odds_ratio r eta2 eta2_partial omega2",
+        ),
+        *_against_p(
+            1.0,
+            assumed="limits-of-ratio wald-limits",
+            kinds=COEFFICIENT,
+            beside="odds_ratio",
+        ),
     ),
     needs="two-sided unadjusted-p t-limits zero-null",
     assumption="p is of the two-sided test of what the interval is an interval of, and both rest "

@@ -25,21 +25,19 @@ from crossfoot.laws.limits import z_critical
 
 _SINGLE = Interval(1.0, 1.0)
 _RATIO = "wald-limits limits-of-ratio"
-_WALD = f"{_RATIO} error-of-coefficient"
+_ERROR = "error-of-coefficient"  # beside an odds ratio SE may be that of the ratio
+_WALD = f"{_RATIO} {_ERROR}"  # without one the limits are those of b
 
 
 def _reach(se: Interval, level: Interval) -> Interval:
     return multiply(z_critical(level), se)
 
 
-# Without an odds ratio the limits are those of b: these forms take it to speak only beside it.
-
-
-def _low(b: Interval, se: Interval, level: Interval, _: Interval) -> Interval:
+def _low(b: Interval, se: Interval, level: Interval) -> Interval:
     return exponential(add(b, negative(_reach(se, level))))
 
 
-def _high(b: Interval, se: Interval, level: Interval, _: Interval) -> Interval:
+def _high(b: Interval, se: Interval, level: Interval) -> Interval:
     return exponential(add(b, _reach(se, level)))
 
 
@@ -52,21 +50,6 @@ def _other_limit(ratio: Interval, limit: Interval) -> Interval:
 
 
 def _error(z: Interval, b: Interval) -> Interval:
-    return divide(b, z)
-
-
-# Beside an odds ratio SE may be that of the ratio. These forms take it to speak only there.
-
-
-def _z_beside(b: Interval, se: Interval, _: Interval) -> Interval:
-    return divide(b, se)
-
-
-def _b_beside(z: Interval, se: Interval, _: Interval) -> Interval:
-    return multiply(z, se)
-
-
-def _error_beside(z: Interval, b: Interval, _: Interval) -> Interval:
     return divide(b, z)
 
 
@@ -114,9 +97,9 @@ ODDS_RATIO = identity(
         form("z", "z = b/SE", "b se", divide, unless="odds_ratio"),
         form("b", "b = z·SE", "z se", multiply, unless="odds_ratio"),
         form("se", "SE = b/z", "z b", _error, unless="odds_ratio"),
-        form("z", "z = b/SE", "b se odds_ratio", _z_beside, assumed="error-of-coefficient"),
-        form("b", "b = z·SE", "z se odds_ratio", _b_beside, assumed="error-of-coefficient"),
-        form("se", "SE = b/z", "z b odds_ratio", _error_beside, assumed="error-of-coefficient"),
+        form("z", "z = b/SE", "b se", divide, assumed=_ERROR, beside="odds_ratio"),
+        form("b", "b = z·SE", "z se", multiply, assumed=_ERROR, beside="odds_ratio"),
+        form("se", "SE = b/z", "z b", _error, assumed=_ERROR, beside="odds_ratio"),
         form(
             "z",
             "z = ln OR/SE",
@@ -153,16 +136,18 @@ ODDS_RATIO = identity(
         form(
             "ci_low",
             "lower limit = exp(b − z*·SE)",
-            "b se ci_level odds_ratio",
+            "b se ci_level",
             _low,
             assumed=_WALD,
+            beside="odds_ratio",
         ),
         form(
             "ci_high",
             "upper limit = exp(b + z*·SE)",
-            "b se ci_level odds_ratio",
+            "b se ci_level",
             _high,
             assumed=_WALD,
+            beside="odds_ratio",
         ),
         form(
             "odds_ratio",

@@ -189,8 +189,25 @@ CUES: tuple[Cue, ...] = (
         "other-null",
         _stems(
             "test for constraints; linear hypothesis; null value; hypothesised value; "
-            "hypothesized value; noninferiority; non-inferiority; equivalence test"
+            "hypothesized value; noninferiority; non-inferiority; equivalence; from one; "
+            "from unity; from 1; from chance; against one; against unity; against 1; "
+            "against chance; chance level; above chance; isometr; 1:1; slope of 1; slope of one; "
+            "slope of unity"
         ),
+        confirm=r"constraints|linear hypothesis|(?:null|hypothesi[sz]ed) value|non-?inferiority"
+        r"|equivalence|(?:from|against) (?:one|unity|1(?:\.0+)?|chance)(?![\w.,]*\d)|chance level"
+        r"|above chance|isometr|1:1|slope of (?:1|one|unity)\b",
+    ),
+    Cue(
+        "ratio-scale",
+        _stems(
+            "ratio; ratios; relative risk; odds; times; fold; -fold; hr; rr; irr; shr; ahr; arr; "
+            "airr; or; aor; auc; auroc; roc; exp("
+        ),
+        near=True,
+        confirm=r"(?<![ftz][ -])\bratios?\b|relative risk|\bodds\b"
+        r"|\btimes (?:as|more|less|higher|lower|greater)"
+        r"|fold\b|\ba?(?:hr|rr|irr|shr|or)s?\s?[=:(]|\bau(?:ro)?c\b|\broc\b|exp\(",
     ),
     Cue(
         "repeated-measures",
@@ -323,7 +340,7 @@ _LENGTH = 5
 _STEMS = tuple((stem, number) for number, cue in enumerate(CUES) for stem in cue.stems)
 _UNSPACED = tuple(pair for pair in _STEMS if max(pair[0]) >= "\u3000")
 #: What may stand right before or behind a word.
-_BREAKS = "-–([/'\"“‘_),.;:"
+_BREAKS = "-–([/'\"“‘_),.;:="
 
 
 def _first_letters(stem: str) -> str:

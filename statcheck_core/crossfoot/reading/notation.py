@@ -136,9 +136,12 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "chi2",
-        rf"(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq|deux|quadrat[o]?|cuadrado|kwadraat|två|kvadrat)|khi²|(?i:chi)\^?2|X-squared|χ)(?!\s?/\s?df)",
+        rf"(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq|deux|quadrat[o]?|cuadrado|kwadraat|två|kvadrat)|khi²|(?i:chi)\^?2|X-squared|χ"
+        # A Wald statistic is χ² where it has degrees of freedom, and may be z where it has none.
+        r"|Wald(?:\s(?:test|statistic))?(?=\s?\(\s?(?:df\s?=\s?)?\d+\s?\)\s?=|\s?=\s?[\d.,]{1,12}\s?[,;(]\s?"
+        rf"{_DF}))(?!\s?/\s?df)",
         True,
-        "χXcCkKjq",
+        "χXcCkKjqW",
         "χ²(1, N = 120) = 8.47, p = .004",
     ),
     Notation(
@@ -183,9 +186,9 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "odds_ratio",
-        r"(?:adjusted\s)?(?:a?OR|odds\sratios?)(?![a-zA-Z])",
+        r"(?:adjusted\s)?(?:a?OR|odds\sratios?)(?![a-zA-Z])|(?:Exp|EXP|exp)\s?\([bBβ]\)",
         True,
-        "aOo",
+        "aOoEe",
         "OR = 1.84, 95% CI [1.20, 2.82], p = .005",
     ),
     Notation(
@@ -283,7 +286,7 @@ _INITIALS = "".join(sorted(set("".join(n.initials for n in NOTATIONS))))
 #: by this alone.
 _FIRST_LETTERS = """
 adj aor bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dof err est eta fch fin fre fri
-fst gdl gra hed hel inc jic khi kik kji lut mdi mse msr msw mul nob num obs odd ome pad par pbo
+exp fst gdl gra hed hel inc jic khi kik kji lut mdi mse msr msw mul nob num obs odd ome pad par pbo
 pco pea pen pfd pho poi pon ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam see sem
 sig slo spe sta std ste tol tte val vif vri wal
 """

@@ -10,6 +10,7 @@ from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import Item, Part
 
 _TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
+_COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
 #: An interval right behind one of these is the interval of that effect size.
 _OWN_INTERVAL = frozenset(
     {"d", "eta2", "eta2_partial", "omega2", "R2", "R2_adj", "R2_change", "f2"}
@@ -75,6 +76,8 @@ def settle(group: Group, text: str) -> Group | None:
     items = [item for item in items if not _doubled(item, items)]
     if group.anchor in {"F", "F_change"}:
         items = _df_of_f(items)
+    if group.anchor in _COEFFICIENT:
+        items = [item for item in items if not _of_a_single_slope(item)]
     return Group(tuple(items), group.anchor) if is_result(group.anchor, items, text) else None
 
 
@@ -141,6 +144,11 @@ def _one_sample_size(items: list[Item], text: str) -> list[Item]:
                 continue
         kept.append(item)
     return kept
+
+
+def _of_a_single_slope(item: Item) -> bool:
+    """Say whether a df counts the one slope that is tested, and not the cases left to judge it."""
+    return item.head == "df" and item.parts[0].high == 1.0
 
 
 def _df_of_f(items: list[Item]) -> list[Item]:
