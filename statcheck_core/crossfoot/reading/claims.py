@@ -23,6 +23,14 @@ _EFFECT = re.compile(
 )
 
 
+#: Words for one of several effects, whose F is not that of the model that R² is of.
+_OF_SEVERAL = re.compile(
+    r"main effect|interact(?:ion|ed)|covariate"
+    r"|Haupteffekt|Wechselwirkung|effet principal|efecto principal|effetto principale",
+    re.IGNORECASE,
+)
+
+
 def claims_of(groups: Sequence[Group], folded: str, visible: str) -> list[Claim]:
     """Return the claims that groups make, with places in the visible text.
 
@@ -94,7 +102,7 @@ def _kind(anchor: str | None, quantities: set[str], sentence: str) -> str:
     if "F_change" in quantities or "R2_change" in quantities:
         return "model-change"
     if anchor == "F":
-        if quantities & {"R2", "R2_adj", "R", "f2", "s"}:
+        if quantities & {"R2", "R2_adj", "R", "f2", "s"} and not _OF_SEVERAL.search(sentence):
             return "overall-model"
         return (
             "overall-model"

@@ -193,9 +193,9 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "d",
-        r"(?:(?:Cohen's\s)?(?:d_\{?\w\}?|d)|(?:Hedges'?s?\s)?g|φ|ϕ|Cramér's\sV|Cramer's\sV|V|ε\s?²|M_?diff|Δ?M)(?![\w²'.-])",
+        rf"(?:[gG]enerali[sz]ed\s(?:η|eta)[\s-]?(?:squared|{_SQUARED})|(?:Cohen's\s)?(?:d_\{{?\w\}}?|d)|(?:Hedges'?s?\s)?g|φ|ϕ|Cramér's\sV|Cramer's\sV|V|ε\s?²|M_?diff|Δ?M)(?![\w²'.-])",
         False,
-        "CdHgφϕVεMΔ",
+        "CdHgGφϕVεMΔ",
         "t(58) = 2.05, p = .045, d = 0.54, 95% CI [0.01, 1.06]",
     ),
     Notation("vif", r"VIF(?![a-z])", False, "V", "tolerance = .54, VIF = 1.85"),
@@ -286,8 +286,8 @@ _INITIALS = "".join(sorted(set("".join(n.initials for n in NOTATIONS))))
 #: by this alone.
 _FIRST_LETTERS = """
 adj aor bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dof err est eta fch fin fre fri
-exp fst gdl gra hed hel inc jic khi kik kji lut mdi mse msr msw mul nob num obs odd ome pad par pbo
-pco pea pen pfd pho poi pon ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam see sem
+exp fst gdl gen gra hed hel inc jic khi kik kji lut mdi mse msr msw mul nob num obs odd ome pad par
+pbo pco pea pen pfd pho poi pon ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam see sem
 sig slo spe sta std ste tol tte val vif vri wal
 """
 _OPENINGS = frozenset(_FIRST_LETTERS.split())

@@ -78,6 +78,7 @@ def settle(group: Group, text: str) -> Group | None:
         items = _df_of_f(items)
     if group.anchor in _COEFFICIENT:
         items = [item for item in items if not _of_a_single_slope(item)]
+        items = _on_one_scale(items, text)
     return Group(tuple(items), group.anchor) if is_result(group.anchor, items, text) else None
 
 
@@ -149,6 +150,18 @@ def _one_sample_size(items: list[Item], text: str) -> list[Item]:
 def _of_a_single_slope(item: Item) -> bool:
     """Say whether a df counts the one slope that is tested, and not the cases left to judge it."""
     return item.head == "df" and item.parts[0].high == 1.0
+
+
+def _on_one_scale(items: list[Item], text: str) -> list[Item]:
+    """Drop an interval in percent beside an estimate that is not: it is of what that comes to."""
+    percent = {
+        part.quantity: text[part.start : part.end].endswith("%")
+        for item in items
+        for part in item.parts
+    }
+    if percent.get("ci_low") and False in {percent.get("b"), percent.get("beta")}:
+        return [item for item in items if item.head != "ci"]
+    return items
 
 
 def _df_of_f(items: list[Item]) -> list[Item]:
