@@ -57,9 +57,9 @@ def headings_in(text: str, line: Line) -> Columns | None:
     tokens = tokens_of(text, words)
     known = [t for t in tokens if t.heading.roles and t.heading.roles[0] not in _WEAK]
     others = [t for t in tokens if not t.heading.roles]
-    if len(known) < 2 or len(others) > len(known) + 1 or any(is_value(t.text) for t in others):
+    if len({t.heading.roles for t in known}) < 2 or len(others) > len(known) + 1:
         return None
-    if any(sign in t.text for t in others for sign in "=;{}"):
+    if any(is_value(t.text) or not set("=;{}").isdisjoint(t.text) for t in others):
         return None
     first = next(
         i for i, t in enumerate(tokens) if t.heading.roles and t.heading.roles != ("label",)
