@@ -8,7 +8,7 @@ import numpy as np
 
 from tables.drawn import Cell, Drawn, Numbers, Said
 from tables.fits import PREDICTORS, logistic, names, regression
-from tables.hand import Hand, hand
+from tables.hand import Hand, hand, is_exact
 
 HEADS = {
     "b": ("B", "<i>B</i>", "b", "Estimate", "Coef.", "Coefficient", "Unstandardized B"),
@@ -74,6 +74,7 @@ def one_model(rng: np.random.Generator) -> Drawn:
         readings: Readings = {}
         cells = [Cell(author.pick(*INTERCEPTS) if i == 0 else labels[i - 1])]
         mark = author.stars(p) if stars else ""
+        told = False  # whether p tells t
         for column in columns:
             if column == "beta":
                 if i == 0:
@@ -83,6 +84,7 @@ def one_model(rng: np.random.Generator) -> Drawn:
                 slot, readings["beta", None] = numbers.put(beta)
             elif column == "p":
                 sign, literal = author.p(p)
+                told = is_exact(sign, literal)
                 slot, readings["p", None] = numbers.put(literal)
                 slot = sign + slot
             else:
@@ -97,7 +99,7 @@ def one_model(rng: np.random.Generator) -> Drawn:
             cells += _collinearity(author, numbers, readings, rng, i)
         rows.append(cells)
         if i:
-            said.append(Said("coefficient", readings, tuple(_checked(readings, True))))
+            said.append(Said("coefficient", readings, tuple(_checked(readings, True, told))))
     note, model = _fit_note(author, numbers, fit)
     notes = [note, author.legend()] if stars else [note]
     said.append(model)
@@ -143,10 +145,10 @@ def _collinearity(
     return [Cell(first), Cell(second)]
 
 
-def _checked(readings: Readings, with_df: bool) -> list[tuple[str, str | None]]:
+def _checked(readings: Readings, with_df: bool, told: bool) -> list[tuple[str, str | None]]:
     keys = {key for key, _ in readings}
     found: list[tuple[str, str | None]] = []
-    if {"b", "se", "t"} <= keys or ({"b", "se", "p"} <= keys and with_df):
+    if {"b", "se", "t"} <= keys or ({"b", "se", "p"} <= keys and told):
         found += [("b", None), ("se", None)]
     if "t" in keys:
         found.append(("t", None))
@@ -245,7 +247,7 @@ def grouped(rng: np.random.Generator) -> Drawn:
                     sign, literal = "", author.number(float(value), 2 if key == "t" else d)
                 slot, readings[key, None] = numbers.put(literal)
                 cells.append(Cell(sign + slot))
-            said.append(Said("coefficient", readings, tuple(_checked(readings, False))))
+            said.append(Said("coefficient", readings, tuple(_checked(readings, False, False))))
         rows.append(cells)
     for key, label in (("R2", author.pick("R²", "<i>R</i>²")), ("R2_adj", "Adjusted R²")):
         cells = [Cell(label)]

@@ -73,6 +73,11 @@ class Hand(NamedTuple):
         )
 
 
+def is_exact(sign: str, literal: str) -> bool:
+    """Whether a p value is printed as a number that is not zero, so that it tells its statistic."""
+    return not sign and literal.strip("0,.") != ""
+
+
 def hand(rng: np.random.Generator) -> Hand:
     """Draw an author."""
     levels = (0.05, 0.01, 0.001) if rng.random() < 0.75 else (0.1, 0.05, 0.01)

@@ -8,7 +8,7 @@ import numpy as np
 
 from tables.drawn import Cell, Drawn, Numbers, Said
 from tables.fits import Row, variance
-from tables.hand import Hand, hand
+from tables.hand import Hand, hand, is_exact
 
 HEADS = {
     "ss": ("SS", "Sum of Squares", "Sum Sq", "Sum of squares"),
@@ -165,6 +165,6 @@ def effects_only(rng: np.random.Generator) -> Drawn:
             readings["eta2_partial", None] = place
             cells.append(Cell(slot))
         rows.append(cells)
-        exact = not sign and literal.strip("0,.") != ""
-        said.append(Said("effect", readings, (("F", None), ("p", None)) if exact else ()))
+        checked = (("F", None), ("p", None)) if is_exact(sign, literal) else ()
+        said.append(Said("effect", readings, checked))
     return Drawn("effects", "Table 2. Tests of effects", rows, 1, [], numbers.printed, said)
