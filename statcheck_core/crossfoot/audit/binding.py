@@ -42,6 +42,15 @@ CUSTOMARY: Mapping[str, Known] = {
     **{key: Known(QUANTITIES[key].domain) for key in ("df", "df1", "df2")},
 }
 
+#: Contexts in which what is printed of a quantity was read by custom, with that as a sentence.
+TAKEN_FOR_GRANTED: Mapping[str, tuple[str, str]] = {
+    "default-stars": (
+        "p",
+        "The marks of significance stand for the usual levels of .05, .01 and .001.",
+    ),
+    "counted-rows": ("df1", "The rows of the table are all the predictors of each step."),
+}
+
 _MODEL = "F R2 df1 df2 n"
 
 #: Quantities of each kind of claim that a chain may run through though they are not printed. A

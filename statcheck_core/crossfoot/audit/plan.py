@@ -11,7 +11,7 @@ from collections.abc import Iterable, Iterator, Mapping, Sequence, Set
 from functools import lru_cache, partial
 from typing import NamedTuple
 
-from crossfoot.audit.binding import CUSTOMARY, Cell, bind_prose, unprinted
+from crossfoot.audit.binding import CUSTOMARY, TAKEN_FOR_GRANTED, Cell, bind_prose, unprinted
 from crossfoot.audit.drafts import Draft, Shape, broken_assumption, connected, grounded, speaks
 from crossfoot.audit.narrow import Step, bits
 from crossfoot.audit.rows import BINDERS
@@ -187,6 +187,9 @@ def _step(
     for cell in draft.cells:
         if index[cell] >= printed and cell.quantity in CUSTOMARY:
             unstated += filter(None, [CUSTOMARY[cell.quantity].assumption])
+    for context, (quantity, assumption) in TAKEN_FOR_GRANTED.items():
+        if context in shape.context and any(cell.quantity == quantity for cell in draft.cells):
+            unstated.append(assumption)
     counting = shape.kind in _COUNTING and not shape.fractional
     counted = index[draft.gives] >= printed and QUANTITIES[draft.gives.quantity].whole
     return Step(

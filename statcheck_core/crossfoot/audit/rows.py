@@ -212,6 +212,10 @@ def bind_beside_marks(
     if identity.slug == "stars":
         return [(identity, pair) for pair in _pairs(cells)]
     own = [cell for cell in cells if not _is_mark(cell) and cell.term != _REDUCED]
+    if Cell("chi2") in own and "chi2" not in names_of(identity):
+        # The df beside a Wald test are those of χ², not those of the error.
+        own = [cell for cell in own if cell.quantity != "df"]
+        unprinted -= {"df"}
     bound = list(bind_prose(identity, own, unprinted))
     reduced = Cell("R2", _REDUCED)
     if identity.slug != "r2-change" or reduced not in cells:

@@ -18,6 +18,9 @@ _COLUMNS = re.compile(r"[^\s.?!] {2,}\S|\S\t+\S")
 #: A line that only rules off or names a part of a printout.
 _LABEL = re.compile(r"[-=_.*+| \t]+|[^\n]{1,60}:[ \t]*|[ \t]*[A-Z][A-Za-z ]{3,50}")
 
+#: A label and its value, as programs print them line by line.
+_PAIR = re.compile(r"[ \t]*[A-Z][\w .()-]{1,40}:[ \t]+\S[^\n]{0,40}")
+
 _RULE = re.compile(r"[-=_]{6,}")
 
 _SIGNATURE = re.compile(
@@ -67,6 +70,8 @@ def _kind(part: str) -> str:
     lines = part.split("\n")
     columns = sum(1 for line in lines if _COLUMNS.search(line) or _RULE.search(line))
     if 2 * columns >= len(lines) or any(_SIGNATURE.match(line) for line in lines):
+        return "verbatim"
+    if len(lines) >= 2 and all(_PAIR.fullmatch(line) for line in lines):
         return "verbatim"
     if len(lines) <= 2 and all(_LABEL.fullmatch(line) for line in lines):
         return "label"

@@ -35,7 +35,9 @@ CONTEXTS: Mapping[str, str] = {
     "other-null": "The tests are against another value than zero.",
     "partial-sums": "Each sum of squares is what its effect adds to all others (type II or III), "
     "so that they need not add up.",
+    "ratio-limits": "The table says that the interval is that of the odds ratio.",
     "default-stars": "Marks of significance have no legend and are taken for the usual levels.",
+    "counted-rows": "Degrees of freedom are counted from the rows of the table and its cases.",
     "joint": "One expression speaks of several results together.",
 }
 
@@ -202,6 +204,7 @@ _ASSUMPTIONS = (
     _assumption(
         "limits-of-ratio",
         "The interval is that of the odds ratio, not of the coefficient.",
+        stated_by="ratio-limits",
     ),
     _assumption(
         "fisher-limits",

@@ -51,11 +51,16 @@ def models_around(
             break
         last += 1
     first = number
-    while first > 0 and number - first < _REACH and free[first - 1]:
+    while first > 0 and number - first < _REACH and (free[first - 1] or lines[first - 1].blank):
         line = lines[first - 1]
         if line.rule:
             first -= 1
             continue
+        if line.blank and first > 1 and free[first - 2]:
+            above, numbers = _parted(text, lines[first - 2])
+            if numbers and len(above) <= 8:
+                first -= 2  # an empty line between two predictors
+                continue
         above, numbers = _parted(text, line)
         if not numbers or len(above) > 8:
             break
@@ -64,10 +69,16 @@ def models_around(
         first += 1
     if first == last:
         return None
+    body = first
     first = _with_titles(text, lines, first, free)
-    parted = [
-        _parted(text, line) for line in lines[first : last + 1] if not line.rule and not line.blank
-    ]
+    kept = [line for line in lines[first : last + 1] if not line.rule and not line.blank]
+    parted = [_parted(text, line) for line in kept]
+    if first < body:
+        titles = [
+            Word(found.group(), kept[0].start + found.start(), kept[0].start + found.end())
+            for found in _FIELD.finditer(kept[0].text)
+        ]
+        parted[0] = ([], titles)
     return Bare(first, last, _columns(text, lines, parted))
 
 

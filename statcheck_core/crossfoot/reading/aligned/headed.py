@@ -23,6 +23,8 @@ from crossfoot.reading.tables.headings import NOTHING
 
 #: What two spaces or a tab part.
 _FIELD = re.compile(r"\S+(?: \S+)*")
+#: The types of columns, as some data frames print them.
+_TYPES = re.compile(r"\s*(?:<[a-z]{2,6}>\s*)+")
 #: A relation that is not in brackets.
 _STATED = re.compile(r"=(?![^()]*\))")
 #: Roles that do not make a line one of headings.
@@ -55,9 +57,9 @@ def headings_in(text: str, line: Line) -> Columns | None:
     tokens = tokens_of(text, words)
     known = [t for t in tokens if t.heading.roles and t.heading.roles[0] not in _WEAK]
     others = [t for t in tokens if not t.heading.roles]
-    if len(known) < 2 or len(others) > len(known) + 1 or any(is_value(t.text) for t in others):
+    if len({t.heading.roles for t in known}) < 2 or len(others) > len(known) + 1:
         return None
-    if any(sign in t.text for t in others for sign in "=;{}"):
+    if any(is_value(t.text) or not set("=;{}").isdisjoint(t.text) for t in others):
         return None
     first = next(
         i for i, t in enumerate(tokens) if t.heading.roles and t.heading.roles != ("label",)
@@ -91,8 +93,12 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
         if below.rule:
             continue
         label, values = _parted(text, below)
-        if not label or (not values and rows > 1):
+        if below.blank and rows:
+            continue
+        if (not label and not values) or (not values and rows > 1):
             break
+        if not label:
+            continue
         if len(values) > len(fields):
             return None
         names.add(text[label[0].start : label[-1].end].lower())
@@ -130,17 +136,20 @@ def rows_below(
     blanks = 0
     while number < len(lines):
         line = lines[number]
-        if line.blank or line.rule:
+        if line.blank or line.rule or _TYPES.fullmatch(line.text):
             blanks += line.blank
             if blanks > 1 and line.blank and lines[number - 1].blank:
                 break
             number += 1
             continue
         label, values = _parted(text, line)
-        if NOTE.match(line.text) or any(is_value(word.text) and "." in word.text for word in label):
+        if NOTE.match(line.text) or _is_sentence(label, values):
             break
         if not values:
-            if not _section(line, raw, number, end):
+            goes_on = bool(raw) or (
+                number + 1 < len(lines) and bool(_parted(text, lines[number + 1])[1])
+            )
+            if not goes_on or not _section(line, number, end):
                 break
             raw.append((number, label, []))
             number += 1
@@ -164,7 +173,7 @@ def _with_unnamed(columns: Columns, counts: Sequence[int]) -> Columns:
         return columns
     usual = max(set(counts), key=counts.count)
     extra = usual - len(columns.heads)
-    if extra < 0:
+    if max(counts) < len(columns.heads):
         return _with_whole_intervals(columns)
     if not 0 < extra <= len(columns.labels):
         return columns
@@ -187,9 +196,16 @@ def _with_whole_intervals(columns: Columns) -> Columns:
     return Columns(columns.labels, tuple(heads), tuple(spans))
 
 
-def _section(line: Line, raw: Sequence[object], number: int, end: int) -> bool:
+def _is_sentence(label: Sequence[Word], values: Sequence[Word]) -> bool:
+    """Say whether a line tells numbers one after the other, each under its own name."""
+    if (label and label[-1].text[-1] in ":=") or (values and values[0].text[0] == "="):
+        return True
+    return any("." in word.text and is_value(word.text.rstrip(",;")) for word in label)
+
+
+def _section(line: Line, number: int, end: int) -> bool:
     """Say whether a line without numbers may name a part of the table."""
-    return len(line.text.strip()) <= 40 and number - end <= 1 and "=" not in line.text and bool(raw)
+    return len(line.text.strip()) <= 40 and number - end <= 1 and "=" not in line.text
 
 
 def _parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
@@ -233,11 +249,7 @@ def _placed(
         if len(label) > 1 and label[0].end - offset < named and label[0].text.isdigit():
             label = label[1:]  # the number of the row, before its name
         while (
-            len(values) > 0
-            and len(values) < width
-            and not loose
-            and values[0].end - offset <= left
-            and label
+            len(values) > 0 and len(values) < width and not loose and values[0].end - offset <= left
         ):
             label, values = [*label, values[0]], values[1:]
         cells = _assigned(values, spans, offset, loose)

@@ -28,7 +28,7 @@ _LONGEST = 20_000
 _HOPE = re.compile(
     r"(?i:\bdf\b|\bddof|sum[\s_]?(?:of|sq)|mean[\s_]sq|std\.? ?err|standard error"
     r"|estimate|coef|r-?sq|observations|prob|pr\(|p>|sig\.|[fgt]l\b|corrected)"
-    r"|\b(?:[FtzRNpPBb]2?|OR|CI|SE)\b|R²|R\^|η|β|\bSS\b|\bMS\b|model\b|regression\b|between\b|treatment"
+    r"|\b(?:[FtzRNpPBb]2?|OR|CI|SE)\b|\b1\.0{2,}\b|R²|R\^|η|β|\bSS\b|\bMS\b|model\b|regression\b|between\b|treatment"
 )
 
 
@@ -123,6 +123,8 @@ class _Finder:
         text = self.lines[above].text
         if self.lines[above].blank or self.lines[above].rule or len(text) > 200:
             return None
+        if pairs.in_fields(self.lines[above], above):
+            return None
         stated = _RELATED.search(_CASES.sub("", text)) is not None
         return None if stated or text.count("  ") > 4 or ">" in text[:3] else above
 
@@ -152,7 +154,11 @@ class _Finder:
 
     def headed(self, number: int) -> int:
         """Take the table whose headings stand on a line; return where to go on."""
-        listing = listed.separated(self.lines, number) or listed.named(self.lines, number)
+        listing = (
+            listed.separated(self.lines, number)
+            or listed.named(self.lines, number)
+            or listed.records(self.lines, number)
+        )
         if listing is not None:
             rows = [tuple(row) for row in listing.rows]
             header = (listing.header,) if listing.header[1:] else ()
@@ -196,6 +202,8 @@ class _Finder:
     def fields(self) -> None:
         """Take runs of lines that hold labels with values, wide apart."""
         run: list[list[pairs.Pair]] = []
+        #: Runs that are too short to be a summary, but may be part of one further down.
+        waiting: list[tuple[int, int, list[list[pairs.Pair]]]] = []
         first = 0
         for number, line in enumerate([*self.lines, Line(0, 0, "")]):
             free = number < len(self.lines) and self.free[number]
@@ -204,7 +212,15 @@ class _Finder:
                 first = first if run else number
                 run.append(found)
                 continue
-            if len([pair for item in run for pair in item]) >= 3:
+            count = len([pair for item in run for pair in item])
+            if 0 < count < 3:
+                waiting.append((first, number - 1, run))
+            if count >= 3:
+                for begin, end, item in waiting:
+                    run = [*item, *run]
+                    for passed in range(begin, end + 1):
+                        self.free[passed] = False
+                waiting = []
                 rows = [
                     tuple(p for pair in item for p in (pair.label, pair.value))
                     for item in run

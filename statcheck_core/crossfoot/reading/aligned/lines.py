@@ -18,13 +18,36 @@ _HEADISH = re.compile(
     r"|\b[FtTzZpPbBRr]\b|β|η|R\^?2|R²|[%\]]"
 )
 RULE = re.compile(r"[-=_+*~─━═|:. ]*(?:[-=_*~─━═]{3}|-\+-)[-=_+*~─━═|:. ]*")
-_VALUE = re.compile(
-    rf"(?:[<>≤≥=]\s?)?(?:\d{{1,4}}(?:\.\d+)?, )?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?"
-    rf" ?(?:\(df\s?=\s?\d+(?:[;,]\s?\d+)?\))?"
-    rf"|[(\[]{NUMERAL}[)\]]\*{{0,3}}|\[{NUMERAL}[,;]?|{NUMERAL}\]"
-    rf"|(?:{NUMERAL}\*{{0,4}} ?)?[(\[]{NUMERAL}(?:[,;]\s?{NUMERAL})?[)\]]\*{{0,3}}"
-    rf"|{NUMERAL} (?:to|–) {NUMERAL}"
-    r"|NA|NaN|nan|N/A|--?|—|–|\.|\*{1,4}|ns"
+_ATOM = re.compile(rf"(?:[<>≤≥=]\s?)?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?|\*{{1,4}}")
+_DF_TAIL = re.compile(r" ?\(df\s?=\s?\d+(?:[;,]\s?\d+)?\)$")
+#: What stands between the numbers of one value.
+_BETWEEN = re.compile(r"[()\[\],;]| (?:to|–) |(?<=\d) (?=[-.\d])")
+#: Words that stand in columns of numbers.
+_EMPTY = frozenset(
+    [
+        "NA",
+        "NaN",
+        "nan",
+        "N/A",
+        "Inf",
+        "-",
+        "--",
+        "—",
+        "–",
+        ".",
+        "*",
+        "**",
+        "***",
+        "****",
+        "ns",
+        "two-sided",
+        "one-sided",
+        "less",
+        "greater",
+        "True",
+        "False",
+        "parametric",
+    ]
 )
 #: Lines after a table that explain it.
 NOTE = re.compile(
@@ -54,7 +77,7 @@ class Line(NamedTuple):
     @property
     def blank(self) -> bool:
         """Whether nothing stands on it."""
-        return not self.text.strip()
+        return not self.text.strip(" |\t")
 
     @property
     def rule(self) -> bool:
@@ -109,7 +132,7 @@ def tokens_of(text: str, words: Sequence[Word]) -> list[Token]:
         for last in range(min(number + 5, len(words)) - 1, number - 1, -1):
             if last > number and _wide(words, number, last):
                 continue
-            phrase = " ".join(word.text for word in words[number : last + 1]).strip("|")
+            phrase = " ".join(word.text for word in words[number : last + 1])
             found = headings.parse(phrase)
             if found.roles:
                 best, heading = last, found
@@ -130,7 +153,14 @@ def _wide(words: Sequence[Word], first: int, last: int) -> bool:
 
 def is_value(word: str) -> bool:
     """Say whether a word can stand in a column of numbers."""
-    return len(word) <= 40 and _VALUE.fullmatch(word) is not None
+    if word in _EMPTY:
+        return True
+    if len(word) > 40 or not any(char.isdigit() for char in word):
+        return False
+    bare = _DF_TAIL.sub("", word).lstrip("<>≤≥= ")
+    parts = [part.strip() for part in _BETWEEN.split(bare)]
+    numbers = [part for part in parts if part]
+    return 0 < len(numbers) <= 4 and all(_ATOM.fullmatch(part) for part in numbers)
 
 
 def values_of(text: str, words: Sequence[Word]) -> list[Word]:
@@ -150,6 +180,8 @@ def _belongs(last: str, word: str, gap: int) -> bool:
     if last in _RELATIONS or ("(df" in last and ")" not in last) or word.startswith("(df"):
         return True
     opened = max(last.rfind("("), last.rfind("[")) > max(last.rfind(")"), last.rfind("]"))
+    if last[0] == "[" and opened and word[-1] == "]":
+        return True
     if last[-1] in ",;" and (
         (opened and word[-1] in ")]") or last[:-1].replace(".", "", 1).isdigit()
     ):

@@ -15,6 +15,10 @@ _NAMED = re.compile(
     rf"(?P<name>[A-Za-z][\w .²^-]{{0,24}}?)\s?=\s?"
     rf"(?P<value>[<>]?\s?{NUMERAL}\*{{0,3}})(?=\s*(?:[,;]|$))"
 )
+_RECORDED = re.compile(
+    r'"(?P<name>[\w .>|()-]{1,24})"\s?:\s?'
+    r'(?:(?P<number>-?[\d.]{1,20}(?:[eE][-+]?\d{1,3})?)(?![\w.])|"(?P<word>[^"]{1,40})")'
+)
 _ROW = re.compile(r"\s*(?P<label>[A-Za-z][\w ×*().-]{0,40}?)\s?:\s+(?=[A-Za-z])")
 
 Place = tuple[int, int]
@@ -100,6 +104,38 @@ def _cells(line: Line, mark: str) -> list[Place]:
 
 def _padded(cells: Sequence[Place | None], width: int) -> tuple[Place | None, ...]:
     return (*cells, *(None,) * (width - len(cells)))
+
+
+def records(lines: Sequence[Line], number: int) -> Listing | None:
+    """Return the table of records in braces, a line each: ``{"term": "a", "df1": 2, "F": 3.9}``."""
+    header: dict[str, int] = {}
+    places: list[Place | None] = [None]
+    rows: list[list[Place | None]] = []
+    last = number
+    for index in range(number, len(lines)):
+        line = lines[index]
+        text = line.text.strip(" ,[]")
+        if not (text.startswith("{") and text.endswith("}")) or len(text) > 400:
+            break
+        cells: list[Place | None] = [None] * len(places)
+        for match in _RECORDED.finditer(line.text):
+            group = "number" if match["number"] else "word"
+            place = (line.start + match.start(group), line.start + match.end(group))
+            if match["word"]:
+                cells[0] = cells[0] or place
+                continue
+            if match["name"] not in header:
+                header[match["name"]] = len(places)
+                places.append((line.start + match.start("name"), line.start + match.end("name")))
+                cells.append(None)
+            cells[header[match["name"]]] = place
+        rows.append(cells)
+        last = index
+    roles = {role for name in header for role in headings.parse(name).roles}
+    if not rows or len(roles - _WEAK) < 3:
+        return None
+    width = len(places)
+    return Listing(number, last, tuple(places), tuple(_padded(row, width) for row in rows))
 
 
 def named(lines: Sequence[Line], number: int) -> Listing | None:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import itertools
 import math
 import re
 from collections.abc import Sequence
@@ -27,7 +28,11 @@ from crossfoot.reading.tables.making import (
 from crossfoot.reading.tables.rows import is_intercept, label_of
 
 _ESTIMATES = frozenset({"b", "β", "beta", "odds_ratio"})
-_BESIDE = frozenset({"se", "t", "z", "wald", "p", "ci_low", "ci_high", "vif", "tolerance"})
+_BESIDE = frozenset(
+    {"se", "t", "z", "wald", "statistic", "p", "ci_low", "ci_high", "vif", "tolerance"}
+)
+#: What a role is as a quantity, where its name differs.
+_AS = {"wald": "chi2", "statistic": "t"}
 _OTHERS = frozenset({"p_adjusted", "df2", "df"})
 _HYPOTHESES = re.compile(r"test\sfor\sconstraints|linear\shypothes", re.IGNORECASE)
 _STANDARD = re.compile(r"(?<!un)(?<!un-)standardi[sz]ed", re.IGNORECASE)
@@ -101,11 +106,16 @@ def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
     # Degrees of freedom before the estimate count parameters; after it they are the test's.
     order = [role for column in columns for role in column.heading.roles]
     of_test = "df" in order and order[0] != "df"
+    # A lone "C" is the constant of some programs; beside A and B it is a factor.
+    lettered = any(
+        row[c.number].text in {"A", "B", "D"} for row in sheet.panel.rows for c in labels
+    )
+    of_ratio = _limits_of_ratio(order)
     lines: list[Line] = []
     for index, row in enumerate(sheet.panel.rows):
         words = tuple(row[c.number] for c in labels if row[c.number].text)
         label = label_of(", ".join(box.text for box in words))
-        if fits.is_fit(label) or is_intercept(label):
+        if fits.is_fit(label) or is_intercept(label) or (label == "C" and not lettered):
             continue
         cells: dict[str, Reading] = {}
         given: list[Reading] = []
@@ -117,10 +127,17 @@ def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
                 sheet, column, content, cells, given, contexts, has_p=has_p, of_test=of_test
             )
             enclosed = enclosed or loose
+        if of_ratio and "ci_low" in cells:
+            contexts.append("of-ratio")
         if cells:
             boxes = (*words, *(row[c.number] for c in columns))
             lines.append(Line(index, label, cells, boxes, tuple(given), tuple(contexts), enclosed))
     return lines
+
+
+def _limits_of_ratio(roles: Sequence[str]) -> bool:
+    """Say whether the limits stand right after an odds ratio."""
+    return any(a == "odds_ratio" and b == "ci_low" for a, b in itertools.pairwise(roles))
 
 
 def _read(
@@ -142,7 +159,7 @@ def _read(
     if len(numbers) < len(roles) and len(roles) > 1 and len(content.plain) != 1:
         return None
     for role, number in zip(roles, numbers, strict=False):
-        quantity = "chi2" if role == "wald" else role
+        quantity = _AS.get(role, role)
         if quantity == "chi2" and number.literal.startswith("-"):
             quantity = "z"
         if quantity == "p_adjusted" or (quantity == "df" and not of_test):

@@ -11,8 +11,16 @@ from crossfoot.reading.tables.grid import EMPTY, Box, Panel
 from crossfoot.reading.tables.headings import NOTHING, Heading
 from crossfoot.reading.tables.making import Column
 
+#: Quantities that may follow the name of what they are of.
+_NAMED = frozenset({"F", "t", "p", "df", "b", "β", "beta", "se", "z", "r", "ms", "ss", "chi2"})
+_ESTIMATES = frozenset({"b", "β", "beta"})
+_MODEL = re.compile(
+    r"(?:model|step|block|stage|modell|modèle|modelo)\s?[\dA-Z]{1,3}", re.IGNORECASE
+)
 _CI = ("ci_low", "ci_high")
 _COMMA = re.compile(r"\D{0,3}(?:0?,\d+|\d+,(?:\d{1,2}|\d{4,}))\D{0,8}")
+#: Over several columns these say that the model is adjusted, not what stands in each.
+_OF_MODEL = re.compile(r"(?:un)?adjusted|crude", re.IGNORECASE)
 _POINT = re.compile(r"\d*\.\d")
 #: Rows that are looked at to tell how a table writes its numbers.
 _SAMPLE = 60
@@ -25,7 +33,50 @@ def columns_of(panel: Panel) -> tuple[Column, ...]:
         same = columns[index].box is columns[index - 1].box and columns[index].heading.roles
         if same and all(is_blank(row[index].text) for row in panel.rows[:_SAMPLE]):
             columns[index] = columns[index]._replace(heading=NOTHING)  # spanned, but empty
-    return tuple(_split_intervals(panel, columns))
+    for index, column in enumerate(columns):
+        if column.heading.roles == ("statistic",) and _are_words(panel, index):
+            columns[index] = column._replace(heading=NOTHING._replace(roles=("label",)))
+        elif index and column.heading.roles == ("label",) and _are_figures(panel, index):
+            columns[index] = column._replace(heading=NOTHING)
+    return tuple(_split_intervals(panel, _with_names(columns)))
+
+
+def _are_words(panel: Panel, index: int) -> bool:
+    """Say whether a column holds words rather than numbers."""
+    filled = [row[index].text for row in panel.rows[:_SAMPLE] if row[index].text]
+    return 2 * sum(content_of(text) is None for text in filled) >= len(filled)
+
+
+def _are_figures(panel: Panel, index: int) -> bool:
+    """Say whether a column holds decimals, marked or in brackets, that number no rows."""
+    filled = [row[index].text for row in panel.rows[:_SAMPLE] if not is_blank(row[index].text)]
+    contents = [content for text in filled if (content := content_of(text)) is not None]
+    return 2 * len(contents) > len(filled) and any(
+        content.marks or content.enclosed for content in contents
+    )
+
+
+def _with_names(columns: list[Column]) -> list[Column]:
+    """Tell columns such as ``Shape F | Shape p | Wind F | Wind p``: a name, then a quantity.
+
+    A name is one only where at least two quantities bear it, one of them p or a standard error,
+    or where it names a model, as ``Step 1 β | Step 2 β`` do.
+    """
+    named: dict[str, list[tuple[int, Heading]]] = {}
+    for index, column in enumerate(columns):
+        name, _, last = column.box.text.rpartition(" ")
+        if not column.heading.roles and name:
+            heading = headings.parse(last)
+            if heading.roles and heading.roles[0] in _NAMED:
+                named.setdefault(name.strip(" ,:-–"), []).append((index, heading))
+    for name, found in named.items():
+        roles = {heading.roles[0] for _, heading in found}
+        several = len(roles) > 1 and roles & {"p", "se"} and len(roles) == len(found)
+        if several or (len(found) == 1 and roles <= _ESTIMATES and _MODEL.fullmatch(name)):
+            for index, heading in found:
+                bare = heading._replace(df=(), level=None)
+                columns[index] = columns[index]._replace(heading=bare, group=name)
+    return columns
 
 
 def _column(panel: Panel, index: int) -> Column:
@@ -53,6 +104,8 @@ def _told(boxes: Sequence[Box]) -> tuple[Heading, Box, tuple[Box, ...]]:
     last = boxes[-1]
     for first in range(len(boxes) - 1):
         joined = " ".join(box.text for box in boxes[first:])
+        if boxes[first].columns > 1 and _OF_MODEL.fullmatch(boxes[first].text):
+            continue
         found = headings.parse(joined)
         if found.roles and found.roles != ("label",):
             return found._replace(level=None), last, tuple(boxes[first:])

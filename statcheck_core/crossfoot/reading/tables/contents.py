@@ -21,7 +21,7 @@ _TOKEN = re.compile(
     r"|(?P<relation><\s?=|>\s?=|[<>=≤≥≈])"
     rf"|(?P<number>{NUMERAL})"
     r"|(?P<open>[(\[{])|(?P<close>[)\]}])"
-    r"|(?P<between>[,;/|~]|(?:to|bis|and|à|a|-)(?=[\s\d.+-])|[–—…])"
+    r"|(?P<between>[,;/|~±]|\+/-|(?:to|bis|and|à|a|-)(?=[\s\d.+-])|[–—…])"
     r"|(?P<insignificant>n\.?s\.?(?![a-z]))"
 )
 _LETTER = re.compile(r"[a-e](?=[\s)\]]|$)")
@@ -29,6 +29,14 @@ _SYMBOL = re.compile(r"[A-Za-zβηχΔ]{1,2}(?:\^\{2\}|²|2)?\s?(?=[=<>≤≥≈
 _DEGREES = r"(?P<a{0}>\d{{1,7}}(?:\.\d{{1,4}})?)(?:\s?[;,]\s?(?P<b{0}>\d{{1,9}}(?:\.\d{{1,4}})?))?"
 _DF = re.compile(
     rf"\(\s?d\.?f\.?\s?=?\s?{_DEGREES.format(1)}\s?\)|\bd\.?f\.?\s?=\s?{_DEGREES.format(2)}"
+)
+#: A test with its degrees of freedom: ``F (2, 33) = 5.257``.
+_TEST = re.compile(
+    r"(?P<symbol>[FtrTχ](?:\^\{2\}|²)?)\s?\(\s?(?P<a>\d{1,7}(?:\.\d{1,4})?)"
+    r"(?:\s?[,;]\s?(?P<b>\d{1,9}(?:\.\d{1,4})?))?\s?\)\s?(?==)"
+)
+_WITH_P = re.compile(
+    r"[,;]?\s?p\s?(?P<relation><\s?=|[<=≤])\s?(?P<number>0?[.,]\d{1,20}(?:[eE]-\d{1,3})?)\Z"
 )
 #: Longest cell that is looked at for numbers.
 _LONGEST = 120
@@ -57,11 +65,17 @@ class Content(NamedTuple):
         Significance marks with their place, if there are any.
     df
         Degrees of freedom that the cell names as such, one or two.
+    symbol
+        Of the test that it names with them.
+    p
+        A p value that it names after its other numbers.
     """
 
     numbers: tuple[Number, ...]
     marks: tuple[str, int, int] | None = None
     df: tuple[Number, ...] = ()
+    symbol: str = ""
+    p: Number | None = None
 
     @property
     def plain(self) -> tuple[Number, ...]:
@@ -97,14 +111,21 @@ def content_of(text: str, at: int = 0) -> Content | None:
     df: tuple[Number, ...] = ()
     cut = len(text)
     start = 0
+    test = _TEST.match(text)
+    if test is not None:
+        df = _numbers(test, ("a", "b"), at)
+        inner = _scan(text, test.end(), cut, at, df)
+        return None if inner is None else inner._replace(symbol=test["symbol"])
+    after = _WITH_P.search(text)
+    if after is not None and after.start():
+        inner = content_of(text[: after.start()].rstrip(" ,;"), at)
+        sign = _RELATIONS.get("".join(after["relation"].split()), after["relation"])
+        p = Number(after["number"], at + after.start("number"), at + after.end("number"), sign)
+        return None if inner is None else inner._replace(p=p)
     if "df" in text or "d.f" in text:
         found = _DF.search(text)
         if found is not None:
-            df = tuple(
-                Number(found[group], at + found.start(group), at + found.end(group))
-                for group in ("a1", "b1", "a2", "b2")
-                if found[group]
-            )
+            df = _numbers(found, ("a1", "b1", "a2", "b2"), at)
             cut = found.start()
             if text[found.end() :].strip():
                 return None
@@ -112,6 +133,14 @@ def content_of(text: str, at: int = 0) -> Content | None:
     if symbol is not None:
         start = symbol.end()
     return _scan(text, start, cut, at, df)
+
+
+def _numbers(found: re.Match[str], groups: tuple[str, ...], at: int) -> tuple[Number, ...]:
+    return tuple(
+        Number(found[group], at + found.start(group), at + found.end(group))
+        for group in groups
+        if found[group]
+    )
 
 
 def _scan(text: str, position: int, end: int, at: int, df: tuple[Number, ...]) -> Content | None:

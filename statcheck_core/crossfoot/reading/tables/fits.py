@@ -107,6 +107,9 @@ def entries_of(
         if read is not None and _possible(role, read):
             found.append(Entry(role, read, box))
     found += _degrees(sheet, heading, head, content, box)
+    p = None if content.p is None else reading(sheet, content.p, "p")
+    if p is not None:
+        found.append(Entry("p", p, box))
     mark, default = marked(sheet, content)
     if mark is not None and heading.roles[0] in {"F", "F_change", "R2", "R2_adj", "R2_change"}:
         change = heading.roles[0] in _CHANGE
@@ -147,7 +150,9 @@ def _degrees(sheet: Sheet, heading: Heading, head: Box, content: Content, box: B
 
 def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     """Return the models that rows tell of under headings such as R² and ΔF."""
-    roles = FIT - {"n", "df1", "df2", "R"} if beside_coefficients else FIT | {"p", "df"}
+    roles = (
+        FIT - {"n", "df1", "df2", "R"} if beside_coefficients else FIT | {"p", "df", "statistic"}
+    )
     columns = [c for c in sheet.columns if c.heading.roles and c.heading.roles[0] in roles]
     if not any(c.heading.roles[0] in _STRONG for c in columns):
         return Found(())
@@ -163,6 +168,8 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
             heading = column.heading
             if heading.roles == ("df",):
                 heading = heading._replace(roles=_pair_or_one(row[column.number].text))
+            elif heading.roles == ("statistic",):
+                heading = heading._replace(roles=("F",))  # that of the whole model
             entries += entries_of(sheet, heading, column.box, row[column.number], contexts)
         if entries:
             boxes = (*words, *(entry.box for entry in entries))

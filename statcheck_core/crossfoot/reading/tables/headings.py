@@ -56,6 +56,10 @@ _ARGUMENTS = re.compile(
     r"(?P<name>[^()\[\]]{1,30})[(\[]\s{0,9}(?:d\.?f\.?\s?=?\s?)?(?P<a>\d{1,7}(?:\.\d{1,4})?)"
     r"(?:\s?[,;]\s{0,9}(?:[Nn]\s?=\s?)?(?P<b>\d{1,9}(?:\.\d{1,4})?))?\s?[)\]]"
 )
+_LOWERED = re.compile(
+    r"(?P<name>Δ?F|[Tt]|χ(?:\^\{2\}|²))\s?(?:_?\{?(?P<a>\d{1,4}(?:\.\d{1,4})?)\s?[,;]\s?"
+    r"(?P<b>\d{1,7}(?:\.\d{1,4})?)|_\{?(?P<c>\d{2,7}|(?<=[}²]_\{|.[}²]_)\d))\}?"
+)
 _COMPOSED = re.compile(
     r"(?P<base>[^()\[\]/]{1,40}?)\s?[(\[]\s?(?P<inner>[^()\[\]]{1,30}(?:\([^()]{1,12}\))?)\s?[)\]]"
 )
@@ -86,6 +90,10 @@ def parse(text: str) -> Heading:
     text = text.strip()
     if not text or len(text) > 90:
         return NOTHING
+    if text[0] in "([" and text[-1] in ")]" and not set("()[]") & set(text[1:-1]):
+        inner = parse(text[1:-1])
+        if inner.roles and inner.roles != ("label",) and not (inner.df or inner.level):
+            return inner
     sided = _SIDED.search(text)
     if sided is not None:
         found = parse(text[: sided.start()])
@@ -158,13 +166,13 @@ def _cut(pattern: re.Pattern[str], text: str) -> tuple[re.Match[str] | None, str
 
 def _with_df(text: str) -> Heading | None:
     """``F(2, 57)``, ``t(58)``, ``F Statistic (df = 2; 191)``."""
-    match = _ARGUMENTS.fullmatch(text)
+    match = _ARGUMENTS.fullmatch(text) or _LOWERED.fullmatch(text)
     if match is None:
         return None
     role = role_of(match["name"])
     if role not in {"F", "t", "chi2", "F_change", "r", "s", "wald"}:
         return None
-    groups = ("a", "b") if match["b"] else ("a",)
+    groups = ("a", "b") if match["b"] else ("a",) if match["a"] else ("c",)
     return Heading((role,), df=tuple(Number(match[g], *match.span(g)) for g in groups))
 
 
@@ -184,6 +192,9 @@ def _composed(text: str) -> Heading | None:
 
 def _paired(first: str, second: str, offset: int) -> Heading | None:
     base = parse(first.strip())
+    halves = [role_of(half.strip()) for half in second.split(",")]
+    if base.roles == ("F",) and halves == ["df1", "df2"]:
+        return base._replace(roles=("F", "df"))
     if len(base.roles) != 1:
         return None
     role = base.roles[0]

@@ -12,6 +12,8 @@ from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.making import Found, Sheet
 
 _ROLES = FIT | {"p", "se"}
+#: F and p alone, or R² alone, may be anything.
+_MORE = FIT - {"F", "R2"}
 #: A summary has no more rows, so that a list of a thousand numbers is none.
 _MOST = 60
 
@@ -39,6 +41,8 @@ def key_values(sheet: Sheet) -> Found | None:
                 read.add(number)
     if "robust" in sheet.legend.contexts:
         return _apart(sheet, entries, boxes, contexts, read)
+    if not {entry.role for entry in entries} & _MORE:
+        return None
     model = Model(sheet.title or "model", tuple(entries), tuple(boxes), tuple(contexts))
     claims = model_claims(sheet, [model])
     return Found(tuple(claims), frozenset(read)) if claims else None

@@ -10,6 +10,7 @@ from typing import NamedTuple
 from crossfoot.reading import numerals
 from crossfoot.reading.cues import cues_in
 from crossfoot.reading.items import Part
+from crossfoot.reading.tables.contents import Number
 
 #: Where marks are explained: ``*p < .05``, ``** p<0.01``, ``'***' 0.001``, ``* significant at 5%``.
 _MARK = r"(?P<mark>\*{1,4}|†{1,2}|‡|(?<![\w.])\+(?=\s?p))"
@@ -50,6 +51,10 @@ _CASES = re.compile(
     r"(?P<number>\d{1,3}(?:[,  ]\d{3})+(?!\d)|\d+)(?P<more>\s?[-–—]\s?\d)?"
     r"|(?<![\w.])(?P<told>\d{1,3}(?:,\d{3})+(?!\d)|\d+)\s(?:observations|participants|cases|respondents)\b"
 )
+_DF = re.compile(
+    r"(?<![\w.(])(?:d\.?f\.?|degrees\sof\sfreedom)\s?(?:=|are|is|were|of)?\s?"
+    r"\(?(?P<a>\d{1,7})(?:\s?(?:,|and)\s?(?P<b>\d{1,9}))?\)?(?!\d|\.\d)"
+)
 #: Levels that marks stand for where a table does not say.
 DEFAULT = {"*": 0.05, "**": 0.01, "***": 0.001}
 
@@ -76,6 +81,8 @@ class Legend(NamedTuple):
         Whether t statistics are printed without their sign.
     cases
         The number of cases, if one is told.
+    df
+        Degrees of freedom told for all tests, one or two.
     contexts
         What the words mean for every result.
     alpha
@@ -88,6 +95,7 @@ class Legend(NamedTuple):
     cases: Part | None = None
     contexts: frozenset[str] = frozenset()
     alpha: float | None = None
+    df: tuple[Number, ...] = ()
 
 
 def legend_of(text: str, spans: list[tuple[int, int]]) -> Legend:
@@ -95,6 +103,7 @@ def legend_of(text: str, spans: list[tuple[int, int]]) -> Legend:
     marks: dict[str, Mark] = {}
     enclosed: str | None = None
     cases: Part | None = None
+    df: tuple[Number, ...] = ()
     words = []
     for start, end in spans:
         stretch = text[start:end]
@@ -102,12 +111,25 @@ def legend_of(text: str, spans: list[tuple[int, int]]) -> Legend:
         marks.update(_marks(stretch, start))
         enclosed = enclosed or _enclosed(stretch)
         cases = cases or _cases(stretch, start)
+        df = df or _degrees(stretch, start)
     said = "\n".join(words)
     cues = cues_in(said) if said else cues_in("")
     absolute = _ABSOLUTE.search(said) is not None
     # A test of assumptions that a note reports is not the table's subject.
     contexts = cues.contexts - {"assumption-test", "quoted"}
-    return Legend(marks, enclosed, absolute, cases, contexts, cues.alpha)
+    return Legend(marks, enclosed, absolute, cases, contexts, cues.alpha, df)
+
+
+def _degrees(text: str, at: int) -> tuple[Number, ...]:
+    """Return the degrees of freedom that a text tells apart from any result."""
+    found = list(_DF.finditer(text))
+    if len(found) != 1:
+        return ()
+    return tuple(
+        Number(found[0][group], at + found[0].start(group), at + found[0].end(group))
+        for group in ("a", "b")
+        if found[0][group]
+    )
 
 
 def _marks(text: str, at: int) -> dict[str, Mark]:

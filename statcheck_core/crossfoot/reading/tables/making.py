@@ -176,7 +176,9 @@ def claim(
     found_contexts = set(contexts) | sheet.legend.contexts | cues_in(label).contexts
     if any(found.quantity in _COUNTS and found.low != found.high for found in (*ordered, *given)):
         found_contexts.add("adjusted-df")
-    found_contexts.discard("of-ratio")
+    if "of-ratio" in found_contexts:
+        found_contexts.remove("of-ratio")
+        found_contexts.add("ratio-limits")
     if any(found.quantity == "df1" and found.low > 1 for found in ordered):
         found_contexts.discard("adjusted-p")  # corrections are of single contrasts
     own = [found.span for found in ordered]

@@ -6,16 +6,18 @@ import re
 from collections.abc import Callable, Iterable, Sequence
 
 from crossfoot.documents.table import Table
-from crossfoot.model import Claim
+from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.cues import CUES, cues_in
 from crossfoot.reading.fold import fold
 from crossfoot.reading.tables import legend as legends
 from crossfoot.reading.tables.anova import anova, bare
 from crossfoot.reading.tables.coefficients import coefficients
 from crossfoot.reading.tables.columns import columns_of, writes_comma
+from crossfoot.reading.tables.comparisons import comparisons
 from crossfoot.reading.tables.correlations import correlations
 from crossfoot.reading.tables.grid import Panel, panels_of
 from crossfoot.reading.tables.keyvalue import key_values
+from crossfoot.reading.tables.legend import Legend
 from crossfoot.reading.tables.making import Found, Sheet
 from crossfoot.reading.tables.results import results
 from crossfoot.reading.tables.sidebyside import side_by_side
@@ -27,6 +29,7 @@ Prose = Callable[[int, int], Sequence[Claim]]
 
 _RECOGNISERS: tuple[Callable[[Sheet], Found | None], ...] = (
     correlations,
+    comparisons,
     anova,
     coefficients,
     summaries,
@@ -42,6 +45,12 @@ _TITLE = re.compile(
 _STATED = re.compile(r"[=<>≤≥≈]\s?[-+]?\s?[.,]?\d")
 #: Contexts that words must stand near a result to mean.
 _NEAR = frozenset(cue.context for cue in CUES if cue.near)
+#: Words that say that a model has more predictors than its table lists.
+_OMITS = re.compile(
+    r"\bcontrol(?:s|led|ling)?\b|fixed\seffects?|dumm(?:y|ies)|not\s(?:shown|reported|listed)|omitted"
+    r"|adjust(?:ed|ing)\sfor|covariates?|suppressed|all\smodels\sinclude|also\sinclude",
+    re.IGNORECASE,
+)
 #: Longest caption or note that is looked at, in code points.
 _LONGEST_NOTE = 4000
 _NOTE_ROW = re.compile(
@@ -86,7 +95,23 @@ def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, 
         if _STATED.search(folded, start, end)
         for c in prose(start, end)
     ]
-    return tuple(joined(found, notes))
+    return tuple(
+        joined(
+            found,
+            notes,
+            _told(table, legend),
+            complete=_OMITS.search(folded, 0, _LONGEST_NOTE) is None,
+        )
+    )
+
+
+def _told(table: Table, legend: Legend) -> Reading | None:
+    """Return the number of cases that caption or notes tell."""
+    part = legend.cases
+    if part is None:
+        return None
+    literal = table.visible.text[part.start : part.end]
+    return Reading("n", "=", literal, part.low, part.high, Span(part.start, part.end))
 
 
 def _recognised(sheet: Sheet) -> Found:

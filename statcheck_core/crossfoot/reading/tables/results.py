@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables.columns import labels_of, roles_in, side_by_side
-from crossfoot.reading.tables.contents import NONE, content_of
+from crossfoot.reading.tables.contents import NONE, content_of, is_blank
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, head_df, marked, reading
 from crossfoot.reading.tables.rows import kind_of, label_of
 
@@ -24,6 +25,7 @@ _NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2",
 
 def results(sheet: Sheet) -> Found | None:
     """Return the claims of a table of tests, a row each, or None where it is none."""
+    sheet = sheet._replace(columns=_with_symbols(sheet))
     roles = roles_in(sheet.columns)
     if roles & _NEVER or not roles & set(_KINDS):
         return None
@@ -32,19 +34,61 @@ def results(sheet: Sheet) -> Found | None:
     for group in side_by_side(sheet.columns, _ROLES):
         own = {role for column in group for role in column.heading.roles}
         tests = [key for key in _KINDS if key in own]
-        if len(tests) == 1 and _supported(tests[0], own, group):
+        if len(tests) == 1 and _supported(sheet, tests[0], own, group):
             found = _rows(sheet, group, tests[0])
             claims += found.claims
             rows |= found.rows
     return Found(tuple(claims), frozenset(rows)) if claims else None
 
 
-def _supported(test: str, roles: set[str], columns: Sequence[Column]) -> bool:
+#: What a cell calls the test whose result it holds.
+_SYMBOLS = {"F": "F", "t": "t", "T": "t", "r": "r", "χ²": "chi2", "χ^{2}": "chi2"}
+
+
+def _with_symbols(sheet: Sheet) -> tuple[Column, ...]:
+    """Name columns by their cells, where each holds a test: ``F(2, 57) = 4.47``."""
+    columns = list(sheet.columns)
+    for place, column in enumerate(columns):
+        if column.heading.roles or not column.box.text:
+            continue
+        texts = [row[column.number].text for row in sheet.panel.rows[:60]]
+        contents = [content_of(text) for text in texts if text]
+        symbols = {content.symbol for content in contents if content is not None}
+        if len(symbols) == 1 and None not in contents and (symbol := symbols.pop()) in _SYMBOLS:
+            heading = column.heading._replace(roles=(_SYMBOLS[symbol],))
+            columns[place] = column._replace(heading=heading)
+    return tuple(columns)
+
+
+def _supported(sheet: Sheet, test: str, roles: set[str], columns: Sequence[Column]) -> bool:
     """Say whether headings make a test: a letter alone is none."""
+    if test not in {"r", "n"} and "p" in roles and _are_probabilities(sheet, columns):
+        return True
     degrees = bool(roles & {"df", "df1", "df2"}) or any(c.heading.df for c in columns)
     if test in {"z", "r"}:
         return "p" in roles and (test == "z" or degrees or "n" in roles)
-    return degrees and ("p" in roles or bool(roles & _EFFECT_SIZES) or test == "F")
+    return degrees and (bool(roles & {"p", *_EFFECT_SIZES}) or test == "F")
+
+
+def _are_probabilities(sheet: Sheet, columns: Sequence[Column]) -> bool:
+    """Say whether the numbers under p are printed as p values are: below 1, to two places."""
+    places = [c.number for c in columns if c.heading.roles == ("p",)]
+    found = [
+        content_of(row[place].text)
+        for row in sheet.panel.rows[:60]
+        for place in places
+        if not is_blank(row[place].text)
+    ]
+    return bool(found) and all(
+        content is not None
+        and len(content.numbers) == 1
+        and (content.numbers[0].insignificant or _P.fullmatch(content.numbers[0].literal))
+        for content in found
+    )
+
+
+#: A p value as it is usually printed.
+_P = re.compile(r"[01]?[.,]\d{2,}(?:[eE]-\d{1,3})?|\d(?:[.,]\d+)?[eE]-\d{1,3}|0|1")
 
 
 def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
@@ -69,21 +113,38 @@ def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
         ):
             error = cells.get("df1") or cells.get("df2")
             if error is not None:
-                given = (error._replace(quantity="df2"),)
+                df2 = error._replace(quantity="df2")
                 for number in waiting:
                     if not any(r.quantity == "df2" for r in claims[number].readings):
-                        claims[number] = claims[number]._replace(given=given)
+                        claims[number] = claims[number]._replace(given=(df2,))
                 waiting = []
                 rows.add(index)
             continue
         if test not in cells or len(cells) < 2 or not _possible(cells):
             continue
         boxes = (*words, *(row[c.number] for c in columns))
-        found = claim(sheet, _KINDS[test], label or test, cells.values(), boxes, contexts=contexts)
+        name = next((column.group for column in columns if column.group), "")
+        title = ", ".join(part for part in (label, name) if part) or test
+        told = {"df", "df2"} & cells.keys() or test == "z"
+        given = () if told else _told_df(sheet, test)
+        found = claim(
+            sheet, _KINDS[test], title, cells.values(), boxes, contexts=contexts, given=given
+        )
         waiting.append(len(claims))
         claims.append(found)
         rows.add(index)
     return Found(tuple(claims), frozenset(rows))
+
+
+def _told_df(sheet: Sheet, test: str) -> tuple[Reading, ...]:
+    """Return the degrees of freedom that a note tells for all rows."""
+    names = ("df1", "df2") if test == "F" else ("df",)
+    return tuple(
+        found
+        for name, number in zip(names, sheet.legend.df, strict=False)
+        if len(sheet.legend.df) == len(names)
+        and (found := reading(sheet, number, name)) is not None
+    )
 
 
 def _possible(cells: dict[str, Reading]) -> bool:

@@ -25,7 +25,7 @@ ROLES: tuple[Role, ...] = (
     Role(
         "ss",
         "SS SSQ SumSq SQ QS SC",
-        "sumofsquares sumsofsquares sumsq sumsquares squares ssq typeiiisumofsquares"
+        "sumofsquares sumofsq sumsofsquares sumsq ssdiff sumsquares squares ssq typeiiisumofsquares"
         " typeiisumofsquares typeisumofsquares typeiiiss typeiiss typeiss seqss adjss anovass"
         " partialss quadratsumme quadratsummen summederquadrate sommedescarrés sommecarrés"
         " sumadecuadrados sommadeiquadrati somadosquadrados somadequadrados kwadratensom"
@@ -41,7 +41,7 @@ ROLES: tuple[Role, ...] = (
     Role(
         "df",
         "df Df DF dl FG gl GL ddl gdl GdL",
-        "df dof degreesoffreedom degreeoffreedom dfs freiheitsgrade freiheitsgrad fg"
+        "df dof dfdiff degreesoffreedom degreeoffreedom dfs freiheitsgrade freiheitsgrad fg"
         " degrésdeliberté degrésdeliberte gradosdelibertad grausdeliberdade gradidilibertà"
         " vrijheidsgraden frihetsgrader 自由度 자유도",
     ),
@@ -58,7 +58,7 @@ ROLES: tuple[Role, ...] = (
         " residualdf dfdenominator denomdf dendof residualdegreesoffreedom errordegreesoffreedom"
         " nennerdf dofresiduals",
     ),
-    Role("df_residual", "", "resdf residdf dfresid"),
+    Role("df_residual", "", "resdf residdf dfresid residualdf(model)"),
     Role("rss", "RSS SSR SSE ssr", "residsumofsquares residualss"),
     Role(
         "F",
@@ -217,7 +217,7 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "s",
-        "SEE RSE RMSE",
+        "S SEE RSE RMSE",
         "rmse rse see rootmse residualstandarderror residualstderror residualse residualstderr"
         " stderroroftheestimate standarderroroftheestimate stderrorofestimate"
         " standarderrorofestimate sigma seoftheestimate seofestimate seofregression"
@@ -227,10 +227,10 @@ ROLES: tuple[Role, ...] = (
     Role(
         "n",
         "N n",
-        "observations obs numberofobs numberofobservations noobservations noofobs numobs nobs"
-        " numbobs noofobservations samplesize cases noofcases numberofcases casesincluded"
-        " nobservations observationsn n(listwise) 观测值 样本量 样本数 anzahlbeobachtungen"
-        " beobachtungen observaciones osservazioni observações n(obs) 관측수",
+        "observations includedobservations obs numberofobs numberofobservations noobservations"
+        " noofobs numobs nobs numbobs noofobservations samplesize cases noofcases numberofcases"
+        " casesincluded nobservations observationsn n(listwise) 观测值 样本量 样本数"
+        " anzahlbeobachtungen beobachtungen observaciones osservazioni observações n(obs) 관측수",
     ),
     Role(
         "label",
@@ -238,9 +238,10 @@ ROLES: tuple[Role, ...] = (
         "source sourceofvariation variable variables predictor predictors term terms parameter"
         " effect effects factor factors model models step steps covariate covariates"
         " independentvariable independentvariables iv ivs sourceofvariance component measure"
-        " statistic metric item contrast quelle varianzquelle fuente parameters explanatoryvariable"
+        " metric item contrast quelle varianzquelle fuente parameters explanatoryvariable"
         " explanatoryvariables variationsource modelterm 变量 变异来源 来源 block",
     ),
+    Role("statistic", "", "statistic"),
     Role("mean", "M", "mean means m"),
     Role("sd", "SD", "sd stddev standarddeviation stdev"),
 )

@@ -17,14 +17,14 @@ _ERROR = re.compile(
     r"|(?:intra|within)[\s-]?groups?|fehler|residuen|rest|reststreuung|residual[\s-]?(?:streuung|fehler)|innerhalb(?:\s(?:der\s)?gruppen)?"
     r"|résidus?|résiduelles?|erreur|intra[\s-]?groupes?|residuos?|residual|dentro\s(?:de\s)?(?:los\s)?grupos|intra[\s-]?grupos?"
     r"|error\sexperimental|resíduos?|erro|dentro\sdos?\sgrupos?|residui|residuo|entro\si?\s?gruppi|errore|binnen\s(?:de\s)?groepen|residu"
-    r"|inom\sgrupper|误差|组内|残差|誤差|오차|잔차|error\svariance|subjects\swithin\sgroups"
+    r"|inom\sgrupper|误差项?|机误|随机误差|处理内|组内|残差|誤差|오차|잔차|error\svariance|subjects\swithin\sgroups"
 )
 _TOTAL = re.compile(
-    r"(?:grand\s)?total(?:\s(?:variation|variance|ss|sum))?|sum|gesamt|insgesamt|summe|totale?|totaal|totalt|合计|总计|总和|合計|전체|합계"
+    r"(?:grand\s)?total(?:\s(?:variation|variance|ss|sum))?|sum|gesamt(?:variation)?|insgesamt|summe|totale?|totaal|totalt|合计|总计|总和|总变异|总的|合計|全体|전체|합계"
 )
 _CORRECTED = re.compile(
     r"(?:corrected|cor(?:r)?\.?|c\.?|adjusted|mean[\s-]corrected)\s?total|total\s?\(?(?:corrected|corr\.?|adjusted|cor)\)?"
-    r"|korrigierte\s(?:gesamtvariation|gesamtsumme)|total\scorregid[oa]|total\scorrigé"
+    r"|校正总?计|修正总?计|校正的?总计|korrigierte\s(?:gesamtvariation|gesamtsumme)|total\scorregid[oa]|total\scorrigé"
 )
 _UNCORRECTED = re.compile(
     r"(?:uncorrected|uncorr\.?|raw)\s?total|total\s?\(?(?:uncorrected|uncorr\.?)\)?"
@@ -32,16 +32,22 @@ _UNCORRECTED = re.compile(
 _MODEL = re.compile(
     r"(?:overall\s|full\s|corrected\s)?model|regression(?:\smodel)?|(?:due\sto\s)?regression|explained|between(?:[\s-](?:groups?|samples?|treatments?|cells?))?"
     r"(?:\s\(combined\))?|(?:korrigiertes\s)?modell|modèle|modelo(?:\scorregido)?|modello|zwischen(?:\s(?:den\s)?gruppen)?|inter[\s-]?groupes?|entre\s(?:los\s)?grupos"
-    r"|inter[\s-]?grupos|tra\s(?:i\s)?gruppi|tussen\s(?:de\s)?groepen|组间|回归|모형|회귀"
+    r"|inter[\s-]?grupos|tra\s(?:i\s)?gruppi|tussen\s(?:de\s)?groepen|组间|处理间|回归|모형|회귀"
 )
 _INTERCEPT = re.compile(
     r"(?:\(?\s?(?:intercept|constant|const\.?|_cons|cons|grand\smean|konstante|achsenabschnitt|constante|costante|intercepto|ordonnée\sà\sl'origine|截距|常数项|常量|常数|상수|절편)"
     r"\s?\)?)(?:\s?\((?:intercept|constant|a|β_?\{?0\}?|b_?\{?0\}?|α)\)|\s?[,:]?\s?(?:α|β_?0|a|b0))?|(?:β|b)_?\{?0\}?|alpha|α|a\s?\(intercept\)|\(?intercept\)?.{0,12}"
 )
 _SUB = re.compile(
-    r"(?:linear|quadratic|cubic|quartic|lineal|contrast.{0,30}|lack[\s-]of[\s-]fit|pure\serror|polynomial.{0,20}|.{1,30}\svs\.?\s.{1,30}"
+    r"(?:linear|quadratic|cubic|quartic|lineal|contrast.{0,30}|polynomial.{0,20}|.{1,30}\svs\.?\s.{1,30}"
     r"|of\swhich.{0,30}|davon.{0,30}|[-–—•·]\s.{1,60}|c\d)(?:\s(?:trend|term|component|effect|contrast))?"
 )
+#: The residual of a regression with replicates falls into these two.
+_LACK_OF_FIT = re.compile(
+    r"lack[\s-]of[\s-]fit|non-?linearity|fehlende\sanpassung|mangelnde\sanpassung"
+    r"|manque\sd'ajustement|falta\sde\s(?:ajuste|ajustamento)|失拟"
+)
+_PURE_ERROR = re.compile(r"pure\serror|reiner\sfehler|erreur\spure|error\spuro|erro\spuro|纯误差")
 #: Correction of degrees of freedom that a row of a repeated-measures table names.
 _CORRECTION = re.compile(
     r"sphericity\sassumed|greenhouse[\s–-]geisser|huynh[\s–-]feldt|lower[\s-]bound"
@@ -65,6 +71,8 @@ def kind_of(label: str) -> str:
     if len(low) > 60:
         return "effect"
     for kind, pattern in (
+        ("part", _LACK_OF_FIT),
+        ("part", _PURE_ERROR),
         ("part", _SUB),
         ("corrected", _CORRECTED),
         ("uncorrected", _UNCORRECTED),
@@ -76,6 +84,16 @@ def kind_of(label: str) -> str:
         if pattern.fullmatch(low):
             return kind
     return "effect"
+
+
+def is_lack_of_fit(label: str) -> bool:
+    """Say whether a row is what a model leaves of the differences between groups."""
+    return _LACK_OF_FIT.fullmatch(label.lower().strip(" .:*-–—•·")) is not None
+
+
+def is_pure_error(label: str) -> bool:
+    """Say whether a row is the error within replicates."""
+    return _PURE_ERROR.fullmatch(label.lower().strip(" .:*-–—•·")) is not None
 
 
 def is_intercept(label: str) -> bool:

@@ -10,10 +10,17 @@ _WITH_ANOVA = frozenset(
     {"R", "R2", "R2_adj", "s", "n", "df1", "df2", "F", "p", "eta2", "omega2", "f2"}
 )
 
+_FITS = frozenset({"overall-model", "model-change"})
 _ROWS = frozenset({"model", "error", "total"})
 
 
-def joined(found: Sequence[Claim], notes: Sequence[Claim]) -> list[Claim]:
+def joined(
+    found: Sequence[Claim],
+    notes: Sequence[Claim],
+    cases: Reading | None = None,
+    *,
+    complete: bool = True,
+) -> list[Claim]:
     """Return the claims of a table and its notes, each model's numbers together.
 
     Parameters
@@ -22,6 +29,10 @@ def joined(found: Sequence[Claim], notes: Sequence[Claim]) -> list[Claim]:
         What the rows say.
     notes
         What caption and notes say in words.
+    cases
+        The number of cases that caption or notes tell.
+    complete
+        Whether nothing says that the table leaves predictors out.
     """
     claims = list(found)
     rest: list[Claim] = []
@@ -34,6 +45,8 @@ def joined(found: Sequence[Claim], notes: Sequence[Claim]) -> list[Claim]:
     models = [c for c in (*claims, *rest) if c.kind in {"overall-model", "model-change"}]
     analyses = [c for c in claims if c.kind == "anova-table"]
     claims = [_with_df(claim, models, analyses) for claim in claims]
+    if complete:
+        claims = _with_counts(claims, models, cases)
     claims += rest
     return sorted(claims, key=lambda claim: claim.span)
 
@@ -94,3 +107,77 @@ def _df_of(claim: Claim, models: Sequence[Claim], analyses: Sequence[Claim]) -> 
     if len(analyses) == 1 and not models:
         return next((r for r in analyses[0].readings if r.quantity == "df2"), None)
     return None
+
+
+def _with_counts(
+    claims: list[Claim], models: Sequence[Claim], cases: Reading | None
+) -> list[Claim]:
+    """Give results without degrees of freedom the counts that these follow from.
+
+    The number of predictors is that of the model's rows, which is sure only if it lists them all.
+    """
+    rows = {
+        id(model): [c for c in claims if c.kind == "coefficient" and _model_of(c, models) is model]
+        for model in (None, *models)
+    }
+    before: Claim | None = None
+    counted: list[Claim] = []
+    for claim in claims:
+        model = claim if claim.kind in _FITS else _model_of(claim, models)
+        own = rows.get(id(model), [])
+        names = {_name(other) for other in own}
+        n = _printed(model, "n") if model else None
+        n = n or cases
+        # Where names come twice, several models share one summary.
+        if n is not None and own and len(names) == len(own):
+            n = n._replace(term=None)
+            if claim.kind == "coefficient" and not _tells(claim, "df", "df2", "z", "n"):
+                claim = claim._replace(given=(*claim.given, n, _count("k", len(own), own)))
+            elif claim.kind == "overall-model" and not _tells(claim, "df1", "df2", "k"):
+                claim = claim._replace(given=(*claim.given, _count("k", len(own), own)))
+            elif claim.kind == "model-change" and before is not None:
+                claim = _with_step(claim, names, {_name(o) for o in rows[id(before)]}, n, own)
+        if claim.kind in _FITS:
+            before = model
+        counted.append(claim)
+    return counted
+
+
+def _with_step(
+    claim: Claim, names: set[str], fewer: set[str], n: Reading, own: Sequence[Claim]
+) -> Claim:
+    """Give a step without degrees of freedom those that its rows and the cases leave."""
+    rest = round(n.low) - len(names) - 1
+    if _tells(claim, "df1", "df2") or not fewer < names or n.low != n.high or rest < 1:
+        return claim
+    df1 = _count("df1", len(names - fewer), own)
+    df2 = n._replace(quantity="df2", literal=str(rest), low=rest, high=rest)
+    return claim._replace(
+        given=(*claim.given, df1, df2), context=tuple(sorted({*claim.context, "counted-rows"}))
+    )
+
+
+def _name(claim: Claim) -> str:
+    """Return the name of a predictor without that of its model."""
+    return claim.label.rpartition(", ")[0] or claim.label
+
+
+def _tells(claim: Claim, *quantities: str) -> bool:
+    return any(r.quantity in quantities for r in (*claim.readings, *claim.given))
+
+
+def _printed(claim: Claim, quantity: str) -> Reading | None:
+    return next((r for r in claim.readings if r.quantity == quantity), None)
+
+
+def _count(quantity: str, number: int, rows: Sequence[Claim]) -> Reading:
+    """Return how many rows there are, as a reading that stands where they begin."""
+    return Reading(quantity, "=", str(number), number, number, rows[0].readings[0].span)
+
+
+def _model_of(claim: Claim, models: Sequence[Claim]) -> Claim | None:
+    """Return the model that a coefficient is of, if that is sure."""
+    if len(models) == 1:
+        return models[0]
+    own = [model for model in models if model.label and claim.label.endswith(f", {model.label}")]
+    return own[0] if len(own) == 1 else None
