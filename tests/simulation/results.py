@@ -46,7 +46,8 @@ class Family(NamedTuple):
     draw
         Returns true values, an array a quantity.
     printed
-        Sets of quantities that a claim may print, one of which is chosen.
+        Sets of quantities that a claim may print, one of which is chosen; those joined by ``+``
+        are not printed without each other.
     context
         What the text says of the test.
     doubtful
@@ -286,21 +287,31 @@ FAMILIES = (
            share=0.25),
     Family("logistic", "coefficient", _logistic,
            ("b se z p", "odds_ratio ci_low ci_high ci_level p", "b se z p odds_ratio",
-            "b se p odds_ratio ci_low ci_high", "b se chi2 df p", "b chi2 df p odds_ratio",
+            "b se p odds_ratio ci_low ci_high", "b se chi2+df p", "b chi2+df p odds_ratio",
             "b se z p ci_low ci_high"), ("generalised",)),
     Family("Wald", "coefficient", _logistic,
-           ("b se chi2 df p", "b se chi2 df p odds_ratio", "b se z df p", "chi2 df p"), share=2),
+           ("b se chi2+df p", "b se chi2+df p odds_ratio", "b se z+df p", "chi2+df p"), share=2),
     Family("change", "model-change", _change,
            ("R2 R2_change F_change df1 df2 p", "R2_change F_change df1 df2 p",
             "R2 R2_change df1 df2 p", "R2 R2_change f2"), share=4),
 )  # fmt: skip
 
 
-def claims(family: Family, size: int, seed: int) -> Iterator[tuple[Claim, dict[str, float]]]:
-    """Return claims of a family with the true values behind them."""
+def claims(
+    family: Family, size: int, seed: int, *, any_of_it: bool = False
+) -> Iterator[tuple[Claim, dict[str, float]]]:
+    """Return claims of a family with the true values behind them.
+
+    ``any_of_it`` prints any of its quantities in any order, and not only the customary sets.
+    """
     rng = np.random.default_rng([seed, *family.name.encode()])
     values = family.draw(rng, size)
-    sets = [tuple(quantities.split()) for quantities in family.printed]
+    sets = [quantities.split() for quantities in family.printed]
+    if any_of_it:
+        every = list(dict.fromkeys(quantity for some in sets for quantity in some))
+        sets = [
+            rng.permutation(every).tolist()[: rng.integers(2, len(every) + 1)] for _ in range(size)
+        ]
     choice = rng.integers(0, len(sets), size)
     hand = rng.random((size, 3))
     digits = rng.random((size, len(values)))
@@ -310,7 +321,8 @@ def claims(family: Family, size: int, seed: int) -> Iterator[tuple[Claim, dict[s
         if not all(np.isfinite(list(true.values()))):
             continue
         precision = dict(zip(names, digits[i], strict=True))
-        yield printed(family, sets[choice[i]], true, precision, hand[i]), true
+        quantities = tuple("+".join(sets[choice[i]]).split("+"))
+        yield printed(family, quantities, true, precision, hand[i]), true
 
 
 def printed(
