@@ -7,7 +7,9 @@ const require = createRequire(`${process.env.CROSSFOOT_NODE_MODULES}/`);
 const { chromium } = require("playwright-core");
 
 const { CROSSFOOT_URL: url, CROSSFOOT_PICTURES: pictures, CROSSFOOT_CHROMIUM: executablePath } = process.env;
-const PATIENCE = { timeout: 60_000 };
+
+// Milliseconds that a step may take in all, that its first try may take, and its longest.
+const [PATIENCE, FIRST, LONGEST] = [240_000, 3_000, 30_000];
 
 const browser = await chromium.launch({
   executablePath,
@@ -17,75 +19,131 @@ const browser = await chromium.launch({
   ],
 });
 const page = await browser.newPage({ viewport: { width: 1280, height: 800 } });
+page.setDefaultTimeout(LONGEST);
 const seen = {};
-const picture = (name) => page.screenshot({ path: `${pictures}/${name}.png` });
+let step = "start";
+
+// What is done in a step may come to nothing: a key is lost while the window is being built, and
+// VS Code drops a menu that was asked for if it isn't answered before it looks for quick fixes by
+// itself, half a second after a click. So each step is tried again, more patiently each time,
+// until it has led to what it is for.
+async function until(name, wanted, act, state = "visible") {
+  step = name;
+  const end = Date.now() + PATIENCE;
+  for (let timeout = FIRST; ; timeout = Math.min(2 * timeout, LONGEST)) {
+    try {
+      await act?.(timeout);
+      await wanted.waitFor({ state, timeout });
+      return;
+    } catch (error) {
+      if (Date.now() > end) {
+        throw error;
+      }
+    }
+  }
+}
+
+const text = (locator) => locator.first().innerText().then((words) => words.replaceAll("\u00a0", " ").trim());
+
+async function picture(name) {
+  await page.waitForTimeout(500); // what fades in has come
+  await page.screenshot({ path: `${pictures}/${name}.png` });
+}
+
+const editor = page.locator(".editor-instance .view-lines").first();
+const squiggle = editor.locator("xpath=..").locator(".squiggly-error").first();
+const menu = page.locator(".action-widget:not(.action-list-submenu-panel)");
+const entry = (words) => menu.locator(".monaco-list-row", { hasText: words }).first();
+const written = (words) => page.locator(".view-lines", { hasText: words }).first();
+const input = page.locator(".quick-input-widget input").first();
+
+async function middle(locator, timeout) {
+  await locator.waitFor({ timeout });
+  const box = await locator.boundingBox({ timeout });
+  return [box.x + box.width / 2, box.y + box.height / 2];
+}
+
+async function point(timeout) {
+  await page.mouse.move(5, 5);
+  await page.mouse.move(...(await middle(squiggle, timeout)), { steps: 5 });
+}
+
+async function openMenu(timeout) {
+  await page.keyboard.press("Escape");
+  await page.mouse.click(...(await middle(squiggle, timeout)));
+  await page.mouse.move(5, 5); // or the hover would come up behind the menu
+  await page.keyboard.press("Control+.");
+}
+
+async function choose(words, timeout) {
+  if (!(await entry(words).isVisible())) {
+    await openMenu(timeout);
+  }
+  await entry(words).click({ timeout });
+}
 
 try {
-  await page.goto(url, PATIENCE);
-  await page.waitForSelector(".monaco-workbench", PATIENCE);
-  await page.waitForTimeout(2000);
-  await page.keyboard.press("Control+P");
-  await page.waitForSelector(".quick-input-widget input", PATIENCE);
-  await page.keyboard.type("draft.qmd");
-  await page.waitForSelector('.quick-input-list .monaco-list-row[aria-label*="draft.qmd"]', PATIENCE);
-  await page.keyboard.press("Enter");
-  const squiggle = page.locator(".squiggly-error").first();
-  await squiggle.waitFor(PATIENCE);
-  await page.waitForTimeout(500);
+  await until("the window", page.locator(".monaco-workbench"), () => page.goto(url));
+  const file = page.locator(".quick-input-list .monaco-list-row", { hasText: "draft.qmd" }).first();
+  await until("find the draft", file, async (timeout) => {
+    await page.keyboard.press("Escape");
+    await page.keyboard.press("Control+P");
+    await input.fill("draft.qmd", { timeout });
+  });
+  await until("open the draft", page.locator(".tab", { hasText: "draft.qmd" }), async (timeout) => {
+    await file.click({ timeout });
+  });
+  await until("the squiggle", squiggle);
   await picture("1-squiggle");
-  const box = await squiggle.boundingBox();
-  const [x, y] = [box.x + box.width / 2, box.y + box.height / 2];
-  await page.mouse.move(x, y, { steps: 5 });
-  const hover = page.locator(".monaco-hover", { hasText: "it must be" });
-  await hover.waitFor(PATIENCE);
-  seen.hover = await hover.first().innerText();
-  await page.waitForTimeout(300);
+
+  const hover = page.locator(".monaco-hover", { hasText: "it must be" }).first();
+  await until("the hover", hover, point);
+  seen.hover = await text(hover);
   await picture("2-hover");
-  await page.mouse.click(x, y);
-  await page.keyboard.press("Control+.");
-  const menu = page.locator(".action-widget:not(.action-list-submenu-panel)");
-  await menu.waitFor(PATIENCE);
-  await page.waitForTimeout(500);
-  seen.actions = await menu.locator(".monaco-list-row").allInnerTexts();
+
+  await until("the menu", entry("Change to p = .018"), openMenu);
   await picture("3-actions");
-  await page.keyboard.press("Enter");
-  await page.waitForFunction(() => !document.querySelector(".squiggly-error"), null, PATIENCE);
-  const status = page.locator(".statusbar-item", { hasText: "Crossfoot 1" });
-  await status.waitFor(PATIENCE);
-  seen.status = (await status.first().innerText()).trim();
-  seen.text = (await page.locator(".view-lines").first().innerText()).replaceAll("\u00a0", " ");
+  seen.actions = await menu.locator(".monaco-list-row").allInnerTexts();
+  await until("the fix", written("= .018, as the crew"), (timeout) => choose("Change to p = .018", timeout));
+  await until("no squiggle", squiggle, null, "hidden");
+  await until("the status", page.locator(".statusbar-item", { hasText: /Crossfoot 1\s*$/ }));
   const lens = page.locator(".codelens-decoration", { hasText: "1 agrees" });
-  await lens.waitFor(PATIENCE);
-  seen.lens = (await lens.first().innerText()).replaceAll("\u00a0", " ");
+  await until("the lens", lens);
+  seen.lens = await text(lens);
+  seen.text = await text(editor);
   await picture("4-fixed");
-  // An allowance asks for its reason.
+
+  await until("the cursor", page.locator(".editor-instance .monaco-editor.focused"), async (timeout) => {
+    await page.keyboard.press("Escape");
+    await editor.locator(".view-line").last().click({ timeout });
+  });
   await page.keyboard.press("Control+End");
   await page.keyboard.press("Enter");
   await page.keyboard.type("Now t(40) = 2.20, p = .533.");
-  await page.locator(".squiggly-error").first().waitFor(PATIENCE);
-  await page.keyboard.press("Control+ArrowLeft");
-  await page.keyboard.press("Control+.");
-  await menu.waitFor(PATIENCE);
-  await page.waitForTimeout(500);
-  await page.keyboard.type("Allow");
-  await page.waitForTimeout(300);
-  const allow = menu.locator(".monaco-list-row", { hasText: "with a reason" }).first();
-  await allow.click();
-  await page.waitForSelector(".quick-input-widget input", PATIENCE);
-  await page.keyboard.type("it was copied from the registered report");
-  await page.waitForTimeout(300);
+  await until("the next squiggle", squiggle);
+  // An allowance asks for its reason.
+  const prompt = page.locator(".quick-input-widget", { hasText: "Why is it right as printed?" });
+  await until("the prompt", prompt, (timeout) => choose("with a reason", timeout));
+  await input.fill("it was copied from the registered report");
   await picture("5-reason");
-  await page.keyboard.press("Enter");
-  await page.waitForFunction(() => !document.querySelector(".squiggly-error"), null, PATIENCE);
-  await page.waitForTimeout(500);
-  seen.allowed = (await page.locator(".view-lines").first().innerText()).replaceAll("\u00a0", " ");
+  await until("the remark", written("because it was copied"), () => page.keyboard.press("Enter"));
+  await until("no squiggle again", squiggle, null, "hidden");
+  seen.allowed = await text(editor);
   await picture("6-allowed");
-  await page.locator(".statusbar-item", { hasText: "Crossfoot" }).first().click();
-  await page.waitForTimeout(800);
+
+  const summary = page.locator(".notification-toast", { hasText: "1 agrees, 1 is settled" });
+  await until("the summary", summary, async (timeout) => {
+    await page.locator(".statusbar-item", { hasText: "Crossfoot" }).first().click({ timeout });
+  });
   await picture("7-summary");
 } catch (error) {
-  seen.problem = String(error);
-  await picture("problem");
+  await picture("problem").catch(() => undefined);
+  seen.problem = {
+    step,
+    error: String(error),
+    picture: `${pictures}/problem.png`,
+    page: await page.locator("body").innerText().catch(String),
+  };
 } finally {
   await browser.close();
 }
