@@ -7,18 +7,18 @@ editors.
 from __future__ import annotations
 
 import os
-import re
 from collections.abc import Iterable, Sequence
 
 from crossfoot.batch import files
 from crossfoot.batch.policy import Policy
+from crossfoot.expressions import expression
 from crossfoot.results import Derivation, Scan
 from crossfoot.settings import Settings, read
 
 PathLike = str | os.PathLike[str]
 
 #: Halves of surrogate pairs, which no encoding can hold.
-_HALVES = re.compile("[\ud800-\udfff]")
+_HALVES = expression("[\ud800-\udfff]")
 
 
 def scan_text(

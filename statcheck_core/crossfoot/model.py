@@ -5,8 +5,7 @@ start of the block's source, so that equal blocks have equal claims wherever the
 :class:`Placed` claim carries the offset that turns them into places in the document.
 """
 
-from __future__ import annotations
-
+# No postponed annotations here: typing would compile that of every field, at each start.
 from typing import NamedTuple
 
 #: Strongest first; a severity's rank is its index.

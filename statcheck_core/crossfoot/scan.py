@@ -2,23 +2,24 @@
 
 from __future__ import annotations
 
-from bisect import bisect_right
 from collections.abc import Callable, Iterable, Iterator, Sequence
-from typing import NamedTuple
+from typing import TYPE_CHECKING
 
 from crossfoot import documents
-from crossfoot.model import Audited, Block, Claim, Document, Placed, Problem, Report
+from crossfoot.model import Audited, Block, Claim, Document, Placed, Report
 from crossfoot.reading import read_block
 from crossfoot.reading.cues import is_methods, spreading
-from crossfoot.reading.remarks import Allow, Assume, parse
 from crossfoot.settings import DEFAULTS, Settings
+
+if TYPE_CHECKING:
+    from crossfoot.reading.remarks import Assume
 
 
 def scan_text(
     text: str, language: str = "markdown", *, path: str = "-", settings: Settings = DEFAULTS
 ) -> Report:
     """Scan a text in one of the formats of :data:`crossfoot.documents.FORMATS`."""
-    return scan_document(documents.open_document(path, text.encode(), language), settings)
+    return scan_document(_opened(path, text, language), settings)
 
 
 def scan_document(document: Document, settings: Settings = DEFAULTS) -> Report:
@@ -30,22 +31,30 @@ def scan_document(document: Document, settings: Settings = DEFAULTS) -> Report:
     problem = documents.unreadable(document)
     if problem is not None:
         return Report(document, problem=problem)
-    remarks, problems = _remarks(document)
-    placed = list(_audited(document, [r for r in remarks if isinstance(r, Assume)], settings))
-    placed = _settled(document, placed, [r for r in remarks if isinstance(r, Allow)])
-    if problems:
-        document = document._replace(problems=(*document.problems, *problems))
+    if "rossfoot" not in document.text:
+        return Report(document, tuple(_audited(document, (), settings)))
+    from crossfoot.remarked import remarks_in, settled  # few documents hold a remark
+
+    remarks = remarks_in(document)
+    placed = settled(document, list(_audited(document, remarks.assumed, settings)), remarks.allowed)
+    if remarks.problems:
+        document = document._replace(problems=(*document.problems, *remarks.problems))
     return Report(document, tuple(placed))
 
 
 def claims_of(text: str, language: str = "plain") -> tuple[Claim, ...]:
     """Return the claims of a text, not audited."""
-    document = documents.open_document("-", text.encode(), language)
+    document = _opened("-", text, language)
     return tuple(
         claim
         for block in document.blocks
         for claim in read_block(language, block.kind, block.source, document.definitions).claims
     )
+
+
+def _opened(path: str, text: str, language: str) -> Document:
+    # What is no character (half of a pair of UTF-16) becomes a question mark: no place moves.
+    return documents.open_document(path, text.encode("utf-8", "replace"), language)
 
 
 #: A note below a printout is no longer than this.
@@ -141,78 +150,3 @@ def _note_below(document: Document, index: int) -> frozenset[str]:
     if len(following) > _LONGEST_NOTE or "djust" not in following:
         return frozenset()
     return spreading(following) & {"adjusted-p"}
-
-
-def _remarks(document: Document) -> tuple[list[Allow | Assume], list[Problem]]:
-    if "rossfoot" not in document.text:
-        return [], []
-    remarks: list[Allow | Assume] = []
-    problems: list[Problem] = []
-    for comment in documents.comments(document.language, document.text):
-        remark = parse(comment.text, comment.span)
-        if isinstance(remark, Problem):
-            problems.append(remark)
-        elif remark is not None:
-            remarks.append(remark)
-    return remarks, problems
-
-
-def _settled(document: Document, placed: list[Placed], allowed: Sequence[Allow]) -> list[Placed]:
-    """Mark the findings that remarks allow; each stays in the report, with the reason."""
-    for allow in allowed:
-        chosen = _meant(document, placed, allow)
-        placed = [
-            item._replace(audited=_settle(item.audited, allow)) if item.id in chosen else item
-            for item in placed
-        ]
-    return placed
-
-
-def _settle(audited: Audited, allow: Allow) -> Audited:
-    findings = tuple(
-        finding._replace(settled=allow.reason)
-        if "all" in allow.slugs or finding.identity in allow.slugs
-        else finding
-        for finding in audited.findings
-    )
-    return audited._replace(findings=findings)
-
-
-class _Extent(NamedTuple):
-    id: str
-    start: int
-    end: int
-
-
-def _meant(document: Document, placed: Sequence[Placed], allow: Allow) -> set[str]:
-    """Return the ids of the claims that a remark speaks of.
-
-    The claim before it on its line, else the one after it on its line, else the next one;
-    ``allow all`` speaks of its whole block, or of the next one where it stands between blocks.
-    """
-    extents = [
-        _Extent(p.id, p.base + p.audited.claim.span.start, p.base + p.audited.claim.span.end)
-        for p in placed
-    ]
-    at = allow.span
-    if "all" in allow.slugs:
-        block = _block_at(document.blocks, at.start, at.end)
-        if block is None:
-            return set()
-        end = block.start + len(block.source)
-        return {extent.id for extent in extents if block.start <= extent.start < end}
-    line_start = document.text.rfind("\n", 0, at.start) + 1
-    line_end = document.text.find("\n", at.end)
-    line_end = len(document.text) if line_end < 0 else line_end
-    before = [e for e in extents if line_start < e.end <= at.start]
-    if before:
-        return {before[-1].id}
-    after = [e for e in extents if e.start >= at.end]
-    return {after[0].id} if after else set()
-
-
-def _block_at(blocks: Sequence[Block], start: int, end: int) -> Block | None:
-    index = bisect_right(blocks, start, key=lambda block: block.start) - 1
-    if index >= 0 and start < blocks[index].start + len(blocks[index].source):
-        return blocks[index]
-    return blocks[index + 1] if index + 1 < len(blocks) else None

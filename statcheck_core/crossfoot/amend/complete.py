@@ -8,7 +8,6 @@ exactly that number is then read there.
 
 from __future__ import annotations
 
-import re
 from collections.abc import Iterator, Mapping, Sequence
 from itertools import pairwise
 from typing import NamedTuple
@@ -19,6 +18,7 @@ from crossfoot.amend.values import hand_of, value_words
 from crossfoot.audit import Derived, derive
 from crossfoot.audit.literals import Numeral, numeral
 from crossfoot.audit.wording import between
+from crossfoot.expressions import expression
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Block, Claim, Document, Placed, Report, Span
@@ -34,7 +34,7 @@ COMPLETIONS: tuple[tuple[str, ...], ...] = (
 )
 
 #: Marks that close what the last number stands in; a number in plain text goes after them.
-_CLOSING = re.compile(r"(?:\$|\*{1,3}|\\\)|</[A-Za-z]{1,12}>|\}(?=\$|\\\)))*")
+_CLOSING = expression(r"(?:\$|\*{1,3}|\\\)|</[A-Za-z]{1,12}>|\}(?=\$|\\\)))*")
 
 #: Learnt from the claims nearest to this one.
 _LOOKED_AT = 40

@@ -7,18 +7,18 @@ the remark in it: the first place is taken at which just the intended finding is
 
 from __future__ import annotations
 
-import re
 from collections.abc import Iterator
 
 from crossfoot.amend.change import Change, applied, block_at
 from crossfoot.documents import FORMATS, split
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Document, Finding, Placed, Report, Span
 from crossfoot.scan import scan_document
 from crossfoot.settings import Settings
 
 #: What may close right behind the last number of a claim.
-_CLOSING = re.compile(r"(?:\\[,;) ]|[\s\w]{0,3}[$*_}\])]|</[A-Za-z]{1,12}>|[.,;:])*")
-_SPACE = re.compile(r"[ \t]+")
+_CLOSING = expression(r"(?:\\[,;) ]|[\s\w]{0,3}[$*_}\])]|</[A-Za-z]{1,12}>|[.,;:])*")
+_SPACE = expression(r"[ \t]+")
 
 #: Formats whose comments run to the end of the line.
 _TO_THE_END = frozenset({"latex", "typst"})

@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
-import re
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
-_SIGN = re.compile(
+_SIGN = expression(
     r"(?P<sign>&(?:lt|gt|le|ge|equals|#6[0-2]|#x3[C-Ec-e]);"
     r"|\\(?:leq?|geq?|leqslant|geqslant|lt|gt|approx|textless|textgreater)(?![A-Za-z])(?:\{\})?"
     r"|[=<>≤≥≈])"

@@ -16,6 +16,7 @@ from crossfoot.amend.signs import in_mathematics, written_sign
 from crossfoot.audit import Derived, derive
 from crossfoot.documents import show
 from crossfoot.documents.visible import place
+from crossfoot.expressions import expression
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Block, Claim, Document, Report, Span
 from crossfoot.reading.fold import fold
@@ -27,13 +28,13 @@ _REACH = 60
 #: Visible characters that may stand between a claim and what goes on with it.
 _GAP = 40
 
-_REST = re.compile(
+_REST = expression(
     r"(?P<brackets>\s?(?:_\{[^{}]{0,20}\}|\([^()]{0,30}\)))?"
     r"(?P<open>\s?[=:]?\s?(?:\[|\())?"
     r"\s?(?P<sign>[=<>≤≥≈])?\s?(?P<number>[-−–]?[\d.,]{0,20})\$?\Z"
 )
-_ADJUSTED = re.compile(r"adj|corr", re.IGNORECASE)
-_SENTENCE = re.compile(r"[.!?]\s+[A-ZÀ-Þ]|\n\s*\n")
+_ADJUSTED = expression(r"adj|corr", re.IGNORECASE)
+_SENTENCE = expression(r"[.!?]\s+[A-ZÀ-Þ]|\n\s*\n")
 
 #: The notation's names for what is decided later, as the quantities that they mostly turn out as.
 _MEANT = {"β": "beta"}

@@ -12,17 +12,18 @@ import re
 from collections.abc import Sequence
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import domain
 from crossfoot.model import Reading
 
-_SHAPE = re.compile(
+_SHAPE = expression(
     r"([-−–+]?)\s?"  # a sign
     r"([0-9.,·'’\s]*)"  # digits and marks
     r"(.*)",  # percent sign, exponent
     re.DOTALL,
 )
-_EXPONENT = re.compile(r"([eE]|\s?[×x·]\s?10\^?\{?)([-−–+]?)(\d{1,3})(\}?)")
+_EXPONENT = expression(r"([eE]|\s?[×x·]\s?10\^?\{?)([-−–+]?)(\d{1,3})(\}?)")
 _MARKS = ".,·"
 _MINUS = "-−–"
 

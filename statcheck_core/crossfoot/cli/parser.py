@@ -102,8 +102,8 @@ def command(name: str) -> Command:
 def build(argv: Sequence[str]) -> Parser:
     """Return the parser for a command line.
 
-    It knows every command by its name, and the options of those that the line names: what one
-    command needs is not imported for another.
+    It knows the command that the line starts with, with its options: what one command needs is
+    not imported, nor made ready, for another. On any other line it knows all of them by name.
     """
     listed = "\n".join(f"  {name:12}{title}" for name, title in COMMANDS.items())
     parser = Parser(
@@ -119,7 +119,7 @@ def build(argv: Sequence[str]) -> Parser:
     group = parser.add_subparsers(
         dest="command", metavar="COMMAND", required=True, prog="crossfoot", help=SUPPRESS
     )
-    for name in COMMANDS:
+    for name in argv[:1] if argv and argv[0] in COMMANDS else COMMANDS:
         inner = group.add_parser(name, formatter_class=Formatter, allow_abbrev=False)
         if name in argv:
             chosen = command(name)

@@ -12,20 +12,21 @@ from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.visible import Builder, Visible
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_HEADING = re.compile(r"(={1,6}|#{1,6})[ \t]+(?=\S)")
-_DELIMITER = re.compile(
+_HEADING = expression(r"(={1,6}|#{1,6})[ \t]+(?=\S)")
+_DELIMITER = expression(
     r"(-{4,}|\.{4,}|\+{4,}|/{4,}|={4,}|\*{4,}|_{4,}|--|`{3,})[ \t]*(?:\w{1,20}[ \t]*)?"
 )
-_TABLE = re.compile(r"[|!,:]={3,}[ \t]*")
-_ATTRIBUTE = re.compile(r":!?[\w-]{1,60}!?:(?:[ \t]|$)")
-_BLOCK_ATTRIBUTES = re.compile(r"\[[^\n]{0,500}\][ \t]*")
-_TITLE = re.compile(r"\.(?=[^\s.])")
-_COMMENT = re.compile(r"//(?!/)")
-_MACRO = re.compile(r"(?:image|include|video|audio|toc|ifdef|ifndef|endif|ifeval)::[^\n]*")
-_BULLET = re.compile(r"[ \t]*([*-]{1,5}|\.{1,5})[ \t]+(?=(\S))")
-_STEM = re.compile(r"\[(?:stem|latexmath|asciimath)\b")
+_TABLE = expression(r"[|!,:]={3,}[ \t]*")
+_ATTRIBUTE = expression(r":!?[\w-]{1,60}!?:(?:[ \t]|$)")
+_BLOCK_ATTRIBUTES = expression(r"\[[^\n]{0,500}\][ \t]*")
+_TITLE = expression(r"\.(?=[^\s.])")
+_COMMENT = expression(r"//(?!/)")
+_MACRO = expression(r"(?:image|include|video|audio|toc|ifdef|ifndef|endif|ifeval)::[^\n]*")
+_BULLET = expression(r"[ \t]*([*-]{1,5}|\.{1,5})[ \t]+(?=(\S))")
+_STEM = expression(r"\[(?:stem|latexmath|asciimath)\b")
 _VERBATIM = frozenset("-.`")
 
 
@@ -158,12 +159,12 @@ def _line_edits(source: str) -> list[Edit]:
     return edits
 
 
-_COLUMNS = re.compile(r"\bcols=(?:\"([^\"\n]{1,300})\"|'([^'\n]{1,300})'|(\d{1,3}))")
-_CELL = re.compile(
+_COLUMNS = expression(r"\bcols=(?:\"([^\"\n]{1,300})\"|'([^'\n]{1,300})'|(\d{1,3}))")
+_CELL = expression(
     r"(?:(?<![\w+])(\d{1,2})?(?:\.(\d{1,2}))?\+)?[<^>]?(?:\.[<^>])?[adehlms]?(?<!\\)\|"
 )
 
-_BLANK_AFTER = re.compile(r"\n[ \t]*\n[ \t\n]*$")
+_BLANK_AFTER = expression(r"\n[ \t]*\n[ \t\n]*$")
 
 #: Most columns a cell may span.
 _WIDEST = 50

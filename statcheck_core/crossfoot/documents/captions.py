@@ -10,19 +10,20 @@ from __future__ import annotations
 import re
 from collections.abc import Sequence
 
+from crossfoot.expressions import expression
 from crossfoot.model import Block
 
 #: Markup that may stand before the first word; stars stay, they may be marks of significance.
-_MARKUP = re.compile(
+_MARKUP = expression(
     r"<[^<>]{0,200}>|\\(?:[a-zA-Z]+\*?(?:\[[^\[\]]{0,60}\])?|[^*a-zA-Z])|[{}_$`~]|&nbsp;"
 )
 _WORD = r"(?:Table|Tab\.|Tabelle|Tableau|Tabla|Tabela|Tabell|Tabella|Appendix\sTable|表)"
 _NUMBER = r"\s?(?:[A-Z]{0,2}\.?-?\d{1,3}(?:[.-]\d{1,3})?[a-z]?|[IVX]{1,5})"
-_CAPTION = re.compile(
+_CAPTION = expression(
     rf"[*:.\s]{{0,6}}{_WORD}(?:{_NUMBER}\s?\*{{0,3}}(?:\s?[.:|)—–-]|\s*$|\s*\n|\s{{1,3}}(?P<next>\w+))|:)",
     re.IGNORECASE,
 )
-_TITLE_ONLY = re.compile(rf"[*:.\s]{{0,6}}{_WORD}{_NUMBER}[\s.:*]{{0,6}}", re.IGNORECASE)
+_TITLE_ONLY = expression(rf"[*:.\s]{{0,6}}{_WORD}{_NUMBER}[\s.:*]{{0,6}}", re.IGNORECASE)
 #: After "Table 2" these make a sentence of the text and no caption.
 _VERBS = frozenset(
     [
@@ -64,8 +65,8 @@ _VERBS = frozenset(
         "mostra",
     ]
 )
-_COLON = re.compile(r":(?![:\w-])\s")
-_NOTE = re.compile(
+_COLON = expression(r":(?![:\w-])\s")
+_NOTE = expression(
     r"[*\s]{0,4}(?:notes?\b|anmerkung(?:en)?\b|remarques?\b|notas?\b|legend\b|注|source\s?:)[*\s]{0,4}[.:\s]|[*\s]{0,2}[a-e][.)]?\s{1,3}R[\s-]?sq"
     r"|.{0,60}?(?<!\w)[*†‡+]{1,4}\s?'?\s?(?:p|=|:|significant|indicates|denotes)?\s?(?:-?values?)?\s?(?:<|≤|&lt;|&le;|=\s?p|significant|sig\.|0?\.\d)"
     r"|.{0,12}p\s?(?:<|≤|&lt;)\s?\.?\d[\d.,]*\s?[*†]|.{0,8}\*{1,3},?\s.{0,30}(?:significan|level)"
@@ -75,9 +76,9 @@ _NOTE = re.compile(
     r"|[*\s]{0,3}(?:N|n|R\^?(?:2|²|<sup>2)|R²|F|Adj(?:usted|\.)?\sR)\*{0,2}\s?(?:\(|=)",
     re.IGNORECASE | re.DOTALL,
 )
-_SHORT_NOTE = re.compile(r"[*\s]{0,3}(?:N|n|R|F|Adj)")
+_SHORT_NOTE = expression(r"[*\s]{0,3}(?:N|n|R|F|Adj)")
 #: What stands before the caption's text in the markup that names it so.
-_NAMED = re.compile(
+_NAMED = expression(
     r"(?:^|\n)[ \t]*(?:#\+(?:caption|CAPTION)(?:\[[^\[\]\n]{0,80}\])?:|\.\. table::|\.)[ \t]*$"
 )
 _LONGEST_CAPTION = 900

@@ -3,9 +3,9 @@
 from __future__ import annotations
 
 import codecs
-import re
 
 from crossfoot.documents.format import Extracted
+from crossfoot.expressions import expression
 from crossfoot.model import Problem
 
 #: Longest document that is read, in bytes; a manuscript is far below it.
@@ -19,10 +19,10 @@ _MARKS = (
     (codecs.BOM_UTF16_BE, "utf-16-be"),
 )
 
-_DECLARED = re.compile(rb"(?:charset|encoding|coding)[ \t]*[=:][ \t]*[\"']?([A-Za-z0-9_-]{1,20})")
+_DECLARED = expression(rb"(?:charset|encoding|coding)[ \t]*[=:][ \t]*[\"']?([A-Za-z0-9_-]{1,20})")
 
 #: Encodings a document may declare for itself; each extends ASCII.
-_KNOWN = re.compile(
+_KNOWN = expression(
     r"iso-?8859-?\d+|latin-?\d+|windows-?125\d|cp125\d|koi8-[ru]|mac-?roman"
     r"|shift_?jis|euc-?(?:jp|kr)|big5|gbk?|gb2312|gb18030"
 )

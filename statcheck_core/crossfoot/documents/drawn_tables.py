@@ -8,20 +8,21 @@ from collections.abc import Callable, Iterator
 
 from crossfoot.documents.table import WIDEST, Table, TableBuilder
 from crossfoot.documents.visible import Builder
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
 #: The line under the header of a pipe table.
-DELIMITER = re.compile(r"[ \t]*+\|?[ \t]*+:?-++:?[ \t]*+(?:[|+][ \t]*+:?-++:?[ \t]*+)*+\|?[ \t]*+")
+DELIMITER = expression(r"[ \t]*+\|?[ \t]*+:?-++:?[ \t]*+(?:[|+][ \t]*+:?-++:?[ \t]*+)*+\|?[ \t]*+")
 
 #: A rule between the rows of a grid table.
-GRID = re.compile(r"[ \t]*\+(?:[-=:]++\+)++[ \t]*")
+GRID = expression(r"[ \t]*\+(?:[-=:]++\+)++[ \t]*")
 
 #: The rules over or under the columns of a simple table.
-DASHES = re.compile(r" *(?:-+(?: +-+)+|=+(?: +=+)+) *")
+DASHES = expression(r" *(?:-+(?: +-+)+|=+(?: +=+)+) *")
 
-_FULL = re.compile(r"[ \t]*-{3,}[ \t]*")
-_BAR = re.compile(r"\\.|`[^`\n]{1,200}`|(\|)")
-_QUOTE = re.compile(r"(?: {0,3}> ?)+")
+_FULL = expression(r"[ \t]*-{3,}[ \t]*")
+_BAR = expression(r"\\.|`[^`\n]{1,200}`|(\|)")
+_QUOTE = expression(r"(?: {0,3}> ?)+")
 
 
 #: Shows what stands between two places of a source.

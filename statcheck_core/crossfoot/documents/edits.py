@@ -7,6 +7,7 @@ from collections.abc import Iterable
 from typing import NamedTuple
 
 from crossfoot.documents.visible import Builder, Visible
+from crossfoot.expressions import expression
 
 #: Most marks that are followed in one stretch: far beyond any prose.
 MOST_MARKS = 40_000
@@ -45,8 +46,8 @@ class Marks:
     """Finds the marks of a format: by the characters they start with first, then by pattern."""
 
     def __init__(self, characters: str, pattern: str, flags: re.RegexFlag = re.NOFLAG) -> None:
-        self._start = re.compile(f"[{re.escape(characters)}]")
-        self._pattern = re.compile(pattern, flags)
+        self._start = expression(f"[{re.escape(characters)}]")
+        self._pattern = expression(pattern, flags)
 
     def next(self, source: str, start: int, end: int) -> re.Match[str] | None:
         """Return the first mark in ``source[start:end]``."""

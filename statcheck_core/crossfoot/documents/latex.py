@@ -13,9 +13,10 @@ from crossfoot.documents.table import Table
 from crossfoot.documents.tex_symbols import ENVIRONMENT_ARGS, MATH_ENVIRONMENTS
 from crossfoot.documents.visible import Builder, Visible, compose
 from crossfoot.documents.words import words
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_TOKEN = re.compile(
+_TOKEN = expression(
     r"\\(?:(?P<env>begin|end)[ \t]{0,9}\{(?P<name>[A-Za-z@]{1,40}\*?)\}"
     r"|(?P<head>part|chapter|(?:sub){0,2}section|(?:sub)?paragraph)\*?(?=[ \t]{0,9}[\[{])"
     r"|(?P<caption>caption)\*?(?=[ \t]{0,9}[\[{])|(?P<par>par)\b|(?P<iffalse>iffalse)\b"
@@ -48,15 +49,15 @@ _LEVELS = {
     "paragraph": 6,
     "subparagraph": 7,
 }
-_TITLE = re.compile(rf"(?:\[[^\[\]\n]{{0,300}}\])?\s{{0,9}}{GROUP_PATTERN}")
-_OPTIONS = re.compile(r"\s{0,9}\[[^\[\]\n]{0,200}\]")
-_FRONT = re.compile(rf"\\(?:abstract|title)\s{{0,9}}({GROUP_PATTERN})")
-_NOTHING = re.compile(
+_TITLE = expression(rf"(?:\[[^\[\]\n]{{0,300}}\])?\s{{0,9}}{GROUP_PATTERN}")
+_OPTIONS = expression(r"\s{0,9}\[[^\[\]\n]{0,200}\]")
+_FRONT = expression(rf"\\(?:abstract|title)\s{{0,9}}({GROUP_PATTERN})")
+_NOTHING = expression(
     rf"(?:\s|%[^\n]*|{DEFINITION.pattern}|\\label\{{[^{{}}\n]*\}}"
     r"|\\(?:centering|small|noindent|maketitle|tableofcontents|newpage|clearpage)(?![A-Za-z]))*+"
 )
-_COMMENT = re.compile(r"\\[\s\S]|%([^\n]*)")
-_INPUT = re.compile(r"(?<!\\)%[^\n]*|\\(?:input|include|subfile)\s{0,9}\{([^{}\n]{1,300})\}")
+_COMMENT = expression(r"\\[\s\S]|%([^\n]*)")
+_INPUT = expression(r"(?<!\\)%[^\n]*|\\(?:input|include|subfile)\s{0,9}\{([^{}\n]{1,300})\}")
 
 
 def split(text: str) -> tuple[Block, ...]:

@@ -5,13 +5,13 @@ Expansion is bounded: a text may not grow beyond a few times its size, whatever 
 
 from __future__ import annotations
 
-import re
 from functools import lru_cache
 from typing import NamedTuple
 
 from crossfoot.documents.format import Definitions
 from crossfoot.documents.tex_symbols import COMMANDS
 from crossfoot.documents.visible import Builder, Visible, compose, verbatim
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
 # Groups are followed four deep; each level is possessive, so that no text is read twice.
@@ -21,25 +21,25 @@ for _ in range(4):
     _GROUP = rf"\{{(?:{_INNER}|{_GROUP})*+\}}"
 
 #: A group in braces.
-GROUP = re.compile(_GROUP)
+GROUP = expression(_GROUP)
 
 #: A group as the pattern of one.
 GROUP_PATTERN = _GROUP
 
 _NAME = r"\s{0,9}(?:\{\s{0,9}\\([A-Za-z@]{1,60})\s{0,9}\}|\\([A-Za-z@]{1,60}))\s{0,9}"
 #: A definition, or a comment, in which there is none.
-DEFINITION = re.compile(
+DEFINITION = expression(
     r"(?<!\\)%[^\n]*"
     rf"|\\(?:re|provide)?(?:new)?command\*?{_NAME}((?:\[[^\[\]\n]{{0,100}}\]\s{{0,9}}){{0,2}})({_GROUP})"
     rf"|\\DeclareMathOperator\*?{_NAME}()({_GROUP})"
     rf"|\\[egx]?def{_NAME}((?:#\d){{0,9}})({_GROUP})"
 )
-_CALL = re.compile(r"\\([A-Za-z@]+)|(?<!\\)%[^\n]*")
-_OPTION = re.compile(r"\s{0,9}\[([^\[\]\n]{0,200})\]")
-_ARGUMENT = re.compile(rf"\s{{0,9}}(?:({_GROUP})|(\\[A-Za-z@]+|[^\s{{}}\\]))")
-_NAMES = re.compile(r"\\([A-Za-z@]+)")
-_PARAMETER = re.compile(r"#([1-9])")
-_MEANING = re.compile(r"(?:\[(\d)\])?\s{0,9}(?:\[([^\[\]\n]{0,100})\])?\s{0,9}\{([\s\S]*)\}")
+_CALL = expression(r"\\([A-Za-z@]+)|(?<!\\)%[^\n]*")
+_OPTION = expression(r"\s{0,9}\[([^\[\]\n]{0,200})\]")
+_ARGUMENT = expression(rf"\s{{0,9}}(?:({_GROUP})|(\\[A-Za-z@]+|[^\s{{}}\\]))")
+_NAMES = expression(r"\\([A-Za-z@]+)")
+_PARAMETER = expression(r"#([1-9])")
+_MEANING = expression(r"(?:\[(\d)\])?\s{0,9}(?:\[([^\[\]\n]{0,100})\])?\s{0,9}\{([\s\S]*)\}")
 
 #: Most definitions, longest meaning and deepest nesting that are followed.
 _MOST = 1000

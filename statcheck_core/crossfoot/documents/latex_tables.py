@@ -9,21 +9,22 @@ from crossfoot.documents.mathtext import show_tex
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.tex_symbols import ENVIRONMENT_ARGS
 from crossfoot.documents.visible import Builder, Visible
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
-_HEAD = re.compile(r"\s*\\begin\s{0,9}\{([A-Za-z]{1,40}\*?)\}(?:\s{0,9}\[[^\[\]\n]{0,100}\])?")
-_TAIL = re.compile(r"\\end\s{0,9}\{[A-Za-z]{1,40}\*?\}\s*$")
-_TOKEN = re.compile(
+_HEAD = expression(r"\s*\\begin\s{0,9}\{([A-Za-z]{1,40}\*?)\}(?:\s{0,9}\[[^\[\]\n]{0,100}\])?")
+_TAIL = expression(r"\\end\s{0,9}\{[A-Za-z]{1,40}\*?\}\s*$")
+_TOKEN = expression(
     r"\\\\(?:\*?\s{0,9}\[-?[\d.]{1,9}\s{0,9}[A-Za-z\\]{2,20}\])?|\\tabularnewline\b"
     r"|\\(begin|end)\b|\\[\s\S]|[{}&]|%[^\n]*"
 )
-_WIDE = re.compile(
+_WIDE = expression(
     r"(?:\s|\\[a-z]*(?:rule|line)\b(?:\([lr]{1,4}\))?(?:\{[^{}\n]{0,20}\})?)*"
     r"\\multicolumn\s{0,9}\{\s{0,9}(\d{1,3})\s{0,9}\}"
 )
-_DEEP = re.compile(r"\\multirow\s{0,9}(?:\[[a-z]\])?\{\s{0,9}(\d{1,3})\s{0,9}\}")
-_RULE = re.compile(r"\\(?:hline|toprule|midrule|bottomrule|specialrule|Xhline|thickhline)(?![a-z])")
-_CAPTION = re.compile(r"\s*\\caption(?![a-z])")
+_DEEP = expression(r"\\multirow\s{0,9}(?:\[[a-z]\])?\{\s{0,9}(\d{1,3})\s{0,9}\}")
+_RULE = expression(r"\\(?:hline|toprule|midrule|bottomrule|specialrule|Xhline|thickhline)(?![a-z])")
+_CAPTION = expression(r"\s*\\caption(?![a-z])")
 
 #: Most columns a cell may span.
 _WIDEST = 50

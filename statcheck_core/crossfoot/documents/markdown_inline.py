@@ -17,26 +17,27 @@ from crossfoot.documents.markdown_math import Formulas, Mark, first_after, formu
 from crossfoot.documents.tags import Tag, attribute_span, entity_at, tag_at
 from crossfoot.documents.visible import OPAQUE, Builder, Visible
 from crossfoot.documents.words import words
+from crossfoot.expressions import expression
 
 # Every alternative starts with a plain character: so the search skips text at full speed.
-_MARK = re.compile(
+_MARK = expression(
     r"\\[\s\S]|``*|\$\$*|\*\**|__*|~~*|\^|!\[|\[|\]|\{|<(?=[A-Za-z/!])|&(?=[#A-Za-z])"
 )
 
 #: Most marks that are followed in one stretch: far beyond any prose.
 _MOST = 20_000
 
-_RAISED = re.compile(r"\^((?:\\.|[^\s^\\=<>~|`$]){1,30})\^")
-_LOWERED = re.compile(r"~((?:\\.|[^\s^\\=<>~|`$]){1,30})~(?!~)")
-_STARS = re.compile(r"(?:\\?[*†‡])+")
-_TARGET = re.compile(r"\((?:[^()\\\n]|\\.|\([^()\n]*\))*+\)|\[[^\[\]\n]{0,200}\]")
-_ATTRIBUTES = re.compile(r"\{[^{}\n]{0,200}\}")
-_TARGET_ATTRIBUTES = re.compile(r"\{(?:[#.]|[a-z-]{1,20}=)[^{}\n]{0,200}\}")
-_BRACES = re.compile(r"\{\{[^{}\n]{0,200}\}\}|\{[#.][^{}\n]{0,200}\}")
-_NOTE = re.compile(r"\[\^[^\s\[\]]{1,60}\]")
-_RUN = re.compile(r"\{?[A-Za-z]{1,12}\}? ")
-_ROLE = re.compile(r"\{([a-z:]{1,20})\}$")
-_AUTOLINK = re.compile(r"<([A-Za-z][A-Za-z0-9+.-]{1,20}:[^\s<>]{0,500})>")
+_RAISED = expression(r"\^((?:\\.|[^\s^\\=<>~|`$]){1,30})\^")
+_LOWERED = expression(r"~((?:\\.|[^\s^\\=<>~|`$]){1,30})~(?!~)")
+_STARS = expression(r"(?:\\?[*†‡])+")
+_TARGET = expression(r"\((?:[^()\\\n]|\\.|\([^()\n]*\))*+\)|\[[^\[\]\n]{0,200}\]")
+_ATTRIBUTES = expression(r"\{[^{}\n]{0,200}\}")
+_TARGET_ATTRIBUTES = expression(r"\{(?:[#.]|[a-z-]{1,20}=)[^{}\n]{0,200}\}")
+_BRACES = expression(r"\{\{[^{}\n]{0,200}\}\}|\{[#.][^{}\n]{0,200}\}")
+_NOTE = expression(r"\[\^[^\s\[\]]{1,60}\]")
+_RUN = expression(r"\{?[A-Za-z]{1,12}\}? ")
+_ROLE = expression(r"\{([a-z:]{1,20})\}$")
+_AUTOLINK = expression(r"<([A-Za-z][A-Za-z0-9+.-]{1,20}:[^\s<>]{0,500})>")
 
 #: Tags that Markdown passes on to HTML; others are text that looks like one (``p<b and c>3``).
 _TAGS = words(

@@ -2,15 +2,15 @@
 
 from __future__ import annotations
 
-import re
 from bisect import bisect_left
 from typing import NamedTuple
 
 from crossfoot.documents.edits import Edit
 from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.visible import Builder, Visible
+from crossfoot.expressions import expression
 
-_TEX = re.compile(r"[=<>^_\\]")
+_TEX = expression(r"[=<>^_\\]")
 
 #: How far into a formula is looked to tell whether it is one.
 _FAR = 400

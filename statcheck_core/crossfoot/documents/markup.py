@@ -7,10 +7,11 @@ from collections.abc import Iterator
 from typing import NamedTuple
 
 from crossfoot.documents.tags import Tag, tag_at
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
 #: What may start a tag, a comment, a declaration.
-_OPENING = re.compile(r"<(?=[A-Za-z/!?])")
+_OPENING = expression(r"<(?=[A-Za-z/!?])")
 
 
 class Words(NamedTuple):

@@ -7,9 +7,10 @@ import re
 from crossfoot.documents.markup import Scanner, Words
 from crossfoot.documents.markup_text import Dialect, hides
 from crossfoot.documents.tags import Tag, attribute_span
+from crossfoot.expressions import expression
 from crossfoot.model import Block
 
-_MORE_ROWS = re.compile(r"\s*<tr[\s>]", re.I)
+_MORE_ROWS = expression(r"\s*<tr[\s>]", re.I)
 _VERBATIM = frozenset(("pre", "code-block", "preformat", "listing", "xmp"))
 
 #: Deepest nesting of sections that counts.

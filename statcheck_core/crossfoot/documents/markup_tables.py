@@ -8,8 +8,9 @@ from crossfoot.documents.markup import Scanner, Words
 from crossfoot.documents.markup_text import Dialect, show_element
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.tags import Tag
+from crossfoot.expressions import expression
 
-_SPAN = re.compile(r"\b(col|row)span\s{0,9}=\s{0,9}[\"']?\s{0,9}(\d{1,4})", re.I)
+_SPAN = expression(r"\b(col|row)span\s{0,9}=\s{0,9}[\"']?\s{0,9}(\d{1,4})", re.I)
 
 #: Most rows or columns a cell may span.
 _WIDEST = 100

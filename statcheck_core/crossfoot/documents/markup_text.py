@@ -12,6 +12,7 @@ from crossfoot.documents.mathtext import show_math, show_tex
 from crossfoot.documents.tags import Tag, attribute_span, entity_at, tag_at
 from crossfoot.documents.visible import OPAQUE, Builder, Visible, compose
 from crossfoot.documents.words import words
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
 
@@ -50,16 +51,16 @@ _CAN_HIDE = words(
     "span div p section aside a i b em strong u small font li ul ol td tr table svg sup sub "
     "mjx-container mjx-math mjx-assistive-mml mjx-merror nav figure header footer details"
 )
-_HIDING = re.compile(
+_HIDING = expression(
     r"katex-html|MathJax(?:_Preview|_SVG|_CHTML|_Display)?[\s\"']|mjx-chtml|aria-hidden=[\"']?true"
     r"|(?:^|\s)hidden(?=[\s/]|=|$)|display:\s{0,9}none|visibility:\s{0,9}hidden|line-through"
     r"|doc-noteref|footnote-ref|footnote-back|visually-hidden|sr-only"
 )
-_STARS = re.compile(r"\s{0,9}([*∗†‡]{1,9})\s{0,9}(?=</)")
-_ISLAND = re.compile(r"\\[(\[]|\$\$")
+_STARS = expression(r"\s{0,9}([*∗†‡]{1,9})\s{0,9}(?=</)")
+_ISLAND = expression(r"\\[(\[]|\$\$")
 _CLOSING = {"\\(": "\\)", "\\[": "\\]", "$$": "$$"}
-_BODY = re.compile(r"\\begin\{document\}([\s\S]*?)\\end\{document\}")
-_REFERENCE = re.compile(r"\s{0,9}(?:<xref\b[^<>]*>[^<>]*</xref>[\s,;–-]*)+</sup>")
+_BODY = expression(r"\\begin\{document\}([\s\S]*?)\\end\{document\}")
+_REFERENCE = expression(r"\s{0,9}(?:<xref\b[^<>]*>[^<>]*</xref>[\s,;–-]*)+</sup>")
 
 
 def hides(tag: Tag, dialect: Dialect) -> bool:

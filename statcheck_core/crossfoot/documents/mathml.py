@@ -13,6 +13,7 @@ from typing import NamedTuple
 from crossfoot.documents.markup import Scanner, Words
 from crossfoot.documents.tags import Tag, entity_at
 from crossfoot.documents.visible import Builder
+from crossfoot.expressions import expression
 
 
 class Leaf(NamedTuple):
@@ -35,8 +36,8 @@ _HIDDEN = frozenset(("annotation", "annotation-xml", "mphantom", "none", "mpresc
 _TOKENS = frozenset(("mi", "mn", "mo", "mtext", "ms"))
 _BARS = frozenset("¯‾ˉ̅_")
 _HATS = frozenset("^ˆ~˜.˙")
-_INVISIBLE = re.compile("[\u2061-\u2064\u200b\u200c\u200d\ufeff]")
-_STARS = re.compile(r"[*∗⋆†‡]+")
+_INVISIBLE = expression("[\u2061-\u2064\u200b\u200c\u200d\ufeff]")
+_STARS = expression(r"[*∗⋆†‡]+")
 
 #: Longest text that is looked at to tell whether it is nothing but stars.
 _FEW = 12

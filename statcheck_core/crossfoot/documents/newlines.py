@@ -9,9 +9,10 @@ import re
 from bisect import bisect_left
 
 from crossfoot.documents.visible import Builder, Visible
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_RETURN = re.compile(r"\r\n?")
+_RETURN = expression(r"\r\n?")
 
 
 def feeds_only(text: str) -> str:

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import json
-import re
 from collections.abc import Iterator
 from typing import NamedTuple
 
@@ -12,10 +11,11 @@ from crossfoot.documents.decoding import decode
 from crossfoot.documents.format import Extracted, Reader
 from crossfoot.documents.newlines import feeds_only
 from crossfoot.documents.tags import angle_comments
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Problem
 
-_SURROGATE = re.compile("[\ud800-\udfff]")
-_ESCAPE = re.compile(r"\x1b\[[0-9;]{0,20}[A-Za-z]")
+_SURROGATE = expression("[\ud800-\udfff]")
+_ESCAPE = expression(r"\x1b\[[0-9;]{0,20}[A-Za-z]")
 
 #: Most cells that are read.
 _MOST = 20_000

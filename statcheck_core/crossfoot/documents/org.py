@@ -13,19 +13,20 @@ from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table
 from crossfoot.documents.tex_symbols import SYMBOLS
 from crossfoot.documents.visible import OPAQUE, Builder, Visible
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_HEADING = re.compile(r"(\*+)[ \t]+(?:(?:TODO|DONE|COMMENT)[ \t]+)?")
-_BEGIN = re.compile(r"[ \t]*#\+begin_(\w{1,30})", re.I)
-_KEYWORD = re.compile(r"[ \t]*#\+(\w{1,30})(?:\[[^\[\]]{0,100}\])?:[ \t]*", re.I)
-_COMMENT = re.compile(r"[ \t]*#(?:[ \t]+|$)")
-_DRAWER = re.compile(r"[ \t]*:[A-Za-z][\w-]{0,40}:[ \t]*")
-_FIXED = re.compile(r"[ \t]*:(?: |$)")
-_RULE = re.compile(r"[ \t]*\|[-+|]+[ \t]*")
-_TAGS = re.compile(r"[ \t]+:[\w@#%:]{1,100}:[ \t]*$")
-_BULLET = re.compile(r"[ \t]*([-+])[ \t]+(?=\S)")
-_END = re.compile(r"[ \t]*#\+end_", re.I)
-_NOTE = re.compile(r"\[fn:[\w-]{1,40}\][ \t]+")
+_HEADING = expression(r"(\*+)[ \t]+(?:(?:TODO|DONE|COMMENT)[ \t]+)?")
+_BEGIN = expression(r"[ \t]*#\+begin_(\w{1,30})", re.I)
+_KEYWORD = expression(r"[ \t]*#\+(\w{1,30})(?:\[[^\[\]]{0,100}\])?:[ \t]*", re.I)
+_COMMENT = expression(r"[ \t]*#(?:[ \t]+|$)")
+_DRAWER = expression(r"[ \t]*:[A-Za-z][\w-]{0,40}:[ \t]*")
+_FIXED = expression(r"[ \t]*:(?: |$)")
+_RULE = expression(r"[ \t]*\|[-+|]+[ \t]*")
+_TAGS = expression(r"[ \t]+:[\w@#%:]{1,100}:[ \t]*$")
+_BULLET = expression(r"[ \t]*([-+])[ \t]+(?=\S)")
+_END = expression(r"[ \t]*#\+end_", re.I)
+_NOTE = expression(r"\[fn:[\w-]{1,40}\][ \t]+")
 _VERBATIM = frozenset(("src", "example", "verbatim"))
 _UNSEEN = frozenset(("comment", "export", "html", "latex"))
 
@@ -269,7 +270,7 @@ def _script(edits: list[Edit], found: re.Match[str], group: str, mark: str) -> N
     edits.append(Edit(found.end(group), found.end(), "" if stars else "}"))
 
 
-_COMMENTS = re.compile(r"^[ \t]*#(?:[ \t]+([^\n]*))?$", re.M)
+_COMMENTS = expression(r"^[ \t]*#(?:[ \t]+([^\n]*))?$", re.M)
 
 
 def comments(text: str) -> tuple[Comment, ...]:

@@ -8,22 +8,23 @@ from crossfoot.documents.captions import together
 from crossfoot.documents.format import Comment, Definitions, Reader
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.visible import Visible, verbatim
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_BREAK = re.compile(r"\n(?:[ \t]*\n)+")
+_BREAK = expression(r"\n(?:[ \t]*\n)+")
 
 #: A line in columns: a tab, or two spaces that do not follow the end of a sentence.
-_COLUMNS = re.compile(r"[^\s.?!] {2,}\S|\S\t+\S")
+_COLUMNS = expression(r"[^\s.?!] {2,}\S|\S\t+\S")
 
 #: A line that only rules off or names a part of a printout.
-_LABEL = re.compile(r"[-=_.*+| \t]+|[^\n]{1,60}:[ \t]*|[ \t]*[A-Z][A-Za-z ]{3,50}")
+_LABEL = expression(r"[-=_.*+| \t]+|[^\n]{1,60}:[ \t]*|[ \t]*[A-Z][A-Za-z ]{3,50}")
 
 #: A label and its value, as programs print them line by line.
-_PAIR = re.compile(r"[ \t]*[A-Z][\w .()-]{1,40}:[ \t]+\S[^\n]{0,40}")
+_PAIR = expression(r"[ \t]*[A-Z][\w .()-]{1,40}:[ \t]+\S[^\n]{0,40}")
 
-_RULE = re.compile(r"[-=_]{6,}")
+_RULE = expression(r"[-=_]{6,}")
 
-_SIGNATURE = re.compile(
+_SIGNATURE = expression(
     r"[ \t]*(?:#>|##|%)? ?(?:Call:|Coefficients:|Residual standard error:|Signif\. codes:"
     r"|Multiple R-squared:|F-statistic:|Response:|data:  )"
 )
@@ -83,7 +84,7 @@ def show(kind: str, source: str, definitions: Definitions) -> Visible:
     return show_printout(source) if kind == "verbatim" else verbatim(source)
 
 
-_COMMENT = re.compile(r"^[ \t]*#[ \t]*(crossfoot:[^\n]*)", re.M)
+_COMMENT = expression(r"^[ \t]*#[ \t]*(crossfoot:[^\n]*)", re.M)
 
 
 def comments(text: str) -> tuple[Comment, ...]:

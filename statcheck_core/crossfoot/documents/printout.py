@@ -6,9 +6,10 @@ import re
 from collections import Counter
 
 from crossfoot.documents.visible import Builder, Visible, verbatim
+from crossfoot.expressions import expression
 
 #: What report writers put before each line of a program's output.
-_PREFIX = re.compile(r"^[ \t]*(#>|##|#|%|FALSE|>)(?: |(?=\n|$))", re.M)
+_PREFIX = expression(r"^[ \t]*(#>|##|#|%|FALSE|>)(?: |(?=\n|$))", re.M)
 
 
 def show_printout(source: str) -> Visible:

@@ -14,18 +14,19 @@ from crossfoot.documents.rst_inline import show_inline
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.visible import Builder, Visible
 from crossfoot.documents.words import words
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_EXPLICIT = re.compile(r"[ \t]*\.\.(?:[ \t]+|$)")
-_DIRECTIVE = re.compile(
+_EXPLICIT = expression(r"[ \t]*\.\.(?:[ \t]+|$)")
+_DIRECTIVE = expression(
     r"[ \t]*\.\.[ \t]+(?:\|[^|\n]{1,60}\|[ \t]+)?([A-Za-z][\w:.+-]{0,40}?)[ \t]?::"
     r"(?:[ \t]+|(?=\n)|$)"
 )
-_FOOTNOTE = re.compile(r"[ \t]*\.\.[ \t]+\[[^\[\]\n]{1,60}\](?:[ \t]+|(?=\n)|$)")
-_HIDDEN = re.compile(r"[ \t]*\.\.[ \t]+(?:_[^\n]*:|\|[^|\n]{1,60}\|[ \t]+[a-z]+::|__)")
-_OPTION = re.compile(r"[ \t]+:[A-Za-z][\w -]{0,40}:(?:[ \t]|$)")
-_ADORNMENT = re.compile(r"([!-/:-@\[-`{-~])\1{2,}[ \t]*")
-_BULLET = re.compile(r"[ \t]*([-*+•])[ \t]+(?=(\S))")
+_FOOTNOTE = expression(r"[ \t]*\.\.[ \t]+\[[^\[\]\n]{1,60}\](?:[ \t]+|(?=\n)|$)")
+_HIDDEN = expression(r"[ \t]*\.\.[ \t]+(?:_[^\n]*:|\|[^|\n]{1,60}\|[ \t]+[a-z]+::|__)")
+_OPTION = expression(r"[ \t]+:[A-Za-z][\w -]{0,40}:(?:[ \t]|$)")
+_ADORNMENT = expression(r"([!-/:-@\[-`{-~])\1{2,}[ \t]*")
+_BULLET = expression(r"[ \t]*([-*+•])[ \t]+(?=(\S))")
 
 _CODE = words(
     "code code-block sourcecode parsed-literal highlight literalinclude prompt ipython "
@@ -200,10 +201,10 @@ def _bullets(source: str, start: int, end: int) -> list[Edit]:
     return edits
 
 
-_HEADER_ROWS = re.compile(r"^[ \t]*:header-rows:[ \t]*(\d{1,2})", re.M)
-_ROW = re.compile(r"[ \t]*\*[ \t]+-(?:[ \t]|$)")
-_CELL = re.compile(r"[ \t]*-(?:[ \t]|$)")
-_FIELD = re.compile(r'[ \t]*("(?:[^"]|"")*"|[^,]*)[ \t]*(?:,|$)')
+_HEADER_ROWS = expression(r"^[ \t]*:header-rows:[ \t]*(\d{1,2})", re.M)
+_ROW = expression(r"[ \t]*\*[ \t]+-(?:[ \t]|$)")
+_CELL = expression(r"[ \t]*-(?:[ \t]|$)")
+_FIELD = expression(r'[ \t]*("(?:[^"]|"")*"|[^,]*)[ \t]*(?:,|$)')
 
 
 def table(source: str, definitions: Definitions) -> Table:

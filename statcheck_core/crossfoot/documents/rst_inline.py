@@ -8,6 +8,7 @@ from collections.abc import Iterable
 from crossfoot.documents.edits import MOST_MARKS, Edit, Marks, Pairs, apply_edits
 from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.visible import OPAQUE, Builder
+from crossfoot.expressions import expression
 
 _MARK = Marks(
     "\\`:*[|_",
@@ -17,7 +18,7 @@ _MARK = Marks(
     r"|(?P<stars>\*\*?)|(?P<note>\[(?:\#[\w-]{0,40}|\*|\d{1,4}|[A-Za-z][\w-]{0,40})\]_(?!\w))"
     r"|(?P<bar>\|[^|\s](?:[^|\n]{0,60}[^|\s])?\|_{0,2})|(?P<ref>(?<=[A-Za-z0-9])__?(?![\w]))",
 )
-_TARGET = re.compile(r"\s*<[^<>]*>$")
+_TARGET = expression(r"\s*<[^<>]*>$")
 _RAISED = frozenset(("sup", "superscript"))
 _LOWERED = frozenset(("sub", "subscript"))
 

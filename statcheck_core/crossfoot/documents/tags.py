@@ -2,24 +2,24 @@
 
 from __future__ import annotations
 
-import re
 from typing import NamedTuple
 
 from crossfoot.documents.format import Comment
 from crossfoot.documents.words import words
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
 # The numbers of attributes and of characters in a value are bounded, so that a text full of
 # tags that never close costs no more than one that closes them.
-_TAG = re.compile(
+_TAG = expression(
     r"<(/?)([A-Za-z][A-Za-z0-9:_.-]{0,60})"
     r"((?:[^<>\"'=]++|=\s{0,20}(?:\"[^\"]{0,5000}\"|'[^']{0,5000}')|[\"'=]){0,100}+)>"
 )
-_ATTRIBUTE = re.compile(
+_ATTRIBUTE = expression(
     r"(?<![\w:.-])([A-Za-z_:][\w:.-]{0,60})\s{0,20}=\s{0,20}"
     r"(?:\"([^\"]*)\"|'([^']*)'|([^\s\"'>]+))"
 )
-_ENTITY = re.compile(r"&(?:#(\d{1,7})|#[xX]([0-9A-Fa-f]{1,6})|([A-Za-z][A-Za-z0-9]{1,31}))(;?)")
+_ENTITY = expression(r"&(?:#(\d{1,7})|#[xX]([0-9A-Fa-f]{1,6})|([A-Za-z][A-Za-z0-9]{1,31}))(;?)")
 
 #: Names that HTML lets stand without a semicolon and that matter here.
 _BARE = words("lt gt amp nbsp quot plusmn times minus")

@@ -11,21 +11,22 @@ from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.typst_inline import show_inline
 from crossfoot.documents.visible import Builder, Visible
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
 
-_HEADING = re.compile(r"[ \t]*(=+)[ \t]+")
-_FENCE = re.compile(r"[ \t]*(`{3,})")
-_COMMENT = re.compile(r"[ \t]*(?://|/\*)")
-_STATEMENT = re.compile(
+_HEADING = expression(r"[ \t]*(=+)[ \t]+")
+_FENCE = expression(r"[ \t]*(`{3,})")
+_COMMENT = expression(r"[ \t]*(?://|/\*)")
+_STATEMENT = expression(
     r"[ \t]*#(?:set|show|let|import|include|pagebreak|colbreak|v|h|bibliography|outline|counter"
     r"|state|metadata|line|image|lorem)\b"
 )
-_CALL = re.compile(r"[ \t]*#(figure|table|align|block|box|grid|rect)[ \t]*\(")
-_TABLE = re.compile(r"\btable[ \t]*\(")
-_CAPTION = re.compile(r"\bcaption:[ \t\n]*(?:figure\.caption\([^()\n]{0,200}\))?\[")
-_BALANCE = re.compile(r'"(?:[^"\\\n]|\\.){0,2000}"|[()\[\]{}]')
-_BULLET = re.compile(r"[ \t]*([-+])[ \t]+(?=(\S))")
-_COMMENTS = re.compile(
+_CALL = expression(r"[ \t]*#(figure|table|align|block|box|grid|rect)[ \t]*\(")
+_TABLE = expression(r"\btable[ \t]*\(")
+_CAPTION = expression(r"\bcaption:[ \t\n]*(?:figure\.caption\([^()\n]{0,200}\))?\[")
+_BALANCE = expression(r'"(?:[^"\\\n]|\\.){0,2000}"|[()\[\]{}]')
+_BULLET = expression(r"[ \t]*([-+])[ \t]+(?=(\S))")
+_COMMENTS = expression(
     r'"(?:[^"\\\n]|\\.){0,2000}"|(?<!:)//([^\n]*)|/\*((?:[^*]|\*(?!/)){0,5000})\*/'
 )
 
@@ -179,8 +180,8 @@ def _bullets(source: str) -> list[Edit]:
     return edits
 
 
-_COUNT = re.compile(r"columns:\s{0,9}(?:(\d{1,3})|\(([^()]{0,500})\))")
-_CELL = re.compile(
+_COUNT = expression(r"columns:\s{0,9}(?:(\d{1,3})|\(([^()]{0,500})\))")
+_CELL = expression(
     r'(?P<open>\[)|(?P<string>"(?:[^"\\\n]|\\.){0,2000}")|(?P<math>\$(?:[^$\\]|\\[\s\S]){1,2000}\$)'
     r"|(?P<named>\b(?!table)[a-z]{1,20}:\s{0,9}(?:\"[^\"\n]{0,200}\"|\[[^\[\]\n]{0,500}\]|\([^()\n]{0,500}\)|[^,()\[\]\n]{1,200}))"
     r"|(?P<wide>colspan:\s{0,9}(\d{1,2}))|(?P<number>(?<![\w.])[-−]?\d[\d.]{0,20}(?=\s{0,9}[,)]))"

@@ -7,8 +7,9 @@ import re
 from crossfoot.documents.tex_symbols import LETTERS, SYMBOLS
 from crossfoot.documents.visible import OPAQUE, Builder
 from crossfoot.documents.words import words
+from crossfoot.expressions import expression
 
-_TOKEN = re.compile(
+_TOKEN = expression(
     r'"(?P<text>[^"\\]*(?:\\.[^"\\]*)*)"|(?P<name>[A-Za-z]{2,}(?:\.[a-z]{1,20}){0,3})'
     r"|(?P<number>\d+(?:\.\d+)?)|(?P<sign><=|>=|!=|->|=>|~=|\\\s|\.\.\.)|\\(?P<escape>\S)"
     r"|(?P<run>\#[A-Za-z][\w.-]*)|(?P<char>[()^_&])|(?P<letter>\S)"

@@ -7,11 +7,11 @@ own (an image, inline code that is run) is :data:`OPAQUE`.
 
 from __future__ import annotations
 
-import re
 from bisect import bisect_right
 from collections.abc import Iterator, Sequence
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.model import Span
 
 #: Stands for content that has no text here, so that nothing is read across it.
@@ -177,7 +177,7 @@ def _pass_on(out: Builder, first: Visible, bounds: list[int], start: int, text: 
         number += 1
 
 
-_SPACE = re.compile(r"\s+")
+_SPACE = expression(r"\s+")
 
 
 def flat(visible: Visible) -> Visible:

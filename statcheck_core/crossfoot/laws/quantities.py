@@ -2,10 +2,10 @@
 
 from __future__ import annotations
 
-import re
 from collections.abc import Mapping
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.laws.interval import EVERYTHING, Interval
 
 _INFINITY = EVERYTHING.high
@@ -161,7 +161,7 @@ _FORMAL = (
 #: Every formal name. The parts of a sum, ``part1`` to ``partN``, are not listed.
 FORMAL: Mapping[str, Formal] = {formal.name: formal for formal in _FORMAL}
 
-_PART = re.compile(r"part[1-9]\d{0,3}")
+_PART = expression(r"part[1-9]\d{0,3}")
 
 
 def domain(name: str) -> Interval:

@@ -6,10 +6,10 @@ the source, backwards; the words are never searched.
 
 from __future__ import annotations
 
-import re
 from bisect import bisect_right
 
 from crossfoot.documents.visible import OPAQUE, Visible, verbatim
+from crossfoot.expressions import expression
 from crossfoot.model import Block, Document, Placed, Span
 from crossfoot.output.safe import one_line
 
@@ -22,9 +22,9 @@ _BEFORE, _AFTER = 160, 120
 #: A word this long is no word, and may be cut.
 _LONG_WORD = 30
 
-_SENTENCE_END = re.compile(r"[.!?][\"”’»)]{0,2}\s+(?=[A-ZÀ-ÞΑ-ΩА-Я“\"«(])")
-_RAISED = re.compile(r"\^\{([^{}]{0,40})\}")
-_LOWERED = re.compile(r"_\{([^{}]{0,40})\}")
+_SENTENCE_END = expression(r"[.!?][\"”’»)]{0,2}\s+(?=[A-ZÀ-ÞΑ-ΩА-Я“\"«(])")
+_RAISED = expression(r"\^\{([^{}]{0,40})\}")
+_LOWERED = expression(r"_\{([^{}]{0,40})\}")
 _HIGH = str.maketrans("0123456789+-−()n", "⁰¹²³⁴⁵⁶⁷⁸⁹⁺⁻⁻⁽⁾ⁿ")
 _LOW = str.maketrans("0123456789+-−()", "₀₁₂₃₄₅₆₇₈₉₊₋₋₍₎")
 

@@ -8,7 +8,9 @@ from __future__ import annotations
 
 import re
 
-_UNSAFE = re.compile(
+from crossfoot.expressions import expression
+
+_UNSAFE = expression(
     "["
     "\x00-\x1f\x7f-\x9f"  # controls, escape sequences among them
     "\u061c\u200b-\u200f\u202a-\u202e\u2060-\u206f\ufeff"  # directions, what can't be seen
@@ -17,7 +19,7 @@ _UNSAFE = re.compile(
     "\U000e0000-\U000e0fff"
     "]"
 )
-_SPACE = re.compile("[\t\n\x0b\f\r \x85\u2028\u2029]+")
+_SPACE = expression("[\t\n\x0b\f\r \x85\u2028\u2029]+")
 
 
 def safe(text: str) -> str:

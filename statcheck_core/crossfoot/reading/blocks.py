@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
-import re
 from collections.abc import Callable, Sequence
 from typing import NamedTuple
 
 from crossfoot.documents import show, table
 from crossfoot.documents.visible import Builder, Visible, compose, place
+from crossfoot.expressions import expression
 from crossfoot.memo import remembered
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.cues import CUES, Cues, cues_in
@@ -24,18 +24,18 @@ _WORDS = (
 )  # fmt: skip
 _ASCII_WORDS = tuple(word for word in _WORDS if word.isascii())
 _MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")
-_RELATED = re.compile(
+_RELATED = expression(
     r"[=<>≤≥≈¼~∼;]\s{0,40}[-+]?\s?[.,·]?[\dn]|[)\]}pPFtr]:\s?[.\d]|[)pPFtr²]\sof\s[.\d]|[pP][bo]0?[.]\d"
 )
 _BEFORE, _AFTER = 100, 80
 _DIGITS = "0123456789"
-_SPACED = re.compile(r"\d \. \d|[=<>] \. \d|\d \d \d|, \d \d \)")
-_SPACED_RUN = re.compile(r"(?:[\w.,()=<>≤≥+−-] ){5,}[\w.,()=<>≤≥](?!\w)")
-_INK = re.compile(r"\S+")
+_SPACED = expression(r"\d \. \d|[=<>] \. \d|\d \d \d|, \d \d \)")
+_SPACED_RUN = expression(r"(?:[\w.,()=<>≤≥+−-] ){5,}[\w.,()=<>≤≥](?!\w)")
+_INK = expression(r"\S+")
 #: Contexts that words must stand near a result to mean.
 NEAR = frozenset(cue.context for cue in CUES if cue.near)
 #: A heading that a table without any of the words above has.
-_HEADS = re.compile(r"(?i:\b(?:df\d?|ss|ms)\b|ddof|estimate|corrected|std|sum of sq)")
+_HEADS = expression(r"(?i:\b(?:df\d?|ss|ms)\b|ddof|estimate|corrected|std|sum of sq)")
 
 
 class BlockReading(NamedTuple):

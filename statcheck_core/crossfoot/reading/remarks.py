@@ -9,6 +9,7 @@ from __future__ import annotations
 import re
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.model import Problem, Span
 
 #: What may be assumed, beside ``alpha``: contexts of a claim.
@@ -30,9 +31,9 @@ ASSUMABLE = (
     "resampled",
 )
 
-_REMARK = re.compile(r"\s*crossfoot\s*:\s*(?P<verb>\w+)\s*(?P<rest>.*)", re.IGNORECASE | re.DOTALL)
-_ALLOW = re.compile(r"(?P<slugs>[\w\s,-]*?)\s+because\s+(?P<reason>\S.*)", re.DOTALL)
-_ALPHA = re.compile(r"alpha\s*=?\s*(?P<level>0?[.,]\d+)")
+_REMARK = expression(r"\s*crossfoot\s*:\s*(?P<verb>\w+)\s*(?P<rest>.*)", re.IGNORECASE | re.DOTALL)
+_ALLOW = expression(r"(?P<slugs>[\w\s,-]*?)\s+because\s+(?P<reason>\S.*)", re.DOTALL)
+_ALPHA = expression(r"alpha\s*=?\s*(?P<level>0?[.,]\d+)")
 
 
 class Allow(NamedTuple):
