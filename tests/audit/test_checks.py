@@ -56,7 +56,7 @@ def test_what_is_not_printed_is_the_reason() -> None:
 
 
 def test_an_identity_of_other_results_says_so() -> None:
-    assert checks("effect: F(1,58)=9.41 p=.003 R2=.40")["f-from-r2"] == (
+    assert checks("effect: F(1,58)=9.41 p=.003 R2=.40 R2_adj=.39")["r2-adjusted"] == (
         "not-applicable: It speaks of the F of a whole model or the summary of a model only."
     )
 

@@ -406,7 +406,7 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     "p-from-r": (_one("pairs", "correlation", p_from_r),),
     "p-from-chi2": (_one("counts", "frequency", p_from_chi2),),
     "p-from-z": (_one("normal", "coefficient", p_from_z),),
-    "f-from-r2": (_one("fit", "overall-model", fit),),
+    "f-from-r2": (_one("fit", "overall-model", fit), _one("only effect", "effect", fit)),
     "r2-adjusted": (_one("fit", "overall-model", fit),),
     "n-from-df": (
         _one("complete", "overall-model", fit),

@@ -33,7 +33,9 @@ DEFINITION = expression(
     rf"|\\(?:re|provide)?(?:new)?command\*?{_NAME}((?:\[[^\[\]\n]{{0,100}}\]\s{{0,9}}){{0,2}})({_GROUP})"
     rf"|\\DeclareMathOperator\*?{_NAME}()({_GROUP})"
     rf"|\\[egx]?def{_NAME}((?:#\d){{0,9}})({_GROUP})"
+    rf"|\\(?:New|Renew|Provide|Declare)(?:Expandable)?DocumentCommand{_NAME}(\{{[^{{}}\n]{{0,60}}(?:\{{[^{{}}\n]{{0,60}}\}}[^{{}}\n]{{0,40}}){{0,3}}\}})\s{{0,9}}({_GROUP})"
 )
+_SPECIFIED = expression(r"(?P<kind>[moOsdDrRgG])(?P<default>\{[^{}]*\})?")
 _CALL = expression(r"\\([A-Za-z@]+)|(?<!\\)%[^\n]*")
 _OPTION = expression(r"\s{0,9}\[([^\[\]\n]{0,200})\]")
 _ARGUMENT = expression(rf"\s{{0,9}}(?:({_GROUP})|(\\[A-Za-z@]+|[^\s{{}}\\]))")
@@ -61,7 +63,7 @@ class Macro(NamedTuple):
 def define(text: str) -> Definitions:
     """Return the macros that a text defines, each with its arguments and body as written."""
     found: dict[str, str] = {}
-    if not any(word in text for word in ("command", "def", "\\Declare")):
+    if not any(word in text for word in ("ommand", "def", "\\Declare")):
         return ()
     for match in DEFINITION.finditer(text):
         groups = [group for group in match.groups() if group is not None]
@@ -70,9 +72,20 @@ def define(text: str) -> Definitions:
         name, arguments, body = groups
         if arguments.startswith("#"):
             arguments = f"[{arguments.count('#')}]"
+        elif arguments.startswith("{"):
+            arguments = _specified(arguments[1:-1])
         if name not in COMMANDS:
             found[name] = arguments.strip() + body
     return tuple(sorted(found.items()))
+
+
+def _specified(arguments: str) -> str:
+    """Return a document command's arguments in the older way: ``O{57} m m`` is ``[3][57]``."""
+    kinds = list(_SPECIFIED.finditer(arguments))
+    count = f"[{len(kinds)}]" if kinds else ""
+    if kinds and kinds[0]["kind"] in "oO":
+        count += f"[{(kinds[0]['default'] or '{}')[1:-1]}]"
+    return count
 
 
 @lru_cache(maxsize=64)

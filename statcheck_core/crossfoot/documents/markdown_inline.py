@@ -32,8 +32,8 @@ _LOWERED = expression(r"~((?:\\.|[^\s^\\=<>~|`$]){1,30})~(?!~)")
 _STARS = expression(r"(?:\\?[*†‡])+")
 _TARGET = expression(r"\((?:[^()\\\n]|\\.|\([^()\n]*\))*+\)|\[[^\[\]\n]{0,200}\]")
 _ATTRIBUTES = expression(r"\{[^{}\n]{0,200}\}")
-_TARGET_ATTRIBUTES = expression(r"\{(?:[#.]|[a-z-]{1,20}=)[^{}\n]{0,200}\}")
-_BRACES = expression(r"\{\{[^{}\n]{0,200}\}\}|\{[#.][^{}\n]{0,200}\}")
+_TARGET_ATTRIBUTES = expression(r"\{(?:[#.][A-Za-z_]|[a-z-]{1,20}=)[^{}\n]{0,200}\}")
+_BRACES = expression(r"\{\{[^{}\n]{0,200}\}\}|\{[#.][A-Za-z_][^{}\n]{0,200}\}")
 _NOTE = expression(r"\[\^[^\s\[\]]{1,60}\]")
 _RUN = expression(r"\{?[A-Za-z]{1,12}\}? ")
 _ROLE = expression(r"\{([a-z:]{1,20})\}$")
@@ -45,6 +45,11 @@ _TAGS = words(
     "dl dt em figcaption figure font h1 h2 h3 h4 h5 h6 hr i img ins kbd li mark math nobr ol p pre "
     "q s samp section small span strike strong sub summary sup table tbody td tfoot th thead tr tt "
     "u ul var wbr"
+)
+#: Of those, the ones that part what stands before from what follows.
+_APART = words(
+    "blockquote br caption center dd details div dl dt figcaption figure h1 h2 h3 h4 h5 h6 hr li "
+    "ol p pre section summary table td th tr ul"
 )
 _STRUCK = frozenset(("del", "s", "strike"))
 
@@ -260,7 +265,7 @@ class _Inline:
                 self.struck_tag = None
         elif tag.name in ("sup", "sub"):
             return self._script_tag(tag)
-        elif tag.name == "br":
+        elif tag.name in _APART:
             return self._edit(tag.start, tag.end, "\n")
         elif tag.name == "img":
             return self._edit(tag.start, tag.end, image(self.source, tag))

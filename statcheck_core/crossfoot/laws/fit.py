@@ -22,6 +22,9 @@ from crossfoot.laws.interval import Interval
 _TWO = Interval(2.0, 2.0)
 
 
+_ALONE = "one-way"
+
+
 def _f(R2: Interval, df1: Interval, df2: Interval) -> Interval:
     return multiply(odds(R2), divide(df2, df1))
 
@@ -44,10 +47,12 @@ F_FROM_R2 = identity(
     "F = (R²/df1)/((1 − R²)/df2)",
     "F R2 df1 df2",
     (
-        form("F", "F = (R²/df1)/((1 − R²)/df2)", "R2 df1 df2", _f),
-        form("R2", "R² = df1·F/(df1·F + df2)", "F df1 df2", _r2),
-        form("df1", "df1 = R²·df2/((1 − R²)·F)", "F R2 df2", _df1),
-        form("df2", "df2 = F·df1·(1 − R²)/R²", "F R2 df1", _df2),
+        form("F", "F = (R²/df1)/((1 − R²)/df2)", "R2 df1 df2", _f, kinds=MODEL),
+        form("R2", "R² = df1·F/(df1·F + df2)", "F df1 df2", _r2, kinds=MODEL),
+        form("df1", "df1 = R²·df2/((1 − R²)·F)", "F R2 df2", _df1, kinds=MODEL),
+        form("df2", "df2 = F·df1·(1 − R²)/R²", "F R2 df1", _df2, kinds=MODEL),
+        form("R2", "R² = df1·F/(df1·F + df2)", "F df1 df2", _r2, assumed=_ALONE, kinds="effect"),
+        form("F", "F = (R²/df1)/((1 − R²)/df2)", "R2 df1 df2", _f, assumed=_ALONE, kinds="effect"),
     ),
     needs="least-squares intercept overall classical-errors unadjusted-df",
     assumption="F is the overall F of an ordinary least-squares fit with an intercept and "
@@ -56,7 +61,7 @@ F_FROM_R2 = identity(
     explanation="The overall F of a regression is the explained share of the sum of squares, for "
     "each of its degrees of freedom, over the unexplained share for each of its own. Where they "
     "disagree, F, R² or a df is misprinted, R² is the adjusted one, or F is not the overall F.",
-    kinds=MODEL,
+    kinds=f"{MODEL} effect",
 )
 
 

@@ -20,13 +20,16 @@ _WORDS = (
     "alue", "aleur", "alor", "tatistic", "quare", "R-Sq", "reedom", "arian", "aryans", "Streuung",
     "Wert", "waarde", "värde", "verdi", "værdi", "설명력", "方差", "分散", "变异", "MSE", "RSE",
     "bservations", " obs", "95 %", "95%", "Sig.", "mong ", "ample of", " df", "d.f.", "elitysaste",
-    "ariânc", "libert", "liberd", "):", "]:", ") of ", " p of ",
+    "ariânc", "libert", "liberd", "):", "]:", ") of ", " p of ", " equal to ", ") was ", ") is ",
+    "值", "値", "自由度", "':", '":',
 )  # fmt: skip
 _ASCII_WORDS = tuple(word for word in _WORDS if word.isascii())
 _MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")
 _RELATED = expression(
-    r"[=<>≤≥≈¼~∼;]\s{0,40}[-+]?\s?[.,·]?[\dn]|[)\]}pPFtr]:\s?[.\d]|[)pPFtr²]\sof\s[.\d]|[pP][bo]0?[.]\d"
+    r"[=<>≤≥≈¼~∼;]\s{0,40}[-+]?\s?[.,·]?[\dn]|[)\]}pPFtr]['\"]?:\s?[.\d]|[)pPFtr²]\sof\s[.\d]|[pP][bo]0?[.]\d"
 )
+#: A test with its degrees of freedom and no sign before its value: `F(2, 57) 3.90`.
+_BARE = expression(r"[FtrH²]\s?\([\d., ]{1,12}\)\s[-+]?\d{0,4}[.,]\d")
 _BEFORE, _AFTER = 100, 80
 _DIGITS = "0123456789"
 _SPACED = expression(r"\d \. \d|[=<>] \. \d|\d \d \d|, \d \d \)")
@@ -123,7 +126,9 @@ def _may_hold(source: str, kind: str, aligned: bool) -> bool:
         return False
     if kind == "table" or (aligned and _may_be_aligned(source)):
         return True
-    return any(mark in source for mark in (*_SIGNS, *_WORDS, *_MARKUP))
+    return any(mark in source for mark in (*_SIGNS, *_WORDS, *_MARKUP)) or (
+        ")" in source and _BARE.search(source) is not None
+    )
 
 
 def _may_be_aligned(source: str) -> bool:
@@ -137,6 +142,7 @@ def _zones(text: str) -> list[tuple[int, int]]:
     They lie around each relation that a number follows, and each word that stands for one.
     """
     hits = [match.start() for match in _RELATED.finditer(text)]
+    hits += [match.start() for match in _BARE.finditer(text)]
     for word in _ASCII_WORDS if text.isascii() else _WORDS:
         at = text.find(word)
         while at >= 0:

@@ -9,18 +9,21 @@ from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
+from crossfoot.reading.words import VERB_UNSPACED
 
 BRACKETS = re.compile(
-    r"\s?(?:\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
-    r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?_\{(?P<more>[^{}\n]{1,12})\})?"
+    r"\s?(?:_?\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
+    r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?[,;]?\s?_\{(?P<more>[^{}\n]{1,12})\})?"
+    r"|\^\{\s?(?P<raised>\d{1,4})\s?\}_\{\s?(?P<beneath>\d{1,6})\s?\}"
     r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
 )
 _FLAT_PAIR = re.compile(
     r"\s?_?(?P<a>\d{1,4}(?:\.\d+)?)\s?[,;/]\s?(?P<b>\d{1,6}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])"
 )
 _FLAT_ONE = re.compile(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
+_THOUSANDS = re.compile(r"\d{1,3}(?:,\d{3})+")
 _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
-_DF = r"(?:d\.?f\.?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
+_DF = r"(?:d\.?f\.?[nd]?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
 _ARGUMENT = re.compile(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
 _TOTAL = re.compile(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
 _SEPARATORS = tuple(
@@ -28,7 +31,7 @@ _SEPARATORS = tuple(
     for pattern in (r"\s?;\s{0,9}", r"\s?/\s?", rf"\s{AND}\s", r"\s?,\s{1,9}", r",")
 )
 _PAIR = lazily(
-    rf"\s*+(?:[=:]\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
+    rf"\s*+(?:(?:[=:]|{VERB_UNSPACED}|(?:was|were|are|of)\s)\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
 )
 _PAIR_BEFORE = lazily(
     rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
@@ -63,10 +66,18 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
     match = BRACKETS.match(text.folded, at)
     if match is None:
         return _flattened(text, at, two=two)
+    if match["raised"]:
+        pair = _both(text, match, "raised", "beneath") if two else ()
+        return Degrees(pair, match.end(), possible=bool(pair))
     group = next(g for g in ("round", "square", "lowered", "sub") if match[g] is not None)
     inner = match[group].translate(_SUBSCRIPTS) if group == "sub" else match[group]
-    pieces = _pieces(inner.rstrip(" ,;"))
     start = match.start(group)
+    pieces = _pieces(inner.rstrip(" ,;"))
+    if keys == ("df",) and len(pieces) == 2:
+        if _THOUSANDS.fullmatch(inner):
+            pieces = [(inner, 0)]
+        elif pieces[0][0].strip() == "1":  # t(1, 58): the df of its F
+            pieces = pieces[1:]
     if match["more"]:
         pieces.append((match["more"], match.start("more") - start))
     refused = Degrees((), match.end(), possible=False)
@@ -82,7 +93,7 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
         part = count_at(
             text, argument["number"], start + offset + argument.start("number"), quantity
         )
-        if part is None or part.low <= 0:
+        if part is None or part.low <= 0 or (quantity == "n" and part.low != part.high):
             return refused
         parts.append(part)
     if two and len(parts) < 2 and group != "round":
@@ -130,16 +141,18 @@ def _flattened(text: Text, at: int, *, two: bool) -> Degrees:
     if two:
         parts = _both(text, match)
     else:
-        one = count_at(text, match["a"], match.start("a"), "df")
+        # Without its square χ is followed by the 2 that has run into its df.
+        square = text.folded[at - 1] == "χ" and match["a"].startswith("2") and len(match["a"]) > 1
+        one = count_at(text, match["a"][square:], match.start("a") + square, "df")
         parts = (one,) if one is not None else ()
     if not parts or any(part.low <= 0 for part in parts):
         return Degrees((), match.end(), possible=False)
     return Degrees(parts, match.end())
 
 
-def _both(text: Text, match: re.Match[str]) -> tuple[Part, ...]:
-    first = count_at(text, match["a"], match.start("a"), "df1")
-    second = count_at(text, match["b"], match.start("b"), "df2")
+def _both(text: Text, match: re.Match[str], above: str = "a", below: str = "b") -> tuple[Part, ...]:
+    first = count_at(text, match[above], match.start(above), "df1")
+    second = count_at(text, match[below], match.start(below), "df2")
     return (first, second) if first is not None and second is not None else ()
 
 

@@ -16,17 +16,16 @@ _MODEL = re.compile(
     r"|Gesamt|回归|회귀",
     re.IGNORECASE,
 )
+# The words that say, right before an F beside an R², what it tests: one effect, or the model.
+_ONE_EFFECT = re.compile(
+    r"\beffects?\s(?:of|for)\b|\bmain\seffect|\binteract(?:ion|ed)|Wechselwirkung|\bcontrast|\bcovariate|\bcontrolling|\badjusting"
+    r"|Effekt\s(?:von|der|des)\b|Haupteffekt|effet\s(?:de|du|des|principal)\b|efecto\s(?:de|del|principal)\b"
+    r"|effetto\s(?:di|del|principale)\b|efeito\s(?:de|do|da|principal)\b|\beffect\svan\b|\bdiffer",
+    re.IGNORECASE,
+)
 _EFFECT = re.compile(
     r"effect|interaction|main\b|anova|ancova|difference|differ|group|condition|between|×|:"
     r"|effet|efecto|effetto|effekt",
-    re.IGNORECASE,
-)
-
-
-#: Words for one of several effects, whose F is not that of the model that R² is of.
-_OF_SEVERAL = re.compile(
-    r"main effect|interact(?:ion|ed)|covariate"
-    r"|Haupteffekt|Wechselwirkung|effet principal|efecto principal|effetto principale",
     re.IGNORECASE,
 )
 
@@ -41,7 +40,11 @@ def claims_of(groups: Sequence[Group], folded: str, visible: str) -> list[Claim]
     folded, visible
         The text of the block, folded and as shown; equally long.
     """
-    kept = [settled for group in shared(groups) if (settled := settle(group, folded)) is not None]
+    kept = [
+        settled
+        for group in shared(groups, folded)
+        if (settled := settle(group, folded)) is not None
+    ]
     claims = [_claim(group, folded, visible) for group in kept]
     return _overall(claims, folded)
 
@@ -71,6 +74,8 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
         # "…, F(2, 57) = 7.41, p = .001. Tukey's test …": corrections concern what follows.
         contexts -= {"adjusted-p"} - cues_in(sentence).contexts
     kind = _kind(group.anchor, {part.quantity for part in unique}, sentence)
+    if kind == "overall-model" and group.anchor == "F" and _of_one_effect(group, folded, start):
+        kind = "effect"
     return Claim(
         kind=kind,
         label=_label(group, unique, visible),
@@ -102,7 +107,7 @@ def _kind(anchor: str | None, quantities: set[str], sentence: str) -> str:
     if "F_change" in quantities or "R2_change" in quantities:
         return "model-change"
     if anchor == "F":
-        if quantities & {"R2", "R2_adj", "R", "f2", "s"} and not _OF_SEVERAL.search(sentence):
+        if quantities & {"R2", "R2_adj", "R", "f2", "s"}:
             return "overall-model"
         return (
             "overall-model"
@@ -119,6 +124,14 @@ def _kind(anchor: str | None, quantities: set[str], sentence: str) -> str:
         "r": "correlation",
         "chi2": "frequency",
     }.get(anchor or "", "overall-model")
+
+
+def _of_one_effect(group: Group, folded: str, start: int) -> bool:
+    """Say whether the words of a sentence nearest before its F speak of an effect, not a model."""
+    test = next(item for item in group.items if item.head == "F")
+    lead = folded[start : test.start]
+    effect, model = ([m.start() for m in words.finditer(lead)] for words in (_ONE_EFFECT, _MODEL))
+    return bool(effect) and max(effect) > max(model, default=-1)
 
 
 #: Effects of one fit stand no further apart, in claims.

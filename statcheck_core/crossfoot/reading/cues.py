@@ -79,13 +79,15 @@ CUES: tuple[Cue, ...] = (
         "robust",
         _stems(
             "robust; hc0; hc1; hc2; hc3; hc4; clustered; cluster-; sandwich; huber; newey; "
-            "driscoll; heteroskedasticity-consistent; heteroscedasticity-consistent"
+            "driscoll; heteroskedasticity-consistent; heteroscedasticity-consistent; white-; "
+            "white standard; white's; hac; eicker"
         ),
         spreads=True,
         confirm=r"robust (?:standard |std\.? )?(?:errors?|s\.?e|variance|f\b|inference|regression"
         r"|estimat|fit|linear)|(?:sk|sc)edastic\w*[- ](?:robust|consistent)|\bhc[0-4]\b"
         r"|cluster(?:ed|-robust)|cluster\w* (?:at|by|on)\b|sandwich"
-        r"|huber|newey|driscoll|\|\s+robust\b|robust\s*\n",
+        r"|huber|newey|driscoll|eicker|\bhac\b|white(?:'s)?[- ](?:correct|standard|robust|heterosk)"
+        r"|\|\s+robust\b|robust\s*\n",
     ),
     Cue(
         "weighted",
@@ -138,7 +140,10 @@ CUES: tuple[Cue, ...] = (
         "no-intercept",
         _stems(
             "through the origin; without an intercept; without intercept; no intercept; "
-            "no-intercept; intercept suppressed; intercept was omitted; zero intercept"
+            "no-intercept; intercept suppressed; intercept was omitted; zero intercept; "
+            "without a constant; without constant; no constant; constant suppressed; "
+            "durch den ursprung; ohne achsenabschnitt; ohne konstante; sans constante; "
+            "sin constante; par l'origine"
         ),
         spreads=True,
     ),
@@ -235,6 +240,10 @@ CUES: tuple[Cue, ...] = (
 
 # Patterns are compiled when first used: most documents need none of them, and start-up counts.
 _CITATION = r"[A-Z][\w'’-]{1,30}[^()]{0,60}?\b(?:19|20)\d\d[a-z]?\s?[,;:]"
+_REPORTED = (
+    r"\b[A-Z][\w'’-]{1,30}(?:\s(?:and|&)\s[A-Z][\w'’-]{1,30}|\set\sal\.)?\s\((?:19|20)\d\d[a-z]?\)"
+    r"\s(?:\w+\s)?(?:reported|found|obtained|observed|showed|gave|got)\b[^.;]{0,70}$"
+)
 _ALPHA = (
     r"(?:(?:α|alpha)(?:\s(?:level|was|set|of|at|is|to))*\s?=?\s?|significance\s(?:level|threshold)(?:\s(?:was|set|of|at|is|to|used))*\s?(?:p\s?[<≤]\s?|=\s?)?)"
     r"(?P<level>0?[.,]\d{1,4}|\d{1,2}(?:\.\d)?\s?%)"
@@ -292,6 +301,8 @@ def contexts_of(sentence: str, block: str, lead: str) -> frozenset[str]:
     found = cues_in(block).contexts
     if found & _NEAR:
         found = (found - _NEAR) | (found & cues_in(sentence).contexts)
+    if re.search(_REPORTED, lead[-120:]):
+        found |= {"quoted"}
     opened = lead.rfind("(")
     if opened > lead.rfind(")") and re.search(_CITATION, lead[max(opened, len(lead) - 160) :]):
         found |= {"quoted"}

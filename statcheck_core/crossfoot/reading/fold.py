@@ -27,8 +27,8 @@ _GROUPS = {
     "]": "］】",
     "{": "｛",
     "}": "｝",
-    ",": "，、﹐",
-    ".": "．",
+    ",": "，、﹐٬،",
+    ".": "．٫",
     ":": "：",
     ";": "；",
     "%": "％",
@@ -40,6 +40,10 @@ _GROUPS = {
     "/": "⁄∕",
     "|": "｜∣",
 }
+
+
+_PERSIAN = "۰"
+_SLASH = re.compile(r"(?<=[۰-۹])/(?=[۰-۹])")
 
 
 def _table() -> dict[int, str]:
@@ -70,6 +74,8 @@ def fold(text: str) -> str:
     """
     if text.isascii():
         return text.replace("\t", " ")
+    if _PERSIAN in text:  # beside digits of its own kind its decimal mark is a slash
+        text = _SLASH.sub(".", text)
     if "¼" in text and "ð" in text:  # brackets and signs as one journal font comes out of a PDF
         text = text.replace("ð", "(").replace("Þ", ")")
     pattern, table = _folding()

@@ -24,15 +24,21 @@ _FIT = lazily(
     re.IGNORECASE,
 )
 _EFFECT = lazily(r"effect|interact|differ|main|signific", re.IGNORECASE)
+_OTHER_TEST = lazily(r"\bF\s?[(\[_]")
 #: A name, its bracket, and arguments written without spaces.
 _CALL = lazily(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
-#: "If t(28) = 2.05 were found …"
+#: "If t(28) = 2.05 were found …", "would need r = .41 to …", "beyond the cut-off χ²(4) = 18.47"
 _SUPPOSED = lazily(
-    r"(?:\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what))\s(?:an?\s|the\s)?$"
+    r"(?:\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what)|\b(?:would|must|should|to)\s(?:need|reach|exceed|detect|have|be|obtain|find)"
+    r"|\b(?:point|percentile|quantile|distribution)\sof|\bwould\sbe\s\w+\s(?:for|at|with|if)|\b[Aa]ssum(?:e|ing)|\b[Ee]\.g\.,?"
+    r"|\b(?:above|beyond|below|over|under|exceeds|exceeding|than)|\b(?:cut-?off|threshold|criterion|critical)\w*(?:\s\w+){0,2})"
+    r"\s(?:an?\s|the\s)?(?:cut-?off\s)?$"
 )
+_CLASSIFIER = lazily(r"precision|recall|F-?(?:measure|score)|classif|accuracy", re.IGNORECASE)
 _DECIMALS = re.compile(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
 _LIST_MARKS = re.compile(r"[\s,;()\[\]]{1,4}")
+_SHARES = frozenset({"R2", "R2_adj", "R2_change"})
 _SUPPORT = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omega2"})
 #: Fewer degrees of freedom than this are more often the indices of a matrix.
 _FEWEST = 3.0
@@ -51,6 +57,10 @@ def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
         The folded text of the block.
     """
     quantities = {part.quantity for item in items for part in item.parts}
+    heads = _SHARES if anchor is None else {anchor}
+    test = next((item for item in items if item.head in heads), None)
+    if test is not None and _SUPPOSED().search(text, max(0, test.start - 36), test.start):
+        return False
     if any(p.quantity == "df" and p.high < _LEAST_DF for item in items for p in item.parts):
         return False
     if not items or _in_call(text, items[0].start):
@@ -107,9 +117,12 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
     support = has_p or bool(quantities & _SUPPORT)
     if "df2" not in quantities:
         if value.relation == "=":
-            return support
-        bound = "plural" in test.flags or _near(_EFFECT(), items, text)
-        return not has_p and bound and value.relation in "<≤>≥"
+            return support and not _near(_CLASSIFIER(), items, text)
+        # `F < 1` alone says little, and yet what it says of an effect.
+        plural = "plural" in test.flags
+        bound = plural or _near(_EFFECT(), items, text) or _near(_OTHER_TEST(), items, text)
+        exact = any(p.quantity == "p" and p.relation == "=" for i in items for p in i.parts)
+        return (plural or not exact) and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
     if support or "lower" in test.flags or error.high < _FEWEST:
         return support
@@ -120,7 +133,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     test = next(item for item in items if item.head == anchor)
     value = next(part for part in test.parts if part.quantity == anchor)
     has_p = _has_p(items)
-    if not has_p and _SUPPOSED().search(text, max(0, test.start - 12), test.start):
+    if "by-name" in test.flags and not has_p:
         return False
     if anchor == "r":
         has_p = has_p and _p_is_near(items, test, text)
@@ -137,7 +150,9 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
         return False
     if "df" in quantities:
         return has_p or _spelt(text, value) or _near(_STATISTICAL(), items, text)
-    return has_p or (anchor == "t" and bool(quantities & {"b", "beta", "se"}))
+    if anchor == "t" and quantities & {"b", "beta", "se"}:
+        return True
+    return has_p and _follows_or_told(items, test, value, text)
 
 
 def _p_is_near(items: Sequence[Item], test: Item, text: str) -> bool:
@@ -145,6 +160,15 @@ def _p_is_near(items: Sequence[Item], test: Item, text: str) -> bool:
     p = next(item for item in items if item.head == "p")
     before = text[p.end : test.start]
     return p.start > test.start or _LIST_MARKS.fullmatch(before) is not None
+
+
+def _follows_or_told(items: Sequence[Item], test: Item, value: Part, text: str) -> bool:
+    """Say whether p follows a test that prints no df, or words tell that it is one."""
+    told = _near(_STATISTICAL(), items, text)
+    p = next(item for item in items if item.head == "p")
+    if p.start > test.start:
+        return told or _spelt(text, value)
+    return told and _LIST_MARKS.fullmatch(text, p.end, test.start) is not None
 
 
 def _side_by_side(items: Sequence[Item], text: str) -> bool:
@@ -168,7 +192,7 @@ def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> b
 
 def _is_fit(items: Sequence[Item], text: str) -> bool:
     """Say whether an R² without a test is one: with another quantity, or where words tell so."""
-    shares = [item for item in items if item.head in {"R2", "R2_adj", "R2_change"}]
+    shares = [item for item in items if item.head in _SHARES]
     printed = [
         item
         for item in shares

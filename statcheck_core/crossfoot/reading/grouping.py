@@ -36,7 +36,8 @@ _ENDS = ".!?。"
 #: How far around a result its sentence is looked for, in characters.
 _REACH = 600
 _ABBREVIATION = re.compile(
-    r"\b(?:adj|approx|ca|cf|e\.g|Eq|et al|Fig|i\.e|No|resp|vs|Tab|z\.B|bzw|ca|p|pp|n\.s)\.\s*$"
+    r"\b(?:adj|approx|bzw|ca|cf|coef|corr|e\.g|Eq|est|et al|Fig|i\.e|korr|max|min|n\.s|No|p|part|pp"
+    r"|resp|sq|std|Tab|vs|z\.B)\.\s*$"
 )
 _LINK = frozenset(
     {
@@ -80,6 +81,8 @@ def gap(text: str, first: Item, second: Item) -> float:
     between = text[first.end : second.start]
     if not between.strip(" ,()[]"):
         return 0.25 if between.strip(" ,") else 0.1
+    if not between.strip(" ;\n"):
+        return 0.6
     words = [word for word in _WORD.findall(between) if word.lower() not in _LINK]
     bullets = len(_BULLET.findall(between))
     strength = 0.1 + min(len(words), 6) + 2.5 * between.count(";")
@@ -112,7 +115,7 @@ def group(text: str, items: Sequence[Item]) -> list[Group]:
     groups: list[Group] = []
     cuts = [_first_cut(items, gaps, anchors[0])]
     for left, right in pairwise(anchors):
-        cuts.append(_cut(items, gaps, left, right))
+        cuts.append(_cut(items, gaps, cuts[-1][1], left, right))
     cuts.append((_last_cut(items, gaps, anchors[-1]), len(items)))
     if cuts[0][1] > 0:
         groups += _runs(items, gaps, 0, cuts[0][1])
@@ -123,6 +126,13 @@ def group(text: str, items: Sequence[Item]) -> list[Group]:
         if stop < after:
             groups += _runs(items, gaps, stop, after)
     return groups
+
+
+def _key(item: Item) -> str:
+    """Return what a group may have one of; words may repeat an R², and a pseudo R² is another."""
+    if item.head in {"R2", "R2_adj", "R2_change"}:
+        return item.head + next((f for f in item.flags if f in {"percent", "pseudo-r2"}), "")
+    return item.head
 
 
 class _Anchor(NamedTuple):
@@ -191,24 +201,24 @@ def _may_lead(items: Sequence[Item], gaps: Sequence[float], start: int, anchor: 
     item = items[start - 1]
     if gaps[start - 1] >= (_NEAR if item.head in _TRAILS else APART):
         return False
-    taken = {items[i].head for i in range(start, anchor.last + 1)}
-    return item.head not in taken
+    taken = {_key(items[i]) for i in range(start, anchor.last + 1)}
+    return _key(item) not in taken
 
 
 def _last_cut(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor) -> int:
     """Return where the group of the last anchor stops."""
-    taken = {items[i].head for i in range(anchor.first, anchor.last + 1)}
+    taken = {_key(items[i]) for i in range(anchor.first, anchor.last + 1)}
     stop = anchor.last + 1
-    while stop < len(items) and gaps[stop - 1] < APART and items[stop].head not in taken:
-        taken.add(items[stop].head)
+    while stop < len(items) and gaps[stop - 1] < APART and _key(items[stop]) not in taken:
+        taken.add(_key(items[stop]))
         stop += 1
     return stop
 
 
 def _cut(
-    items: Sequence[Item], gaps: Sequence[float], left: _Anchor, right: _Anchor
+    items: Sequence[Item], gaps: Sequence[float], first: int, left: _Anchor, right: _Anchor
 ) -> tuple[int, int]:
-    """Return where the left anchor's group stops and the right one's starts.
+    """Return where the left anchor's group, begun at ``first``, stops and the right one's starts.
 
     Of all cuts between the anchors the cheapest is taken: weak gaps cost when cut, as does a
     quantity that its group already has, or a p that would lead.
@@ -219,12 +229,12 @@ def _cut(
     if high - low > _CROWD:  # no two tests share so many numbers
         return _last_cut(items, gaps, left), _first_cut(items, gaps, right)[0]
     best, place = float("inf"), low
-    left_heads = [items[i].head for i in range(left.first, left.last + 1)]
+    left_heads = [_key(items[i]) for i in range(first, left.last + 1)]
     for cut in range(low, high + 1):
         cost = -gaps[cut - 1]
-        heads = left_heads + [items[i].head for i in range(low, cut)]
+        heads = left_heads + [_key(items[i]) for i in range(low, cut)]
         cost += 6.0 * (len(heads) - len(set(heads)))
-        ahead = [items[i].head for i in range(cut, right.last + 1)]
+        ahead = [_key(items[i]) for i in range(cut, right.last + 1)]
         cost += 6.0 * (len(ahead) - len(set(ahead)))
         cost += 3.0 * sum(head in _FOLLOWS for head in ahead[: high - cut])
         if items[left.statistic].head not in {"F", "F_change"}:
@@ -234,16 +244,16 @@ def _cut(
     stop = start = place
     taken = set(left_heads)
     for index in range(low, place):
-        if gaps[index - 1] >= APART or (items[index].head in taken and items[index].head != "n"):
+        if gaps[index - 1] >= APART or (_key(items[index]) in taken and items[index].head != "n"):
             stop = index
             break
-        taken.add(items[index].head)
-    taken = {items[i].head for i in range(right.first, right.last + 1)}
+        taken.add(_key(items[index]))
+    taken = {_key(items[i]) for i in range(right.first, right.last + 1)}
     for index in range(high - 1, place - 1, -1):
-        if gaps[index] >= APART or items[index].head in taken:
+        if gaps[index] >= APART or _key(items[index]) in taken:
             start = index + 1
             break
-        taken.add(items[index].head)
+        taken.add(_key(items[index]))
     else:
         start = place
     return stop, max(start, stop)
@@ -255,7 +265,7 @@ def _runs(items: Sequence[Item], gaps: Sequence[float], start: int, stop: int) -
     run: list[Item] = []
     for index in range(start, stop):
         item = items[index]
-        if run and (gaps[index - 1] >= APART or item.head in {other.head for other in run}):
+        if run and (gaps[index - 1] >= APART or _key(item) in {_key(other) for other in run}):
             groups.append(Group(tuple(run), None))
             run = []
         run.append(item)

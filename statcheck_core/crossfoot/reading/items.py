@@ -42,7 +42,9 @@ class Item(NamedTuple):
     flags
         Contexts that the name itself states, or scanner's words: ``plural`` (one name for several
         tests), ``listed`` (one of several numbers of one name), ``percent`` (told as explained
-        variance), ``told`` (a sample size in words), ``lower`` (a lower-case f).
+        variance), ``told`` (a sample size in words), ``lower`` (a lower-case f), ``by-name`` (a
+        test by a name that means much else), ``perhaps-se`` (its last number may be an SE),
+        ``all`` (printed once for all tests of the sentence).
     """
 
     head: str
@@ -53,4 +55,6 @@ class Item(NamedTuple):
 
 
 #: Flags that speak to the scanner and are no contexts of a claim.
-SCANNER_FLAGS = frozenset({"plural", "listed", "percent", "told", "lower"})
+SCANNER_FLAGS = frozenset(
+    {"plural", "listed", "percent", "told", "lower", "by-name", "perhaps-se", "all"}
+)

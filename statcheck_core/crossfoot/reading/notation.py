@@ -12,13 +12,10 @@ from collections.abc import Iterator
 from functools import cache
 from typing import NamedTuple
 
+from crossfoot.reading.words import DEGREES, ERROR_NAMES, PARTIAL, VALUE, VALUE_BEFORE
+
 _SQUARED = r"(?:\s?²|\s?\^\s?(?:\{\s?2\s?\}|2)|2(?![\d.,]?\d))"
 _SUB = r"(?:\s?_\{[^{}\n]{1,14}\}|_[a-zA-Z]{1,6}|[₀-₉]{1,2})"
-_DF = (
-    r"(?:(?i:d\.?\s?f\.?|dof|degrees?\sof\sfreedom|grados\sde\slibertad|gradi\sdi\slibertà"
-    r"|graus\sde\sliberdade|degrés\sde\sliberté|gdl)|ddl|g\.?l\.?|FG|Freiheitsgrade?n?"
-    r"|vrijheidsgraden|frihetsgrader|自由度)"
-)
 
 
 class Notation(NamedTuple):
@@ -57,35 +54,37 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        r"(?:(?i:sig(?:nificance|nifikanz)?\.?(?:\s?F)?(?:\s?change)|significance\s?F)"
+        r"(?:(?i:sig\.(?:\s?F)?(?:\s?change)?(?:\s?\(2-tailed\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation)(?=\s?[=<])"
+        r"|associated\sprobability(?:\svalue)?)"
         r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
-        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P\s?>\s?\|[tz]\||Sig\.(?:\s?\(2-tailed\))?)",
+        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
         True,
-        "sSPp",
+        "sSPpa",
         "Prob > F = 0.0312, F(2, 57) = 3.69",
     ),
     Notation(
         "F",
-        r"(?:[Ff][\s-](?i:value|statistic|stat|ratio|test|Wert|waarde|v[äæ]rde[tn]?|verdien?|værdien?)"
-        r"(?:\svs\.\sconstant\smodel)?|(?:valeur|valor|valore|estad[ií]stico)\s(?:de\s)?F"
-        r"|F\s?Statistic|F_onewayResult\(statistic)",
+        rf"(?:[Ff]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})(?:\sgave)?"
+        rf"(?:\svs\.\sconstant\smodel)?|(?:{VALUE_BEFORE}|estad[ií]stico)\s(?:de\s|di\s)?F(?![\w(])"
+        r"|F\s?Statistic|(?:F_oneway|Levene)Result\(statistic)",
         True,
         "Ffve",
         "The F-value of 4.22 with 2 and 42 degrees of freedom gave a p-value of 0.021",
     ),
     Notation(
         "p",
-        r"(?:[pP](?:s|'s)?[\s-]?(?i:values?|Werte?|waarden?|v[äæ]rde[tn]?|verdi(?:er)?|værdi(?:er)?|val|unc)"
-        r"|(?:valeurs?|val[ou]re?s?|valori)[\s-](?:de\s)?p|pvalue|Prob\.)",
+        rf"(?:[pP](?:s|'s)?[\s-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc)(?![a-z])"
+        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.)",
         True,
         "pPv",
         "F(2, 57) = 3.90, p-value: .026",
     ),
     Notation(
         "F",
-        r"(?:F(?:s|'s)?(?![\w²'-])|F(?:[12₁₂]|_\{[12]\})(?=\s?\()|F(?=[\d_₀-₉])|f(?=\s?\())",
+        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?\()|F(?=[\d_₀-₉])|f(?=\s?\()"
+        r"|min\s?F'?(?=\s?\())",
         False,
-        "Ff",
+        "Ffm",
         "F(2, 57) = 3.90, p = .026",
     ),
     Notation(
@@ -97,34 +96,43 @@ NOTATIONS: tuple[Notation, ...] = (
         "ΔR² = .07, ΔF(1, 96) = 9.58, p = .003",
     ),
     Notation(
+        "R2_adj",
+        r"(?:[aA]dj(?:usted)?[\s._-]?[rR](?:2|²|[\s._-]?sq(?:uared?)?)|[rR](?:2|²|[\s._-]?sq(?:uared?)?)[._-]?adj(?:usted)?)(?![a-zA-Z\d])",
+        True,
+        "aArR",
+        "r2 = 0.210, adj_r2 = 0.185, F(3, 96) = 8.51",
+    ),
+    Notation(
         "R2",
-        rf"(?:(?i:multiple\s|sample\s)?[Rr][\s-](?i:squared?|sq|quadrat|quadro|cuadrad[oa]|carr[ée]|kva?drat|kwadraat)(?![a-z])|(?i:coefficient\sof\sdetermination)(?!\s?\(?,?\s?[Rr])|(?i:multiple\s)?R\s?\u0304?{_SUB}?{_SQUARED}{_SUB}?"
+        rf"(?:(?i:multiple\s|sample\s)?[Rr][\s-](?i:squared?|sq|quadrat|quadro|cuadrad[oa]|carr[ée]|kva?drat|kwadraat)(?![a-z])|(?i:coefficient\sof\sdetermination|Bestimmtheitsmaß)(?!\s?\(?,?\s?(?:(?:betrug|was|war|is|of)\s)?[Rr](?![a-z]))|(?i:multiple\s)?R\s?\u0304?{_SUB}?{_SQUARED}{_SUB}?"
         rf"|r{_SUB}?{_SQUARED}{_SUB}?)",
         True,
-        "RrmsMcC",
+        "RrmsMcCB",
         "R² = .21, F(3, 96) = 8.74, p < .001",
     ),
     Notation(
         "eta2_partial",
-        rf"(?:(?:(?i:partial|part\.)\s|p\s?(?=η))(?:eta|η)[\s-]?(?:squared|{_SQUARED})|(?:η|n|\?|Î·|<U\+03B7>)\s?_?\{{?p\}}?\s?(?:{_SQUARED}|Â²)"
-        rf"|(?:η|𝜂|Î·|<U\+03B7>)\s?(?:{_SQUARED}|Â²)\s*_?\{{?\s?\(?(?:ₚ|p|part(?:ial)?|partiel|parziale|parcial)\)?\}}?(?![a-z])"
-        rf"|(?:η|eta){_SQUARED}\s(?:partiel|parziale|parcial|partiell)|np2|n2p|hp2|h2p|g2p|gp2|[ηg]\s?p\s?2|(?<=[;,]\s)[hZ]2(?=\s?=\s?0?\.\d))",
-        False,
-        "pη𝜂nÎ<e?ghZ",
+        rf"(?:{PARTIAL}\s?(?:(?i:eta)|η)[\s-]?(?:squared|sq\.?|square|cuadrado|quadrato|carré|Quadrat|{_SQUARED})"
+        rf"|p\s?η\s?{_SQUARED}|(?:η|𝜂|Î·|<U\+03B7>|n|\?)(?:\s?_?\{{?p\}}?\s?|ₚ)(?:{_SQUARED}|Â²)"
+        rf"|(?:η|𝜂|Î·|<U\+03B7>)\s?(?:{_SQUARED}|Â²)\s*_?\{{?\s?\(?(?:ₚ|p|{PARTIAL})\)?\}}?(?![a-z])"
+        rf"|(?i:eta)[\s-]?(?:{_SQUARED}|squared|sq\.?)\s?\(?{PARTIAL}\)?"
+        r"|PES(?![A-Za-z])|np2|n2p|hp2|h2p|g2p|gp2|[ηg]\s?p\s?2|(?<=[;,]\s)[hZ]2(?=\s?=\s?0?\.\d))",
+        True,
+        "pPη𝜂nÎ<e?EghZ部부偏č",
         "F(2, 57) = 3.90, p = .026, ηp² = .12",
     ),
     Notation(
         "eta2",
-        rf"(?:η\s?{_SQUARED}|[eE]ta[\s-](?:squared|sq)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
-        False,
-        "ηe",
+        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s-]?(?:squared?|sq\.?|Quadrat|cuadrado)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
+        True,
+        "η𝜂eE",
         "F(2, 57) = 3.90, p = .026, η² = .12",
     ),
     Notation(
         "omega2",
-        rf"(?:ω\s?{_SQUARED}|omega[\s-]squared)(?!\s?_)",
-        False,
-        "ωo",
+        rf"(?:ω\s?{_SQUARED}|[oO]mega(?:[\s-]?squared?|{_SQUARED}))(?!\s?_)",
+        True,
+        "ωoO",
         "F(2, 57) = 3.90, p = .026, ω² = .09",
     ),
     Notation(
@@ -136,17 +144,23 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "chi2",
-        rf"(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq|deux|quadrat[o]?|cuadrado|kwadraat|två|kvadrat)|khi²|(?i:chi)\^?2|X-squared|χ"
-        # A Wald statistic is χ² where it has degrees of freedom, and may be z where it has none.
-        r"|Wald(?:\s(?:test|statistic))?(?=\s?\(\s?(?:df\s?=\s?)?\d+\s?\)\s?=|\s?=\s?[\d.,]{1,12}\s?[,;(]\s?"
-        rf"{_DF}))(?!\s?/\s?df)",
+        rf"(?:Δ\s?)?(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq\.?|deux|quadrat[o]?|cuadrado|kwadraat|kvadrat|två|2)(?![\d.])"
+        rf"|khi²|(?i:chi)\s?{_SQUARED}|X-squared|(?:Kruskal|Power_divergence|Chi2Contingency|Friedmanchisquare|Bartlett|Fligner)Result\(statistic|χ)(?!\s?/\s?df)",
         True,
-        "χXcCkKjqW",
+        "ΔχXcCkKjqQPFB",
         "χ²(1, N = 120) = 8.47, p = .004",
     ),
     Notation(
+        "chi2-of",
+        r"(?:[HQ](?=\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
+        r"|(?:LRT?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of)\s))",
+        False,
+        "HQGLlSsWw卡",
+        "The Kruskal–Wallis test was significant, H(2) = 9.21, p = .010",
+    ),
+    Notation(
         "ci",
-        r"(?:(?:(?:CI|KI|IC|BI)\s?(?:à\s|al\s|del\s|di\s)?_?\{?(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?\}?|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{0,3}"
+        r"(?:(?:(?:CI|KI|IC|BI)\s?(?:à\s|al\s|del\s|di\s)?[_({]{0,2}(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?[)}]?|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{0,3}"
         r"(?:CIs?|KI|IC|BI|confidence\s(?:intervals?|limits?)|Konfidenzintervall|intervalle?\sde\sconfiance"
         r"|intervalo\sde\sconfian[zç]a|intervallo\sdi\sconfidenza|betrouwbaarheidsinterval|konfidensintervall?))(?![a-z])|CI(?=\s?[:=]?\s?[\[(]\s?[-+]?[.\d]|:\s?[-+]?[.\d]))",
         True,
@@ -168,7 +182,13 @@ NOTATIONS: tuple[Notation, ...] = (
         "dnDeErR",
         "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
     ),
-    Notation("df", _DF + r"(?![a-z12])", True, "dgFfv自D", "t = -1.926; df = 21.4; P = 0.068"),
+    Notation(
+        "df",
+        rf"(?:Δ\s?)?{DEGREES}(?![a-z12])",
+        True,
+        "ΔdgFfv自자D",
+        "t = -1.926; df = 21.4; P = 0.068",
+    ),
     Notation(
         "s",
         r"(?:(?i:residual\s(?:standard|std\.?)\s(?:error|deviation)|root\s(?:mean\ssquared?(?:\serror)?|MSE))|RMSE|RSE|SEE"
@@ -179,16 +199,16 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "se",
-        r"(?:(?i:(?:robust\s)?(?:std\.?|standard)\s(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.|Standardfehler|erreur[\s-]type|error\sestándar|erro\spadrão|errore\sstandard|standaardfout|standardfe(?:l|il|jl)|E[EPS](?=\s?=)|(?:SE|se)(?:\s?_\{?\w{1,4}\}?|\s[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
+        rf"(?:(?i:(?:robust\s)?(?:std\.?|standard)\s(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.|{ERROR_NAMES}|E[EPST](?=\s?=)|(?:SE|se)(?:\s?_\{{?\w{{1,4}}\}}?|\s[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
         True,
-        "rsSReE",
+        "rsSReEk标標표",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(
         "odds_ratio",
-        r"(?:adjusted\s)?(?:a?OR|odds\sratios?)(?![a-zA-Z])|(?:Exp|EXP|exp)\s?\([bBβ]\)",
+        r"(?:adjusted\s)?(?:a?OR|odds\sratios?|[eE]xp\s?\(\s?(?:[bBβ]|coef)\s?\))(?![a-zA-Z])",
         True,
-        "aOoEe",
+        "aOoeE",
         "OR = 1.84, 95% CI [1.20, 2.82], p = .005",
     ),
     Notation(
@@ -202,64 +222,69 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation("tolerance", r"[Tt]olerance(?![a-z])", False, "tT", "tolerance = .54, VIF = 1.85"),
     Notation(
         "b-se",
-        r"[bBβ]\s?\((?:SE|s\.e\.|S\.E\.)\)",
+        r"(?:[bBβ]|(?i:estimate|slope|coefficient))\s?(?:\(\s?±?\s?(?:SE|s\.e\.|S\.E\.|standard\serror)\)|±\s?(?:1\s)?(?:SE|s\.e\.|S\.E\.|standard\serror))",
         False,
-        "bBβ",
+        "bBβeEsScC",
         "B(SE) = 0.81 (0.30), t(90) = 2.70, p = .008",
     ),
     Notation(
         "beta",
-        r"(?:[sS]tandardi[sz]ed\s(?:coefficients?\s)?(?:β|b|beta)?|std\.?\s(?:β|beta))(?![a-z])",
-        False,
-        "sS",
+        r"(?:(?:[sS]tandardi[sz]ed|[sS]td\.?)\s(?:(?:regression\s|path\s)?(?:coefficients?|weights?|slope|estimates?)(?:\s?\(?(?:β|b|beta)\)?(?![a-z]))?|(?:β|b|beta)(?![a-z]))"
+        r"|(?:β|ß|beta|Beta)\s?\((?:[sS]td\.?|[sS]tandardi[sz]ed)\)|[bB]\s?\*(?=\s?=)|Beta(?=\s?[=:]))",
+        True,
+        "sSβßbB",
         "standardised β = .35, t(96) = 3.82, p < .001",
     ),
     Notation(
         "β",
-        rf"(?:β|ß|beta)\u0302?{_SUB}?(?:\([\w .:*×-]{{1,30}}\))?(?![a-z])",
+        rf"(?:β|ß|beta)\u0302?{_SUB}?(?:\([\w .:*×-]{{1,30}}\))?(?![a-zA-Z])",
         False,
         "βßb",
         "β = .35, t(96) = 3.82, p < .001",
     ),
     Notation(
         "b",
-        rf"(?:[bB]{_SUB}?\d?(?![\w²^.])|(?i:(?:regression\s)?coef(?:f\.?|ficients?)?|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
+        rf"(?:[bB]{_SUB}?\d?(?![\w²^.])|(?i:(?:regression\s)?coef(?:f?\.|f|ficients?)?(?!\sof\s(?:determination|variation|correlation))|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
         True,
         "bBrRcCpPeEsSihl",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(
         "n",
-        r"(?:[Nn]{1}(?:obs)?(?:_\{?(?:total|obs)\}?)?(?![\w²^.'-])|(?i:(?:no\.|number|num\.?)\s?(?:of\s)?obs(?:ervations|\.)?)|(?i:sample\ssize|observations))",
+        r"(?:[Nn]{1}(?:obs)?(?:_\{?(?:total|obs)\}?)?(?![\w²^.-]|'\w)|(?i:(?:no\.|number|num\.?)\s?(?:of\s)?obs(?:ervations|\.)?)|(?i:sample\ssize|observations))",
         False,
         "nNsSoO",
         "N = 58. R = .643, R² = .414, F(2, 55) = 19.40",
     ),
     Notation(
         "R",
-        r"(?i:multiple\s(?:correlation\s)?)?R(?![\w²^.\u0304-])",
+        r"(?i:multiple\s(?:correlation\s)?(?:coefficient\s)?)?R(?![\w²^.\u0304-])",
         False,
-        "Rm",
+        "RmM",
         "R = .643, R² = .414, F(2, 55) = 19.40",
     ),
     Notation(
         "r",
-        r"(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.'-])|r(?=_\{?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])",
+        r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
+        r"|(?:Pearson[rR]|Spearmanr|Kendalltau)Result\((?:statistic|correlation)"
+        r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?=\s(?:was|is|of|=)\s))",
         False,
-        "rPpcSρ",
+        "rPpcCSKρ",
         "r(98) = .41, p < .001",
     ),
     Notation(
         "t",
-        r"(?:(?:[tT][\s-](?i:value|statistic|stat|ratio|test|Wert|waarde|värde|verdi|værdi)|TtestResult\(statistic|Ttest_indResult\(statistic)(?![a-z])"
-        r"|t(?:s|'s)?(?![\w²'-])|t[12](?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}\s?=))",
+        rf"(?:(?:T[Tt]est(?:_\w{{3,4}})?Result\(statistic|[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))"
+        rf"|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?t"
+        r")(?![a-z])"
+        r"|t(?:s|'s)?(?![\w²-]|'\w)|t(?:[12]|_\{[12]\})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}\s?=))",
         False,
-        "tT",
+        "tTv",
         "t(47) = 2.20, p = .033",
     ),
     Notation(
         "z",
-        r"(?:(?:Wald\s)?[zZ](?:[\s-](?:value|score|statistic))?)(?![\w²'-])",
+        r"(?:(?:Wald\s)?[zZ](?:[\s-](?:value|score|statistic))?)(?![\w²-]|'\w)",
         False,
         "zZW",
         "b = 0.61, SE = 0.22, z = 2.77, p = .006",
@@ -273,7 +298,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        r"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}?)?(?![\w²'])",
+        r"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}?)?(?![\w²]|'\w)|p(?=_\{\w{1,12}\})",
         False,
         "pP",
         "F(2, 57) = 3.90, p = .026",
@@ -285,10 +310,11 @@ _INITIALS = "".join(sorted(set("".join(n.initials for n in NOTATIONS))))
 #: How names begin that have three letters or more in a row: most words of a text are passed over
 #: by this alone.
 _FIRST_LETTERS = """
-adj aor bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dof err est eta fch fin fre fri
-exp fst gdl gen gra hed hel inc jic khi kik kji lut mdi mse msr msw mul nob num obs odd ome pad par
-pbo pco pea pen pfd pho poi pon ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam see sem
-sig slo spe sta std ste tol tte val vif vri wal
+adj aor ass bar bes bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dof err est eta exp
+fch fin fli fre fri fst fva gdl gen gra hed hel inc jic ken kes khi kik kji kor kru lev lik log
+lrt lut mdi min mse msr msw mul nob num obs odd ome pad par pbo pco pea pen pes pfd pho poi pon
+pow ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam sco see sem sig slo spe sta std
+ste sti tol tst tte tva val vap vif vri wal
 """
 _OPENINGS = frozenset(_FIRST_LETTERS.split())
 _WORD_START = re.compile(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я])[{re.escape(_INITIALS)}]")
@@ -321,7 +347,12 @@ def names(text: str, start: int, end: int) -> Iterator[Name]:
         if at < done:
             continue
         letters = text[at : at + 3]
-        if letters.isalpha() and letters.isascii() and letters.lower() not in _OPENINGS:
+        if (
+            len(letters) == 3
+            and letters.isalpha()
+            and letters.isascii()
+            and letters.lower() not in _OPENINGS
+        ):
             continue
         match = _starting(text[at]).match(text, at)
         if match is not None:

@@ -117,7 +117,11 @@ def writes_decimal_comma(text: str, start: int = 0, end: int = sys.maxsize) -> b
     return _COMMA_EVIDENCE.search(text, start, end) is not None
 
 
-_COMMA_EVIDENCE = re.compile(r"[=<>≤≥≈]\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))")
+# "df = 2,57" is a pair.
+_COMMA_EVIDENCE = re.compile(
+    r"(?<!f)(?<!f[.\s])(?<!f\.\s)(?<![dg]l)(?<![dg]l\s)"
+    r"[=<>≤≥≈]\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))"
+)
 
 
 def _digits(mantissa: str, decimal_comma: bool) -> tuple[str, int]:

@@ -4,41 +4,39 @@ from __future__ import annotations
 
 import re
 
-from crossfoot.reading.items import Item, Text
+from crossfoot.reading.items import Item, Part, Text
+from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name
-from crossfoot.reading.values import value_after
+from crossfoot.reading.numerals import NUMERAL
+from crossfoot.reading.values import known_number, number_at, value_after
+from crossfoot.reading.words import ADJUSTED, CHANGED, PSEUDO
 
-_ADJUSTED = (
-    r"(?:adj(?:usted|\.)?|angepasst\w*|bereinigt\w*|corrected|korrigiert\w*|adjustiert\w*|ajust[ée]\w*|ajustad\w*|corretto"
-    r"|corregid\w*|aggiustat\w*|gecorrigeerd\w*|aangepast\w*|juster\w*|adjustad\w*|調整済み?|调整后?的?"
-    r"|調整|수정된?|조정된?|düzeltilmiş|skorygowan\w*|upraven\w*|hiệu\schỉnh|скорректированн\w*)"
-)
-_PSEUDO = (
-    r"(?:pseudo|Nagelkerke(?:'s)?|McFadden(?:'s)?|Cox\s(?:&|and)\sSnell|marginal|conditional"
-    r"|cross-validated|within|between|predicted|CV|test|generali[sz]ed|Tjur(?:'s)?)"
-)
-_CHANGED = (
-    r"(?:(?:change|increase|increment|gain|rise)\s(?:in|of)|Δ|incremental"
-    r"|(?:increas|rais|improv)\w*\s?(?:the)?)"
-)
 _BEFORE = re.compile(
-    rf"(?:(?P<adjusted>{_ADJUSTED})|(?P<pseudo>{_PSEUDO})|(?P<changed>{_CHANGED})"
+    rf"(?:(?P<adjusted>{ADJUSTED})|(?P<pseudo>{PSEUDO})|(?P<changed>{CHANGED})"
     r"|(?P<partial>(?:semi-?)?partial))[\s-]?\(?$",
     re.IGNORECASE,
 )
 _AFTER = re.compile(
-    rf"[\s-]?_?[{{(]?\s?(?:(?P<adjusted>{_ADJUSTED})|(?P<changed>change)|(?P<pseudo>{_PSEUDO}))(?![a-z])"
+    rf"[\s-]?_?[{{(]?\s?(?:(?P<adjusted>{ADJUSTED})|(?P<changed>change)|(?P<pseudo>{PSEUDO}))(?![a-z])"
     r"\.?\s?[})]?",
     re.IGNORECASE,
 )
 _INSIDE = re.compile(
-    r"_\{?\s?(?:(?P<adjusted>adj\.?|a|adjusted|korr|corr|c)|(?P<changed>change|inc|Δ)"
+    r"_\{?\s?(?:(?P<adjusted>[aA]dj\.?|a|[aA]djusted|korr|corr|c)(?![A-Za-z])|(?P<changed>change|inc|Δ)"
     r"|(?P<pseudo>[A-Za-z]{1,12}))\s?\}?"
 )
 _GREW = re.compile(
     r"\s(?:significantly\s)?(?:increased|rose|improved|grew)\s(?:significantly\s)?(?=by\s)"
 )
 _OPEN = re.compile(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
+#: A number in brackets: `an R² (.21)`; a whole one is a footnote or a sample.
+_IN_BRACKETS = lazily(r"\s?\(\s?(?=(?:\d{0,2}[.,]\d+\s?%?|\d{1,2}\s?%)\s?\))")
+#: Both at once: `R²/adjusted R² = .21/.19`, `R² (adj. R²) = .21 (.19)`.
+_BOTH = lazily(
+    rf"\s?(?:/|\(|,|and)\s?{ADJUSTED}[\s-]?(?:[Rr]\s?(?:²|\^\{{?2\}}?|2))?\s?\)?(?=\s?(?:=|:|of|was))",
+    re.IGNORECASE,
+)
+_SECOND = lazily(rf"\s?(?:/|\(|,|and)\s?(?P<number>{NUMERAL})")
 #: After one of these and a space no word about the name stands before it.
 _APART = frozenset(",;:=")
 #: How far before the name a word about it may stand, in characters.
@@ -49,6 +47,9 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
     """Read an R² of any kind; words and indices around the name say which."""
     folded = text.folded
     start, end = name.match.span()
+    both = _BOTH().match(folded, end) if name.notation.quantity == "R2" else None
+    if both is not None and (parts := _two(text, both.end(), name)):
+        return Item("R2", parts, start, parts[-1].end)
     before = None
     if folded[start - 1 : start].strip(" \n") or folded[start - 2 : start - 1] not in _APART:
         before = _BEFORE.search(folded, max(0, start - _REACH), start)
@@ -75,6 +76,8 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
         quantity, end = "R2_change", grew.end() - 1
     opened = _OPEN.match(folded, end)
     value = value_after(text, opened.end() if opened is not None else end, quantity, name)
+    if value is None and (opened := _IN_BRACKETS().match(folded, end)) is not None:
+        value = number_at(text, opened.end(), quantity, "=")
     if value is None or _is_count(folded[value.start : value.end], value.low):
         return None
     start = before.start() if before is not None else start
@@ -85,3 +88,11 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
 def _is_count(literal: str, low: float) -> bool:
     """Say whether a number can't be a share: R2 numbers resistors and roads, too."""
     return low > 1.4 and not re.search(r"[.,·%]", literal)
+
+
+def _two(text: Text, at: int, name: Name) -> tuple[Part, ...]:
+    """Return R² and adjusted R² where one name stands for both, else nothing."""
+    first = value_after(text, at, "R2", name)
+    match = _SECOND().match(text.folded, first.end) if first is not None else None
+    second = known_number(text, match, "number", "R2_adj") if match is not None else None
+    return (first, second) if first is not None and second is not None else ()

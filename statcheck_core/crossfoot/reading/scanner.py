@@ -7,31 +7,35 @@ from collections.abc import Callable, Iterator, Sequence
 
 from crossfoot.reading import numerals
 from crossfoot.reading.brackets import BRACKETS, degrees_after, pair_behind, read_degrees
+from crossfoot.reading.estimates import (
+    behind_coefficient,
+    enclosing,
+    read_estimate_with_error,
+    read_interval,
+)
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name, names
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import read_r_squared
 from crossfoot.reading.told import told
-from crossfoot.reading.values import AND, known_number, number_at, value_after
+from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
 
 _RATIO = lazily(rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$")
-_LIMITS = lazily(
-    r"\s*+(?:(?:[=:,]|of|was|from|for\s(?:the\s)?\w{1,12})\s*+)?(?:[:=]\s*+)?(?:(?:\(|\[|from\s)\s*+)?"
-    rf"(?P<low>{NUMERAL})\s*+(?:,|;|to|and|-|bis|à|a|tot|til|till|y|\.\.|\|)\s*+(?P<high>{NUMERAL})"
-    r"\s?[\])]?"
-)
 _FOR_WHAT = lazily(
     r"\s(?:for|of|on)\s(?:the\s)?[^\W\d][\w-]{0,30}(?:\s[^\W\d][\w-]{0,30})?(?=\s(?:was|is|=))"
 )
-_PLUS_MINUS = lazily(
-    rf"\s?(?:±|\+/-|\+-)\s?(?P<error>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.|SEM|standard error)"
-)
-_BRACKETED = lazily(rf"\s?\(\s?(?P<number>{NUMERAL})\s?\)")
 _NEXT_VALUE = re.compile(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
 _DEALT = lazily(
     r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b)"
 )
+#: What may be printed once for all tests of a sentence.
+_ONCE_FOR_ALL = frozenset({"df-pair", "df", "n"})
+_FOR_ALL_BEFORE = lazily(r"(?<!\w)(?:both|all|each)(?:\s[a-z]+){0,2}\s$", re.IGNORECASE)
+_FOR_ALL_BEHIND = lazily(
+    r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
+)
+_EXACT_BEHIND = lazily(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
 _ALL = re.compile(r"(?:both|all|each)\s$")
 _SIDED = lazily(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
 _ADJUSTED_NAME = re.compile(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
@@ -39,6 +43,8 @@ _ADJUSTED_BEFORE = re.compile(
     r"(?:adj\.?|adjusted|corrected|Bonferroni|Holm|Tukey)\s?-?$", re.IGNORECASE
 )
 _ADJUSTED_LABEL = lazily(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
+# χ with its df beneath and its square above: χ_{1}^{2}
+_INDEX = re.compile(r"χ_\{?(?P<df>\d{1,3})\}?\s?\^")
 _CRITICAL = re.compile(r"crit", re.IGNORECASE)
 _RANK = lazily(r"ρ|rho|Spearman|_\{?s|rs$")
 
@@ -71,12 +77,22 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
         item = _READERS.get(name.notation.quantity, _read_plain)(text, name)
         if item is None:
             continue
+        if item.head in _ONCE_FOR_ALL and _is_for_all(text, item):
+            item = item._replace(flags=(*item.flags, "all"))
         yield item
         done = item.end
         if "plural" in item.flags or _shares_out(text, item):
             for other in _further_values(text, item):
                 yield other
                 done = other.end
+
+
+def _is_for_all(text: Text, item: Item) -> bool:
+    """Say whether words give a count to all tests: ``both N = 96``, ``df = 1, 96 for each``."""
+    return bool(
+        _FOR_ALL_BEFORE().search(text.folded, max(0, item.start - 24), item.start)
+        or _FOR_ALL_BEHIND().match(text.folded, item.end)
+    )
 
 
 def _shares_out(text: Text, item: Item) -> bool:
@@ -112,12 +128,11 @@ def _read_plain(text: Text, name: Name) -> Item | None:
         return None
     parts: tuple[Part, ...] = (value,)
     end = value.end
-    if quantity in {"b", "β", "beta"}:
-        match = _PLUS_MINUS().match(text.folded, end)
-        error = known_number(text, match, "error", "se") if match is not None else None
-        if match is not None and error is not None:
-            parts, end = (value, error), match.end()
-    return Item(quantity, parts, name.match.start(), end)
+    flags: tuple[str, ...] = ()
+    if quantity in {"b", "β", "beta", "odds_ratio"}:
+        more, end, flags = behind_coefficient(text, value)
+        parts = (value, *more)
+    return Item(quantity, parts, name.match.start(), end, flags)
 
 
 def _read_f(text: Text, name: Name) -> Item | None:
@@ -133,7 +148,7 @@ def _read_f(text: Text, name: Name) -> Item | None:
     units = _by_unit(printed)
     if (units or printed == "f") and len(degrees.parts) != 2:
         return None
-    value = value_after(text, degrees.end, quantity, name)
+    value = value_after(text, degrees.end, quantity, name, bare=len(degrees.parts) == 2)
     if value is None or value.high < 0:
         return None
     parts = (*degrees.parts, *_mean_squares(text, degrees.end, value.start), value)
@@ -172,18 +187,28 @@ def _mean_squares(text: Text, start: int, end: int) -> tuple[Part, ...]:
 
 def _read_one_df(text: Text, name: Name) -> Item | None:
     """t, r and χ²: one degree of freedom, for χ² perhaps with N."""
-    printed, quantity = name.match.group(), name.notation.quantity
+    printed, head = name.match.group(), name.notation.quantity
+    quantity = "chi2" if head == "chi2-of" else head
     keys = ("df", "n") if quantity == "chi2" else ("df",)
     degrees = degrees_after(text, name.match.end(), keys)
+    if quantity == "chi2" and (inside := _INDEX.search(printed)) is not None:
+        one = count_at(text, inside["df"], name.match.start() + inside.start("df"), "df")
+        degrees = degrees._replace(parts=(*((one,) if one else ()), *degrees.parts))
     if not degrees.possible or _CRITICAL.search(text.folded, name.match.end(), degrees.end + 5):
         return None
-    value = value_after(text, degrees.end, quantity, name)
+    at = degrees.end
+    if text.folded[at : at + 1] == "|" == text.folded[name.match.start() - 1]:
+        at += 1  # |t(30)| = 0.62
+    value = value_after(text, at, quantity, name, bare=bool(degrees.parts))
     if value is None:
         return None
     flags = ("plural",) if printed in {"ts", "t's", "rs"} else _by_unit(printed)
     if quantity == "r" and _RANK().search(printed):
         flags = ("rank-correlation",)
-    return Item(quantity, (*degrees.parts, value), name.match.start(), value.end, flags)
+    if head == "chi2-of":
+        flags = ("by-name",)
+    limits, end = enclosing(text, value) if quantity == "r" else ((), value.end)
+    return Item(quantity, (*degrees.parts, value, *limits), name.match.start(), end, flags)
 
 
 def _read_p(text: Text, name: Name) -> Item | None:
@@ -199,46 +224,37 @@ def _read_p(text: Text, name: Name) -> Item | None:
         sided = _SIDED().match(inner)
         if sided is not None:
             flags = (*flags, "one-sided" if sided["one"].lower() in {"one", "1"} else "two-sided")
-        elif _ADJUSTED_LABEL().search(inner):
-            flags = ("adjusted-p",)
+        elif bracket["lowered"] or _ADJUSTED_LABEL().search(inner):
+            flags = _index_of_p(inner)
         else:
             return None
         end = bracket.end()
     if "tailed" in printed:
         flags = (*flags, "one-sided" if "one" in printed else "two-sided")
-    value = value_after(text, end, "p", name)
+    value = value_after(text, end, "p", name, bare=text.folded[start - 1 : start] in " (,;")
     if value is None:
         return None
+    exact = _EXACT_BEHIND().match(text.folded, value.end) if value.relation != "=" else None
+    value = (exact and number_at(text, exact.end(), "p", "=")) or value  # p < .05 (p = .026)
     if printed.lower() in {"ps", "p's"} or _ALL.search(text.folded, max(0, start - 7), start):
         flags = (*flags, "plural")
     return Item("p", (value,), start, value.end, flags)
 
 
-def _read_interval(text: Text, name: Name) -> Item | None:
-    """Read a confidence interval with its level."""
-    match = _LIMITS().match(text.folded, name.match.end())
-    if match is None:
-        return None
-    low = known_number(text, match, "low", "ci_low")
-    high = number_at(text, match.start("high"), "ci_high", "=")
-    if low is None or high is None:
-        return None
-    parts = [low, high]
-    for group in ("level_before", "level_after"):
-        if name.match[group]:
-            level = float(name.match[group].replace(",", ".")) / 100
-            parts.insert(0, Part("ci_level", "=", *name.match.span(group), level, level))
-    return Item("ci", tuple(parts), name.match.start(), match.end())
+def _index_of_p(index: str) -> tuple[str, ...]:
+    """Return what an index of p says: an unknown one may name a correction."""
+    for pattern, flags in _INDICES_OF_P:
+        if pattern().search(index):
+            return flags
+    return ("adjusted-p",)
 
 
-def _read_estimate_with_error(text: Text, name: Name) -> Item | None:
-    """Read ``B(SE) = 0.81 (0.30)``."""
-    value = value_after(text, name.match.end(), "b", name)
-    match = _BRACKETED().match(text.folded, value.end) if value is not None else None
-    error = known_number(text, match, "number", "se") if match is not None else None
-    if value is None or match is None or error is None:
-        return None
-    return Item("b", (value, error), name.match.start(), match.end())
+#: What indices of p say, the first that fits.
+_INDICES_OF_P = (
+    (lazily(r"^(?:GG|HF|[Gg]reenhouse|[Hh]uynh)"), ("adjusted-df",)),
+    (lazily(r"perm|boot|rand|exact|mc\b|sim", re.IGNORECASE), ("resampled",)),
+    (lazily(r"^(?:trend|inter|value|overall|diff|model|group|time|val|obs|[a-z]?)$"), ()),
+)
 
 
 def _read_error_mean_square(text: Text, name: Name) -> Item | None:
@@ -254,11 +270,12 @@ _READERS: dict[str, Callable[[Text, Name], Item | None]] = {
     "t": _read_one_df,
     "r": _read_one_df,
     "chi2": _read_one_df,
+    "chi2-of": _read_one_df,
     "df": read_degrees,
     "R2": read_r_squared,
     "R2_change": read_r_squared,
     "p": _read_p,
-    "ci": _read_interval,
-    "b-se": _read_estimate_with_error,
+    "ci": read_interval,
+    "b-se": read_estimate_with_error,
     "ms-error": _read_error_mean_square,
 }

@@ -4,9 +4,10 @@ from __future__ import annotations
 
 import re
 from collections.abc import Iterable, Sequence
+from itertools import pairwise
 
 from crossfoot.reading.genuine import is_result
-from crossfoot.reading.grouping import Group
+from crossfoot.reading.grouping import Group, same_sentence
 from crossfoot.reading.items import Item, Part
 
 _TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
@@ -19,12 +20,13 @@ _OWN_INTERVAL = frozenset(
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
 
 
-def shared(groups: Sequence[Group]) -> Iterable[Group]:
-    """Deal out what is printed once for several tests.
+def shared(groups: Sequence[Group], text: str) -> Iterable[Group]:
+    """Deal out what is printed once for several tests of a sentence.
 
     ``32% and 40% … F = …, F = …, respectively; both ps < .001``: listed percentages go to the
     tests in order, listed p values likewise, and one plural p to each test that has none.
     """
+    groups = _given_to_all(groups, text)
     tests = [number for number, group in enumerate(groups) if group.anchor in _TESTS]
     shares = [
         item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
@@ -43,6 +45,39 @@ def shared(groups: Sequence[Group]) -> Iterable[Group]:
             items.insert(0, deal[number])
         if items:
             yield Group(tuple(items), group.anchor)
+
+
+def _given_to_all(groups: Sequence[Group], text: str) -> Sequence[Group]:
+    """Give each count that is printed once for all to every test of its sentence without one."""
+    for item in [item for group in groups for item in _for_all(group.items)]:
+        keys = {part.quantity for part in item.parts}
+        takers = [
+            group
+            for group in groups
+            if group.anchor in _TESTS
+            and same_sentence(text, (group.items[0].start, group.items[-1].end), _place(item))
+            and keys.isdisjoint(p.quantity for i in group.items for p in i.parts if i != item)
+            and (group.anchor in {"F", "F_change"}) >= (item.head == "df-pair")
+        ]
+        if len(takers) > 1:
+            groups = [_with(group, item, group in takers) for group in groups]
+    return [group for group in groups if group.items]
+
+
+def _for_all(items: Sequence[Item]) -> list[Item]:
+    """Return what words give to all tests, or a p that is one for all has right behind it."""
+    behind = [b for a, b in pairwise(items) if "plural" in a.flags and a.head == "p"]
+    return [item for item in items if "all" in item.flags or (item.head == "n" and item in behind)]
+
+
+def _place(item: Item) -> tuple[int, int]:
+    return item.start, item.end
+
+
+def _with(group: Group, item: Item, given: bool) -> Group:
+    """Return a group with an item, or without it."""
+    items = tuple(other for other in group.items if other != item)
+    return group._replace(items=(*items, item) if given else items)
 
 
 def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item | None]:
@@ -68,7 +103,9 @@ def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item
 
 def settle(group: Group, text: str) -> Group | None:
     """Drop what does not belong, settle names that need the others, or refuse the group."""
+    group = _without_nameless(group)
     items = [_renamed(item, group) for item in group.items]
+    items = [_without_doubtful_error(item, items) for item in items]
     items = _own_interval(items, group.anchor)
     items = _one_sample_size(items, text)
     if not {item.head for item in items} & _WITH_S:
@@ -80,6 +117,17 @@ def settle(group: Group, text: str) -> Group | None:
         items = [item for item in items if not _of_a_single_slope(item)]
         items = _on_one_scale(items, text)
     return Group(tuple(items), group.anchor) if is_result(group.anchor, items, text) else None
+
+
+def _without_nameless(group: Group) -> Group:
+    """Drop a test by a name that names much else, unless its df are printed."""
+    if any(part.quantity == "df" for item in group.items for part in item.parts):
+        return group
+    items = tuple(item for item in group.items if "by-name" not in item.flags)
+    if len(items) == len(group.items):
+        return group
+    anchor = next((item.head for item in items if item.head in {"b", "β", "beta"}), None)
+    return Group(items, anchor)
 
 
 def _renamed(item: Item, group: Group) -> Item:
@@ -98,6 +146,24 @@ def _renamed(item: Item, group: Group) -> Item:
     return item
 
 
+def _without_doubtful_error(item: Item, items: Sequence[Item]) -> Item:
+    """Drop the bracketed number of ``b = -1.27 (0.44), t = -2.89`` unless it makes that t."""
+    if "perhaps-se" not in item.flags:
+        return item
+    estimate, error = item.parts
+    tests = [part for other in items for part in other.parts if part.quantity in {"t", "z"}]
+    if error.low > 0 and any(_is_ratio(test, estimate, error) for test in tests):
+        return item
+    return item._replace(parts=(estimate,))
+
+
+def _is_ratio(test: Part, estimate: Part, error: Part) -> bool:
+    """Say whether a test can be an estimate over its error, as printed."""
+    least, most = sorted((abs(estimate.low), abs(estimate.high)))
+    low, high = sorted((abs(test.low), abs(test.high)))
+    return least / error.high <= high and low <= most / error.low
+
+
 def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
     """Drop an interval that belongs to an effect size, and the effect sizes that are not read."""
     kept = []
@@ -111,6 +177,8 @@ def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
 
 def _doubled(item: Item, items: Sequence[Item]) -> bool:
     """Say whether another item of the group already tells what this one does."""
+    if "pseudo-r2" in item.flags:
+        return any(other.head == "R2" and "pseudo-r2" not in other.flags for other in items)
     if "adjusted-p" in item.flags:
         return any(other.head == "p" and "adjusted-p" not in other.flags for other in items)
     if "percent" in item.flags:

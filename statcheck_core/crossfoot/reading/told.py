@@ -8,18 +8,38 @@ from collections.abc import Iterator
 from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
+from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import AND, known_number, not_significant
+from crossfoot.reading.words import ADJUSTED, VERB, VERB_UNSPACED
 
 _SHARE = r"\d+(?:[.,]\d+)?\s?(?:%|per\s?cent)"
 _OF = (
     r"(?:of\s|der\s|de\s|da\s|do\s|della\s|des\s|van\s|av\s|af\s|in\s)?(?:the\s|la\s|el\s|l'|de\s)?"
 )
-_EXPLAINED = lazily(
-    rf"(?P<before>{_SHARE})(?:\s\(adj[^()%\d]{{0,12}}(?P<adjusted>{_SHARE})\))?(?:的|\s{_OF}|\s?)(?:total\s|overall\s|observed\s|explained\s|gesamten?\s|totale\s)?"
+_ADJUSTED_SHARE = (
+    rf"\(\s?(?:{ADJUSTED}[^()%\d]{{0,12}}(?P<adjusted>{_SHARE})"
+    rf"|(?P<adjusted_too>{_SHARE})\s?{ADJUSTED})"
+)
+_VARIANCE_WORD = (
     r"(?:varian|variânc|variation|variabil|Streuung|wariancj|rozptyl|дисперс|方差|变异|分散)"
+)
+_EXPLAINED = lazily(
+    # 21% of the variance
+    rf"(?P<before>{_SHARE})(?:\s{_ADJUSTED_SHARE}\s?\))?(?:的|\s{_OF}|\s?)(?:total\s|overall\s|observed\s"
+    rf"|explained\s|gesamten?\s|totale\s)?{_VARIANCE_WORD}"
+    rf"(?:\w{{0,8}}\s{_ADJUSTED_SHARE.replace('adjusted', 'behind')}\s?\))?"
+    # 21% of rut depth variance was accounted for
+    rf"|(?P<of>{_SHARE})\sof\s(?:[^\W\d]+\s){{1,4}}varia\w+\s(?:was|is|were|are|could\sbe|can\sbe)\s(?:explain|account)ed"
+    # the variance explained was 21%
     r"|(?:varian|variânc|selitysaste|varyans|wariancj|설명력|方差|变异|分散|дисперс)[^\W\d]*(?:\s[^\W\d]+){0,2}\s?"
-    r"(?:of|:|was|von|de|um|zu|oli|=|\()?\s?"
-    r"(?P<after>%\d+(?:[.,]\d+)?|\d+(?:[.,]\d+)?\s?(?:%|per\s?cent))",
+    rf"(?:{VERB}|{VERB_UNSPACED}|um|zu|bei|=|\()?\s?"
+    rf"(?P<after>%\d+(?:[.,]\d+)?|{_SHARE})"
+    # … raised this to 24.3%; … and 8% of that in cost
+    rf"|(?:rais|increas|brought|lift|improv)\w*\s(?:this|it|that)\sto\s(?P<to>{_SHARE})"
+    rf"|(?<=\band\s)(?P<also>{_SHARE})\sof\s(?:that|it)\b"
+    # the proportion of variance explained was .21
+    rf"|(?:proportion|share|Anteil|part|proporción|quota)\s(?:of|der|de|della)\s(?:the\s|la\s)?(?:\w+\s)?{_VARIANCE_WORD}\w*"
+    rf"(?:\s[^\W\d]+){{0,2}}\s(?:{VERB}|=)\s(?P<decimal>0?[.,]\d+)",
     re.IGNORECASE,
 )
 #: One of these stands in whatever the pattern matches; looking for them first is cheaper.
@@ -46,8 +66,20 @@ _REVERSED = re.compile(
     r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
 _TURNED = {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}
-_ADJUSTED = re.compile(r"\(\s?adj(?:usted|\.)?:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
-_INSIGNIFICANT = re.compile(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?)(?![\w.]*\w)")
+_ADJUSTED = re.compile(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
+_INSIGNIFICANT = re.compile(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
+# The p-value for F(2, 57) = 3.90 is .026
+_P_FOR = lazily(
+    rf"[pP][\s-]?value\s(?:for|of|associated\swith|corresponding\sto|that\sbelongs\sto)\s[^;!?]{{3,60}}?\s(?:{VERB})\s(?P<p>0?[.,]\d+)(?![\d%])"
+)
+# 0.42 ± 0.11 SE, t = … : an estimate without a name, if a test of it follows and no second does
+_ESTIMATE = lazily(
+    rf"(?<=[(\[])\s?(?P<b>{NUMERAL})\s?(?:±|\+/-)\s?(?P<se>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.)\)?\s?[,;]\s?(?=[tTz][\s(_=])"
+)
+# The coefficient on load is positive (0.42, SE = 0.11): what is estimated, in words before
+_NAMED_EARLIER = lazily(
+    rf"(?:coefficient|estimate[ds]?|effect|slope|elasticity)\b[^.;:()=\d]{{0,60}}[\s(](?P<b>{NUMERAL})\s?[,(;]\s?(?:with\s(?:an?\s)?)?(?:SE|s\.e\.|S\.E\.|standard\serror)\s?[=:]?\s?(?P<se>{NUMERAL})"
+)
 _SAMPLE = lazily(
     r"(?:[Aa]mong|[Ss]ample\sof|[Tt]otal\sof|[Ii]n\sall)\s(?:the\s)?"
     r"(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})\s(?!of\b)(?=[a-z]{3})"
@@ -69,6 +101,20 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
         part = known_number(text, match, "number", "R2_adj")
         if part is not None:
             yield Item("R2_adj", (part,), *match.span())
+    if folded.find("value", start, end) >= 0:
+        for match in _P_FOR().finditer(folded, start, end):
+            part = known_number(text, match, "p", "p")
+            if part is not None:
+                yield Item("p", (part,), *match.span("p"))
+    for signs, pattern in ((("±", "+/-"), _ESTIMATE), (("SE", "s.e", "rror"), _NAMED_EARLIER)):
+        named = any(folded.find(sign, start, end) >= 0 for sign in signs)
+        for match in pattern().finditer(folded, start, end) if named else ():
+            estimate, error = (
+                known_number(text, match, "b", "b"),
+                known_number(text, match, "se", "se"),
+            )
+            if estimate is not None and error is not None:
+                yield Item("b", (estimate, error), match.start("b"), match.end("se"))
     words = any(
         folded.find(stem, start, end) >= 0 for stem in ("mong ", "ample of", "otal of", "n all ")
     )
@@ -84,7 +130,7 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
 
 def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
     """Yield the explained variance of ``6.8% of the variance`` or ``32% and 40% of …``."""
-    group = "before" if match["before"] else "after"
+    group = next(key for key in ("before", "after", "of", "to", "also", "decimal") if match[key])
     first, last = match.span(group)
     if text.folded[first] == "%":  # Turkish writes the sign first
         first += 1
@@ -93,8 +139,8 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
     part = _share(text, quantity, first, last)
     if part is None:
         return
-    if match["adjusted"]:
-        adjusted = _share(text, "R2_adj", *match.span("adjusted"))
+    for key in ("adjusted", "adjusted_too", "behind", "behind_too"):
+        adjusted = _share(text, "R2_adj", *match.span(key)) if match[key] else None
         if adjusted is not None:
             yield Item("R2_adj", (adjusted,), adjusted.start, adjusted.end)
     flags: tuple[str, ...] = ("percent",)
@@ -109,7 +155,8 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
 
 def _share(text: Text, quantity: str, first: int, last: int) -> Part | None:
     literal = text.folded[first:last]
-    signed = literal if literal[-1] in "%t" else literal + "%"
+    whole = literal[-1] in "%t" or literal.lstrip("0")[0] in ".,"
+    signed = literal if whole else literal + "%"
     numeral = numerals.parse(signed, decimal_comma=text.decimal_comma)
     if numeral is None or not 0 <= numeral.value <= 1:
         return None

@@ -10,9 +10,10 @@ from crossfoot.reading.items import WHOLE, Part, Text
 from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name
 from crossfoot.reading.numerals import NUMERAL
+from crossfoot.reading.words import VERB, VERB_UNSPACED
 
 #: Words that join two numbers of a list.
-AND = r"(?:and|und|et|y|e|en|och|og|&)"
+AND = r"(?:and|und|et|y|e|en|och|og|ja|&|和|と|및)"
 #: A count as printed inside brackets or beside "degrees of freedom".
 COUNT = r"\d{1,3}(?:[, ]\d{3})+(?!\d)|\d+(?:[.,]\d+)?"
 
@@ -20,17 +21,16 @@ _SIGN = (
     r"(?:=\s?[<>≤≥](?![<>=])|<\s?=|>\s?=|=\s?<|<{1,3}(?![/<!])|>{1,3}|[=≤≥≈¼]"
     r"|&lt;|&gt;|(?:is|was|were)?\s?(?:less|lower|smaller|greater|larger|higher|more)\sthan|below|under|above)"
 )
-_VERB = (
-    r"(?:of|by|was|is|are|were|equals?|equal(?:led)?\sto|being|von|war|ist|betrug|de|était|van|di|av|på|var|fue|fut|foi|è|é|es|est|vaut|oli)"
-    r"(?:\s(?:only|about|just|approximately))?"
+_RELATION = re.compile(
+    rf"[\s*]*+(?:\(\s*+)?(?P<sign>{_SIGN})[\s*]*+(?:np\.float64\()?(?=[-+]?\s?[.,·]?\d|n\.?\s?s|NS|N\.S)"
 )
-_RELATION = re.compile(rf"\s*+(?:\(\s*+)?(?P<sign>{_SIGN})\s*+(?=[-+]?\s?[.,·]?\d|n\.?\s?s)")
 # "<", ">" and "=" as some journals' fonts come out of a PDF.
 _DAMAGED = lazily(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
 _DAMAGE = {"b": "<", "o": "<", "N": ">", "~": "≈", "∼": "≈"}
 _WORDS = re.compile(
-    rf"\s++{_VERB}\s++(?=[-+]?\s?[.,·]?\d)|\s?:\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
+    rf"\s++{VERB}(?:\s(?:only|about|just|approximately))?\s++(?=[-+]?\s?[.,·]?\d)|['\"]?\s?{VERB_UNSPACED}\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
 )
+_BARE = re.compile(r" (?=[-+]?\d{0,5}[.,]\d++(?![\d.,]?\d|\s?[%=<>]))")
 _SPACES = re.compile(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
 # A worked line, `= 1 − (1−.90)(20)/17 = .882`: only the last value counts.
 _TERM = r"(?:[\d\s.,/()+×*·^²-]|_?\{[^{}=]{1,14}\}|MS[EBWR]?|SS[EBWRT]?|R|[nk](?![a-z]))"
@@ -39,12 +39,14 @@ _WORKED = lazily(
 )
 _OPERATION = lazily(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
 _NUMERAL = re.compile(NUMERAL)
-_NOT_SIGNIFICANT = re.compile(r"n\.?\s?s\.?(?![a-z])")
+_NOT_SIGNIFICANT = re.compile(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
 _UNIT = re.compile(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
-    r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?)(?![\w=(.'-]|\s?[=<>(])"
+    r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=(.'-]|\s?[=<>(])"
 )
-_GLUED = re.compile(r"[A-Za-z_°]|[.,:]\d|\s?[×x/]\s?\(?\d")
+_GLUED = re.compile(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
+# After a numeral without a point, a comma and a digit are more of it; after one with, a list.
+_GOES_ON = re.compile(r",\d")
 _COUNT_SPACES = {0x20: HARD_SPACE}
 _GROUPED = re.compile(r",\d{3}(?!\d)")
 
@@ -60,8 +62,13 @@ _MAY_BE_WORKED = frozenset(
 )
 
 
-def value_after(text: Text, at: int, quantity: str, name: Name) -> Part | None:
-    """Return the relation and number that stand at ``at``, after ``name`` and its brackets."""
+def value_after(
+    text: Text, at: int, quantity: str, name: Name, *, bare: bool = False
+) -> Part | None:
+    """Return the relation and number that stand at ``at``, after ``name`` and its brackets.
+
+    ``bare`` allows a decimal number with nothing but a space before it.
+    """
     folded = text.folded
     if quantity in _MAY_BE_WORKED and _has_second_sign(folded, at):
         worked = _WORKED().match(folded, at)
@@ -76,9 +83,10 @@ def value_after(text: Text, at: int, quantity: str, name: Name) -> Part | None:
     match = _WORDS.match(folded, at)
     if match is None and _may_stand_bare(folded, quantity, name):
         match = _SPACES.match(folded, at)
-    if match is None:
-        return None
-    return number_at(text, match.end(), quantity, match["sign"] or "=")
+    if match is not None:
+        return number_at(text, match.end(), quantity, match["sign"] or "=")
+    match = _BARE.match(folded, at) if bare else None
+    return number_at(text, match.end(), quantity, "=") if match is not None else None
 
 
 def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
@@ -94,6 +102,8 @@ def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
             return None
         return not_significant(*insignificant.span())
     end = match.end()
+    if _GOES_ON.match(folded, end) and "." not in match.group():
+        return None
     if _GLUED.match(folded, end) or (quantity in _UNITLESS and _UNIT.match(folded, end)):
         return None
     numeral = numerals.parse(
