@@ -90,6 +90,9 @@ class Claim(NamedTuple):
         claim too: the error df of a coefficient's model. They are used like its own, and a
         finding names them by indices that go on after its own readings, but nothing is said of
         them here.
+    row
+        What the row of a table calls it, which findings name; empty where there is no such row,
+        or where readings name theirs.
     """
 
     kind: str
@@ -100,6 +103,7 @@ class Claim(NamedTuple):
     context: tuple[str, ...] = ()
     alpha: float | None = None
     given: tuple[Reading, ...] = ()
+    row: str = ""
 
 
 class Check(NamedTuple):

@@ -102,6 +102,8 @@ def fits(want: Wanted, reading: Reading) -> bool:
 
 def _same_term(want: str | None, term: str | None) -> bool:
     """Compare terms; ``model`` is any effect, and what has no term may be anything's."""
+    # Marks of significance are labelled as the p that they stand for.
+    term = None if term == "stars" else term and term.removesuffix(": stars")
     if want is None or term is None:
         return True
     if want in _ROLES or term in _ROLES:

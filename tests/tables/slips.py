@@ -21,7 +21,12 @@ class Slip(NamedTuple):
 
 def slipped(drawn: Drawn, rng: np.random.Generator) -> Slip | None:
     """Change one number that others tie down, so much that no rounding explains it."""
-    checked = [(key, said.readings[key]) for said in drawn.said for key in said.checked]
+    checked = [
+        (key, said.readings[key])
+        for said in drawn.said
+        if all(_tells(drawn, place) for (q, _), place in said.readings.items() if q != "p")
+        for key in said.checked
+    ]
     if not checked:
         return None
     for _ in range(20):
@@ -35,6 +40,11 @@ def slipped(drawn: Drawn, rng: np.random.Generator) -> Slip | None:
             numbers[place] = new
             return Slip(drawn._replace(numbers=numbers), quantity, old, new)
     return None
+
+
+def _tells(drawn: Drawn, place: int) -> bool:
+    """Whether a number is printed to a digit at least: of 0.00 hardly anything follows."""
+    return any(char in "123456789" for char in drawn.numbers[place])
 
 
 def _bounded(drawn: Drawn, place: int) -> bool:

@@ -64,7 +64,7 @@ def _explained(case: Case, fault: Fault) -> Explanation | None:
     step = _test(case, fault)
     if step is None:
         halved = Explanation(_HALVED.format("in the direction found"), 0.5)
-        silent = "two-sided" not in case.shape.context
+        silent = "two-sided" not in case.shape.context and not _follows(case, fault)
         return halved if silent and _fits_factor(case, fault, halved) else None
     return (
         _one_sided(case, fault)
@@ -82,6 +82,20 @@ def _test(case: Case, fault: Fault) -> Step | None:
         if test and step.target in fault.cells:
             return step
     return None
+
+
+def _follows(case: Case, fault: Fault) -> bool:
+    """Say whether p follows from a printed statistic as two-sided, and not as one-sided."""
+    plan = case.plan
+    for step in plan.steps:
+        slug = plan.bindings[step.binding].identity.slug
+        if step.form.gives == "p" and slug in ONE_SIDED and step.target in fault.cells:
+            low, high = evaluate(step, case.box)
+            printed = case.box[step.target]
+            halved = Interval(low / 2, high / 2)
+            if meet(printed, Interval(low, high)) and meet(printed, halved) is None:
+                return True
+    return False
 
 
 def _one_sided(case: Case, fault: Fault) -> Explanation | None:

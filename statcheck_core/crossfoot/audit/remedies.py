@@ -18,7 +18,7 @@ from crossfoot.audit.literals import Numeral, numerals
 from crossfoot.audit.proposals import Printed, Proposal, Slip
 from crossfoot.audit.slips import PLAIN, SIGN, SLIPS
 from crossfoot.audit.slips_of_quantities import customary
-from crossfoot.audit.wording import MARKS
+from crossfoot.audit.wording import are_marks
 from crossfoot.laws.interval import Interval, meet
 from crossfoot.laws.quantities import domain, symbol
 from crossfoot.model import Reading, Remedy
@@ -75,7 +75,7 @@ def remedies(case: Case, cells: Set[int], skip: int = 0) -> list[Weighted]:
     used = (case.plan.strict | case.plan.doubtful) & ~skip
     every = frozenset(range(case.plan.printed))
     for index, reading in enumerate(case.claim.readings):
-        marks = (reading.term or "").endswith(MARKS)
+        marks = are_marks(reading.quantity, reading.term)
         if case.at[index] not in cells or literals[index] is None or marks:
             continue
         for side, slips in _sides(reading):

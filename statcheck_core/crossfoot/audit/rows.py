@@ -1,8 +1,9 @@
 """Which cells the names in an identity stand for in a table, row by row.
 
 An analysis of variance binds most identities once for each effect, its sums once over all rows.
-Everywhere else two things come with tables: marks of significance are a second reading of p, of
-the term ``stars``, and the R² of the smaller model has the term ``reduced``.
+Everywhere else two things come with tables: marks of significance are a reading of p, of the term
+``stars``, and the only one where p itself is not printed; and the R² of the smaller model has the
+term ``reduced``.
 """
 
 from __future__ import annotations
@@ -11,13 +12,12 @@ from collections.abc import Iterator, Mapping, Sequence
 from functools import lru_cache
 
 from crossfoot.audit.binding import Binder, Bound, Cell, bind_prose, names_of
-from crossfoot.audit.wording import MARKS
+from crossfoot.audit.wording import MARKS, REDUCED, are_marks
 from crossfoot.laws import sum_of_parts
 from crossfoot.laws.identity import Form, Identity
 
 ANOVA = "anova-table"
 
-_REDUCED = "reduced"
 _ROWS = frozenset({"error", "total"})
 #: Quantities that each effect of an analysis has for itself.
 _OF_EFFECT = ("F", "p", "df1", "eta2", "eta2_partial", "omega2")
@@ -58,7 +58,7 @@ def _effects(cells: Sequence[Cell]) -> list[str | None]:
         for cell in cells
         if cell.term is not None
         and cell.term not in _ROWS
-        and not cell.term.endswith(MARKS)
+        and not are_marks(*cell)
         and cell.quantity in {*_OF_EFFECT, "ss", "ms"}
     ]
     if any(cell.quantity == "F" and cell.term is None for cell in cells) or set(named) <= {"model"}:
@@ -76,6 +76,8 @@ def _row(quantity: str, effect: str | None) -> Cell:
 def _named(identity: Identity, effect: str | None, printed: frozenset[Cell]) -> dict[str, Cell]:
     """Return the cells that the names of an identity stand for beside one effect."""
     possible = {name: _row(name, effect) for name in _OF_EFFECT}
+    if possible["p"] not in printed:
+        possible["p"] = _marks(effect)
     possible |= {"ss_effect": _row("ss", effect), "ms_effect": _row("ms", effect)}
     possible |= _shared(effect)
     return {
@@ -186,23 +188,22 @@ def _pairs(cells: Sequence[Cell]) -> Iterator[Mapping[str, Cell]]:
     """Yield each p with the marks that stand beside it."""
     printed = set(cells)
     for cell in cells:
-        if cell.quantity == "p" and not _is_mark(cell):
-            term = MARKS if cell.term is None else f"{cell.term}: {MARKS}"
-            if Cell("p", term) in printed:
-                yield {"p": cell, "p_stars": Cell("p", term)}
+        if cell.quantity == "p" and not are_marks(*cell) and _marks(cell.term) in printed:
+            yield {"p": cell, "p_stars": _marks(cell.term)}
 
 
 def _single_cells(cells: Sequence[Cell]) -> Iterator[Mapping[str, Cell]]:
     """Yield the cells of each term, by quantity."""
     terms: dict[str | None, dict[str, Cell]] = {}
     for cell in cells:
-        if not _is_mark(cell) and cell.term != _REDUCED:
+        if not are_marks(*cell) and cell.term != REDUCED:
             terms.setdefault(cell.term, {})[cell.quantity] = cell
     yield from terms.values()
 
 
-def _is_mark(cell: Cell) -> bool:
-    return cell.term is not None and cell.term.endswith(MARKS)
+def _marks(term: str | None) -> Cell:
+    """Return the p that marks stand for, in the only row or in a row of several."""
+    return Cell("p", MARKS if term is None else f"{term}: {MARKS}")
 
 
 def bind_beside_marks(
@@ -211,13 +212,14 @@ def bind_beside_marks(
     """Bind as in prose, but for marks beside p and for the step before."""
     if identity.slug == "stars":
         return [(identity, pair) for pair in _pairs(cells)]
-    own = [cell for cell in cells if not _is_mark(cell) and cell.term != _REDUCED]
+    both = Cell("p") in cells
+    own = [c for c in cells if c.term != REDUCED and not (both and are_marks(*c))]
     if Cell("chi2") in own and "chi2" not in names_of(identity):
         # The df beside a Wald test are those of χ², not those of the error.
         own = [cell for cell in own if cell.quantity != "df"]
         unprinted -= {"df"}
     bound = list(bind_prose(identity, own, unprinted))
-    reduced = Cell("R2", _REDUCED)
+    reduced = Cell("R2", REDUCED)
     if identity.slug != "r2-change" or reduced not in cells:
         return bound
     return [

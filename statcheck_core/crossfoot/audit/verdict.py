@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+
 from crossfoot.audit.case import Case, make_case, shape_of, spoken
 from crossfoot.audit.explain import Explanation, explanations
 from crossfoot.audit.faults import Fault, chain_fault, direct_faults, suspects
@@ -11,7 +13,10 @@ from crossfoot.audit.notes import notes
 from crossfoot.audit.remedies import Weighted, remedies
 from crossfoot.laws import IDENTITIES, ONE_SIDED
 from crossfoot.laws.interval import EVERYTHING
-from crossfoot.model import SEVERITIES, Audited, Check, Claim
+from crossfoot.model import SEVERITIES, Audited, Check, Claim, Finding
+
+#: Longest name of a row that is written out in a message.
+_LONGEST_ROW = 60
 
 
 def judge(claim: Claim, alpha: float) -> Audited:
@@ -27,7 +32,7 @@ def judge(claim: Claim, alpha: float) -> Audited:
     level = claim.alpha if claim.alpha is not None else alpha
     case, agreeing = _as_stated(claim)
     if agreeing is not None:
-        return Audited(claim, _agreed(case, agreeing), tuple(notes(claim)))
+        return Audited(claim, _agreed(case, agreeing), _in_row(claim, notes(claim)))
     faults = _faults(case)
     reasons = explanations(case, faults)
     found = [
@@ -36,7 +41,15 @@ def judge(claim: Claim, alpha: float) -> Audited:
     ]
     checks = _failed(case, faults, reasons)
     order = sorted([*found, *notes(claim)], key=lambda f: SEVERITIES.index(f.severity))
-    return Audited(claim, checks, tuple(order))
+    return Audited(claim, checks, _in_row(claim, order))
+
+
+def _in_row(claim: Claim, found: Sequence[Finding]) -> tuple[Finding, ...]:
+    """Let findings about the row of a table name it."""
+    if not claim.row:
+        return tuple(found)
+    row = claim.row if len(claim.row) <= _LONGEST_ROW else f"{claim.row[: _LONGEST_ROW - 1]}…"
+    return tuple(finding._replace(message=f"{row}: {finding.message}") for finding in found)
 
 
 def _as_stated(claim: Claim) -> tuple[Case, int | None]:

@@ -20,6 +20,8 @@ PLAIN = Numeral("", "0", ".", "", "", 0, "", 0.5)
 
 #: The term of a reading that is no numeral but a mark, such as ``***``.
 MARKS = "stars"
+#: The term of what is printed of the smaller of two nested models.
+REDUCED = "reduced"
 
 _STATISTICS = {
     "F": ("df1", "df2"),
@@ -171,18 +173,26 @@ def _styled(text: str, like: Numeral) -> str:
     return f"{sign}{digits}{like.tail if like.power == -2 else ''}"
 
 
+def are_marks(quantity: str, term: str | None) -> bool:
+    """Say whether a quantity of a row is what marks of significance stand for."""
+    return quantity == "p" and term is not None and term.rpartition(": ")[2] == MARKS
+
+
 def named(reading: Reading) -> str:
     """Return a reading's symbol, with its row in a table; marks of significance are of a p."""
-    row, _, marks = (reading.term or "").rpartition(": ")
-    if marks != MARKS:
-        row = reading.term or ""
-    name = symbol(reading.quantity) + (f" ({row})" if row else "")
-    return f"{name} by its marks" if marks == MARKS else name
+    name, row = symbol(reading.quantity), reading.term or ""
+    if row == REDUCED:
+        return f"{name} of the step before"
+    if not are_marks(reading.quantity, row):
+        return f"{name} ({row})" if row else name
+    row = row.rpartition(": ")[0]
+    return f"{name} ({row}) by its marks" if row else f"{name} by its marks"
 
 
 def printed(reading: Reading) -> str:
     """Return a reading as it is printed."""
-    return f"{named(reading)} {reading.relation} {reading.literal}"
+    unit = "%" if reading.quantity == "ci_level" and reading.literal.isdigit() else ""
+    return f"{named(reading)} {reading.relation} {reading.literal}{unit}"
 
 
 def phrase(readings: Sequence[Reading]) -> str:

@@ -9,7 +9,17 @@ from crossfoot.audit.case import Case
 from crossfoot.audit.faults import Fault
 from crossfoot.audit.literals import Numeral, numeral
 from crossfoot.audit.narrow import Step, Taken, evaluate
-from crossfoot.audit.wording import PLAIN, between, listed, named, phrase, plural, printed, subjects
+from crossfoot.audit.wording import (
+    PLAIN,
+    are_marks,
+    between,
+    listed,
+    named,
+    phrase,
+    plural,
+    printed,
+    subjects,
+)
 from crossfoot.laws.identity import mirror
 from crossfoot.laws.interval import Interval, meet
 from crossfoot.laws.quantities import domain, symbol
@@ -62,7 +72,8 @@ def conclusion(case: Case, cell: int, result: Interval, takes: Iterable[int]) ->
     assert index is not None  # a finding points at a reading
     reading = case.readings[index]
     relation = "" if reading.relation == "=" else f"{reading.relation} "
-    lead = f"{named(reading)} is printed as {relation}{reading.literal}"
+    marks = are_marks(reading.quantity, reading.term)
+    lead = f"{named(reading)} is {'' if marks else 'printed as '}{relation}{reading.literal}"
     shown = between(_opened(case, cell, result), hand(case, cell), case.box[cell])
     readings = case.readings_at(takes)
     if not readings:
@@ -70,7 +81,8 @@ def conclusion(case: Case, cell: int, result: Interval, takes: Iterable[int]) ->
     others = [case.readings[i] for i in readings]
     give = "give" if plural(others) else "gives"
     preposition = "of " if shown.startswith("at ") else ""
-    return f"{lead}, but {phrase(others)} {give} {named(reading)} {preposition}{shown}."
+    given = symbol(reading.quantity) if marks else named(reading)
+    return f"{lead}, but {phrase(others)} {give} {given} {preposition}{shown}."
 
 
 def pointer(case: Case, cells: Iterable[int], first: int) -> str:

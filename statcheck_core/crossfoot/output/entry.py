@@ -7,7 +7,7 @@ from collections.abc import Sequence
 from crossfoot.audit.wording import named
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Document, Finding, Placed, Remedy, Span
-from crossfoot.output.excerpt import MARK, UNMARK, excerpt
+from crossfoot.output.excerpt import MARK, UNMARK, quotation
 from crossfoot.output.output import Look
 from crossfoot.output.safe import one_line, safe
 from crossfoot.output.wrapping import wrapped
@@ -27,16 +27,17 @@ def entry(
     The place, the quotation and the remedies that they share are written once.
     """
     first = findings[0]
-    readings = (*placed.audited.claim.readings, *placed.audited.claim.given)
-    span = readings[first.reading].span
+    own = placed.audited.claim.readings
+    span = (*own, *placed.audited.claim.given)[first.reading].span
     head = f"{number}. "
     indent = " " * len(head)
     place = place_words(document, Span(span.start + placed.base, span.end + placed.base))
     severity = painted(first.severity, _COLOURS[first.severity], look)
     slugs = ", ".join(dict.fromkeys(finding.identity for finding in findings))
     lines = [f"{head}{place}: {severity} ({slugs})"]
-    quoted = wrapped(excerpt(document, placed, span), look.width, indent)
-    lines += [marked(line, look) for line in quoted]
+    beside = [own[i].span for finding in findings for i in finding.related if i < len(own)]
+    for row in quotation(document, placed, span, beside):
+        lines += [marked(line, look) for line in wrapped(row, look.width, indent)]
     for finding in findings:
         lines += wrapped(one_line(finding.message), look.width, indent)
     for remedies in dict.fromkeys(finding.remedies for finding in findings if finding.remedies):

@@ -7,6 +7,7 @@ the source, backwards; the words are never searched.
 from __future__ import annotations
 
 from bisect import bisect_right
+from collections.abc import Iterable
 
 from crossfoot.documents.visible import OPAQUE, Visible, verbatim
 from crossfoot.expressions import expression
@@ -18,6 +19,9 @@ MARK, UNMARK = "\ufdd0", "\ufdd1"
 
 #: Code points shown before and after the reading, at most.
 _BEFORE, _AFTER = 160, 120
+
+#: Rows of a table shown for one reading, at most.
+_MOST_ROWS = 6
 
 #: A word this long is no word, and may be cut.
 _LONG_WORD = 30
@@ -47,13 +51,38 @@ def excerpt(document: Document, placed: Placed, span: Span) -> str:
         One line, safe to print, with :data:`MARK` and :data:`UNMARK` around the reading and an
         ellipsis where something was cut.
     """
+    return quotation(document, placed, span, ())[0]
+
+
+def quotation(
+    document: Document, placed: Placed, span: Span, others: Iterable[Span]
+) -> tuple[str, ...]:
+    """Return the excerpt of a reading with the other rows of its table that it is seen beside.
+
+    Parameters
+    ----------
+    document, placed, span
+        As for :func:`excerpt`.
+    others
+        The places of the readings that the finding rests on.
+    """
     block, visible = _block(document, placed.base)
     shift = placed.base - block.start
     start, end = shown(visible, Span(span.start + shift, span.end + shift))
     prose = block.kind == "prose"
     before = _before(visible.text, start, prose)
     after = _after(visible.text, end, prose)
-    return _plain(f"{before}{MARK}{_clean(visible.text[start:end]).strip()}{UNMARK}{after}")
+    own = f"{before}{MARK}{_clean(visible.text[start:end]).strip()}{UNMARK}{after}"
+    if prose:
+        return (_plain(own),)
+    row = visible.text.rfind("\n", 0, start) + 1
+    rows = {row: own}
+    for other in others:
+        place, _ = shown(visible, Span(other.start + shift, other.end + shift))
+        row = visible.text.rfind("\n", 0, place) + 1
+        if row not in rows and len(rows) < _MOST_ROWS:
+            rows[row] = _after(visible.text, row, prose)
+    return tuple(_plain(rows[row]) for row in sorted(rows))
 
 
 def shown(visible: Visible, span: Span) -> tuple[int, int]:

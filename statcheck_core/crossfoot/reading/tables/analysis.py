@@ -6,7 +6,7 @@ import re
 from collections.abc import Iterable, Sequence
 
 from crossfoot.model import Claim, Reading
-from crossfoot.reading.tables.making import Column, Sheet, claim, stars_term
+from crossfoot.reading.tables.making import MARKS, Column, Sheet, claim, marks_term
 from crossfoot.reading.tables.ratios import Line, denominator, number_of, tested_otherwise
 from crossfoot.reading.tables.rows import correction_of, is_lack_of_fit, is_pure_error
 
@@ -110,7 +110,7 @@ def _names(effects: Sequence[Line]) -> list[str]:
     names: list[str] = []
     for line in effects:
         name = line.label or "effect"
-        taken = {*names, "model", "error", "total"}
+        taken = {*names, "model", "error", "total", MARKS}
         number = 2
         while name in taken:
             name = f"{line.label or 'effect'} ({number})"
@@ -128,7 +128,7 @@ def _effect_readings(line: Line, term: str | None) -> list[Reading]:
         elif quantity in {"df", "df1"}:
             readings.append(found._replace(quantity="df1", term=term))
         elif quantity == "stars":
-            readings.append(found._replace(term=stars_term(term)))
+            readings.append(found._replace(term=marks_term(term)))
         elif quantity != "df2":
             readings.append(found._replace(term=term))
     return readings
@@ -144,8 +144,9 @@ def _named(line: Line, term: str, renamed: dict[str, tuple[str, str | None]]) ->
     return readings
 
 
-def _label(line: Line, otherwise: str) -> str:
-    return ", ".join(part for part in (line.section, line.label) if part) or otherwise
+def _row(line: Line) -> str:
+    """Return what the table calls a row, under the heading of its section."""
+    return ", ".join(part for part in (line.section, line.label) if part)
 
 
 def _effect(sheet: Sheet, line: Line) -> Claim | None:
@@ -154,7 +155,8 @@ def _effect(sheet: Sheet, line: Line) -> Claim | None:
     cells = [f._replace(quantity="df1") if f.quantity == "df" else f for f in cells]
     if not any(found.quantity == "F" for found in cells) or len(cells) < 2:
         return None
-    return claim(sheet, "effect", _label(line, "F"), cells, line.boxes, contexts=line.contexts)
+    row = _row(line)
+    return claim(sheet, "effect", row or "F", cells, line.boxes, row=row, contexts=line.contexts)
 
 
 def _against(sheet: Sheet, line: Line, other: Line, both: Line | None = None) -> Claim:
@@ -165,12 +167,14 @@ def _against(sheet: Sheet, line: Line, other: Line, both: Line | None = None) ->
     if both is not None:
         given += _named(both, "total", {})
     readings = _effect_readings(line, None)
+    row = _row(line)
     return claim(
         sheet,
         "anova-table",
-        _label(line, "effect"),
+        row or "effect",
         readings,
         line.boxes,
+        row=row,
         contexts=line.contexts,
         given=given,
     )

@@ -130,7 +130,7 @@ def _read(
             cells.setdefault(found.quantity, found)
     mark, default = marked(sheet, content, beside_p=has_p)
     if mark is not None and roles[:1] in {("F",), ("p",)}:
-        cells.setdefault("p" if mark.term is None else "stars", mark)
+        cells.setdefault("stars", mark)
         contexts += ["default-stars"] if default else []
     contexts += column.heading.contexts
 

@@ -175,7 +175,7 @@ def _read(
     if numbers or content.marks:
         mark, default = marked(sheet, content, beside_p=has_p)
         if mark is not None:
-            cells.setdefault("p" if mark.term is None else "stars", mark)
+            cells.setdefault("stars", mark)
             contexts += ["default-stars"] if default else []
         contexts += column.heading.contexts
     return loose
@@ -229,7 +229,7 @@ def _with_enclosed(sheet: Sheet, lines: list[Line]) -> list[Line]:
             found = reading(sheet, line.enclosed, quantity)
             cells = dict(line.cells)
             if kind == "se?":
-                cells.pop("p", None)
+                cells.pop("stars", None)
             if found is not None:
                 cells.setdefault(quantity, found)
             line = line._replace(cells=cells)
@@ -244,7 +244,7 @@ def _sample(sheet: Sheet, line: Line) -> Sample | None:
     first, second = value(estimate), value(found)
     if first is None or second is None:
         return None
-    marks = line.cells.get("p")
+    marks = line.cells.get("stars")
     return Sample(first, second, (marks.low, marks.high) if marks is not None else None)
 
 
@@ -309,8 +309,15 @@ def _claim(sheet: Sheet, line: Line, name: str) -> Claim | None:
     cells = line.cells
     if len(cells) < 2 or set(cells) <= {"p", "stars", "df2"}:
         return None
-    label = ", ".join(part for part in (line.label, name) if part) or "coefficient"
+    row = ", ".join(part for part in (line.label, name) if part)
     given = tuple({(g.quantity, g.span): g for g in line.given}.values())
     return claim(
-        sheet, "coefficient", label, cells.values(), line.boxes, contexts=line.contexts, given=given
+        sheet,
+        "coefficient",
+        row or "coefficient",
+        cells.values(),
+        line.boxes,
+        row=row,
+        contexts=line.contexts,
+        given=given,
     )

@@ -236,16 +236,15 @@ def _correlation(
     if len(content.enclosed) == 1 and sheet.legend.enclosed == "p":
         p = reading(sheet, content.enclosed[0], "p")
         readings += [p] if p is not None else []
-        if mark is not None and p is not None:
-            mark = mark._replace(term="stars")
     if below is not None and len(readings) == 1:
         readings.append(below)
-        mark = None if mark is None else mark._replace(term="stars")
     readings += [mark] if mark is not None else []
     if n is None and mark is None and len(readings) < 2:
         return None
     context = ["default-stars"] if default else []
-    found = claim(sheet, "correlation", label, readings, boxes, contexts=(*context, *contexts))
+    found = claim(
+        sheet, "correlation", label, readings, boxes, row=label, contexts=(*context, *contexts)
+    )
     if n is None:
         return found
     ordered = tuple(sorted((*found.readings, n), key=lambda other: other.span))

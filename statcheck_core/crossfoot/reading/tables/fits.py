@@ -162,6 +162,8 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     for index, row in enumerate(sheet.panel.rows):
         words = tuple(row[c.number] for c in labels if row[c.number].text)
         label = label_of(", ".join(box.text for box in words))
+        if label.isdigit() and labels[0].box.text:
+            label = f"{label_of(labels[0].box.text)} {label}"
         entries: list[Entry] = []
         contexts: list[str] = []
         for column in columns:
@@ -199,7 +201,7 @@ def model_claims(
             change = bool(roles & _CHANGE)
             given = (before._replace(term="reduced"),) if change and before is not None else ()
             readings = [entry.reading for entry in part.entries]
-            label = model.label or ("step" if change else "model")
+            label = model.label or sheet.title or ("step" if change else "model")
             claims.append(
                 claim(
                     sheet,
@@ -207,6 +209,7 @@ def model_claims(
                     label,
                     readings,
                     part.boxes,
+                    row=model.label,
                     contexts=part.contexts,
                     given=given,
                 )

@@ -43,7 +43,7 @@ def key_values(sheet: Sheet) -> Found | None:
         return _apart(sheet, entries, boxes, contexts, read)
     if not {entry.role for entry in entries} & _MORE:
         return None
-    model = Model(sheet.title or "model", tuple(entries), tuple(boxes), tuple(contexts))
+    model = Model("", tuple(entries), tuple(boxes), tuple(contexts))
     claims = model_claims(sheet, [model])
     return Found(tuple(claims), frozenset(read)) if claims else None
 
@@ -58,10 +58,7 @@ def _apart(
     """Keep a robust F apart from R², which says nothing of it."""
     test = tuple(entry for entry in entries if entry.role in {"F", "df1", "df2", "p"})
     rest = tuple(entry for entry in entries if entry not in test)
-    models = [
-        Model("F", test, tuple(boxes), tuple(contexts)),
-        Model("model", rest, tuple(boxes), tuple(contexts)),
-    ]
+    models = [Model("", part, tuple(boxes), tuple(contexts)) for part in (test, rest)]
     claims = model_claims(sheet, models, with_coefficients=True)
     return Found(tuple(claims), frozenset(read)) if claims else None
 

@@ -13,6 +13,8 @@ from crossfoot.reading.tables.grid import Box, Panel
 from crossfoot.reading.tables.headings import Heading
 from crossfoot.reading.tables.legend import Legend
 
+#: The term of a p that marks of significance stand for.
+MARKS = "stars"
 #: Longest text of a claim.
 _LONGEST = 300
 _COUNTS = frozenset({"df", "df1", "df2"})
@@ -109,7 +111,7 @@ def _moved(number: Number, by: int) -> Number:
 
 
 def marked(
-    sheet: Sheet, content: Content, term: str | None = None, *, beside_p: bool = False
+    sheet: Sheet, content: Content, *, beside_p: bool = False
 ) -> tuple[Reading | None, bool]:
     """Return what a cell's significance marks say of p, and whether by the default legend.
 
@@ -117,30 +119,27 @@ def marked(
     ----------
     sheet, content
         The panel and the content of the cell.
-    term
-        The row, where the claim is about several.
     beside_p
-        Whether p itself is printed, so that the marks are a second reading of it.
+        Whether p itself is printed, so that marks without a legend say nothing more.
     """
     if content.marks is None:
         return None, False
     mark, start, end = content.marks
-    term = stars_term(term) if beside_p else term
     marks = sheet.legend.marks
     if mark in marks:
         found = marks[mark]
         low, high = legend.band(mark, marks)
-        return Reading("p", "<", found.literal, low, high, Span(start, end), term), False
+        return Reading("p", "<", found.literal, low, high, Span(start, end), MARKS), False
     if marks or mark not in legend.DEFAULT or beside_p:
         return None, False
     value = legend.DEFAULT[mark]
     literal = f"{value:g}"
-    return Reading("p", "<", literal, float("-inf"), value, Span(start, end), term), True
+    return Reading("p", "<", literal, float("-inf"), value, Span(start, end), MARKS), True
 
 
-def stars_term(term: str | None) -> str:
-    """Return the term of the reading that marks make of a p printed beside them."""
-    return "stars" if term is None else f"{term}: stars"
+def marks_term(term: str | None) -> str:
+    """Return the term of the reading that marks make of p in a row of several."""
+    return MARKS if term is None else f"{term}: {MARKS}"
 
 
 def claim(
@@ -150,6 +149,7 @@ def claim(
     readings: Iterable[Reading],
     boxes: Sequence[Box],
     *,
+    row: str = "",
     contexts: Iterable[str] = (),
     given: Sequence[Reading] = (),
 ) -> Claim:
@@ -159,7 +159,7 @@ def claim(
     ----------
     sheet
         The panel.
-    kind, label, given
+    kind, label, row, given
         As in the claim.
     readings
         Each quantity of a term once: what comes first stays.
@@ -191,6 +191,7 @@ def claim(
         context=tuple(sorted(found_contexts)),
         alpha=sheet.legend.alpha,
         given=tuple(given),
+        row=row,
     )
 
 

@@ -124,11 +124,18 @@ def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
             continue
         boxes = (*words, *(row[c.number] for c in columns))
         name = next((column.group for column in columns if column.group), "")
-        title = ", ".join(part for part in (label, name) if part) or test
+        title = ", ".join(part for part in (label, name) if part)
         told = {"df", "df2"} & cells.keys() or test == "z"
         given = () if told else _told_df(sheet, test)
         found = claim(
-            sheet, _KINDS[test], title, cells.values(), boxes, contexts=contexts, given=given
+            sheet,
+            _KINDS[test],
+            title or test,
+            cells.values(),
+            boxes,
+            row=title,
+            contexts=contexts,
+            given=given,
         )
         waiting.append(len(claims))
         claims.append(found)
@@ -197,7 +204,7 @@ def _read(
             cells.setdefault(found.quantity, found)
     mark, default = marked(sheet, content, beside_p=has_p)
     if mark is not None and roles[:1] in {(test,), ("p",)}:
-        cells.setdefault("p" if mark.term is None else "stars", mark)
+        cells.setdefault("stars", mark)
         contexts += ["default-stars"] if default else []
     contexts += column.heading.contexts
 

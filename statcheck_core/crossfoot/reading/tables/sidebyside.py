@@ -222,16 +222,14 @@ def _claim(
         return None
     readings: list[Reading] = [first]
     mark, default = marked(sheet, estimate.content)
-    more = _enclosed(sheet, estimate, kind, quantity)
-    readings += more
-    has_p = any(found.quantity == "p" for found in more)
+    readings += _enclosed(sheet, estimate, kind, quantity)
     if mark is not None and kind != "se?":
-        readings.append(mark._replace(term="stars") if has_p else mark)
+        readings.append(mark)
     if len(readings) < 2:
         return None
     label = ", ".join(part for part in (estimate.label, name) if part)
     context = ["default-stars"] if default else []
-    return claim(sheet, "coefficient", label, readings, estimate.boxes, contexts=context)
+    return claim(sheet, "coefficient", label, readings, estimate.boxes, row=label, contexts=context)
 
 
 def _enclosed(sheet: Sheet, estimate: Estimate, kind: str | None, quantity: str) -> list[Reading]:
