@@ -11,14 +11,16 @@ from pygls.uris import from_fs_path
 
 from crossfoot.batch.files import read_bytes
 from crossfoot.batch.walk import find
-from crossfoot.documents import FORMATS, open_document
-from crossfoot.model import Report
+from crossfoot.documents import FORMATS, open_document, unreadable
+from crossfoot.documents.decoding import decode
+from crossfoot.model import Document, Problem, Report
 from crossfoot.patterns import Rules
 from crossfoot.scan import scan_document
 from crossfoot.settings import Settings
-from crossfoot_lsp.languages import format_of, is_text
+from crossfoot_lsp.languages import NOTEBOOK, format_of, is_text
 from crossfoot_lsp.lookup import claim_span
 from crossfoot_lsp.marks import diagnostics_of
+from crossfoot_lsp.notebooks import NotebookText
 from crossfoot_lsp.snapshot import Part, Snapshot
 from crossfoot_lsp.text import Text
 from crossfoot_lsp.words import claim_name
@@ -33,8 +35,8 @@ class Entry(NamedTuple):
         Tells whether it has changed since.
     number
         Tells this reading of it from every other.
-    uri
-        Its name.
+    path, uri
+        Where it lies, and its name.
     marks
         Its diagnostics, of every severity.
     symbols
@@ -43,6 +45,7 @@ class Entry(NamedTuple):
 
     stamp: tuple[object, ...]
     number: str
+    path: str
     uri: str
     marks: tuple[tuple[str, types.Diagnostic], ...]
     symbols: tuple[tuple[str, types.Range], ...]
@@ -78,14 +81,16 @@ class ClosedFiles:
             return known
         self._known.pop(path, None)
         language = format_of("", path, settings.language)
-        if stamp is None or not is_text(language):
+        if stamp is None or not (is_text(language) or language == NOTEBOOK):
             return None
         data = read_bytes(path, settings.max_bytes)
         if isinstance(data, str):
             return None
         document = open_document(path, data, language)
+        if unreadable(document) is not None:
+            return None
         uri = from_fs_path(path) or path
-        part = Part(uri, None, Text(document.text, encoding))
+        part = Part(uri, None, _text(document, data, encoding))
         snapshot = Snapshot(uri, path, language, [part], settings)
         try:
             report = scan_document(document, settings)
@@ -94,12 +99,22 @@ class ClosedFiles:
         entry = Entry(
             stamp,
             f"file-{snapshot.number}",
+            path,
             uri,
             tuple(_marks(snapshot, part, report, related)),
             tuple((claim_name(p), part.range(claim_span(p))) for p in report.claims),
         )
         self._known[path] = entry
         return entry
+
+
+def _text(document: Document, data: bytes, encoding: str) -> Text:
+    """Return the text of a document, with ranges as an editor has them that opens its file."""
+    if document.language == NOTEBOOK:
+        decoded = decode(data)
+        file = "" if isinstance(decoded, Problem) else decoded.text
+        return NotebookText(document.text, Text(file, encoding))
+    return Text(document.text, encoding)
 
 
 def _marks(
