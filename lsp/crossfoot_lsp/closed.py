@@ -17,6 +17,7 @@ from crossfoot.model import Document, Problem, Report
 from crossfoot.patterns import Rules
 from crossfoot.scan import scan_document
 from crossfoot.settings import Settings
+from crossfoot_lsp.client import Manner
 from crossfoot_lsp.languages import NOTEBOOK, format_of, is_text
 from crossfoot_lsp.lookup import claim_span
 from crossfoot_lsp.marks import diagnostics_of
@@ -73,9 +74,9 @@ class ClosedFiles:
             del self._known[path]
         return found
 
-    def read(self, path: str, settings: Settings, encoding: str, related: bool) -> Entry | None:
+    def read(self, path: str, settings: Settings, encoding: str, manner: Manner) -> Entry | None:
         """Return what a file holds; None where it can't be read, or not shown as text."""
-        stamp = _stamp(path, settings, encoding, related)
+        stamp = _stamp(path, settings, encoding, manner)
         known = self._known.get(path)
         if known is not None and known.stamp == stamp:
             return known
@@ -101,7 +102,7 @@ class ClosedFiles:
             f"file-{snapshot.number}",
             path,
             uri,
-            tuple(_marks(snapshot, part, report, related)),
+            tuple(_marks(snapshot, part, report, manner)),
             tuple((claim_name(p), part.range(claim_span(p))) for p in report.claims),
         )
         self._known[path] = entry
@@ -118,19 +119,19 @@ def _text(document: Document, data: bytes, encoding: str) -> Text:
 
 
 def _marks(
-    snapshot: Snapshot, part: Part, report: Report, related: bool
+    snapshot: Snapshot, part: Part, report: Report, manner: Manner
 ) -> Iterable[tuple[str, types.Diagnostic]]:
     for severity in ("reversal", "conflict", "doubt", "note"):
-        for mark in diagnostics_of(snapshot, part, report, frozenset({severity}), related):
+        for mark in diagnostics_of(snapshot, part, report, frozenset({severity}), manner):
             if mark.code != "remark" or severity == "doubt":  # those are in each of the lists
                 yield severity, mark
 
 
 def _stamp(
-    path: str, settings: Settings, encoding: str, related: bool
+    path: str, settings: Settings, encoding: str, manner: Manner
 ) -> tuple[object, ...] | None:
     try:
         status = os.stat(path)
     except OSError:
         return None
-    return (status.st_mtime_ns, status.st_size, status.st_ino, settings, encoding, related)
+    return (status.st_mtime_ns, status.st_size, status.st_ino, settings, encoding, manner)

@@ -55,7 +55,7 @@ class Workspace:
                     path,
                     server.configuration.settings(path),
                     server.client.encoding,
-                    server.client.related,
+                    server.client.manner,
                 )
                 if entry is not None and not server.store.is_open(path):
                     yield entry
