@@ -8,6 +8,21 @@ from typing import Any, NamedTuple
 from crossfoot_lsp.columns import ENCODINGS, UTF16
 
 
+class Manner(NamedTuple):
+    """How an editor shows a diagnostic.
+
+    Attributes
+    ----------
+    related
+        With the places that it refers to.
+    linked
+        With a link to what its code means.
+    """
+
+    related: bool = False
+    linked: bool = False
+
+
 class Client(NamedTuple):
     """An editor's abilities.
 
@@ -17,8 +32,8 @@ class Client(NamedTuple):
         What it counts columns in.
     pulls
         It asks for diagnostics, so that none are pushed.
-    related
-        It shows places that a diagnostic refers to.
+    manner
+        How it shows a diagnostic.
     markdown
         It shows Markdown in hovers; :attr:`documentation` the same of completions.
     hierarchy
@@ -41,7 +56,7 @@ class Client(NamedTuple):
 
     encoding: str = UTF16
     pulls: bool = False
-    related: bool = False
+    manner: Manner = Manner()
     markdown: bool = False
     documentation: bool = False
     hierarchy: bool = False
@@ -80,7 +95,10 @@ def client_of(params: Mapping[str, Any]) -> Client:
     return Client(
         encoding=_encoding(value("general.positionEncodings")),
         pulls=isinstance(value("textDocument.diagnostic"), Mapping),
-        related=value("textDocument.publishDiagnostics.relatedInformation") is True,
+        manner=Manner(
+            related=value("textDocument.publishDiagnostics.relatedInformation") is True,
+            linked=value("textDocument.publishDiagnostics.codeDescriptionSupport") is True,
+        ),
         markdown=lists("textDocument.hover.contentFormat", "markdown"),
         documentation=lists(
             "textDocument.completion.completionItem.documentationFormat", "markdown"

@@ -11,14 +11,17 @@ from pygls.uris import from_fs_path
 
 from crossfoot.batch.files import read_bytes
 from crossfoot.batch.walk import find
-from crossfoot.documents import FORMATS, open_document
-from crossfoot.model import Report
+from crossfoot.documents import FORMATS, open_document, unreadable
+from crossfoot.documents.decoding import decode
+from crossfoot.model import Document, Problem, Report
 from crossfoot.patterns import Rules
 from crossfoot.scan import scan_document
 from crossfoot.settings import Settings
-from crossfoot_lsp.languages import format_of, is_text
+from crossfoot_lsp.client import Manner
+from crossfoot_lsp.languages import NOTEBOOK, format_of, is_text
 from crossfoot_lsp.lookup import claim_span
 from crossfoot_lsp.marks import diagnostics_of
+from crossfoot_lsp.notebooks import NotebookText
 from crossfoot_lsp.snapshot import Part, Snapshot
 from crossfoot_lsp.text import Text
 from crossfoot_lsp.words import claim_name
@@ -33,8 +36,8 @@ class Entry(NamedTuple):
         Tells whether it has changed since.
     number
         Tells this reading of it from every other.
-    uri
-        Its name.
+    path, uri
+        Where it lies, and its name.
     marks
         Its diagnostics, of every severity.
     symbols
@@ -43,6 +46,7 @@ class Entry(NamedTuple):
 
     stamp: tuple[object, ...]
     number: str
+    path: str
     uri: str
     marks: tuple[tuple[str, types.Diagnostic], ...]
     symbols: tuple[tuple[str, types.Range], ...]
@@ -70,22 +74,24 @@ class ClosedFiles:
             del self._known[path]
         return found
 
-    def read(self, path: str, settings: Settings, encoding: str, related: bool) -> Entry | None:
+    def read(self, path: str, settings: Settings, encoding: str, manner: Manner) -> Entry | None:
         """Return what a file holds; None where it can't be read, or not shown as text."""
-        stamp = _stamp(path, settings, encoding, related)
+        stamp = _stamp(path, settings, encoding, manner)
         known = self._known.get(path)
         if known is not None and known.stamp == stamp:
             return known
         self._known.pop(path, None)
         language = format_of("", path, settings.language)
-        if stamp is None or not is_text(language):
+        if stamp is None or not (is_text(language) or language == NOTEBOOK):
             return None
         data = read_bytes(path, settings.max_bytes)
         if isinstance(data, str):
             return None
         document = open_document(path, data, language)
+        if unreadable(document) is not None:
+            return None
         uri = from_fs_path(path) or path
-        part = Part(uri, None, Text(document.text, encoding))
+        part = Part(uri, None, _text(document, data, encoding))
         snapshot = Snapshot(uri, path, language, [part], settings)
         try:
             report = scan_document(document, settings)
@@ -94,28 +100,38 @@ class ClosedFiles:
         entry = Entry(
             stamp,
             f"file-{snapshot.number}",
+            path,
             uri,
-            tuple(_marks(snapshot, part, report, related)),
+            tuple(_marks(snapshot, part, report, manner)),
             tuple((claim_name(p), part.range(claim_span(p))) for p in report.claims),
         )
         self._known[path] = entry
         return entry
 
 
+def _text(document: Document, data: bytes, encoding: str) -> Text:
+    """Return the text of a document, with ranges as an editor has them that opens its file."""
+    if document.language == NOTEBOOK:
+        decoded = decode(data)
+        file = "" if isinstance(decoded, Problem) else decoded.text
+        return NotebookText(document.text, Text(file, encoding))
+    return Text(document.text, encoding)
+
+
 def _marks(
-    snapshot: Snapshot, part: Part, report: Report, related: bool
+    snapshot: Snapshot, part: Part, report: Report, manner: Manner
 ) -> Iterable[tuple[str, types.Diagnostic]]:
     for severity in ("reversal", "conflict", "doubt", "note"):
-        for mark in diagnostics_of(snapshot, part, report, frozenset({severity}), related):
+        for mark in diagnostics_of(snapshot, part, report, frozenset({severity}), manner):
             if mark.code != "remark" or severity == "doubt":  # those are in each of the lists
                 yield severity, mark
 
 
 def _stamp(
-    path: str, settings: Settings, encoding: str, related: bool
+    path: str, settings: Settings, encoding: str, manner: Manner
 ) -> tuple[object, ...] | None:
     try:
         status = os.stat(path)
     except OSError:
         return None
-    return (status.st_mtime_ns, status.st_size, status.st_ino, settings, encoding, related)
+    return (status.st_mtime_ns, status.st_size, status.st_ino, settings, encoding, manner)

@@ -6,6 +6,9 @@ from collections.abc import Mapping
 
 from crossfoot.documents import FORMATS, language_of
 
+#: The format of notebooks, which an editor sends as their cells.
+NOTEBOOK = "notebook"
+
 #: The editors' names of languages, beside those that the formats have themselves.
 LANGUAGE_IDS: Mapping[str, str] = {
     "quarto": "markdown",
@@ -45,7 +48,7 @@ def format_of(language_id: str, path: str, told: str | None = None) -> str:
     name = language_id.lower()
     if told is not None:
         return told
-    if name in FORMATS and name not in ("plain", "notebook"):
+    if name in FORMATS and name not in ("plain", NOTEBOOK):
         return name
     found = LANGUAGE_IDS.get(name, "plain")
     # An editor calls plain text what it does not know; then the file's name says more.

@@ -11,6 +11,7 @@ from lsprotocol import types
 
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Audited, Finding, Placed, Report
+from crossfoot_lsp.client import Manner
 from crossfoot_lsp.lookup import all_readings, span_of
 from crossfoot_lsp.raw import Raw
 from crossfoot_lsp.snapshot import Part, Snapshot
@@ -30,7 +31,7 @@ REMARK = "remark"
 
 
 def diagnostics_of(
-    snapshot: Snapshot, part: Part, report: Report, shown: frozenset[str], related: bool
+    snapshot: Snapshot, part: Part, report: Report, shown: frozenset[str], manner: Manner
 ) -> list[types.Diagnostic]:
     """Return what is to be shown in one text.
 
@@ -42,13 +43,13 @@ def diagnostics_of(
         The report on it.
     shown
         The severities to show.
-    related
-        Whether the editor shows places that a diagnostic refers to.
+    manner
+        How the editor shows them.
     """
     marks = []
     for placed in report.claims:
         for finding in _visible(part, placed, shown):
-            marks.append(_mark(snapshot, part, placed, finding, related))
+            marks.append(_mark(snapshot, part, placed, finding, manner))
     return [*marks, *_remarks(part, report)]
 
 
@@ -79,16 +80,24 @@ def _remarks(part: Part, report: Report) -> list[types.Diagnostic]:
 
 
 def _mark(
-    snapshot: Snapshot, part: Part, placed: Placed, finding: Finding, related: bool
+    snapshot: Snapshot, part: Part, placed: Placed, finding: Finding, manner: Manner
 ) -> types.Diagnostic:
     return types.Diagnostic(
         part.range(span_of(placed, finding.reading)),
         finding.message,
         SEVERITIES[finding.severity],
         code=finding.identity,
+        code_description=_described(finding.identity) if manner.linked else None,
         source=SOURCE,
-        related_information=_related(snapshot, placed, finding) if related else None,
+        related_information=_related(snapshot, placed, finding) if manner.related else None,
     )
+
+
+def _described(slug: str) -> types.CodeDescription | None:
+    from crossfoot_lsp.reference import link  # it needs all identities; most texts agree
+
+    address = link(slug)
+    return None if address is None else types.CodeDescription(address)
 
 
 def _related(
@@ -149,7 +158,7 @@ class Marker:
         self._known.pop(uri, None)
 
     def written(
-        self, snapshot: Snapshot, part: Part, report: Report, shown: frozenset[str], related: bool
+        self, snapshot: Snapshot, part: Part, report: Report, shown: frozenset[str], manner: Manner
     ) -> Raw:
         """Return the same as :func:`diagnostics_of`, as JSON."""
         before, old = self._known.get(part.uri, (shown, {}))
@@ -165,7 +174,7 @@ class Marker:
             known = old.get(id(audited))
             if known is None or known.audited is not audited or known.column != column:
                 findings = _visible(part, placed, shown)
-                marks = [_mark(snapshot, part, placed, f, related) for f in findings]
+                marks = [_mark(snapshot, part, placed, f, manner) for f in findings]
                 known = _Written(audited, column, self._pieces(marks, line))
                 if any(finding.elsewhere for finding in findings):
                     items.append(_joined(known.pieces, line))

@@ -15,8 +15,10 @@ from typing import NamedTuple
 from lsprotocol import types
 
 from crossfoot.documents import FORMATS, split
+from crossfoot.documents.newlines import feeds_only
 from crossfoot.model import Block, Document, Report, Span
 from crossfoot.settings import Settings
+from crossfoot_lsp.languages import NOTEBOOK
 from crossfoot_lsp.text import Text
 
 #: Between the cells of a notebook.
@@ -118,7 +120,7 @@ class Snapshot:
     @cached_property
     def document(self) -> Document:
         """The document that is read; without blocks if it is excluded."""
-        if self.language == "notebook" and not self.excluded:
+        if self.language == NOTEBOOK and not self.excluded:
             return _notebook(self.path, self.parts)
         text = self.parts[0].text.content
         if self.excluded:
@@ -129,7 +131,7 @@ class Snapshot:
             self.language,
             text,
             split(self.language, text),
-            definitions=reader.define(text),
+            definitions=reader.define(feeds_only(text)),
         )
 
     def read(self, cold: bool) -> Report | None:
@@ -180,13 +182,13 @@ def _notebook(path: str, parts: Sequence[Part]) -> Document:
         content = part.text.content
         if part.code:
             if content.strip():
-                blocks.append(Block("verbatim", part.start, content))
+                blocks.append(Block("code", part.start, content))
             continue
         blocks += [
             block._replace(start=part.start + block.start) for block in split("markdown", content)
         ]
     text = _GAP.join(part.text.content for part in parts)
-    return Document(path, "notebook", text, tuple(blocks), tuple(part.start for part in parts))
+    return Document(path, NOTEBOOK, text, tuple(blocks), tuple(part.start for part in parts))
 
 
 def in_a_row(parts: Sequence[Part]) -> list[Part]:

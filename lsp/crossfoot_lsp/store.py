@@ -13,7 +13,7 @@ from lsprotocol import types
 
 from crossfoot.model import Report
 from crossfoot_lsp.configuration import Configuration
-from crossfoot_lsp.languages import format_of, is_text
+from crossfoot_lsp.languages import NOTEBOOK, format_of, is_text
 from crossfoot_lsp.names import path_of
 from crossfoot_lsp.snapshot import Part, Snapshot, in_a_row
 from crossfoot_lsp.text import Text
@@ -112,6 +112,11 @@ class Store:
         """Return what lies open under a name: a text, a notebook, or that of a cell."""
         return self._entries.get(self._owners.get(uri, uri))
 
+    def open_text(self, uri: str) -> Part | None:
+        """Return the text that lies open under a name: a document, or a cell of a notebook."""
+        entry = self.entry(uri)
+        return None if entry is None else entry.snapshot.part(uri)
+
     def is_open(self, path: str) -> bool:
         """Say whether a file lies open."""
         return any(entry.snapshot.path == path for entry in self._entries.values())
@@ -141,8 +146,7 @@ class Store:
         changes: Sequence[types.TextDocumentContentChangeEvent],
     ) -> None:
         """Take in edits, each to the text that the one before it left."""
-        entry = self.entry(document.uri)
-        part = entry.snapshot.part(document.uri) if entry else None
+        entry, part = self.entry(document.uri), self.open_text(document.uri)
         if entry is None or part is None:
             return
         text = part.text
@@ -166,7 +170,7 @@ class Store:
         self, notebook: types.NotebookDocument, cells: Sequence[types.TextDocumentItem]
     ) -> None:
         """Take in a notebook with its cells, in the notebook's order."""
-        self._put(notebook.uri, "notebook", _cells(notebook.cells, cells, self._encoding))
+        self._put(notebook.uri, NOTEBOOK, _cells(notebook.cells, cells, self._encoding))
         self._own(notebook.uri)
 
     def change_notebook(
@@ -234,8 +238,8 @@ class Store:
         path = path_of(uri) or uri
         settings = self._configuration.settings(path)
         excluded = self._configuration.excludes(path)
-        if language_id == "notebook":
-            return Snapshot(uri, path, "notebook", in_a_row(parts), settings, excluded)
+        if language_id == NOTEBOOK:
+            return Snapshot(uri, path, NOTEBOOK, in_a_row(parts), settings, excluded)
         language = format_of(language_id, path, settings.language)
         excluded = excluded or not is_text(language)
         return Snapshot(uri, path, language, parts, settings, excluded)

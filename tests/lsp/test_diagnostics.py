@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 import asyncio
+from pathlib import Path
 
 import pytest
 from lsprotocol import types
+from pygls.uris import to_fs_path
 
 from serving.editor import Editor, pushing, ranges, session
 
@@ -27,6 +29,20 @@ async def test_a_finding_stands_at_its_number_with_the_others_as_related_places(
     assert found.message.startswith("p is printed as .052, but F(2, 57) = 4.31 gives p")
     assert [related.location.range for related in found.related_information] == marks[:3]
     assert found.related_information[2].message == "F = 4.31"
+
+
+async def test_the_name_of_an_identity_leads_to_what_is_said_about_it(editor: Editor) -> None:
+    [found] = (await editor.diagnostics_of(editor.open("So t(40) = 2.20, p = .533."))).items
+    address, _, line = found.code_description.href.partition("#L")
+    file = Path(to_fs_path(address) or "")
+    assert file.read_text(encoding="utf-8").split("\n")[int(line) - 1] == "## p-from-t: p from t"
+
+
+async def test_without_a_place_to_keep_the_page_there_is_no_link(tmp_path: Path) -> None:
+    (tmp_path / "file").touch()
+    async with session(environment={"XDG_CACHE_HOME": str(tmp_path / "file")}) as editor:
+        [found] = (await editor.diagnostics_of(editor.open("So t(40) = 2.20, p = .533."))).items
+        assert found.code_description is None
 
 
 @pytest.mark.parametrize(

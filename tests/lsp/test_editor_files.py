@@ -8,11 +8,14 @@ import tomllib
 
 import pytest
 
+from crossfoot.laws import IDENTITIES
+from crossfoot.scan import scan_text
 from crossfoot.settings import SETTINGS
 from crossfoot_lsp.capabilities import COMMANDS, capabilities
 from crossfoot_lsp.client import Client, client_of
 from crossfoot_lsp.configuration import SHARED, EditorSettings, understood
 from crossfoot_lsp.languages import LANGUAGE_IDS, format_of, is_text
+from crossfoot_lsp.reference import page
 from serving.editor import ROOT
 
 EDITORS = ROOT / "lsp" / "editors"
@@ -104,3 +107,13 @@ def test_an_editor_that_declares_nothing_is_taken_to_be_simple() -> None:
 def test_settings_that_are_no_settings_are_nothing() -> None:
     for odd in (None, 3, [], "x"):
         assert understood(odd) == understood({})
+
+
+def test_the_page_about_identities_tells_of_each_and_nothing_wrong_is_found_in_it() -> None:
+    text, lines = page(IDENTITIES.values())
+    assert list(lines) == list(IDENTITIES)
+    for slug, identity in IDENTITIES.items():
+        part = text[text.index(f"## {slug}: ") :]
+        for words in (identity.formula, identity.explanation, identity.assumption, identity.source):
+            assert words in part
+    assert not any(placed.audited.findings for placed in scan_text(text).claims)

@@ -41,7 +41,7 @@ async def test_each_cell_has_its_own_findings(editor: Editor) -> None:
         "own.ipynb",
         (WORDS, "# Results\n\nSo F(2, 57) = 4.31, p = .052."),
         (WORDS, "So t(40) = 2.20, p = .533."),
-        (CODE, "p = 0.052"),
+        (CODE, "# So F(2, 57) = 4.31, p = .052."),
     )
     report = await editor.diagnostics_of(first)
     assert report.items[0].range.start == types.Position(2, 24)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import asyncio
+import json
 from pathlib import Path
 
 import pytest
@@ -57,6 +58,53 @@ async def test_files_that_are_not_open_are_reported_too(folder: Path) -> None:
         assert report.version is None
         [mark] = report.items
         assert (mark.code, mark.range.start) == ("p-from-f", types.Position(2, 24))
+
+
+async def test_a_notebook_is_reported_at_places_in_its_file(folder: Path) -> None:
+    file = folder / "draft.ipynb"
+    lines = ['# Results 🌿 "of all"\r\n', "\n", f"{WRONG} So"]
+    printed = "\x1b[31mé\x1b[0m t(40) = 2.20, p = .533"
+    output = {"output_type": "stream", "text": [printed]}
+    cells = [
+        {"cell_type": "markdown", "source": lines},
+        {"cell_type": "code", "source": f"# {WRONG}", "outputs": [output]},
+    ]
+    content = {"metadata": {"source": "no cell"}, "cells": cells}
+    for form in ({}, {"indent": 1}, {"indent": 2, "ensure_ascii": False}):
+        file.write_text(json.dumps(content, **form))  # type: ignore[arg-type]  # of several types
+        async with session(pulling("utf-32"), folders=[folder]) as editor:
+            report = (await ask(editor))[uri_of(file)]
+            assert isinstance(report, types.WorkspaceFullDocumentDiagnosticReport)
+            marked = file.read_text().split("\n")
+            assert [
+                marked[item.range.start.line][item.range.start.character : item.range.end.character]
+                for item in report.items
+            ] == [".052", ".533"]
+            assert [item.range.start.line == item.range.end.line for item in report.items]
+            # Once it is open, its cells are asked about by themselves.
+            cell = types.NotebookCell(types.NotebookCellKind.Markup, "cell:0")
+            notebook = types.NotebookDocument(uri_of(file), "jupyter-notebook", 1, [cell])
+            text = types.TextDocumentItem("cell:0", "markdown", 1, "".join(lines))
+            editor.notebook_document_did_open(types.DidOpenNotebookDocumentParams(notebook, [text]))
+            again = (await ask(editor, {uri_of(file): report.result_id or ""}))[uri_of(file)]
+            assert isinstance(again, types.WorkspaceFullDocumentDiagnosticReport)
+            assert again.items == ()
+            [found] = (await editor.diagnostics_of("cell:0")).items
+            assert (found.code, found.range.start) == ("p-from-f", types.Position(2, 24))
+
+
+async def test_each_folder_shows_what_is_set_for_it(folder: Path) -> None:
+    for name in ("strict", "quiet"):
+        (folder / name).mkdir()
+        (folder / name / "note.md").write_text("So t(40) = 9.20, p = .000.")
+    roots = [folder / "strict", folder / "quiet"]
+    async with session(folders=roots) as editor:
+        settings = {"crossfoot": {"show": "conflict"}}
+        editor.set_configuration(settings, scope_uri=uri_of(roots[1]))
+        editor.workspace_did_change_configuration(types.DidChangeConfigurationParams(None))
+        while uri_of(roots[1] / "note.md") in (found := await ask(editor)):
+            pass  # until the editor has been asked
+        assert uri_of(roots[0] / "note.md") in found
 
 
 async def test_only_what_has_changed_is_reported_again(folder: Path) -> None:

@@ -11,6 +11,7 @@ import asyncio
 import itertools
 import os
 import sys
+import tempfile
 from collections.abc import AsyncIterator, Mapping, Sequence
 from contextlib import asynccontextmanager
 from pathlib import Path
@@ -30,6 +31,7 @@ ENVIRONMENT = {
     "PYTHONPATH": os.pathsep.join(
         [str(ROOT / "statcheck_core"), str(ROOT / "lsp"), os.environ.get("PYTHONPATH", "")]
     ),
+    "XDG_CACHE_HOME": str(Path(tempfile.gettempdir()) / "crossfoot-tests"),
 }
 #: Seconds within which anything must have happened.
 PATIENCE = 120.0
@@ -253,7 +255,7 @@ def pulling(encoding: str = "utf-16", **changes: Any) -> types.ClientCapabilitie
         text_document=types.TextDocumentClientCapabilities(
             diagnostic=types.DiagnosticClientCapabilities(),
             publish_diagnostics=types.PublishDiagnosticsClientCapabilities(
-                related_information=True, version_support=True
+                related_information=True, version_support=True, code_description_support=True
             ),
             hover=types.HoverClientCapabilities(content_format=markdown),
             document_symbol=types.DocumentSymbolClientCapabilities(
@@ -297,11 +299,12 @@ async def session(
     folders: Sequence[Path] = (),
     settings: Mapping[str, Any] | None = None,
     options: Any = None,
+    environment: Mapping[str, str] | None = None,
 ) -> AsyncIterator[Editor]:
     """Run a server and an editor that talks to it, from the first message to the last."""
     editor = Editor(settings)
     _register(editor)
-    await editor.start_io(*COMMAND, env=ENVIRONMENT)
+    await editor.start_io(*COMMAND, env={**ENVIRONMENT, **(environment or {})})
     workspace = [
         types.WorkspaceFolder(from_fs_path(str(folder)) or "", folder.name) for folder in folders
     ]

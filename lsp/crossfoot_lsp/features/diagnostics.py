@@ -41,9 +41,7 @@ async def answer(server: Server, params: types.DocumentDiagnosticParams) -> Raw:
 def marks(server: Server, view: View) -> Raw:
     """Return what is to be shown in a text, as JSON."""
     shown = server.configuration.editor(view.snapshot.path).shown
-    return server.marker.written(
-        view.snapshot, view.part, view.report, shown, server.client.related
-    )
+    return server.marker.written(view.snapshot, view.part, view.report, shown, server.client.manner)
 
 
 class Told:

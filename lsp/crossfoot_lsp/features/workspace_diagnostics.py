@@ -55,14 +55,14 @@ class Workspace:
                     path,
                     server.configuration.settings(path),
                     server.client.encoding,
-                    server.client.related,
+                    server.client.manner,
                 )
                 if entry is not None and not server.store.is_open(path):
                     yield entry
 
-    def shown(self, entry: Entry, path: str) -> list[types.Diagnostic]:
+    def shown(self, entry: Entry) -> list[types.Diagnostic]:
         """Return the diagnostics of a file that are to be shown."""
-        shown = self._server.configuration.editor(path).shown
+        shown = self._server.configuration.editor(entry.path).shown
         return [mark for severity, mark in entry.marks if severity in shown]
 
 
@@ -137,14 +137,15 @@ async def _reports(
             value = types.WorkspaceDiagnosticReportPartialResult([report])
             server.progress(types.ProgressParams(partial, value))
     for uri in told:
-        if server.store.entry(uri) is None:
+        # An open text is asked about by itself, an open notebook by its cells.
+        if server.store.open_text(uri) is None:
             yield types.WorkspaceFullDocumentDiagnosticReport(uri=uri, items=[])
 
 
 def _report(
     workspace: Workspace, entry: Entry, told: str | None
 ) -> types.WorkspaceDocumentDiagnosticReport | None:
-    marks = workspace.shown(entry, "")
+    marks = workspace.shown(entry)
     number = f"{entry.number}-{len(marks)}"
     if told == number:
         return types.WorkspaceUnchangedDocumentDiagnosticReport(uri=entry.uri, result_id=number)
@@ -171,7 +172,7 @@ async def scan_all(server: Server) -> int:
     async for entry in workspace.entries(token):
         count += 1
         if not server.client.pulls:
-            marks = workspace.shown(entry, "")
+            marks = workspace.shown(entry)
             server.send_diagnostics(entry.uri, server.marker.plain(marks), None)
     workspace.news.set()
     if server.client.pulls and server.client.refreshes_diagnostics:

@@ -64,12 +64,16 @@
 (declare-function eglot-current-server "ext:eglot")
 (declare-function eglot-execute-command "ext:eglot")
 (declare-function eglot--path-to-uri "ext:eglot")
+(declare-function lsp-workspace-command-execute "ext:lsp-mode")
+(declare-function lsp--buffer-uri "ext:lsp-mode")
 
 (defun crossfoot-summary ()
   "Show how many results of this document agree, and what disagrees."
   (interactive)
-  (eglot-execute-command (eglot-current-server) 'crossfoot.summary
-                         (vector (eglot--path-to-uri buffer-file-name))))
+  (if (bound-and-true-p lsp-mode)
+      (lsp-workspace-command-execute "crossfoot.summary" (vector (lsp--buffer-uri)))
+    (eglot-execute-command (eglot-current-server) 'crossfoot.summary
+                           (vector (eglot--path-to-uri buffer-file-name)))))
 
 (provide 'crossfoot)
 ;;; crossfoot.el ends here

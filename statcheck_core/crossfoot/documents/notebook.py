@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from typing import NamedTuple
 
 from crossfoot.documents import markdown
+from crossfoot.documents.captions import together
 from crossfoot.documents.decoding import decode
 from crossfoot.documents.format import Extracted, Reader
 from crossfoot.documents.newlines import feeds_only
@@ -15,17 +16,36 @@ from crossfoot.expressions import expression
 from crossfoot.model import Block, Problem
 
 _SURROGATE = expression("[\ud800-\udfff]")
-_ESCAPE = expression(r"\x1b\[[0-9;]{0,20}[A-Za-z]")
+
+#: What colours the text that code prints.
+TERMINAL = expression(r"\x1b\[[0-9;]{0,20}[A-Za-z]")
 
 #: Most cells that are read.
 _MOST = 20_000
 
+#: Between what two parts write out.
+GAP = "\n\n"
 
-class _Part(NamedTuple):
-    """A part of a cell: ``markdown``, ``verbatim`` or ``code`` text."""
+
+class Part(NamedTuple):
+    """A part of a cell.
+
+    Attributes
+    ----------
+    kind
+        ``markdown``, ``verbatim`` or ``code``.
+    text
+        What it shows.
+    value
+        The string, or list of strings, of the notebook that the text was made from.
+    lead
+        Characters that the text has before it.
+    """
 
     kind: str
     text: str
+    value: object
+    lead: int = 0
 
 
 def extract(data: bytes) -> Extracted | Problem:
@@ -39,14 +59,14 @@ def extract(data: bytes) -> Extracted | Problem:
         return Problem(f"The notebook is not valid JSON: {error}.")
     except RecursionError:
         return Problem("The notebook is nested too deeply.")
-    cells = _cells(content)
+    cells = cells_of(content)
     if cells is None:
         return Problem("The JSON is no notebook: it has no list of cells.")
     written, blocks, pages = _write(cells)
     return Extracted(written, blocks, pages, decoded.problems)
 
 
-def _cells(content: object) -> list[object] | None:
+def cells_of(content: object) -> list[object] | None:
     """Return the cells of a notebook of format 4 or 3."""
     if not isinstance(content, dict):
         return None
@@ -65,54 +85,65 @@ def _write(cells: list[object]) -> tuple[str, tuple[Block, ...], tuple[int, ...]
     position = 0
     for cell in cells:
         pages.append(position)
-        for kind, text in _parts(cell):
+        for kind, text, _, _ in parts_of(cell):
             if kind == "markdown":
                 blocks.extend(
-                    block._replace(start=position + block.start) for block in markdown.split(text)
+                    block._replace(start=position + block.start)
+                    for block in together(markdown.split(text), text)
                 )
             elif text.strip():
                 blocks.append(Block(kind, position, text))
-            parts.append(text + "\n\n")
-            position += len(text) + 2
+            parts.append(text + GAP)
+            position += len(text) + len(GAP)
     return "".join(parts), tuple(blocks), tuple(pages)
 
 
-def _parts(cell: object) -> Iterator[_Part]:
+def parts_of(cell: object) -> Iterator[Part]:
     """Yield what a cell shows."""
     if not isinstance(cell, dict):
         return
     kind = cell.get("cell_type")
-    source = _text(cell.get("source", cell.get("input")))
+    value = cell.get("source", cell.get("input"))
+    source = _text(value)
     if kind == "code":
-        yield _Part("code", source)
+        yield Part("code", source, value)
         outputs = cell.get("outputs")
         for output in outputs if isinstance(outputs, list) else ():
             yield from _output(output)
     elif kind == "heading":  # format 3
-        yield _Part("markdown", "# " + source)
+        yield Part("markdown", "# " + source, value, 2)
     elif kind in ("markdown", "raw"):
-        yield _Part("markdown", source)
+        yield Part("markdown", source, value)
 
 
-def _output(output: object) -> Iterator[_Part]:
+def _output(output: object) -> Iterator[Part]:
     """Yield what an output shows: printed text, or the plainest form of a value."""
     if not isinstance(output, dict) or output.get("output_type") in ("error", "pyerr"):
         return
     data = output.get("data")
     forms = data if isinstance(data, dict) else output
-    if text := _text(output.get("text")) or _text(forms.get("text/plain")):
-        yield _Part("verbatim", text)
-    elif text := _text(forms.get("text/markdown")) or _text(forms.get("text/html")):
-        yield _Part("markdown", text)
+    for kind, value in (
+        ("verbatim", output.get("text")),
+        ("verbatim", forms.get("text/plain")),
+        ("markdown", forms.get("text/markdown")),
+        ("markdown", forms.get("text/html")),
+    ):
+        if text := _text(value):
+            yield Part(kind, text, value)
+            return
+
+
+def strings_of(value: object) -> Iterator[str]:
+    """Yield the strings of which a text is made: one, or those of a list."""
+    for item in value if isinstance(value, list) else (value,):
+        if isinstance(item, str):
+            yield item
 
 
 def _text(value: object) -> str:
-    """Return a string, or the lines of a list, without terminal colours."""
-    if isinstance(value, list):
-        value = "".join(line for line in value if isinstance(line, str))
-    if not isinstance(value, str):
-        return ""
-    return _SURROGATE.sub("\ufffd", _ESCAPE.sub("", feeds_only(value))).rstrip("\n")
+    """Return the text of strings, without terminal colours."""
+    text = "".join(strings_of(value))
+    return _SURROGATE.sub("\ufffd", TERMINAL.sub("", feeds_only(text))).rstrip("\n")
 
 
 READER = Reader(

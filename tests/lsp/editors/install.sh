@@ -6,7 +6,7 @@ here=$(cd "$(dirname "${BASH_SOURCE[0]}")" && pwd)
 
 apt-get update -qq
 DEBIAN_FRONTEND=noninteractive apt-get install -y -qq --no-install-recommends \
-  neovim emacs-nox elpa-eglot chromium fonts-dejavu-core
+  neovim emacs-nox elpa-eglot elpa-lsp-mode chromium fonts-dejavu-core
 command -v npm > /dev/null || apt-get install -y -qq --no-install-recommends npm
 
 # Nothing of VS Code needs to be compiled for what is tested, so no install script is run.

@@ -54,7 +54,7 @@
         (await "the new diagnostic" (lambda () (flymake-start) (flymake-diagnostics)))
         (see 'typed (flymake-diagnostic-text (car (flymake-diagnostics))))
         (crossfoot-summary)
-        (see 'imenu (caar (eglot-imenu)))
+        (see 'outline (caar (eglot-imenu)))
         (eglot-shutdown server)))
   (error (see 'problem (error-message-string problem))))
 
