@@ -7,6 +7,7 @@ from collections.abc import Sequence
 from crossfoot.audit.wording import named
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Document, Finding, Placed, Remedy, Span
+from crossfoot.output.drawing import drawn
 from crossfoot.output.excerpt import MARK, UNMARK, quotation
 from crossfoot.output.output import Look
 from crossfoot.output.safe import one_line, safe
@@ -36,8 +37,8 @@ def entry(
     slugs = ", ".join(dict.fromkeys(finding.identity for finding in findings))
     lines = [f"{head}{place}: {severity} ({slugs})"]
     beside = [own[i].span for finding in findings for i in finding.related if i < len(own)]
-    for row in quotation(document, placed, span, beside):
-        lines += [marked(line, look) for line in wrapped(row, look.width, indent)]
+    rows = quotation(document, placed, span, beside)
+    lines += [marked(line, look) for line in drawn(rows, look.width, indent)]
     for finding in findings:
         lines += wrapped(one_line(finding.message), look.width, indent)
     for remedies in dict.fromkeys(finding.remedies for finding in findings if finding.remedies):

@@ -7,12 +7,13 @@ the source, backwards; the words are never searched.
 from __future__ import annotations
 
 from bisect import bisect_right
-from collections.abc import Iterable
+from collections.abc import Callable, Iterable
 
+from crossfoot.documents.table import CELL
 from crossfoot.documents.visible import OPAQUE, Visible, verbatim
 from crossfoot.expressions import expression
 from crossfoot.model import Block, Document, Placed, Span
-from crossfoot.output.safe import one_line
+from crossfoot.output.safe import one_line, safe
 
 #: Stand before and after the reading; ``safe`` leaves none in a document's own words.
 MARK, UNMARK = "\ufdd0", "\ufdd1"
@@ -68,20 +69,21 @@ def quotation(
     """
     block, visible = _block(document, placed.base)
     shift = placed.base - block.start
+    text = visible.text
     start, end = shown(visible, Span(span.start + shift, span.end + shift))
     prose = block.kind == "prose"
-    before = _before(visible.text, start, prose)
-    after = _after(visible.text, end, prose)
-    own = f"{before}{MARK}{_clean(visible.text[start:end]).strip()}{UNMARK}{after}"
-    if prose:
-        return (_plain(own),)
-    row = visible.text.rfind("\n", 0, start) + 1
-    rows = {row: own}
-    for other in others:
+    starts = [text.rfind("\n", 0, start) + 1]
+    for other in () if prose else others:
         place, _ = shown(visible, Span(other.start + shift, other.end + shift))
-        row = visible.text.rfind("\n", 0, place) + 1
-        if row not in rows and len(rows) < _MOST_ROWS:
-            rows[row] = _after(visible.text, row, prose)
+        row = text.rfind("\n", 0, place) + 1
+        if row not in starts and len(starts) < _MOST_ROWS:
+            starts.append(row)
+    clean = _aligned if block.kind == "verbatim" and len(starts) > 1 else _clean
+    rows = {row: _after(text, row, prose, clean) for row in starts[1:]}
+    rows[starts[0]] = (
+        f"{_before(text, start, prose, clean)}{MARK}{_clean(text[start:end]).strip()}{UNMARK}"
+        f"{_after(text, end, prose, clean)}"
+    )
     return tuple(_plain(rows[row]) for row in sorted(rows))
 
 
@@ -122,7 +124,7 @@ def _show(document: Document, block: Block) -> Visible:
     return show_block(document, block) if document.language in FORMATS else verbatim(block.source)
 
 
-def _before(text: str, start: int, prose: bool) -> str:
+def _before(text: str, start: int, prose: bool, clean: Callable[[str], str]) -> str:
     """Return what to show before an index: from the start of its sentence, or of its line."""
     reach = max(0, start - _BEFORE)
     if prose:
@@ -130,13 +132,14 @@ def _before(text: str, start: int, prose: bool) -> str:
     else:
         begins = [found for found in [text.rfind("\n", reach, start) + 1] if found]
     if begins or not reach:
-        return _clean(text[begins[-1] if begins else 0 : start]).lstrip()
-    part = _clean(text[reach:start])
+        shown = clean(text[begins[-1] if begins else 0 : start])
+        return shown.lstrip() if clean is _clean else shown
+    part = clean(text[reach:start])
     head, _, rest = part.partition(" ")
     return f"… {rest if len(head) < _LONG_WORD else part}"
 
 
-def _after(text: str, end: int, prose: bool) -> str:
+def _after(text: str, end: int, prose: bool, clean: Callable[[str], str]) -> str:
     """Return what to show after an index: up to the end of its sentence, or of its line."""
     reach = min(len(text), end + _AFTER)
     if prose:
@@ -145,8 +148,8 @@ def _after(text: str, end: int, prose: bool) -> str:
     else:
         stop = text.find("\n", end, reach)
     if stop >= 0 or reach == len(text):
-        return _clean(text[end : stop if stop >= 0 else reach]).rstrip()
-    part = _clean(text[end:reach])
+        return clean(text[end : stop if stop >= 0 else reach]).rstrip()
+    part = clean(text[end:reach])
     rest, _, tail = part.rpartition(" ")
     return f"{rest if len(tail) < _LONG_WORD else part} …"
 
@@ -155,6 +158,11 @@ def _clean(text: str) -> str:
     """Return a part of the words, safe, with blanks kept at its ends."""
     body = one_line(text.replace(OPAQUE, "…"))
     return " " * text[:1].isspace() + body + " " * (text[-1:].isspace() and bool(body))
+
+
+def _aligned(text: str) -> str:
+    """Return a part of a line, safe, with its spaces as they are; tabs part cells."""
+    return safe(text.replace(OPAQUE, "…").replace("\t", CELL).strip("\n"))
 
 
 def _plain(text: str) -> str:
