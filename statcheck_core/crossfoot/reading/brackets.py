@@ -5,26 +5,27 @@ from __future__ import annotations
 import re
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
 
-BRACKETS = re.compile(
+BRACKETS = expression(
     r"\s?(?:\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
     r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?_\{(?P<more>[^{}\n]{1,12})\})?"
     r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
 )
-_FLAT_PAIR = re.compile(
+_FLAT_PAIR = expression(
     r"\s?_?(?P<a>\d{1,4}(?:\.\d+)?)\s?[,;/]\s?(?P<b>\d{1,6}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])"
 )
-_FLAT_ONE = re.compile(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
+_FLAT_ONE = expression(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
 _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
 _DF = r"(?:d\.?f\.?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
-_ARGUMENT = re.compile(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
-_TOTAL = re.compile(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
+_ARGUMENT = expression(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
+_TOTAL = expression(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
 _SEPARATORS = tuple(
-    re.compile(pattern)
+    expression(pattern)
     for pattern in (r"\s?;\s{0,9}", r"\s?/\s?", rf"\s{AND}\s", r"\s?,\s{1,9}", r",")
 )
 _PAIR = lazily(

@@ -5,18 +5,19 @@ from __future__ import annotations
 import re
 from collections.abc import Sequence
 
+from crossfoot.expressions import expression
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.cues import alpha_of, contexts_of, cues_in
 from crossfoot.reading.grouping import Group, same_sentence, sentence_around
 from crossfoot.reading.items import SCANNER_FLAGS, Item, Part
 from crossfoot.reading.settling import settle, shared
 
-_MODEL = re.compile(
+_MODEL = expression(
     r"\bmodel|regress|overall|predict|explain|\bfit\b|fitted|accounted|modell|modèle|modelo|modello"
     r"|Gesamt|回归|회귀",
     re.IGNORECASE,
 )
-_EFFECT = re.compile(
+_EFFECT = expression(
     r"effect|interaction|main\b|anova|ancova|difference|differ|group|condition|between|×|:"
     r"|effet|efecto|effetto|effekt",
     re.IGNORECASE,
@@ -24,7 +25,7 @@ _EFFECT = re.compile(
 
 
 #: Words for one of several effects, whose F is not that of the model that R² is of.
-_OF_SEVERAL = re.compile(
+_OF_SEVERAL = expression(
     r"main effect|interact(?:ion|ed)|covariate"
     r"|Haupteffekt|Wechselwirkung|effet principal|efecto principal|effetto principale",
     re.IGNORECASE,

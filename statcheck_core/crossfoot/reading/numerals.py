@@ -7,6 +7,7 @@ import re
 import sys
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.reading.fold import HARD_SPACE
 
 _GROUP = rf"[,'{HARD_SPACE}]"
@@ -28,16 +29,16 @@ NUMERAL = (
     r"(?:\s?%|\s?per\s?cent(?![a-z]))?"
 )
 
-_PARTS = re.compile(
+_PARTS = expression(
     rf"(?P<sign>[-+])?\s?(?:(?P<ten>10{_RAISED}(?!\d|[.]\d))|(?P<mantissa>{_MANTISSA})"
     rf"(?:[eE](?P<exponent>[-+]?\d{{1,3}})|\s?[×xX*·⋅]\s?10\s?(?P<power>{_RAISED}))?)"
     r"(?P<percent>\s?(?:%|per\s?cent))?"
 )
 _SUPERSCRIPTS = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺", "0123456789-+")
-_GROUPED = re.compile(_GROUPED_TEXT)
-_PADDED = re.compile(r"0\d")
-_POINT_GROUPED = re.compile(r"[1-9]\d{0,2}(?:[.]\d{3})+")
-_COMMA_GROUPED = re.compile(r"\d{1,3}(?:,\d{3})+")
+_GROUPED = expression(_GROUPED_TEXT)
+_PADDED = expression(r"0\d")
+_POINT_GROUPED = expression(r"[1-9]\d{0,2}(?:[.]\d{3})+")
+_COMMA_GROUPED = expression(r"\d{1,3}(?:,\d{3})+")
 
 
 class Numeral(NamedTuple):
@@ -117,7 +118,7 @@ def writes_decimal_comma(text: str, start: int = 0, end: int = sys.maxsize) -> b
     return _COMMA_EVIDENCE.search(text, start, end) is not None
 
 
-_COMMA_EVIDENCE = re.compile(r"[=<>≤≥≈]\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))")
+_COMMA_EVIDENCE = expression(r"[=<>≤≥≈]\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))")
 
 
 def _digits(mantissa: str, decimal_comma: bool) -> tuple[str, int]:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Text
 from crossfoot.reading.notation import Name
 from crossfoot.reading.values import value_after
@@ -21,24 +22,24 @@ _CHANGED = (
     r"(?:(?:change|increase|increment|gain|rise)\s(?:in|of)|Δ|incremental"
     r"|(?:increas|rais|improv)\w*\s?(?:the)?)"
 )
-_BEFORE = re.compile(
+_BEFORE = expression(
     rf"(?:(?P<adjusted>{_ADJUSTED})|(?P<pseudo>{_PSEUDO})|(?P<changed>{_CHANGED})"
     r"|(?P<partial>(?:semi-?)?partial))[\s-]?\(?$",
     re.IGNORECASE,
 )
-_AFTER = re.compile(
+_AFTER = expression(
     rf"[\s-]?_?[{{(]?\s?(?:(?P<adjusted>{_ADJUSTED})|(?P<changed>change)|(?P<pseudo>{_PSEUDO}))(?![a-z])"
     r"\.?\s?[})]?",
     re.IGNORECASE,
 )
-_INSIDE = re.compile(
+_INSIDE = expression(
     r"_\{?\s?(?:(?P<adjusted>adj\.?|a|adjusted|korr|corr|c)|(?P<changed>change|inc|Δ)"
     r"|(?P<pseudo>[A-Za-z]{1,12}))\s?\}?"
 )
-_GREW = re.compile(
+_GREW = expression(
     r"\s(?:significantly\s)?(?:increased|rose|improved|grew)\s(?:significantly\s)?(?=by\s)"
 )
-_OPEN = re.compile(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
+_OPEN = expression(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
 #: After one of these and a space no word about the name stands before it.
 _APART = frozenset(",;:=")
 #: How far before the name a word about it may stand, in characters.

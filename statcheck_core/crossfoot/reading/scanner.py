@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Callable, Iterator, Sequence
 
+from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.brackets import BRACKETS, degrees_after, pair_behind, read_degrees
 from crossfoot.reading.items import Item, Part, Text
@@ -28,18 +29,18 @@ _PLUS_MINUS = lazily(
     rf"\s?(?:±|\+/-|\+-)\s?(?P<error>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.|SEM|standard error)"
 )
 _BRACKETED = lazily(rf"\s?\(\s?(?P<number>{NUMERAL})\s?\)")
-_NEXT_VALUE = re.compile(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
+_NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
 _DEALT = lazily(
     r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b)"
 )
-_ALL = re.compile(r"(?:both|all|each)\s$")
+_ALL = expression(r"(?:both|all|each)\s$")
 _SIDED = lazily(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
-_ADJUSTED_NAME = re.compile(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
-_ADJUSTED_BEFORE = re.compile(
+_ADJUSTED_NAME = expression(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
+_ADJUSTED_BEFORE = expression(
     r"(?:adj\.?|adjusted|corrected|Bonferroni|Holm|Tukey)\s?-?$", re.IGNORECASE
 )
 _ADJUSTED_LABEL = lazily(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
-_CRITICAL = re.compile(r"crit", re.IGNORECASE)
+_CRITICAL = expression(r"crit", re.IGNORECASE)
 _RANK = lazily(r"ρ|rho|Spearman|_\{?s|rs$")
 
 
@@ -146,7 +147,7 @@ def _read_f(text: Text, name: Name) -> Item | None:
 
 
 _F_FLAGS = {"Fs": ("plural",), "F's": ("plural",)}
-_BY_UNIT = re.compile(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
+_BY_UNIT = expression(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
 
 
 def _by_unit(printed: str) -> tuple[str, ...]:

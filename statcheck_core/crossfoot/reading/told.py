@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Iterator
 
+from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
@@ -42,12 +43,12 @@ _FURTHER = lazily(
     r"(?:additional|further|another|extra|incremental|more|zusätzlich\w*|weitere)\s?(?:an?\s)?$",
     re.IGNORECASE,
 )
-_REVERSED = re.compile(
+_REVERSED = expression(
     r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
 _TURNED = {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}
-_ADJUSTED = re.compile(r"\(\s?adj(?:usted|\.)?:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
-_INSIGNIFICANT = re.compile(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?)(?![\w.]*\w)")
+_ADJUSTED = expression(r"\(\s?adj(?:usted|\.)?:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
+_INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?)(?![\w.]*\w)")
 _SAMPLE = lazily(
     r"(?:[Aa]mong|[Ss]ample\sof|[Tt]otal\sof|[Ii]n\sall)\s(?:the\s)?"
     r"(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})\s(?!of\b)(?=[a-z]{3})"

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 
+from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.fold import HARD_SPACE
 from crossfoot.reading.items import WHOLE, Part, Text
@@ -24,29 +25,29 @@ _VERB = (
     r"(?:of|by|was|is|are|were|equals?|equal(?:led)?\sto|being|von|war|ist|betrug|de|était|van|di|av|på|var|fue|fut|foi|è|é|es|est|vaut|oli)"
     r"(?:\s(?:only|about|just|approximately))?"
 )
-_RELATION = re.compile(rf"\s*+(?:\(\s*+)?(?P<sign>{_SIGN})\s*+(?=[-+]?\s?[.,·]?\d|n\.?\s?s)")
+_RELATION = expression(rf"\s*+(?:\(\s*+)?(?P<sign>{_SIGN})\s*+(?=[-+]?\s?[.,·]?\d|n\.?\s?s)")
 # "<", ">" and "=" as some journals' fonts come out of a PDF.
 _DAMAGED = lazily(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
 _DAMAGE = {"b": "<", "o": "<", "N": ">", "~": "≈", "∼": "≈"}
-_WORDS = re.compile(
+_WORDS = expression(
     rf"\s++{_VERB}\s++(?=[-+]?\s?[.,·]?\d)|\s?:\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
 )
-_SPACES = re.compile(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
+_SPACES = expression(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
 # A worked line, `= 1 − (1−.90)(20)/17 = .882`: only the last value counts.
 _TERM = r"(?:[\d\s.,/()+×*·^²-]|_?\{[^{}=]{1,14}\}|MS[EBWR]?|SS[EBWRT]?|R|[nk](?![a-z]))"
 _WORKED = lazily(
     rf"\s*+=\s*+(?P<formula>{_TERM}{{3,70}}=\s*+(?:{_TERM}{{3,60}}=\s*+)?)(?P<value>{NUMERAL})"
 )
 _OPERATION = lazily(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
-_NUMERAL = re.compile(NUMERAL)
-_NOT_SIGNIFICANT = re.compile(r"n\.?\s?s\.?(?![a-z])")
-_UNIT = re.compile(
+_NUMERAL = expression(NUMERAL)
+_NOT_SIGNIFICANT = expression(r"n\.?\s?s\.?(?![a-z])")
+_UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
     r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?)(?![\w=(.'-]|\s?[=<>(])"
 )
-_GLUED = re.compile(r"[A-Za-z_°]|[.,:]\d|\s?[×x/]\s?\(?\d")
+_GLUED = expression(r"[A-Za-z_°]|[.,:]\d|\s?[×x/]\s?\(?\d")
 _COUNT_SPACES = {0x20: HARD_SPACE}
-_GROUPED = re.compile(r",\d{3}(?!\d)")
+_GROUPED = expression(r",\d{3}(?!\d)")
 
 #: Quantities that have no unit: a unit behind the number makes it something else.
 _UNITLESS = frozenset(
