@@ -2,20 +2,22 @@
 
 The shape of a claim (``drafts``) decides on a plan (``binding``, ``rows``, ``plan``), and its
 readings fill the plan's box (``case``), which is narrowed by every identity (``narrow``). If
-something is left of every quantity, all agree. Otherwise ``faults`` finds what can't all be true,
-``explain`` the conventions that would explain it, ``remedies`` the single changes that mend it
-(``slips``), and ``findings`` says so (``working``, ``wording``); ``verdict`` leads through it all.
+something is left of every quantity, all agree, and ``verdict`` says so. Otherwise ``failing``
+leads on: ``faults`` finds what can't all be true, ``explain`` the conventions that would explain
+it, ``remedies`` the single changes that mend it (``slips``), and ``findings`` says so
+(``working``, ``wording``). ``derivation`` is for those who ask what follows from a claim.
 """
 
 from __future__ import annotations
 
-from functools import lru_cache
+from typing import TYPE_CHECKING, Any
 
-from crossfoot.audit.derive import Derivation, Derived
-from crossfoot.audit.derive import derive as _derive
 from crossfoot.audit.verdict import judge
 from crossfoot.memo import remembered
 from crossfoot.model import Audited, Claim, Span
+
+if TYPE_CHECKING:
+    from crossfoot.audit.derivation import Derivation, Derived, derive
 
 
 @remembered
@@ -54,10 +56,13 @@ def _nowhere(claim: Claim) -> Claim:
 _NO_PLACE = Span(0, 0)
 
 
-@lru_cache(maxsize=4096)
-def derive(claim: Claim) -> Derivation:
-    """Return every quantity that follows from the readings of a claim, with its working."""
-    return _derive(claim)
+def __getattr__(name: str) -> Any:
+    """Import what derives when it is first used: to audit, nothing is derived."""
+    if name not in __all__:
+        raise AttributeError(f"module {__name__!r} has no attribute {name!r}")
+    from crossfoot.audit import derivation
+
+    return getattr(derivation, name)
 
 
 __all__ = ["Derivation", "Derived", "audit_claim", "derive"]

@@ -11,10 +11,10 @@ from crossfoot.audit.narrow import narrow
 from crossfoot.audit.plan import Plan, plan_for
 from crossfoot.laws.interval import Interval, meet
 from crossfoot.laws.quantities import QUANTITIES
-from crossfoot.model import Claim, Reading
+from crossfoot.model import Check, Claim, Reading
 
 #: A bound on p below this is a printed zero.
-_NOTHING = 1e-300
+NOTHING = 1e-300
 
 _FREEDOM = frozenset({"df", "df1", "df2"})
 
@@ -94,7 +94,7 @@ def make_case(claim: Claim, shape: Shape, pruned: bool = True) -> Case:
 
 def _stands_for(reading: Reading) -> Interval:
     """Return the values of a reading; a p printed as below zero is below one unit of its place."""
-    if reading.high < _NOTHING and reading.quantity == "p" and reading.relation in "<≤":
+    if reading.high < NOTHING and reading.quantity == "p" and reading.relation in "<≤":
         literal = numeral(reading)
         return Interval(0.0, literal.unit if literal is not None else 1.0)
     return Interval(reading.low, reading.high)
@@ -125,6 +125,21 @@ def spoken(case: Case) -> int | None:
             return None
         spoke |= outcome.spoke
     return spoke
+
+
+def agreed(case: Case, spoke: int) -> tuple[Check, ...]:
+    """Return the checks of a claim without findings; steps that excluded nothing check nothing."""
+    plan = case.plan
+    mute = {b.identity.slug for b in plan.bindings if b.brief and not b.brief & spoke}
+    if not mute:
+        return plan.checks
+    mute -= {b.identity.slug for b in plan.bindings if b.brief & spoke}
+    return tuple(
+        check._replace(outcome="not-applicable", reason="It says nothing about these numbers.")
+        if check.identity in mute and check.outcome == "agrees"
+        else check
+        for check in plan.checks
+    )
 
 
 def fits(case: Case, changes: Iterable[tuple[int, Interval]], skip: int = 0) -> tuple[bool, int]:

@@ -4,11 +4,12 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 
+from crossfoot.audit.case import NOTHING
 from crossfoot.audit.literals import Numeral, numeral
 from crossfoot.audit.wording import between, listed, named, printed
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import symbol
-from crossfoot.model import Claim, Finding, Remedy
+from crossfoot.model import Claim, Finding, Reading, Remedy
 
 #: For each kind its statistic, the identity that gives p from it, and what that needs, each with
 #: its alternatives. The degrees of freedom of a coefficient stand with its model.
@@ -30,7 +31,7 @@ def notes(claim: Claim) -> list[Finding]:
 
 def _zero_p(claim: Claim) -> Iterator[Finding]:
     for index, reading in enumerate(claim.readings):
-        literal = numeral(reading) if reading.quantity == "p" else None
+        literal = numeral(reading) if _may_be_zero(reading) else None
         if literal is None or literal.value != 0 or reading.relation in ">≥":
             continue
         name = named(reading)
@@ -51,6 +52,13 @@ def _zero_p(claim: Claim) -> Iterator[Finding]:
                 _threshold(index, literal),
                 working=(f"Printed: {name} = {reading.literal}, which stands for {name} {most}",),
             )
+
+
+def _may_be_zero(reading: Reading) -> bool:
+    """Say, without taking its literal apart, whether a reading can be a p of zero."""
+    if reading.quantity != "p" or reading.low > 0:
+        return False
+    return reading.relation not in "<≤" or reading.high < NOTHING
 
 
 def _threshold(index: int, literal: Numeral) -> tuple[Remedy, ...]:

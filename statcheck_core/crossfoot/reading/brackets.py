@@ -5,29 +5,30 @@ from __future__ import annotations
 import re
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
 from crossfoot.reading.words import VERB_UNSPACED
 
-BRACKETS = re.compile(
+BRACKETS = expression(
     r"\s?(?:_?\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
     r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?[,;]?\s?_\{(?P<more>[^{}\n]{1,12})\})?"
     r"|\^\{\s?(?P<raised>\d{1,4})\s?\}_\{\s?(?P<beneath>\d{1,6})\s?\}"
     r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
 )
-_FLAT_PAIR = re.compile(
+_FLAT_PAIR = expression(
     r"\s?_?(?P<a>\d{1,4}(?:\.\d+)?)\s?[,;/]\s?(?P<b>\d{1,6}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])"
 )
-_FLAT_ONE = re.compile(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
-_THOUSANDS = re.compile(r"\d{1,3}(?:,\d{3})+")
+_FLAT_ONE = expression(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
+_THOUSANDS = expression(r"\d{1,3}(?:,\d{3})+")
 _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
 _DF = r"(?:d\.?f\.?[nd]?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
-_ARGUMENT = re.compile(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
-_TOTAL = re.compile(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
+_ARGUMENT = expression(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
+_TOTAL = expression(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
 _SEPARATORS = tuple(
-    re.compile(pattern)
+    expression(pattern)
     for pattern in (r"\s?;\s{0,9}", r"\s?/\s?", rf"\s{AND}\s", r"\s?,\s{1,9}", r",")
 )
 _PAIR = lazily(

@@ -5,25 +5,26 @@ from __future__ import annotations
 import re
 from collections.abc import Sequence
 
+from crossfoot.expressions import expression
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.cues import alpha_of, contexts_of, cues_in
 from crossfoot.reading.grouping import Group, same_sentence, sentence_around
 from crossfoot.reading.items import SCANNER_FLAGS, Item, Part
 from crossfoot.reading.settling import settle, shared
 
-_MODEL = re.compile(
+_MODEL = expression(
     r"\bmodel|regress|overall|predict|explain|\bfit\b|fitted|accounted|modell|modèle|modelo|modello"
     r"|Gesamt|回归|회귀",
     re.IGNORECASE,
 )
 # The words that say, right before an F beside an R², what it tests: one effect, or the model.
-_ONE_EFFECT = re.compile(
+_ONE_EFFECT = expression(
     r"\beffects?\s(?:of|for)\b|\bmain\seffect|\binteract(?:ion|ed)|Wechselwirkung|\bcontrast|\bcovariate|\bcontrolling|\badjusting"
     r"|Effekt\s(?:von|der|des)\b|Haupteffekt|effet\s(?:de|du|des|principal)\b|efecto\s(?:de|del|principal)\b"
     r"|effetto\s(?:di|del|principale)\b|efeito\s(?:de|do|da|principal)\b|\beffect\svan\b|\bdiffer",
     re.IGNORECASE,
 )
-_EFFECT = re.compile(
+_EFFECT = expression(
     r"effect|interaction|main\b|anova|ancova|difference|differ|group|condition|between|×|:"
     r"|effet|efecto|effetto|effekt",
     re.IGNORECASE,

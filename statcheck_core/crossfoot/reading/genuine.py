@@ -10,6 +10,7 @@ import re
 from collections.abc import Sequence
 from itertools import pairwise
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part
 from crossfoot.reading.lazily import lazily
 
@@ -35,9 +36,9 @@ _SUPPOSED = lazily(
     r"\s(?:an?\s|the\s)?(?:cut-?off\s)?$"
 )
 _CLASSIFIER = lazily(r"precision|recall|F-?(?:measure|score)|classif|accuracy", re.IGNORECASE)
-_DECIMALS = re.compile(r"[.,·]\d")
+_DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
-_LIST_MARKS = re.compile(r"[\s,;()\[\]]{1,4}")
+_LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
 _SHARES = frozenset({"R2", "R2_adj", "R2_change"})
 _SUPPORT = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omega2"})
 #: Fewer degrees of freedom than this are more often the indices of a matrix.

@@ -12,6 +12,7 @@ from collections.abc import Sequence
 from itertools import pairwise
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item
 
 _ANCHORS = frozenset({"F", "F_change", "t", "r", "z", "chi2", "b", "β", "beta", "odds_ratio"})
@@ -30,12 +31,12 @@ APART = 9.0
 #: More items than this between two tests are none of either's, but for the nearest.
 _CROWD = 40
 
-_WORD = re.compile(r"[^\W\d_]{2,}")
-_SENTENCE_END = re.compile(r"[.!?][)\]\"”’']?\s+(?=[^\W\d_]|$)|[.!?]\s*$|。")
+_WORD = expression(r"[^\W\d_]{2,}")
+_SENTENCE_END = expression(r"[.!?][)\]\"”’']?\s+(?=[^\W\d_]|$)|[.!?]\s*$|。")
 _ENDS = ".!?。"
 #: How far around a result its sentence is looked for, in characters.
 _REACH = 600
-_ABBREVIATION = re.compile(
+_ABBREVIATION = expression(
     r"\b(?:adj|approx|bzw|ca|cf|coef|corr|e\.g|Eq|est|et al|Fig|i\.e|korr|max|min|n\.s|No|p|part|pp"
     r"|resp|sq|std|Tab|vs|z\.B)\.\s*$"
 )
@@ -63,7 +64,7 @@ _LINK = frozenset(
         "model",
     }
 )
-_BULLET = re.compile(r"\n\s*(?:[•*+-]|\d+[.)])\s")
+_BULLET = expression(r"\n\s*(?:[•*+-]|\d+[.)])\s")
 
 
 class Group(NamedTuple):

@@ -12,6 +12,7 @@ from collections.abc import Iterator
 from functools import cache
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.reading.words import DEGREES, ERROR_NAMES, PARTIAL, VALUE, VALUE_BEFORE
 
 _SQUARED = r"(?:\s?²|\s?\^\s?(?:\{\s?2\s?\}|2)|2(?![\d.,]?\d))"
@@ -317,15 +318,16 @@ pow ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam sco see sem sig 
 ste sti tol tst tte tva val vap vif vri wal
 """
 _OPENINGS = frozenset(_FIRST_LETTERS.split())
-_WORD_START = re.compile(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я])[{re.escape(_INITIALS)}]")
+_WORD_START = expression(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я])[{re.escape(_INITIALS)}]")
+
+
+_COMPILED = tuple((notation, expression(notation.pattern)) for notation in NOTATIONS)
 
 
 @cache
-def _starting(initial: str) -> re.Pattern[str]:
-    """Return the pattern of all names that can start so."""
-    return re.compile(
-        "|".join(f"(?P<n{i}>{n.pattern})" for i, n in enumerate(NOTATIONS) if initial in n.initials)
-    )
+def _starting(initial: str) -> tuple[tuple[Notation, re.Pattern[str]], ...]:
+    """Return the notations whose names can start so."""
+    return tuple(pair for pair in _COMPILED if initial in pair[0].initials)
 
 
 class Name(NamedTuple):
@@ -354,12 +356,9 @@ def names(text: str, start: int, end: int) -> Iterator[Name]:
             and letters.lower() not in _OPENINGS
         ):
             continue
-        match = _starting(text[at]).match(text, at)
-        if match is not None:
-            done = match.end()
-            yield Name(NOTATIONS[_number(match)], match)
-
-
-def _number(match: re.Match[str]) -> int:
-    # ``lastgroup`` names the outermost group that closed last: the notation itself.
-    return int((match.lastgroup or "n0")[1:])
+        for notation, pattern in _starting(text[at]):
+            match = pattern.match(text, at)
+            if match is not None:
+                done = match.end()
+                yield Name(notation, match)
+                break

@@ -7,6 +7,7 @@ import re
 import sys
 from typing import NamedTuple
 
+from crossfoot.expressions import expression
 from crossfoot.reading.fold import HARD_SPACE
 
 _GROUP = rf"[,'{HARD_SPACE}]"
@@ -28,16 +29,16 @@ NUMERAL = (
     r"(?:\s?%|\s?per\s?cent(?![a-z]))?"
 )
 
-_PARTS = re.compile(
+_PARTS = expression(
     rf"(?P<sign>[-+])?\s?(?:(?P<ten>10{_RAISED}(?!\d|[.]\d))|(?P<mantissa>{_MANTISSA})"
     rf"(?:[eE](?P<exponent>[-+]?\d{{1,3}})|\s?[×xX*·⋅]\s?10\s?(?P<power>{_RAISED}))?)"
     r"(?P<percent>\s?(?:%|per\s?cent))?"
 )
 _SUPERSCRIPTS = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺", "0123456789-+")
-_GROUPED = re.compile(_GROUPED_TEXT)
-_PADDED = re.compile(r"0\d")
-_POINT_GROUPED = re.compile(r"[1-9]\d{0,2}(?:[.]\d{3})+")
-_COMMA_GROUPED = re.compile(r"\d{1,3}(?:,\d{3})+")
+_GROUPED = expression(_GROUPED_TEXT)
+_PADDED = expression(r"0\d")
+_POINT_GROUPED = expression(r"[1-9]\d{0,2}(?:[.]\d{3})+")
+_COMMA_GROUPED = expression(r"\d{1,3}(?:,\d{3})+")
 
 
 class Numeral(NamedTuple):
@@ -118,7 +119,7 @@ def writes_decimal_comma(text: str, start: int = 0, end: int = sys.maxsize) -> b
 
 
 # "df = 2,57" is a pair.
-_COMMA_EVIDENCE = re.compile(
+_COMMA_EVIDENCE = expression(
     r"(?<!f)(?<!f[.\s])(?<!f\.\s)(?<![dg]l)(?<![dg]l\s)"
     r"[=<>≤≥≈]\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))"
 )

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
 from crossfoot.reading.notation import Name
@@ -11,24 +12,24 @@ from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
 from crossfoot.reading.words import ADJUSTED, CHANGED, PSEUDO
 
-_BEFORE = re.compile(
+_BEFORE = expression(
     rf"(?:(?P<adjusted>{ADJUSTED})|(?P<pseudo>{PSEUDO})|(?P<changed>{CHANGED})"
     r"|(?P<partial>(?:semi-?)?partial))[\s-]?\(?$",
     re.IGNORECASE,
 )
-_AFTER = re.compile(
+_AFTER = expression(
     rf"[\s-]?_?[{{(]?\s?(?:(?P<adjusted>{ADJUSTED})|(?P<changed>change)|(?P<pseudo>{PSEUDO}))(?![a-z])"
     r"\.?\s?[})]?",
     re.IGNORECASE,
 )
-_INSIDE = re.compile(
+_INSIDE = expression(
     r"_\{?\s?(?:(?P<adjusted>[aA]dj\.?|a|[aA]djusted|korr|corr|c)(?![A-Za-z])|(?P<changed>change|inc|Δ)"
     r"|(?P<pseudo>[A-Za-z]{1,12}))\s?\}?"
 )
-_GREW = re.compile(
+_GREW = expression(
     r"\s(?:significantly\s)?(?:increased|rose|improved|grew)\s(?:significantly\s)?(?=by\s)"
 )
-_OPEN = re.compile(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
+_OPEN = expression(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
 #: A number in brackets: `an R² (.21)`; a whole one is a footnote or a sample.
 _IN_BRACKETS = lazily(r"\s?\(\s?(?=(?:\d{0,2}[.,]\d+\s?%?|\d{1,2}\s?%)\s?\))")
 #: Both at once: `R²/adjusted R² = .21/.19`, `R² (adj. R²) = .21 (.19)`.

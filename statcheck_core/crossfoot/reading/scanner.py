@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Callable, Iterator, Sequence
 
+from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.brackets import BRACKETS, degrees_after, pair_behind, read_degrees
 from crossfoot.reading.estimates import (
@@ -25,7 +26,7 @@ _RATIO = lazily(rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERA
 _FOR_WHAT = lazily(
     r"\s(?:for|of|on)\s(?:the\s)?[^\W\d][\w-]{0,30}(?:\s[^\W\d][\w-]{0,30})?(?=\s(?:was|is|=))"
 )
-_NEXT_VALUE = re.compile(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
+_NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
 _DEALT = lazily(
     r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b)"
 )
@@ -36,16 +37,16 @@ _FOR_ALL_BEHIND = lazily(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
 )
 _EXACT_BEHIND = lazily(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
-_ALL = re.compile(r"(?:both|all|each)\s$")
+_ALL = expression(r"(?:both|all|each)\s$")
 _SIDED = lazily(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
-_ADJUSTED_NAME = re.compile(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
-_ADJUSTED_BEFORE = re.compile(
+_ADJUSTED_NAME = expression(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
+_ADJUSTED_BEFORE = expression(
     r"(?:adj\.?|adjusted|corrected|Bonferroni|Holm|Tukey)\s?-?$", re.IGNORECASE
 )
 _ADJUSTED_LABEL = lazily(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
 # χ with its df beneath and its square above: χ_{1}^{2}
-_INDEX = re.compile(r"χ_\{?(?P<df>\d{1,3})\}?\s?\^")
-_CRITICAL = re.compile(r"crit", re.IGNORECASE)
+_INDEX = expression(r"χ_\{?(?P<df>\d{1,3})\}?\s?\^")
+_CRITICAL = expression(r"crit", re.IGNORECASE)
 _RANK = lazily(r"ρ|rho|Spearman|_\{?s|rs$")
 
 
@@ -161,7 +162,7 @@ def _read_f(text: Text, name: Name) -> Item | None:
 
 
 _F_FLAGS = {"Fs": ("plural",), "F's": ("plural",)}
-_BY_UNIT = re.compile(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
+_BY_UNIT = expression(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
 
 
 def _by_unit(printed: str) -> tuple[str, ...]:

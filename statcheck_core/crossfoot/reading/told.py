@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Iterator
 
+from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
@@ -62,12 +63,12 @@ _FURTHER = lazily(
     r"(?:additional|further|another|extra|incremental|more|zusätzlich\w*|weitere)\s?(?:an?\s)?$",
     re.IGNORECASE,
 )
-_REVERSED = re.compile(
+_REVERSED = expression(
     r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
 _TURNED = {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}
-_ADJUSTED = re.compile(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
-_INSIGNIFICANT = re.compile(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
+_ADJUSTED = expression(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
+_INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
 # The p-value for F(2, 57) = 3.90 is .026
 _P_FOR = lazily(
     rf"[pP][\s-]?value\s(?:for|of|associated\swith|corresponding\sto|that\sbelongs\sto)\s[^;!?]{{3,60}}?\s(?:{VERB})\s(?P<p>0?[.,]\d+)(?![\d%])"

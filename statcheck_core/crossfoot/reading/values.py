@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 
+from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.fold import HARD_SPACE
 from crossfoot.reading.items import WHOLE, Part, Text
@@ -21,34 +22,34 @@ _SIGN = (
     r"(?:=\s?[<>≤≥](?![<>=])|<\s?=|>\s?=|=\s?<|<{1,3}(?![/<!])|>{1,3}|[=≤≥≈¼]"
     r"|&lt;|&gt;|(?:is|was|were)?\s?(?:less|lower|smaller|greater|larger|higher|more)\sthan|below|under|above)"
 )
-_RELATION = re.compile(
+_RELATION = expression(
     rf"[\s*]*+(?:\(\s*+)?(?P<sign>{_SIGN})[\s*]*+(?:np\.float64\()?(?=[-+]?\s?[.,·]?\d|n\.?\s?s|NS|N\.S)"
 )
 # "<", ">" and "=" as some journals' fonts come out of a PDF.
 _DAMAGED = lazily(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
 _DAMAGE = {"b": "<", "o": "<", "N": ">", "~": "≈", "∼": "≈"}
-_WORDS = re.compile(
+_WORDS = expression(
     rf"\s++{VERB}(?:\s(?:only|about|just|approximately))?\s++(?=[-+]?\s?[.,·]?\d)|['\"]?\s?{VERB_UNSPACED}\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
 )
-_BARE = re.compile(r" (?=[-+]?\d{0,5}[.,]\d++(?![\d.,]?\d|\s?[%=<>]))")
-_SPACES = re.compile(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
+_BARE = expression(r" (?=[-+]?\d{0,5}[.,]\d++(?![\d.,]?\d|\s?[%=<>]))")
+_SPACES = expression(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
 # A worked line, `= 1 − (1−.90)(20)/17 = .882`: only the last value counts.
 _TERM = r"(?:[\d\s.,/()+×*·^²-]|_?\{[^{}=]{1,14}\}|MS[EBWR]?|SS[EBWRT]?|R|[nk](?![a-z]))"
 _WORKED = lazily(
     rf"\s*+=\s*+(?P<formula>{_TERM}{{3,70}}=\s*+(?:{_TERM}{{3,60}}=\s*+)?)(?P<value>{NUMERAL})"
 )
 _OPERATION = lazily(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
-_NUMERAL = re.compile(NUMERAL)
-_NOT_SIGNIFICANT = re.compile(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
-_UNIT = re.compile(
+_NUMERAL = expression(NUMERAL)
+_NOT_SIGNIFICANT = expression(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
+_UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
     r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=(.'-]|\s?[=<>(])"
 )
-_GLUED = re.compile(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
+_GLUED = expression(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.
-_GOES_ON = re.compile(r",\d")
+_GOES_ON = expression(r",\d")
 _COUNT_SPACES = {0x20: HARD_SPACE}
-_GROUPED = re.compile(r",\d{3}(?!\d)")
+_GROUPED = expression(r",\d{3}(?!\d)")
 
 #: Quantities that have no unit: a unit behind the number makes it something else.
 _UNITLESS = frozenset(

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Mapping, Sequence
+from functools import lru_cache
 from typing import NamedTuple
 
 from crossfoot.audit.binding import CUSTOMARY
@@ -43,6 +44,7 @@ class Derivation(NamedTuple):
     derived: tuple[Derived, ...]
 
 
+@lru_cache(maxsize=4096)
 def derive(claim: Claim) -> Derivation:
     """Return every quantity that follows from the readings of a claim.
 
