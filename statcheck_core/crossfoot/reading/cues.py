@@ -234,7 +234,6 @@ CUES: tuple[Cue, ...] = (
     Cue(
         "corrected-statistic",
         _stems("yates; continuity correct; rao-scott; rao–scott; satorra"),
-        near=True,
     ),
 )
 

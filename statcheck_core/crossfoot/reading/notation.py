@@ -81,7 +81,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?\()|F(?=[\d_₀-₉])|f(?=\s?\()"
+        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?![.\d])))|F(?=[\d_₀-₉])|f(?=\s?\()"
         r"|min\s?F'?(?=\s?\())",
         False,
         "Ffm",
@@ -123,7 +123,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "eta2",
-        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s-]?(?:squared?|sq\.?|Quadrat|cuadrado)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
+        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s_-]?(?:squared?|sq\.?|Quadrat|cuadrado)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
         True,
         "η𝜂eE",
         "F(2, 57) = 3.90, p = .026, η² = .12",
