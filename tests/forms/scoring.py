@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Iterable, Sequence
 from functools import cache
 from typing import NamedTuple
@@ -11,6 +12,8 @@ from crossfoot.model import Claim, Finding, Placed
 from forms.corpus import Entry, entries
 from forms.matching import Match, matches
 
+# Human readers take the row of the intercept or leave it.
+_INTERCEPT = re.compile(r"\W?(?:intercept|constant|_?cons|const|C)\b(?! \w)", re.IGNORECASE)
 _LOUD = ("reversal", "conflict")
 _HEARD = ("reversal", "conflict", "doubt")
 
@@ -23,7 +26,7 @@ class Outcome(NamedTuple):
     matches
         One for each claim a human reader takes.
     extra
-        Claims read that no human reader takes.
+        Claims read that no human reader takes, intercepts aside.
     alarms
         Conflicts and reversals about numbers that can all be true.
     caught
@@ -66,12 +69,13 @@ def outcome(entry: Entry) -> Outcome:
     claims = [item.audited.claim for item in placed]
     found = matches(entry, claims)
     used = {match.claim for match in found}
+    left = [c for i, c in enumerate(claims) if i not in used and not _INTERCEPT.match(c.text)]
     wrong = None if entry.wrong is None else found[entry.wrong].claim
     context = {name for index in used if index is not None for name in claims[index].context}
     return Outcome(
         entry,
         tuple(found),
-        tuple(f"{c.kind} {c.text}" for i, c in enumerate(claims) if i not in used),
+        tuple(f"{claim.kind} {claim.text}" for claim in left),
         tuple(_alarms(entry, placed, wrong)),
         _strongest(placed[wrong].audited.findings) if wrong is not None else "",
         entry.context - context,

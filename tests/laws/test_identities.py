@@ -105,6 +105,7 @@ def test_contexts_and_assumptions_are_used():
         assert key == assumption.key
         assert assumption.text.endswith(".")
         assert assumption.broken_by | assumption.stated_by <= set(CONTEXTS)
+        assert all({first, second} <= set(CONTEXTS) for first, second in assumption.spared_by)
     assert all(text.endswith(".") for text in CONTEXTS.values())
 
 

@@ -116,6 +116,25 @@ def p_from_z(rng):
     return {"z": z, "p": z_area(z)}
 
 
+def counts_of_four(rng):
+    chi2, n = positive(rng, -2, 2), count(rng)
+    n = max(n, mpmath.ceil(chi2))
+    return {"phi": mpmath.sqrt(chi2 / n) * rng.choice((-1, 1)), "chi2": chi2, "n": n, "df": mpf(1)}
+
+
+def counts_of_any(rng):
+    """A table of any shape: m is one less than its lesser side."""
+    m, more = rng.randint(1, 4), rng.randint(0, 5)
+    chi2, n = positive(rng, -2, 2), count(rng)
+    n = max(n, mpmath.ceil(chi2 / m))
+    return {
+        "cramers_v": mpmath.sqrt(chi2 / (n * m)),
+        "chi2": chi2,
+        "n": n,
+        "df": mpf(m * (m + more)),
+    }
+
+
 # Fit.
 
 
@@ -382,6 +401,7 @@ def collinear(rng):
 def anything(rng):
     values = {**change(rng), **table(rng), **ratio(rng), **coefficient(rng), **fit(rng)}
     values |= {**collinear(rng), "sd": positive(rng), "alpha": mpf("0.05"), "r": share(rng)}
+    values |= {"phi": share(rng), "cramers_v": share(rng)}
     return values
 
 
@@ -405,6 +425,10 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     ),
     "p-from-r": (_one("pairs", "correlation", p_from_r),),
     "p-from-chi2": (_one("counts", "frequency", p_from_chi2),),
+    "association-from-chi2": (
+        _one("two by two", "frequency", counts_of_four),
+        _one("any table", "frequency", counts_of_any),
+    ),
     "p-from-z": (_one("normal", "coefficient", p_from_z),),
     "f-from-r2": (_one("fit", "overall-model", fit), _one("only effect", "effect", fit)),
     "r2-adjusted": (_one("fit", "overall-model", fit),),

@@ -125,7 +125,7 @@ def speaks(identity: Identity, form: Form, claim: Claim, printed: Mapping[str, I
         claim.kind in (form.kinds or identity.kinds)
         and printed.keys() >= set(form.beside)
         and printed.keys().isdisjoint(form.unless)
-        and not any(ASSUMPTIONS[key].broken_by.intersection(claim.context) for key in needs)
+        and not any(ASSUMPTIONS[key].breach(claim.context) for key in needs)
     )
 
 

@@ -98,8 +98,7 @@ def one_model(rng: np.random.Generator) -> Drawn:
         if collinearity:
             cells += _collinearity(author, numbers, readings, rng, i)
         rows.append(cells)
-        if i:
-            said.append(Said("coefficient", readings, tuple(_checked(readings, True, told))))
+        said.append(Said("coefficient", readings, tuple(_checked(readings, True, told))))
     note, model = _fit_note(author, numbers, fit)
     notes = [note, author.legend()] if stars else [note]
     said.append(model)

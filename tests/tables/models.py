@@ -57,8 +57,7 @@ def side_by_side(rng: np.random.Generator) -> Drawn:
             else:
                 first.append(Cell(text))
                 (first if place == "beside" else second).append(Cell(f"({inner})"))
-            if i:
-                said.append(Said("coefficient", readings))
+            said.append(Said("coefficient", readings))
         rows.append(first)
         if place == "below":
             rows.append(second)

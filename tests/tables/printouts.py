@@ -69,8 +69,7 @@ def least_squares(rng: np.random.Generator) -> Drawn:
         sign, literal = _p(fit.pvalues[i])
         p, readings["p", None] = numbers.put(literal)
         rows.append([name, b, se, t, sign + p, _mark(fit.pvalues[i])])
-        if i:
-            said.append(Said("coefficient", readings, (("t", None),)))
+        said.append(Said("coefficient", readings, (("t", None),)))
     lines = ["Coefficients:", *_right(rows, numbers.printed, " "), "---", _SIGNIF, ""]
     model: Readings = {}
     s, model["s", None] = numbers.put(_significant(np.sqrt(fit.mse_resid), 4))
@@ -175,8 +174,7 @@ def summary_block(rng: np.random.Generator) -> Drawn:
             slot, readings[key, None] = numbers.put(literal)
             cells.append(slot)
         rows.append(cells)
-        if i:
-            said.append(Said("coefficient", readings))
+        said.append(Said("coefficient", readings))
     table = _right(rows, numbers.printed, "      ")
     lines += [table[0], "-" * 78, *table[1:], rule]
     return _drawn("Python summary", lines, numbers, said)
@@ -247,8 +245,7 @@ def regress_block(rng: np.random.Generator) -> Drawn:
             slot, readings[key, None] = numbers.put(literal)
             cells.append(" " * max(1, width - len(literal)) + slot)
         lines.append(f"{name:>12} |{''.join(cells)}")
-        if i:
-            said.append(Said("coefficient", readings))
+        said.append(Said("coefficient", readings))
     return _drawn("regress block", [*lines, "-" * 78], numbers, said)
 
 

@@ -54,9 +54,9 @@ def broken_assumption(identity: Identity, form: Form, shape: Shape) -> tuple[str
         # Degrees of freedom with decimals are the adjusted ones: those that the test used.
         if key == "df-as-used" and shape.fractional:
             continue
-        for context in shape.context:
-            if context in ASSUMPTIONS[key].broken_by:
-                return context, key
+        context = ASSUMPTIONS[key].breach(shape.context)
+        if context is not None:
+            return context, key
     return None
 
 

@@ -134,9 +134,12 @@ class _Text:
             self.image(tag)
 
     def item(self, tag: Tag) -> None:
-        """Start an item of a list on a line of its own."""
+        """Start an item of a list on a line of its own; what a term stands for follows it."""
         mark = "• " if tag.name in ("li", "list-item") else ""
-        self.out.put(("\n" if self.shown else "") + mark, tag.start, tag.end)
+        if tag.name == "dd":
+            self.out.put(": ", tag.start, tag.end)
+        else:
+            self.out.put(("\n" if self.shown else "") + mark, tag.start, tag.end)
         self.shown = True
 
     def script(self, tag: Tag) -> None:

@@ -11,6 +11,7 @@ from importlib import import_module
 
 from crossfoot.laws import (
     anova,
+    association,
     bounds,
     change,
     coefficient,
@@ -34,7 +35,7 @@ IDENTITIES: Mapping[str, Identity] = {
     item.slug: item
     for family in (
         probability, fit, effect_size, anova, coefficient, limits, limits_against_p, limits_of_r,
-        change, tables, ratio, bounds, document,
+        change, tables, ratio, association, bounds, document,
     )
     for item in family.IDENTITIES
 }  # fmt: skip

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Collection, Mapping
 from typing import NamedTuple
 
 #: What may be recognised around a claim, each with what it says.
@@ -18,6 +18,8 @@ CONTEXTS: Mapping[str, str] = {
     "no-intercept": "The model has no intercept.",
     "adjusted-df": "Degrees of freedom are adjusted, as Welch, Satterthwaite or "
     "Greenhouse and Geisser do.",
+    "scaled-df": "Both degrees of freedom are multiplied by one number, as Greenhouse and Geisser "
+    "do.",
     "adjusted-p": "p values are adjusted for the number of comparisons.",
     "pseudo-r2": "What is called R² is an analogue of it or is not taken within the sample of "
     "the fit.",
@@ -55,16 +57,35 @@ class Assumption(NamedTuple):
         Contexts under any of which it does not hold, or is not sure enough.
     stated_by
         Contexts under any of which the text states that it holds.
+    spared_by
+        Pairs of a context that breaks it and one beside which that does not.
     """
 
     key: str
     text: str
     broken_by: frozenset[str] = frozenset()
     stated_by: frozenset[str] = frozenset()
+    spared_by: frozenset[tuple[str, str]] = frozenset()
+
+    def breach(self, contexts: Collection[str]) -> str | None:
+        """Return a context that breaks it, if one does."""
+        for context in contexts:
+            if context in self.broken_by and not any(
+                (context, other) in self.spared_by for other in contexts
+            ):
+                return context
+        return None
 
 
-def _assumption(key: str, text: str, broken_by: str = "", stated_by: str = "") -> Assumption:
-    return Assumption(key, text, frozenset(broken_by.split()), frozenset(stated_by.split()))
+def _assumption(
+    key: str,
+    text: str,
+    broken_by: str = "",
+    stated_by: str = "",
+    spared_by: tuple[tuple[str, str], ...] = (),
+) -> Assumption:
+    broken, stated = frozenset(broken_by.split()), frozenset(stated_by.split())
+    return Assumption(key, text, broken, stated, frozenset(spared_by))
 
 
 _ASSUMPTIONS = (
@@ -137,6 +158,11 @@ _ASSUMPTIONS = (
         "corrected-statistic",
     ),
     _assumption(
+        "plain-chi2",
+        "χ² is Pearson's, without a continuity correction.",
+        "corrected-statistic survey resampled",
+    ),
+    _assumption(
         "unadjusted-p",
         "The p value is not adjusted for the number of comparisons.",
         "adjusted-p",
@@ -150,6 +176,12 @@ _ASSUMPTIONS = (
         "unadjusted-df",
         "The degrees of freedom are the counts of the design, without adjustment.",
         "adjusted-df imputed mixed survey",
+    ),
+    _assumption(
+        "proportional-df",
+        "The degrees of freedom are the counts of the design, or both are one share of them.",
+        "adjusted-df imputed mixed survey",
+        spared_by=(("adjusted-df", "scaled-df"),),
     ),
     _assumption(
         "no-missing-cases",

@@ -106,7 +106,7 @@ ETA2_PARTIAL = identity(
             "ss_total", "SS total = SS effect/η²", "eta2 ss_effect", _total_of_effect, kinds=_TABLE
         ),
     ),
-    needs="fixed-effects unadjusted-df",
+    needs="fixed-effects proportional-df",
     assumption="F is the ratio of the effect's mean square to the error's; η² equals ηp² where "
     "the effect is the only one, and is smaller otherwise.",
     source="Cohen 1973, Educational and Psychological Measurement 33, 107–112",

@@ -127,6 +127,10 @@ _QUANTITIES = (
     Quantity("omega2", "ω²", "omega squared", _AT_MOST_ONE, False,
              "An estimate of the share of the variance that an effect accounts for; it can be "
              "negative."),
+    Quantity("phi", "φ", "phi coefficient", _SIGNED_SHARE, False,
+             "The correlation of two divisions in two, the root of χ² over the number of cases."),
+    Quantity("cramers_v", "V", "Cramér's V", _SHARE, False,
+             "The root of χ² over the greatest that it can be in a table of its shape."),
     Quantity("vif", "VIF", "variance inflation factor", Interval(1.0, _INFINITY), False,
              "How many times the other predictors inflate the variance of a coefficient."),
     Quantity("tolerance", "tolerance", "tolerance", _SHARE, False,

@@ -156,6 +156,12 @@ CUES: tuple[Cue, ...] = (
         ),
     ),
     Cue(
+        "scaled-df",
+        _stems("greenhouse; huynh; sphericity"),
+        near=True,
+        confirm=r"^(?![\s\S]*(?:welch|satterthwaite|kenward|brown|unequal|equal varianc))",
+    ),
+    Cue(
         "adjusted-p",
         _stems(
             "bonferroni; holm; tukey; scheff; šid; sidak; benjamini; fdr; false discovery; "
@@ -234,7 +240,6 @@ CUES: tuple[Cue, ...] = (
     Cue(
         "corrected-statistic",
         _stems("yates; continuity correct; rao-scott; rao–scott; satorra"),
-        near=True,
     ),
 )
 

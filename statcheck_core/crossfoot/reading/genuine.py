@@ -35,7 +35,10 @@ _SUPPOSED = lazily(
     r"|\b(?:above|beyond|below|over|under|exceeds|exceeding|than)|\b(?:cut-?off|threshold|criterion|critical)\w*(?:\s\w+){0,2})"
     r"\s(?:an?\s|the\s)?(?:cut-?off\s)?$"
 )
-_CLASSIFIER = lazily(r"precision|recall|F-?(?:measure|score)|classif|accuracy", re.IGNORECASE)
+_CLASSIFIER = lazily(
+    r"precision|recall|F-?(?:measure|score)|classif|accuracy|\bf1\b(?!\s?\()|epoch|\bloss\b",
+    re.IGNORECASE,
+)
 _DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
 _LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
@@ -113,7 +116,7 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
     test = next(item for item in items if item.head == anchor)
     value = next(part for part in test.parts if part.quantity in {"F", "F_change"})
     has_p = _has_p(items)
-    if {"by-subject", "by-item"} & set(test.flags):
+    if {"by-subject", "by-item"} & set(test.flags) and value.relation == "=":
         return has_p
     support = has_p or bool(quantities & _SUPPORT)
     if "df2" not in quantities:
@@ -141,6 +144,8 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
         counted = bool(quantities & {"df", "n"})
         possible = value.high >= -1.0 and value.low <= 1.0
         if counted and not has_p and "df" not in quantities and not _side_by_side(items, text):
+            return False
+        if not counted and _near(_CLASSIFIER(), items, text):
             return False
         return _spelt(text, value) and (has_p or counted) and (possible or "df" in quantities)
     if anchor == "z":

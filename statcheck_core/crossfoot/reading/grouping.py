@@ -19,7 +19,22 @@ _ANCHORS = frozenset({"F", "F_change", "t", "r", "z", "chi2", "b", "β", "beta",
 _COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
 #: What belongs to no claim of its own, so it follows its anchor rather than leads the next.
 _FOLLOWS = frozenset(
-    {"p", "d", "se", "ci", "eta2", "eta2_partial", "omega2", "ms", "df", "df-pair", "df1", "df2"}
+    {
+        "p",
+        "d",
+        "phi",
+        "cramers_v",
+        "se",
+        "ci",
+        "eta2",
+        "eta2_partial",
+        "omega2",
+        "ms",
+        "df",
+        "df-pair",
+        "df1",
+        "df2",
+    }
 )
 _MODEL_ONLY = frozenset({"R2", "R2_adj", "R2_change", "R", "f2", "s"})
 #: Of those, the ones that lead a test only right before it.

@@ -82,7 +82,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?\()|F(?=[\d_₀-₉])|f(?=\s?\()"
+        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?=[\d_₀-₉])|f(?=\s?\()"
         r"|min\s?F'?(?=\s?\())",
         False,
         "Ffm",
@@ -124,7 +124,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "eta2",
-        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s-]?(?:squared?|sq\.?|Quadrat|cuadrado)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
+        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s_-]?(?:squared?|sq\.?|Quadrat|cuadrado)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
         True,
         "η𝜂eE",
         "F(2, 57) = 3.90, p = .026, η² = .12",
@@ -214,10 +214,24 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "d",
-        rf"(?:[gG]enerali[sz]ed\s(?:η|eta)[\s-]?(?:squared|{_SQUARED})|(?:Cohen's\s)?(?:d_\{{?\w\}}?|d)|(?:Hedges'?s?\s)?g|φ|ϕ|Cramér's\sV|Cramer's\sV|V|ε\s?²|M_?diff|Δ?M)(?![\w²'.-])",
+        rf"(?:[gG]enerali[sz]ed\s(?:η|eta)[\s-]?(?:squared|{_SQUARED})|(?:Cohen's\s)?(?:d_\{{?\w\}}?|d)|(?:Hedges'?s?\s)?g|ε\s?²|M_?diff|Δ?M)(?![\w²'.-])",
         False,
-        "CdHgGφϕVεMΔ",
+        "CdHgGεMΔ",
         "t(58) = 2.05, p = .045, d = 0.54, 95% CI [0.01, 1.06]",
+    ),
+    Notation(
+        "phi",
+        r"(?:φ|ϕ|phi)(?:_\{?[A-Za-z]{1,5}\}?)?(?![a-zA-Z])(?:\scoefficient)?",
+        True,
+        "φϕp",
+        "χ²(1, N = 120) = 8.47, p = .004, φ = .27",
+    ),
+    Notation(
+        "cramers_v",
+        r"(?:Cram[ée]r['’]?s?\s(?:V|φ|ϕ|phi)|V(?=\s?[=:]))(?![a-zA-Z])",
+        True,
+        "CV",
+        "χ²(2, N = 310) = 9.21, p = .010, Cramér's V = .17",
     ),
     Notation("vif", r"VIF(?![a-z])", False, "V", "tolerance = .54, VIF = 1.85"),
     Notation("tolerance", r"[Tt]olerance(?![a-z])", False, "tT", "tolerance = .54, VIF = 1.85"),

@@ -147,10 +147,10 @@ def _read_f(text: Text, name: Name) -> Item | None:
         return None
     # F1 and F2 by subjects and items, and a lower-case f, are tests only with both df.
     units = _by_unit(printed)
-    if (units or printed == "f") and len(degrees.parts) != 2:
-        return None
     value = value_after(text, degrees.end, quantity, name, bare=len(degrees.parts) == 2)
     if value is None or value.high < 0:
+        return None
+    if (units or printed == "f") and len(degrees.parts) != 2 and value.relation == "=":
         return None
     parts = (*degrees.parts, *_mean_squares(text, degrees.end, value.start), value)
     end = value.end

@@ -14,8 +14,10 @@ _TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
 _COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
 #: An interval right behind one of these is the interval of that effect size.
 _OWN_INTERVAL = frozenset(
-    {"d", "eta2", "eta2_partial", "omega2", "R2", "R2_adj", "R2_change", "f2"}
+    {"d", "phi", "cramers_v", "eta2", "eta2_partial", "omega2", "R2", "R2_adj", "R2_change", "f2"}
 )
+#: Effect sizes that belong to χ² alone.
+_OF_COUNTS = frozenset({"phi", "cramers_v"})
 #: A residual standard deviation is read beside one of these.
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
 
@@ -172,7 +174,8 @@ def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
         if item.head == "ci" and (before in _OWN_INTERVAL or anchor in {"F", "F_change", "chi2"}):
             continue
         kept.append(item)
-    return [item for item in kept if item.head != "d"]
+    unread = {"d"} if anchor == "chi2" else {"d", *_OF_COUNTS}
+    return [item for item in kept if item.head not in unread]
 
 
 def _doubled(item: Item, items: Sequence[Item]) -> bool:

@@ -106,16 +106,12 @@ def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
     # Degrees of freedom before the estimate count parameters; after it they are the test's.
     order = [role for column in columns for role in column.heading.roles]
     of_test = "df" in order and order[0] != "df"
-    # A lone "C" is the constant of some programs; beside A and B it is a factor.
-    lettered = any(
-        row[c.number].text in {"A", "B", "D"} for row in sheet.panel.rows for c in labels
-    )
     of_ratio = _limits_of_ratio(order)
     lines: list[Line] = []
     for index, row in enumerate(sheet.panel.rows):
         words = tuple(row[c.number] for c in labels if row[c.number].text)
         label = label_of(", ".join(box.text for box in words))
-        if fits.is_fit(label) or is_intercept(label) or (label == "C" and not lettered):
+        if fits.is_fit(label) and not is_intercept(label):
             continue
         cells: dict[str, Reading] = {}
         given: list[Reading] = []

@@ -13,7 +13,7 @@ from crossfoot.reading.tables.columns import labels_of
 from crossfoot.reading.tables.contents import Content, Number, content_of, in_order, is_blank
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, marked, reading, value
-from crossfoot.reading.tables.rows import is_intercept, label_of
+from crossfoot.reading.tables.rows import label_of
 
 _ESTIMATES = frozenset({"b", "β", "beta"})
 _RATIO = re.compile(r"\bodds\sratios?|\bOR\b|exponentiated", re.IGNORECASE)
@@ -181,8 +181,6 @@ def _claims(
             kind = "se?"
     claims: list[Claim] = []
     for estimate in estimates:
-        if is_intercept(estimate.label):
-            continue
         found = _claim(sheet, estimate, kind, models[estimate.model], names[estimate.model])
         claims += [found] if found is not None else []
     return claims
