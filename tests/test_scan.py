@@ -74,6 +74,38 @@ class TestWordsThatReachFurther:
         text = f"With robust standard errors, {FIT}\n\n{FIT}\n"
         assert contexts(text) == [("robust",), ()]
 
+    def test_a_heading_says_of_which_models_its_section_speaks(self) -> None:
+        row = "b = −0.30, SE = 0.08, z = −3.75, p < .001, 95% CI [0.63, 0.87]"
+        text = f"# Logistic regression\n\nDamp mattered.\n\nShade: {row}.\n"
+        assert contexts(text) == [("generalised",)]
+        assert identities(text) == []
+
+    @pytest.mark.parametrize(
+        ("line", "context"),
+        [
+            ("Logistic regression.", ("generalised",)),
+            ("Tests against isometry (slope = 1).", ("other-null",)),
+            (
+                "Poisson regression, incidence rate ratios",
+                ("generalised", "other-null", "ratio-scale"),
+            ),
+            ("Predictors of yield.", ()),
+        ],
+    )
+    def test_a_line_above_a_table_is_as_good_as_its_caption(
+        self, line: str, context: tuple[str, ...]
+    ) -> None:
+        table = (
+            "| | Estimate | SE | t | p |\n|---|---|---|---|---|\n| A | 0.90 | 0.30 | 3.00 | .004 |"
+        )
+        assert contexts(f"{line}\n\n{table}\n") == [context]
+
+    def test_of_a_paragraph_above_a_table_only_the_kind_of_model_holds_for_it(self) -> None:
+        prose = "We fitted a logistic regression. " + "The plots lay along the dike. " * 8
+        prose += "A rate ratio of two would be large."
+        table = "| | b | SE | t | p |\n|---|---|---|---|---|\n| A | 0.90 | 0.30 | 3.00 | .004 |"
+        assert contexts(f"{prose}\n\n{table}\n") == [("generalised",)]
+
 
 class TestRemarks:
     def test_allow_settles_the_claim_before_it_on_its_line(self) -> None:

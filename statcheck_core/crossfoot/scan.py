@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING
 from crossfoot import documents
 from crossfoot.model import Audited, Block, Claim, Document, Placed, Report
 from crossfoot.reading import read_block
-from crossfoot.reading.cues import is_methods, spreading
+from crossfoot.reading.cues import above, is_methods, spreading, titled
 from crossfoot.settings import DEFAULTS, Settings
 
 if TYPE_CHECKING:
@@ -127,12 +127,13 @@ def _audited(document: Document, assumed: Sequence[Assume], settings: Settings) 
         reading = read_block(language, kind, source, definitions)
         if reading.claims:
             audit = audit or _auditor()
-            noted = _note_below(document, index)
+            noted = _beside(document, index)
             for claim in reading.claims:
                 number += 1
                 yield Placed(f"c{number}", start, audit(scope.apply(claim, noted), level))
         elif reading.cues.contexts or reading.cues.alpha:
-            scope.spread(spreading(block.source), reading.cues.alpha)
+            said = titled(source) if kind == "heading" else spreading(source)
+            scope.spread(said, reading.cues.alpha)
 
 
 def _auditor() -> Callable[[Claim, float], Audited]:
@@ -140,6 +141,16 @@ def _auditor() -> Callable[[Claim, float], Audited]:
     from crossfoot.audit import audit_claim
 
     return audit_claim
+
+
+def _beside(document: Document, index: int) -> frozenset[str]:
+    """Return what the paragraphs right above and below a table or printout say of it."""
+    found = _note_below(document, index)
+    if document.blocks[index].kind in {"table", "verbatim"} and index > 0:
+        before = document.blocks[index - 1]
+        if before.kind in {"prose", "heading"}:
+            found |= above(before.source)
+    return found
 
 
 def _note_below(document: Document, index: int) -> frozenset[str]:

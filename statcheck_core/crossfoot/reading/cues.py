@@ -216,7 +216,8 @@ CUES: tuple[Cue, ...] = (
             "airr; or; aor; auc; auroc; roc; exp("
         ),
         near=True,
-        confirm=r"(?<![ftz][ -])\bratios?\b|relative risk|\bodds\b"
+        confirm=r"(?:hazards?|risk|rate|odds|incidence|prevalence|response|means)[ -]ratios?\b"
+        r"|\bratios? of|relative risk|\bodds\b"
         r"|\btimes (?:as|more|less|higher|lower|greater)"
         r"|fold\b|\ba?(?:hr|rr|irr|shr|or)s?\s?[=:(]|\bau(?:ro)?c\b|\broc\b|exp\(",
     ),
@@ -255,6 +256,10 @@ _ALPHA = (
     r"|p\s?[<≤]\s?(?P<below>0?[.,]\d{1,4})\s(?:(?:was|were|is|are)\s)?(?:considered|deemed|taken|regarded|treated|as|defined|indicat)\w*"
     r"[^.]{0,40}signific"
 )
+#: What a heading says for its section, and a paragraph for the table below it.
+_OF_MODELS = frozenset({"generalised", "other-null", "resampled", "variance-ratio"})
+#: A paragraph no longer than this may be a caption, though nothing marks it as one.
+_LONGEST_LINE = 200
 _WORD_OF_ALPHA = ("alpha", "α", "significan")
 #: Words of a heading under which a paragraph speaks for the whole document.
 _METHODS = (
@@ -336,6 +341,20 @@ def spreading(text: str) -> frozenset[str]:
         and cue.context in contexts
         and (not cue.general or re.search(cue.general, low))
     )
+
+
+def titled(text: str) -> frozenset[str]:
+    """Return the contexts that a heading states for its section."""
+    return spreading(text) | (cues_in(text).contexts & _OF_MODELS)
+
+
+def above(text: str) -> frozenset[str]:
+    """Return the contexts that a paragraph states for the table or printout right below it."""
+    contexts = cues_in(text).contexts
+    if len(text) > _LONGEST_LINE:
+        return contexts & _OF_MODELS
+    # A line alone is a caption. Where it speaks of ratios, they are what the table estimates.
+    return contexts | {"other-null"} if "ratio-scale" in contexts else contexts
 
 
 def _alpha(text: str, low: str) -> float | None:

@@ -12,13 +12,13 @@ from crossfoot.reading.fold import fold
 from crossfoot.reading.tables import legend as legends
 from crossfoot.reading.tables.anova import anova, bare
 from crossfoot.reading.tables.coefficients import coefficients
-from crossfoot.reading.tables.columns import columns_of, writes_comma
+from crossfoot.reading.tables.columns import columns_of, roles_in, writes_comma
 from crossfoot.reading.tables.comparisons import comparisons
 from crossfoot.reading.tables.correlations import correlations
 from crossfoot.reading.tables.grid import Panel, panels_of
 from crossfoot.reading.tables.keyvalue import key_values
 from crossfoot.reading.tables.legend import Legend
-from crossfoot.reading.tables.making import Found, Sheet
+from crossfoot.reading.tables.making import Column, Found, Sheet
 from crossfoot.reading.tables.results import results
 from crossfoot.reading.tables.sidebyside import side_by_side
 from crossfoot.reading.tables.summaries import summaries
@@ -82,9 +82,10 @@ def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, 
     found: list[Claim] = []
     for panel in panels:
         heads = " ".join(box.text for row in panel.heads for box in row)
+        columns = columns_of(panel)
         sheet = Sheet(
-            table.visible.text, folded, panel, columns_of(panel), legend, writes_comma(panel),
-            title, f"{words} {heads}",
+            table.visible.text, folded, panel, columns, _scaled(legend, words, heads, columns),
+            writes_comma(panel), title, f"{words} {heads}",
         )  # fmt: skip
         known = _recognised(sheet)
         found += known.claims
@@ -103,6 +104,21 @@ def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, 
             complete=_OMITS.search(folded, 0, _LONGEST_NOTE) is None,
         )
     )
+
+
+#: Said of estimates that are ratios, whatever their column is called.
+_RATIOS = re.compile(
+    r"(?:odds|hazards?|risk|rate|incidence|prevalence)[\s-]ratios|exponentiated|\bIRRs?\b|\bHRs?\b",
+    re.IGNORECASE,
+)
+
+
+def _scaled(legend: Legend, words: str, heads: str, columns: Sequence[Column]) -> Legend:
+    """Add what caption and headings say of the scale of estimates and their intervals."""
+    contexts = legend.contexts | (cues_in(heads).contexts & {"ratio-scale"})
+    if "odds_ratio" not in roles_in(columns) and _RATIOS.search(f"{words[:_LONGEST_NOTE]} {heads}"):
+        contexts |= {"ratio-scale", "other-null"}
+    return legend._replace(contexts=contexts)
 
 
 def _told(table: Table, legend: Legend) -> Reading | None:

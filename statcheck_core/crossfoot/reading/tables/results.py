@@ -25,7 +25,7 @@ _NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2",
 
 def results(sheet: Sheet) -> Found | None:
     """Return the claims of a table of tests, a row each, or None where it is none."""
-    sheet = sheet._replace(columns=_with_symbols(sheet))
+    sheet = sheet._replace(columns=_of_the_test(_with_symbols(sheet)))
     roles = roles_in(sheet.columns)
     if roles & _NEVER or not roles & set(_KINDS):
         return None
@@ -39,6 +39,25 @@ def results(sheet: Sheet) -> Found | None:
             claims += found.claims
             rows |= found.rows
     return Found(tuple(claims), frozenset(rows)) if claims else None
+
+
+#: Headings of what tells how well each of several models fits.
+_CRITERIA = re.compile(r"AICc?|BIC|log-?\s?lik(?:elihood)?|-2\s?LL|deviance", re.IGNORECASE)
+
+
+def _of_the_test(columns: Sequence[Column]) -> tuple[Column, ...]:
+    """Take the df of a comparison of models for that of its test, and not that of each model."""
+    changes = any(column.heading.roles == ("df_change",) for column in columns)
+    criteria = [c.number for c in columns if _CRITERIA.fullmatch(c.box.text.strip())]
+    kept = []
+    for column in columns:
+        heading = column.heading
+        if heading.roles == ("df_change",):
+            heading = heading._replace(roles=("df",))
+        elif heading.roles == ("df",) and (changes or column.number < max(criteria, default=0)):
+            heading = heading._replace(roles=())
+        kept.append(column._replace(heading=heading))
+    return tuple(kept)
 
 
 #: What a cell calls the test whose result it holds.

@@ -1,7 +1,8 @@
 """What columns and rows are called: one declaration a role.
 
 A role is the key of a quantity, or one of a few words for what needs its neighbours to be told:
-``df`` (of what, the row says), ``wald``, ``label``, ``p_adjusted``, ``rss``, ``df_residual``.
+``df`` (of what, the row says), ``wald``, ``label``, ``p_adjusted``, ``rss``, ``df_residual``,
+``df_change`` (of the difference of two models).
 Names are compared without case, spaces, dots and hyphens; symbols of one or two letters keep
 their case, because F, f, B, b, R and r differ.
 """
@@ -58,6 +59,7 @@ ROLES: tuple[Role, ...] = (
         " residualdf dfdenominator denomdf dendof residualdegreesoffreedom errordegreesoffreedom"
         " nennerdf dofresiduals",
     ),
+    Role("df_change", "", "Δdf deltadf chidf chisqdf dfchange changeindf dfdifference diffdf"),
     Role("df_residual", "", "resdf residdf dfresid residualdf(model)"),
     Role("rss", "RSS SSR SSE ssr", "residsumofsquares residualss"),
     Role(

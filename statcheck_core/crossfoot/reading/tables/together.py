@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading
+from crossfoot.reading.tables.rows import is_intercept
 
 _WITH_ANOVA = frozenset(
     {"R", "R2", "R2_adj", "s", "n", "df1", "df2", "F", "p", "eta2", "omega2", "f2"}
@@ -117,7 +118,13 @@ def _with_counts(
     The number of predictors is that of the model's rows, which is sure only if it lists them all.
     """
     rows = {
-        id(model): [c for c in claims if c.kind == "coefficient" and _model_of(c, models) is model]
+        id(model): [
+            c
+            for c in claims
+            if c.kind == "coefficient"
+            and _model_of(c, models) is model
+            and not is_intercept(_name(c))
+        ]
         for model in (None, *models)
     }
     before: Claim | None = None
