@@ -68,12 +68,12 @@ _VERBS = frozenset(
 _COLON = expression(r":(?![:\w-])\s")
 _NOTE = expression(
     r"[*\s]{0,4}(?:notes?\b|anmerkung(?:en)?\b|remarques?\b|notas?\b|legend\b|注|source\s?:)[*\s]{0,4}[.:\s]|[*\s]{0,2}[a-e][.)]?\s{1,3}R[\s-]?sq"
-    r"|.{0,60}?(?<!\w)[*†‡+]{1,4}\s?'?\s?(?:p|=|:|significant|indicates|denotes)?\s?(?:-?values?)?\s?(?:<|≤|&lt;|&le;|=\s?p|significant|sig\.|0?\.\d)"
+    r"|.{0,60}?(?<!\w)[*†‡+]{1,4}\s?'?\s?(?:[*_]?p[*_]?|=|:|significant|indicates|denotes)?\s?(?:-?values?)?\s?(?:<|≤|&lt;|&le;|=\s?p|significant|sig\.|0?\.\d)"
     r"|.{0,12}p\s?(?:<|≤|&lt;)\s?\.?\d[\d.,]*\s?[*†]|.{0,8}\*{1,3},?\s.{0,30}(?:significan|level)"
     r"|.{0,40}(?:standard\serrors?|std\.?\serr\w*|t[\s-]?(?:statistics?|stats?|values?|ratios?)|p[\s-]?values?|SEs?|confidence\sintervals?"
     r"|Standardfehler)\b.{0,50}(?:in|between)\s(?:the\s)?(?:parenthes|bracket|square|round|Klammern)"
     r"|.{0,8}(?:values|numbers|figures|entries|cell\sentries)\b.{0,30}(?:parenthes|bracket)"
-    r"|[*\s]{0,3}(?:N|n|R\^?(?:2|²|<sup>2)|R²|F|Adj(?:usted|\.)?\sR)\*{0,2}\s?(?:\(|=)",
+    r"|[*\s]{0,3}(?:N|n|R\*?\^?(?:2|²|<sup>2)|F|Adj(?:usted|\.)?\sR)\*{0,2}\s?(?:\(|=)",
     re.IGNORECASE | re.DOTALL,
 )
 _SHORT_NOTE = expression(r"[*\s]{0,3}(?:N|n|R|F|Adj)")
@@ -81,6 +81,9 @@ _SHORT_NOTE = expression(r"[*\s]{0,3}(?:N|n|R|F|Adj)")
 _NAMED = expression(
     r"(?:^|\n)[ \t]*(?:#\+(?:caption|CAPTION)(?:\[[^\[\]\n]{0,80}\])?:|\.\. table::|\.)[ \t]*$"
 )
+#: Where a float of LaTeX starts or ends, and how far below a table that is looked for.
+_FLOAT = expression(r"\\(begin|end)\{(?:sideways|wrap|threepart)?table\*?\}")
+_REACH = 2000
 _LONGEST_CAPTION = 900
 _LONGEST_NOTE = 1500
 _MOST_NOTES = 3
@@ -115,7 +118,9 @@ def together(blocks: Sequence[Block], text: str, kind: str = "table") -> tuple[B
             end = _end(blocks[following])
             following += 1
         for _ in range(_MOST_NOTES):
-            if following < len(blocks) and _is_note(blocks[following]):
+            if following < len(blocks) and (
+                _is_note(blocks[following]) or _floats(blocks[following], text)
+            ):
                 end = _end(blocks[following])
                 following += 1
         number = following
@@ -183,6 +188,14 @@ def _trails(blocks: Sequence[Block], number: int) -> bool:
         return False
     above_next = number + 1 < len(blocks) and blocks[number + 1].kind in {"table", "verbatim"}
     return not above_next
+
+
+def _floats(block: Block, text: str) -> bool:
+    """Say whether a paragraph below a table stands in the same float of LaTeX."""
+    if block.kind != "prose" or len(block.source) > _LONGEST_NOTE or is_caption(block.source):
+        return False
+    found = _FLOAT.search(text, _end(block), _end(block) + _REACH)
+    return found is not None and found[1] == "end"
 
 
 def _is_note(block: Block) -> bool:

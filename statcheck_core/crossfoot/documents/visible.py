@@ -177,7 +177,8 @@ def _pass_on(out: Builder, first: Visible, bounds: list[int], start: int, text: 
         number += 1
 
 
-_SPACE = expression(r"\s+")
+#: A space between the digits of one number is kept as it is.
+_SPACE = expression(r"(?!(?<=\d)[\u00a0\u2007\u2009\u202f]\d{3}(?!\d))\s+")
 
 
 def flat(visible: Visible) -> Visible:

@@ -9,7 +9,7 @@ from collections.abc import Sequence
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables.analysis import MOST, claims_of
 from crossfoot.reading.tables.columns import labels_of, roles_in, side_by_side
-from crossfoot.reading.tables.contents import NONE, content_of
+from crossfoot.reading.tables.contents import NONE, content_of, fitting
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.making import (
     Column,
@@ -111,7 +111,7 @@ def _read(
     content = content_of(box.text, box.start) or NONE
     roles = column.heading.roles
     numbers = content.numbers
-    for role, number in zip(roles, numbers, strict=False):
+    for role, number in zip(roles, fitting(roles, content), strict=False):
         quantity = _QUANTITIES.get(role)
         if quantity is None:
             continue

@@ -12,7 +12,7 @@ from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import fits
 from crossfoot.reading.tables.brackets import Sample, may_be_error, told_apart
 from crossfoot.reading.tables.columns import labels_of, side_by_side
-from crossfoot.reading.tables.contents import NONE, Content, Number, content_of, in_order
+from crossfoot.reading.tables.contents import NONE, Content, Number, content_of, fitting, in_order
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.making import (
     Column,
@@ -68,8 +68,10 @@ def coefficients(sheet: Sheet) -> Found | None:
         lines = _settled(sheet, _lines(sheet, group))
         if not _plausible(lines):
             continue
+        steps = fits.steps_in(sheet)
         for line in lines:
-            found = _claim(sheet, line, name)
+            step = next((label for n, label in reversed(steps) if n < line.number), "")
+            found = _claim(sheet, line, ", ".join(part for part in (step, name) if part))
             claims += [found] if found is not None else []
             rows.add(line.number)
     if not claims:
@@ -152,6 +154,8 @@ def _read(
     numbers = content.numbers
     if "ci_low" in roles and "ci_high" in roles and len(numbers) >= 2:
         numbers = (*numbers[:-2], *in_order(numbers[-2:], sheet.comma))
+    if numbers and not fitting(roles, content):
+        return None
     if len(numbers) < len(roles) and len(roles) > 1 and len(content.plain) != 1:
         return None
     for role, number in zip(roles, numbers, strict=False):

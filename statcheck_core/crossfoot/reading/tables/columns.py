@@ -86,7 +86,7 @@ def _column(panel: Panel, index: int) -> Column:
     groups = [
         other
         for other in boxes
-        if other is not box and (other not in used) and (other.columns > 1 or heading.roles)
+        if other.text != box.text and other not in used and (other.columns > 1 or heading.roles)
     ]
     group = " ".join(other.text for other in groups)
     if not heading.roles:

@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 import re
+from collections.abc import Sequence
 from typing import NamedTuple
 
 from crossfoot.reading import numerals
+from crossfoot.reading.fold import HARD_SPACE
 from crossfoot.reading.items import WHOLE, Part
 from crossfoot.reading.numerals import NUMERAL
 
@@ -38,6 +40,9 @@ _TEST = re.compile(
 _WITH_P = re.compile(
     r"[,;]?\s?p\s?(?P<relation><\s?=|[<=≤])\s?(?P<number>0?[.,]\d{1,20}(?:[eE]-\d{1,3})?)\Z"
 )
+#: One number whose digits are grouped by spaces: ``12 041.55``.
+_GROUPED = re.compile(r"[-+]?[1-9]\d{0,2}(?: \d{3})+(?:[.,]\d+)?(?![ \d]|[.,;]\d)")
+_GROUPED_SPACE = re.compile(r"(?<=\d) (?=\d)")
 #: Longest cell that is looked at for numbers.
 _LONGEST = 120
 _RELATIONS = {"<=": "≤", ">=": "≥"}
@@ -91,6 +96,14 @@ class Content(NamedTuple):
 NONE = Content(())
 
 
+def fitting(roles: Sequence[str], content: Content) -> tuple[Number, ...]:
+    """Return the numbers of a cell as far as its heading names them.
+
+    There are none where more stand side by side than it names: which is meant is not known.
+    """
+    return content.numbers if len(content.plain) <= len(roles) else ()
+
+
 def is_blank(text: str) -> bool:
     """Say whether a cell's folded text stands for no content."""
     return len(text) < 16 and _BLANK.fullmatch(text.strip()) is not None
@@ -108,6 +121,13 @@ def content_of(text: str, at: int = 0) -> Content | None:
     """
     if len(text) > _LONGEST or is_blank(text):
         return NONE if len(text) <= _LONGEST else None
+    if _GROUPED.match(text):
+        grouped = _scan(_GROUPED_SPACE.sub(HARD_SPACE, text), 0, len(text), at, ())
+        return grouped and grouped._replace(
+            numbers=tuple(
+                n._replace(literal=text[n.start - at : n.end - at]) for n in grouped.numbers
+            )
+        )
     df: tuple[Number, ...] = ()
     cut = len(text)
     start = 0
@@ -223,6 +243,10 @@ def part(
     literal = number.literal
     if percent and not literal.endswith("%"):
         literal += "%"
+    if _GROUPED.match(literal):
+        if quantity in WHOLE and quantity != "n":
+            return None  # "2 187" may be two degrees of freedom
+        literal = _GROUPED_SPACE.sub(HARD_SPACE, literal)
     numeral = numerals.parse(literal, decimal_comma=comma, whole=quantity in WHOLE)
     if numeral is None:
         return None

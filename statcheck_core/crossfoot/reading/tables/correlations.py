@@ -42,6 +42,8 @@ def correlations(sheet: Sheet) -> Found | None:
     kinds, contexts = _kinds(sheet, labels)
     names = _names(sheet, labels, kinds)
     columns = _matched(sheet, names)
+    if said:
+        columns = _with_first(sheet, columns, names)
     if len(columns) < 2 or not _is_matrix(sheet, columns, names, kinds, said):
         columns = _crossed(sheet, labels, names, kinds) if said else []
         if not columns:
@@ -180,6 +182,22 @@ def _matched(sheet: Sheet, names: list[str]) -> list[tuple[Column, str]]:
         elif text.lower() in exact:
             found.append((column, exact[text.lower()]))
     return found
+
+
+def _with_first(
+    sheet: Sheet, columns: list[tuple[Column, str]], names: list[str]
+) -> list[tuple[Column, str]]:
+    """Take in the column of the first variable, which has no row of its own in a triangle."""
+    if not columns or len(columns) != len([name for name in names if name]) - 1:
+        return columns
+    first = columns[0][0].number
+    before = [c for c in sheet.columns if c.number == first - 1]
+    if not before or before[0].heading.roles or not before[0].box.text or first < 2:
+        return columns
+    filled = [row[first - 1].text for row in sheet.panel.rows if row[first - 1].text]
+    if len(filled) != len([name for name in names if name]):
+        return columns
+    return [(before[0], label_of(before[0].box.text)), *columns]
 
 
 def _has_ones(sheet: Sheet, columns: list[tuple[Column, str]], names: list[str]) -> bool:

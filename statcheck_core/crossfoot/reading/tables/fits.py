@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Sequence
 from typing import NamedTuple
 
@@ -10,7 +11,7 @@ from crossfoot.reading.tables import headings
 from crossfoot.reading.tables.columns import labels_of
 from crossfoot.reading.tables.contents import Content, Number, content_of
 from crossfoot.reading.tables.grid import Box
-from crossfoot.reading.tables.headings import Heading
+from crossfoot.reading.tables.headings import NOTHING, Heading
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, marked, reading
 from crossfoot.reading.tables.rows import label_of
 
@@ -21,6 +22,10 @@ FIT = frozenset(
 _STRONG = frozenset({"R2", "R2_adj", "R2_change", "F", "F_change"})
 _CHANGE = frozenset({"R2_change", "F_change", "p_change"})
 _SHARES = frozenset({"R2", "R2_adj", "R2_change", "R"})
+
+
+#: The label of a row that starts a step.
+_STEP = re.compile(r"(?:step|block|model|stage|schritt|étape|paso)\b", re.IGNORECASE)
 
 
 class Entry(NamedTuple):
@@ -70,7 +75,10 @@ def fit_rows(sheet: Sheet, groups: Sequence[Sequence[Column]], names: Sequence[s
         words = [row[c.number] for c in labels if row[c.number].text]
         label = " ".join(box.text for box in words)
         heading = headings.parse_label(label)
-        if not (is_fit(label) or (after_fit and heading.roles == ("p",))):
+        if heading.roles == ("df",):
+            # Two numbers are those of F; of one it is not known whose it is.
+            heading = heading._replace(roles=("df1", "df2")) if _are_pairs(row, groups) else NOTHING
+        elif not (is_fit(label) or (after_fit and heading.roles == ("p",))):
             continue
         after_fit = True
         head = words[0] if words else row[0]
@@ -88,6 +96,22 @@ def fit_rows(sheet: Sheet, groups: Sequence[Sequence[Column]], names: Sequence[s
     return Found(tuple(model_claims(sheet, models, with_coefficients=True)), frozenset(rows))
 
 
+def _label(row: tuple[Box, ...], labels: Sequence[Column]) -> str:
+    """Return what a row calls its model; a mere number is one of what the heading says."""
+    label = label_of(", ".join(row[c.number].text for c in labels if row[c.number].text))
+    if label.isdigit() and labels[0].box.text:
+        return f"{label_of(labels[0].box.text)} {label}"
+    return label
+
+
+def _are_pairs(row: tuple[Box, ...], groups: Sequence[Sequence[Column]]) -> bool:
+    """Say whether the cells of a row hold two numbers each."""
+    texts = [row[c.number].text for group in groups for c in group if row[c.number].text]
+    return bool(texts) and all(
+        (content := content_of(text)) is not None and len(content.numbers) == 2 for text in texts
+    )
+
+
 def entries_of(
     sheet: Sheet, heading: Heading, head: Box, box: Box, contexts: list[str]
 ) -> list[Entry]:
@@ -100,7 +124,7 @@ def entries_of(
     if len(numbers) > len(heading.roles) and not (
         heading.roles[0] in {"F", "F_change"} and len(numbers) == 3
     ):
-        numbers = content.plain[: len(heading.roles)]
+        numbers = content.plain if len(content.plain) <= len(heading.roles) else ()
     for role, number in zip(heading.roles, numbers, strict=False):
         quantity = {"p_change": "p"}.get(role, role)
         read = reading(sheet, number, quantity, percent=heading.percent)
@@ -161,9 +185,7 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     rows: set[int] = set()
     for index, row in enumerate(sheet.panel.rows):
         words = tuple(row[c.number] for c in labels if row[c.number].text)
-        label = label_of(", ".join(box.text for box in words))
-        if label.isdigit() and labels[0].box.text:
-            label = f"{label_of(labels[0].box.text)} {label}"
+        label = _label(row, labels)
         entries: list[Entry] = []
         contexts: list[str] = []
         for column in columns:
@@ -179,6 +201,22 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
             rows.add(index)
     claims = model_claims(sheet, models, with_coefficients=beside_coefficients)
     return Found(tuple(claims), frozenset(rows) if claims else frozenset())
+
+
+def steps_in(sheet: Sheet) -> list[tuple[int, str]]:
+    """Return the rows that tell of a step and nothing else, where its predictors stand below.
+
+    Each with the label under which :func:`fit_columns` tells of it.
+    """
+    found = fit_columns(sheet, beside_coefficients=True)
+    labels = labels_of(sheet.panel, sheet.columns)
+    told = {claim.label for claim in found.claims}
+    steps: list[tuple[int, str]] = []
+    for index in sorted(found.rows):
+        label = _label(sheet.panel.rows[index], labels)
+        if label in told and _STEP.match(label):
+            steps.append((index, label))
+    return steps
 
 
 def _pair_or_one(text: str) -> tuple[str, ...]:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import itertools
 from typing import NamedTuple
 
 from crossfoot.documents.table import Table
@@ -12,6 +13,8 @@ from crossfoot.reading.tables.contents import content_of, is_blank
 _STARS = str.maketrans("∗⁎﹡＊⋆★", "******")
 #: Words of a header that are no role: names of models, of what is explained.
 _MOST_HEADS = 6
+#: The highest number in brackets that may stand for a model.
+_MOST_MODELS = 20
 
 
 class Box(NamedTuple):
@@ -156,15 +159,17 @@ def _may_be_head(row: tuple[Box, ...], follows: bool) -> bool:
 
 
 def _counts_columns(texts: list[str]) -> bool:
-    """Say whether cells number the columns: 1 2 3, (1) (2) (3)."""
+    """Say whether cells number the columns: 1 2 3, or (1) (2) (4) where some are left out."""
     counts = [text.strip("()[]. ") for text in texts if text.strip("()[]. ").isdigit()]
     if len(counts) < 2 or int(counts[0]) > 2:
         return False
     others = [text for text in texts if not text.strip("()[]. ").isdigit()]
-    first = int(counts[0])
-    return not any(map(is_number, others)) and counts == [
-        str(number) for number in range(first, first + len(counts))
-    ]
+    numbers = [int(count) for count in counts]
+    steps = {b - a for a, b in itertools.pairwise(numbers)}
+    enclosed = all(text[0] in "([" for text in texts if text.strip("()[]. ").isdigit())
+    return not any(map(is_number, others)) and (
+        steps == {1} or (enclosed and min(steps) > 0 and numbers[-1] <= _MOST_MODELS)
+    )
 
 
 def _names(filled: list[Box]) -> int:

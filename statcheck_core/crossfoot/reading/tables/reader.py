@@ -15,11 +15,12 @@ from crossfoot.reading.tables.coefficients import coefficients
 from crossfoot.reading.tables.columns import columns_of, roles_in, writes_comma
 from crossfoot.reading.tables.comparisons import comparisons
 from crossfoot.reading.tables.correlations import correlations
-from crossfoot.reading.tables.grid import Panel, panels_of
+from crossfoot.reading.tables.grid import Box, Panel, panels_of
 from crossfoot.reading.tables.keyvalue import key_values
 from crossfoot.reading.tables.legend import Legend
 from crossfoot.reading.tables.making import Column, Found, Sheet
 from crossfoot.reading.tables.results import results
+from crossfoot.reading.tables.rows import label_of
 from crossfoot.reading.tables.sidebyside import side_by_side
 from crossfoot.reading.tables.summaries import summaries
 from crossfoot.reading.tables.together import joined
@@ -50,6 +51,10 @@ _OMITS = re.compile(
     r"\bcontrol(?:s|led|ling)?\b|fixed\seffects?|dumm(?:y|ies)|not\s(?:shown|reported|listed)|omitted"
     r"|adjust(?:ed|ing)\sfor|covariates?|suppressed|all\smodels\sinclude|also\sinclude",
     re.IGNORECASE,
+)
+#: Where these are spoken of, degrees of freedom may be those of a test of the whole model.
+_LIKELIHOOD = re.compile(
+    r"χ|chi|likelihood|deviance|logi[ts]|odds|wald|probit|poisson|binomial|hosmer", re.IGNORECASE
 )
 #: Longest caption or note that is looked at, in code points.
 _LONGEST_NOTE = 4000
@@ -100,7 +105,8 @@ def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, 
         joined(
             found,
             notes,
-            _told(table, legend),
+            _cases(table, legend),
+            _freedom(table, legend, words),
             complete=_OMITS.search(folded, 0, _LONGEST_NOTE) is None,
         )
     )
@@ -121,13 +127,23 @@ def _scaled(legend: Legend, words: str, heads: str, columns: Sequence[Column]) -
     return legend._replace(contexts=contexts)
 
 
-def _told(table: Table, legend: Legend) -> Reading | None:
+def _cases(table: Table, legend: Legend) -> Reading | None:
     """Return the number of cases that caption or notes tell."""
     part = legend.cases
     if part is None:
         return None
     literal = table.visible.text[part.start : part.end]
     return Reading("n", "=", literal, part.low, part.high, Span(part.start, part.end))
+
+
+def _freedom(table: Table, legend: Legend, words: str) -> Reading | None:
+    """Return the degrees of freedom that caption or notes tell for all t of a regression."""
+    if len(legend.df) != 1 or "generalised" in legend.contexts or _LIKELIHOOD.search(words):
+        return None
+    number = legend.df[0]
+    literal = table.visible.text[number.start : number.end]
+    degrees = int(number.literal)
+    return Reading("df", "=", literal, degrees, degrees, Span(number.start, number.end))
 
 
 def _recognised(sheet: Sheet) -> Found:
@@ -180,5 +196,16 @@ def _written_out(
             continue
         start, end = filled[0].start, filled[-1].end
         if _STATED.search(folded, start, end):
-            claims += prose(start, end)
+            claims += [_in_cell(claim, panel, filled) for claim in prose(start, end)]
     return claims
+
+
+def _in_cell(claim: Claim, panel: Panel, row: Sequence[Box]) -> Claim:
+    """Name a result that is written out in a cell by the row and the column it stands in."""
+    box = next((box for box in row if box.start <= claim.span.start < box.end), row[0])
+    if box is row[0]:
+        return claim
+    head = panel.heads[-1][box.column].text if panel.heads else ""
+    others = any(other.column not in {0, box.column} and "=" in other.text for other in row)
+    names = [label_of(row[0].text), label_of(head) if others else ""]
+    return claim._replace(row=", ".join(name for name in names if name))

@@ -206,6 +206,8 @@ def _read(
         roles = ("df1", "df2")
     if len(roles) == 2 and roles[1] == "df" and len(numbers) == 3:
         roles = (roles[0], "df1", "df2")
+    if sum(not number.bracket for number in numbers) > len(roles):
+        numbers = ()  # which of them is meant is not known
     for role, number in zip(roles, numbers, strict=False):
         quantity = one if role == "df" else role
         if quantity not in _ROLES:

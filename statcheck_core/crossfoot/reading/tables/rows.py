@@ -6,7 +6,7 @@ import re
 
 from crossfoot.reading.tables.roles import plain
 
-_FOOT = re.compile(r"\^\{(?:[a-z*†‡,]{1,3}|[13-9])\}|[*†‡]+$|\s?\([a-e]\)$|(?<=[a-z)])[¹²³⁴](?=$)")
+_FOOT = re.compile(r"\^\{(?:[a-z*†‡,]{1,3}|[13-9])\}|[*†‡]+$|\s?\([a-e]\)$|(?<=[a-z)])[¹³⁴](?=$)")
 _INDEX = re.compile(r"^\(?\d{1,3}[.)]\s+")
 
 _ERROR = re.compile(

@@ -19,6 +19,7 @@ def joined(
     found: Sequence[Claim],
     notes: Sequence[Claim],
     cases: Reading | None = None,
+    df: Reading | None = None,
     *,
     complete: bool = True,
 ) -> list[Claim]:
@@ -32,6 +33,8 @@ def joined(
         What caption and notes say in words.
     cases
         The number of cases that caption or notes tell.
+    df
+        The degrees of freedom that they tell for all coefficients.
     complete
         Whether nothing says that the table leaves predictors out.
     """
@@ -45,7 +48,7 @@ def joined(
             claims[target] = _merged(claims[target], note)
     models = [c for c in (*claims, *rest) if c.kind in {"overall-model", "model-change"}]
     analyses = [c for c in claims if c.kind == "anova-table"]
-    claims = [_with_df(claim, models, analyses) for claim in claims]
+    claims = [_with_df(claim, models, analyses, df) for claim in claims]
     if complete:
         claims = _with_counts(claims, models, cases)
     claims += rest
@@ -86,12 +89,14 @@ def _merged(claim: Claim, note: Claim) -> Claim:
     )
 
 
-def _with_df(claim: Claim, models: Sequence[Claim], analyses: Sequence[Claim]) -> Claim:
+def _with_df(
+    claim: Claim, models: Sequence[Claim], analyses: Sequence[Claim], told: Reading | None
+) -> Claim:
     """Give a coefficient the error degrees of freedom of its model."""
     quantities = {r.quantity for r in (*claim.readings, *claim.given)}
     if claim.kind != "coefficient" or quantities & {"df", "df2", "z"}:
         return claim
-    df = _df_of(claim, models, analyses)
+    df = _df_of(claim, models, analyses) or told
     if df is None:
         return claim
     return claim._replace(given=(*claim.given, df._replace(quantity="df", term=None)))
