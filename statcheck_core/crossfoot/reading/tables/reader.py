@@ -121,8 +121,10 @@ _RATIOS = re.compile(
 
 def _scaled(legend: Legend, words: str, heads: str, columns: Sequence[Column]) -> Legend:
     """Add what caption and headings say of the scale of estimates and their intervals."""
+    if "odds_ratio" in roles_in(columns):
+        return legend
     contexts = legend.contexts | (cues_in(heads).contexts & {"ratio-scale"})
-    if "odds_ratio" not in roles_in(columns) and _RATIOS.search(f"{words[:_LONGEST_NOTE]} {heads}"):
+    if _RATIOS.search(f"{words[:_LONGEST_NOTE]} {heads}"):
         contexts |= {"ratio-scale", "other-null"}
     return legend._replace(contexts=contexts)
 
