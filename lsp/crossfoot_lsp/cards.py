@@ -13,8 +13,8 @@ from crossfoot.laws import IDENTITIES
 from crossfoot.laws.assumptions import CONTEXTS
 from crossfoot.laws.interval import Interval, meet
 from crossfoot.laws.quantities import QUANTITIES, symbol
-from crossfoot.model import Check, Claim, Finding, Placed, Reading
-from crossfoot_lsp.lookup import Spot, findings_at
+from crossfoot.model import Audited, Check, Claim, Finding, Placed, Reading
+from crossfoot_lsp.lookup import Spot, all_readings, findings_at
 
 _MARKUP = re.compile(r"([\\`*_{}\[\]<>#|~])")
 
@@ -64,8 +64,16 @@ def _escaped(text: str) -> str:
     return _MARKUP.sub(r"\\\1", " ".join(text.split()))
 
 
-def card_of_reading(spot: Spot) -> Card:
-    """Return what is to be said about one number."""
+def card_of_reading(spot: Spot, marked: bool = False) -> Card:
+    """Return what is to be said about one number.
+
+    Parameters
+    ----------
+    spot
+        The number.
+    marked
+        Whether what is found about it stands beside the card already.
+    """
     reading, claim = spot.reading, spot.placed.audited.claim
     quantity = QUANTITIES[reading.quantity]
     sections: list[tuple[str, tuple[str, ...]]] = []
@@ -73,14 +81,16 @@ def card_of_reading(spot: Spot) -> Card:
     if derived is not None:
         sections.append(("", tuple(_follows(claim, spot.number, derived))))
     for finding in findings_at(spot):
-        sections.append((_verdict(finding), (finding.message, *_remedies(claim, finding))))
+        told = marked and finding.reading == spot.number and finding.settled is None
+        words = () if told else (finding.message,)
+        sections.append((_verdict(finding), (*words, *_remedies(claim, finding))))
         if derived is None and finding.working:
             sections.append(("Working", finding.working))
     if derived is not None:
         sections.append(("Working", derived.working))
         if derived.assumed:
             sections.append(("Assumed, not stated in the text", derived.assumed))
-    sections += list(_checks(spot.placed.audited.checks, reading.quantity))
+    sections += list(_checks(spot.placed.audited, reading.quantity))
     about = f"{_capital(quantity.name)}. {quantity.description}"
     sections.append(("About", tuple(filter(None, (about, _stands_for(reading))))))
     return Card(_printed(reading), tuple(sections))
@@ -126,23 +136,41 @@ def _remedies(claim: Claim, finding: Finding) -> Iterator[str]:
         yield f"It would agree with {change} ({remedy.reason})."
 
 
-def _checks(checks: Iterable[Check], quantity: str) -> Iterator[tuple[str, tuple[str, ...]]]:
+def _checks(audited: Audited, quantity: str) -> Iterator[tuple[str, tuple[str, ...]]]:
     lines = []
-    for check in checks:
+    for check in audited.checks:
         identity = IDENTITIES[check.identity]
-        outcome = _OUTCOMES.get(check.outcome)
-        if outcome is None or not _speaks_of(check.identity, quantity):
-            continue
-        source = f" Source: {identity.source}." if identity.source else ""
-        lines.append(f"{check.identity}, {outcome}: {identity.formula}.{source.replace('..', '.')}")
+        if _tells(audited.claim, check, quantity):
+            source = f" Source: {identity.source}.".replace("..", ".") if identity.source else ""
+            outcome = _OUTCOMES[check.outcome]
+            lines.append(f"{check.identity}, {outcome}: {identity.formula}.{source}")
     if lines:
         yield "Checked by", tuple(lines)
 
 
-def _speaks_of(slug: str, quantity: str) -> bool:
+def _tells(claim: Claim, check: Check, quantity: str | None = None) -> bool:
+    """Say whether a check is worth telling of a quantity, or of a claim as a whole.
+
+    That a number is one that its quantity can have at all is not, as long as it is.
+    """
+    if check.outcome != "agrees":
+        return check.outcome in _OUTCOMES and _speaks_of(check.identity, quantity)
+    printed = {reading.quantity for reading in all_readings(claim)}
+    return any(
+        form.takes and {form.gives, *form.takes} <= printed
+        for form in IDENTITIES[check.identity].forms
+        if quantity is None or quantity in (form.gives, *form.takes)
+    )
+
+
+def _speaks_of(slug: str, quantity: str | None) -> bool:
     identity = IDENTITIES[slug]
-    return quantity in identity.quantities or any(
-        quantity in (form.gives, *form.takes) for form in identity.forms
+    return quantity is None or any(
+        quantity in quantities
+        for quantities in (
+            identity.quantities,
+            *((form.gives, *form.takes) for form in identity.forms),
+        )
     )
 
 
@@ -155,7 +183,7 @@ def card_of_claim(placed: Placed) -> Card:
     sections: list[tuple[str, tuple[str, ...]]] = [("", tuple(lines))]
     for finding in audited.findings:
         sections.append((_verdict(finding), (finding.message, *_remedies(claim, finding))))
-    spoken = [c for c in audited.checks if c.outcome in _OUTCOMES]
+    spoken = [c for c in audited.checks if _tells(claim, c)]
     if spoken:
         sections.append(
             (

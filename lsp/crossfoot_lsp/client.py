@@ -50,6 +50,8 @@ class Client(NamedTuple):
         It shows the progress of work that we begin.
     notebooks
         It sends notebooks as such.
+    marked
+        It shows what is found at a place together with a hover.
     asks
         It asks the person for the reason of an allowance itself.
     """
@@ -70,6 +72,7 @@ class Client(NamedTuple):
     refreshes_diagnostics: bool = False
     refreshes_hints: bool = False
     refreshes_lenses: bool = False
+    marked: bool = False
     asks: bool = False
 
 
@@ -91,7 +94,10 @@ def client_of(params: Mapping[str, Any]) -> Client:
         found = value(path)
         return isinstance(found, list) and item in found
 
-    options = params.get("initializationOptions")
+    def told(name: str) -> bool:
+        options = params.get("initializationOptions")
+        return isinstance(options, Mapping) and options.get(name) is True
+
     return Client(
         encoding=_encoding(value("general.positionEncodings")),
         pulls=isinstance(value("textDocument.diagnostic"), Mapping),
@@ -114,7 +120,8 @@ def client_of(params: Mapping[str, Any]) -> Client:
         refreshes_diagnostics=value("workspace.diagnostics.refreshSupport") is True,
         refreshes_hints=value("workspace.inlayHint.refreshSupport") is True,
         refreshes_lenses=value("workspace.codeLens.refreshSupport") is True,
-        asks=isinstance(options, Mapping) and options.get("askReason") is True,
+        marked=told("marksInHover"),
+        asks=told("askReason"),
     )
 
 

@@ -54,7 +54,9 @@ _SWITCHES = {
 }
 
 #: Settings of an editor's extension that are none of the server's business.
-_FOREIGN = frozenset({"interpreter", "trace", "path", "command", "enable", "askReason"})
+_FOREIGN = frozenset(
+    {"interpreter", "trace", "path", "command", "enable", "askReason", "marksInHover"}
+)
 
 
 class Chosen(NamedTuple):

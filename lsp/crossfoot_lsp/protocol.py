@@ -12,6 +12,7 @@ import json
 import logging
 from collections.abc import Generator
 from concurrent.futures import Future
+from contextvars import copy_context
 from typing import TYPE_CHECKING, Any
 
 from lsprotocol import types
@@ -89,7 +90,12 @@ class Protocol(LanguageServerProtocol):
             else:
                 _LOG.warning("A notification with wrong parameters was passed over: %s", method)
             return
-        self.handle_message(message)
+        # What pygls would find out about the message first, slowly, is known here.
+        context = copy_context()
+        if "id" in data:
+            context.run(self._handle_request, message.id, method, message.params)
+        else:
+            context.run(self._handle_notification, method, getattr(message, "params", None))
 
     def _objection(self, method: object) -> JsonRpcException | None:
         """Return what is wrong with a message of this kind, at this time or at all."""

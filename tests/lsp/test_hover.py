@@ -5,7 +5,7 @@ from __future__ import annotations
 import pytest
 from lsprotocol import types
 
-from serving.editor import Editor, at, ranges
+from serving.editor import Editor, at, ranges, session
 
 pytestmark = pytest.mark.asyncio(loop_scope="session")
 
@@ -43,8 +43,20 @@ async def test_a_number_that_agrees_says_so(editor: Editor) -> None:
     uri = editor.open(text)
     said = words(await hover(editor, uri, p))
     assert "it must be between .0179 and .0182: as printed." in said
+    assert "bounds" not in said  # that p is between 0 and 1 is worth no words
     said = words(await hover(editor, uri, f))
     assert "Given p = .018 with 2 and 57 degrees of freedom, it must be between" in said
+
+
+async def test_what_the_editor_shows_beside_a_hover_is_not_said_again() -> None:
+    text, [f, p] = ranges("The plots differed, F(2, 57) = ‹4.31›, p = ‹.081›.")
+    async with session(options={"marksInHover": True}) as editor:
+        uri = editor.open(text)
+        said = words(await hover(editor, uri, p))
+        assert "p is printed as .081, but" not in said
+        assert "Reversal (p-from-f)" in said
+        assert "It would agree with p = .018" in said
+        assert "p is printed as .081, but" in words(await hover(editor, uri, f))
 
 
 async def test_its_remedies_and_its_allowance_are_named(editor: Editor) -> None:

@@ -21,7 +21,7 @@ async def answer(server: Server, params: types.HoverParams) -> types.Hover | Non
     offset = view.part.offset(params.position)
     spot = spot_at(view.report, offset)
     if spot is not None:
-        card, span = card_of_reading(spot), spot.span
+        card, span = card_of_reading(spot, server.client.marked), spot.span
     else:
         placed = claim_at(view.report, offset)
         if placed is None:

@@ -144,5 +144,6 @@ def test_a_draft_is_checked_explained_mended_and_allowed(served: str, tmp_path: 
     assert "*p* = .018, as the crew had expected." in seen["text"]
     assert "Crossfoot: 1 result: 1 agrees" in seen["lens"]
     assert "because it was copied from the registered report -->" in seen["allowed"]
-    for step in ("1-squiggle", "2-hover", "3-actions", "4-fixed", "5-reason", "6-allowed"):
-        assert (pictures / f"{step}.png").stat().st_size > 10_000
+    assert len(seen["pictures"]) == 8
+    for name in seen["pictures"]:
+        assert (pictures / f"{name}.png").stat().st_size > 10_000

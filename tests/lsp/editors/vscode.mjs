@@ -20,7 +20,7 @@ const browser = await chromium.launch({
 });
 const page = await browser.newPage({ viewport: { width: 1280, height: 800 } });
 page.setDefaultTimeout(LONGEST);
-const seen = {};
+const seen = { pictures: [] };
 let step = "start";
 
 // What is done in a step may come to nothing: a key is lost while the window is being built, and
@@ -48,6 +48,7 @@ const text = (locator) => locator.first().innerText().then((words) => words.repl
 async function picture(name) {
   await page.waitForTimeout(500); // what fades in has come
   await page.screenshot({ path: `${pictures}/${name}.png` });
+  seen.pictures.push(name);
 }
 
 const editor = page.locator(".editor-instance .view-lines").first();
@@ -101,8 +102,19 @@ try {
   seen.hover = await text(hover);
   await picture("2-hover");
 
+  // The name of the identity leads to what is said about it.
+  const draft = page.locator(".tab", { hasText: "draft.qmd" });
+  const about = page.locator(".view-lines", { hasText: "The p value of an F test is the area" });
+  await until("the identity", about, async (timeout) => {
+    await draft.click({ timeout });
+    await point(timeout);
+    await hover.locator("a", { hasText: "p-from-f" }).first().click({ timeout });
+  });
+  await picture("3-identity");
+  await until("the draft again", squiggle, (timeout) => draft.click({ timeout }));
+
   await until("the menu", entry("Change to p = .018"), openMenu);
-  await picture("3-actions");
+  await picture("4-actions");
   seen.actions = await menu.locator(".monaco-list-row").allInnerTexts();
   await until("the fix", written("= .018, as the crew"), (timeout) => choose("Change to p = .018", timeout));
   await until("no squiggle", squiggle, null, "hidden");
@@ -111,7 +123,7 @@ try {
   await until("the lens", lens);
   seen.lens = await text(lens);
   seen.text = await text(editor);
-  await picture("4-fixed");
+  await picture("5-fixed");
 
   await until("the cursor", page.locator(".editor-instance .monaco-editor.focused"), async (timeout) => {
     await page.keyboard.press("Escape");
@@ -125,17 +137,17 @@ try {
   const prompt = page.locator(".quick-input-widget", { hasText: "Why is it right as printed?" });
   await until("the prompt", prompt, (timeout) => choose("with a reason", timeout));
   await input.fill("it was copied from the registered report");
-  await picture("5-reason");
+  await picture("6-reason");
   await until("the remark", written("because it was copied"), () => page.keyboard.press("Enter"));
   await until("no squiggle again", squiggle, null, "hidden");
   seen.allowed = await text(editor);
-  await picture("6-allowed");
+  await picture("7-allowed");
 
   const summary = page.locator(".notification-toast", { hasText: "1 agrees, 1 is settled" });
   await until("the summary", summary, async (timeout) => {
     await page.locator(".statusbar-item", { hasText: "Crossfoot" }).first().click({ timeout });
   });
-  await picture("7-summary");
+  await picture("8-summary");
 } catch (error) {
   await picture("problem").catch(() => undefined);
   seen.problem = {

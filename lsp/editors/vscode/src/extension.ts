@@ -53,7 +53,7 @@ async function start(status: Status): Promise<void> {
       { language, scheme: "untitled" },
       { language, notebook: "jupyter-notebook" },
     ]),
-    initializationOptions: { askReason: true },
+    initializationOptions: { askReason: true, marksInHover: true },
     synchronize: {
       configurationSection: "crossfoot",
       fileEvents: vscode.workspace.createFileSystemWatcher("**/{crossfoot,pyproject}.toml"),
