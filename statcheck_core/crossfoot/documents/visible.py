@@ -48,10 +48,11 @@ def place(visible: Visible, start: int, end: int) -> Span:
     An empty span maps to the point where it stands. Characters that replace markup map to the
     whole of what they replace.
     """
-    first, _ = _at(visible, start)
+    first, after = _at(visible, start)
     if end <= start:
         return Span(first, first)
-    return Span(first, max(first, _at(visible, end - 1)[1]))
+    last = after if end == start + 1 else _at(visible, end - 1)[1]
+    return Span(first, last if last > first else first)
 
 
 def _at(visible: Visible, index: int) -> tuple[int, int]:
@@ -59,13 +60,18 @@ def _at(visible: Visible, index: int) -> tuple[int, int]:
     pieces = visible.pieces
     if not pieces:
         return 0, 0
-    number = max(0, bisect_right(pieces, index, key=lambda piece: piece.shown) - 1)
-    piece = pieces[number]
+    # A piece that starts at the index sorts before a tuple that goes on behind that.
+    number = max(0, bisect_right(pieces, (index, _BEHIND)) - 1)
+    shown, start, end = pieces[number]
     stop = pieces[number + 1].shown if number + 1 < len(pieces) else len(visible.text)
-    if stop - piece.shown != piece.end - piece.start:
-        return piece.start, piece.end
-    start = min(piece.start + index - piece.shown, piece.end)
-    return start, min(start + 1, piece.end)
+    if stop - shown != end - start:
+        return start, end
+    at = min(start + index - shown, end)
+    return at, min(at + 1, end)
+
+
+#: More than any place.
+_BEHIND = float("inf")
 
 
 class Builder:

@@ -184,10 +184,13 @@ def squeezed(visible: Visible) -> Visible:
 
 def _placed(claim: Claim, visible: Visible) -> Claim:
     """Turn places in visible text into places in the source."""
-    readings = tuple(_placed_reading(reading, visible) for reading in claim.readings)
-    given = tuple(_placed_reading(reading, visible) for reading in claim.given)
-    return claim._replace(span=place(visible, *claim.span), readings=readings, given=given)
+    return claim._replace(
+        span=place(visible, *claim.span),
+        readings=tuple([_placed_reading(reading, visible) for reading in claim.readings]),
+        given=tuple([_placed_reading(reading, visible) for reading in claim.given]),
+    )
 
 
 def _placed_reading(reading: Reading, visible: Visible) -> Reading:
-    return reading._replace(span=Span(*place(visible, *reading.span)))
+    quantity, relation, literal, low, high, span, term = reading
+    return Reading(quantity, relation, literal, low, high, place(visible, *span), term)

@@ -27,9 +27,16 @@ _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
 _DF = r"(?:d\.?f\.?[nd]?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
 _ARGUMENT = expression(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
 _TOTAL = expression(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
+#: What separates arguments, each with a character without which it can't stand there.
 _SEPARATORS = tuple(
-    expression(pattern)
-    for pattern in (r"\s?;\s{0,9}", r"\s?/\s?", rf"\s{AND}\s", r"\s?,\s{1,9}", r",")
+    (character, expression(pattern))
+    for character, pattern in (
+        (";", r"\s?;\s{0,9}"),
+        ("/", r"\s?/\s?"),
+        ("", rf"\s{AND}\s"),
+        (",", r"\s?,\s{1,9}"),
+        (",", r","),
+    )
 )
 _PAIR = lazily(
     rf"\s*+(?:(?:[=:]|{VERB_UNSPACED}|(?:was|were|are|of)\s)\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
@@ -70,7 +77,8 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
     if match["raised"]:
         pair = _both(text, match, "raised", "beneath") if two else ()
         return Degrees(pair, match.end(), possible=bool(pair))
-    group = next(g for g in ("round", "square", "lowered", "sub") if match[g] is not None)
+    last = match.lastgroup or ""
+    group = "lowered" if last == "more" else last
     inner = match[group].translate(_SUBSCRIPTS) if group == "sub" else match[group]
     start = match.start(group)
     pieces = _pieces(inner.rstrip(" ,;"))
@@ -163,8 +171,8 @@ def _pieces(inner: str) -> list[tuple[str, int]]:
     A semicolon or slash, ``and``, or a comma before a space separates; a comma alone does only
     where nothing else does.
     """
-    for separator in _SEPARATORS:
-        cuts = list(separator.finditer(inner))
+    for character, separator in _SEPARATORS:
+        cuts = list(separator.finditer(inner)) if character in inner else []
         if cuts:
             starts = [0, *(cut.end() for cut in cuts)]
             stops = [*(cut.start() for cut in cuts), len(inner)]

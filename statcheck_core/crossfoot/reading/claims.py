@@ -71,7 +71,7 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
         contexts.add("joint")
     if any(part.quantity in {"df", "df1", "df2"} and part.low != part.high for part in unique):
         contexts.add("adjusted-df")
-    if "adjusted-p" not in stated and _several_df(unique):
+    if "adjusted-p" in contexts - stated and _several_df(unique):
         # "…, F(2, 57) = 7.41, p = .001. Tukey's test …": corrections concern what follows.
         contexts -= {"adjusted-p"} - cues_in(sentence).contexts
     kind = _kind(group.anchor, {part.quantity for part in unique}, sentence)

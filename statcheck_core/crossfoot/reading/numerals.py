@@ -71,16 +71,19 @@ def parse(literal: str, *, decimal_comma: bool = False, whole: bool = False) -> 
     match = _PARTS.fullmatch(literal.strip().rstrip("."))
     if match is None:
         return None
-    if match["ten"]:
-        digits, decimals, exponent = "1", 0, _power(match["ten"][2:])
+    sign, ten, mantissa, exponent, power, percent_sign = match.groups()
+    moved = 0
+    if ten:
+        digits, decimals, moved = "1", 0, _power(ten[2:])
     else:
-        digits, decimals = _digits(match["mantissa"], decimal_comma)
-        exponent = int(match["exponent"] or 0) or _power(match["power"] or "")
-    if len(digits) > 40 or abs(exponent) > 400 or _PADDED.match(literal.strip(" -+")):
+        digits, decimals = _digits(mantissa, decimal_comma)
+        if exponent or power:
+            moved = int(exponent or 0) or _power(power or "")
+    if len(digits) > 40 or abs(moved) > 400 or _PADDED.match(literal.strip(" -+")):
         return None
-    number = int(digits) * (-1 if match["sign"] == "-" else 1)
-    percent = bool(match["percent"])
-    decimals -= exponent
+    number = -int(digits) if sign == "-" else int(digits)
+    percent = bool(percent_sign)
+    decimals -= moved
     shift = decimals + (2 if percent else 0)
     value = _scaled(number, 1, shift)
     if whole and decimals <= 0 and not percent:
@@ -125,8 +128,14 @@ _COMMA_EVIDENCE = expression(
 )
 
 
+#: The length of ``1,237``.
+_SHORTEST_GROUPED = 5
+
+
 def _digits(mantissa: str, decimal_comma: bool) -> tuple[str, int]:
     """Return the digits without marks, and how many of them are decimals."""
+    if len(mantissa) < _SHORTEST_GROUPED:
+        return _plain_digits(mantissa)
     grouped = _GROUPED.fullmatch(mantissa)
     if decimal_comma and _POINT_GROUPED.fullmatch(mantissa):
         return mantissa.replace(".", ""), 0
@@ -137,6 +146,11 @@ def _digits(mantissa: str, decimal_comma: bool) -> tuple[str, int]:
         mark = marks[-1] if marks[-1] != marks[0] else "\n"
         whole, _, fraction = mantissa.partition(mark)
         return re.sub(r"\D", "", whole) + fraction, len(fraction)
+    return _plain_digits(mantissa)
+
+
+def _plain_digits(mantissa: str) -> tuple[str, int]:
+    """Return the digits of a mantissa in which a mark can only be the decimal mark."""
     whole, _, fraction = mantissa.replace(",", ".").replace("·", ".").partition(".")
     return (whole + fraction) or "0", len(fraction)
 
