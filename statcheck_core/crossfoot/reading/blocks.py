@@ -26,7 +26,7 @@ _WORDS = (
 _ASCII_WORDS = tuple(word for word in _WORDS if word.isascii())
 _MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")
 _RELATED = re.compile(
-    r"[=<>≤≥≈¼~∼;]\s{0,40}[-+]?\s?[.,·]?[\dn]|[)\]}pPFtr]['\"]?:\s?[.\d]|[)pPFtr²]\sof\s[.\d]|[pP][bo]0?[.]\d"
+    r"[=<>≤≥≈¼~∼;][\s*]{0,40}[-+]?\s?[.,·]?[\dn]|[)\]}pPFtr]['\"]?:\s?[.\d]|[)pPFtr²]\sof\s[.\d]|[pP][bo]0?[.]\d"
 )
 #: A test with its degrees of freedom and no sign before its value: `F(2, 57) 3.90`.
 _BARE = re.compile(r"[FtrH²]\s?\([\d., ]{1,12}\)\s[-+]?\d{0,4}[.,]\d")
