@@ -30,7 +30,7 @@ _BARE = expression(r"\((?:(?<=[FtrH²]\s\()|(?<=[FtrH²]\())[\d., ]{1,12}\)\s[-+
 #: A relation that a number follows, with how far before its sign the zone of it is counted from.
 #: Each starts with few characters, for which a search is many times as fast as for a choice.
 _RELATED = (
-    (expression(r"[=<>≤≥≈¼~∼;]\s{0,40}[-+]?\s?[.,·]?[\dn]"), 0),
+    (expression(r"[=<>≤≥≈¼~∼;][\s*]{0,40}[-+]?\s?[.,·]?[\dn]"), 0),
     (expression(r":(?:(?<=[)\]}pPFtr]:)|(?<=[)\]}pPFtr]['\"]:))\s?[.\d]"), 2),
     (expression(r"of(?<=[)pPFtr²]\sof)\s[.\d]"), 2),
     (expression(r"[.](?:(?<=[pP][bo][.])|(?<=[pP][bo]0[.]))\d"), 2),

@@ -15,8 +15,9 @@ from crossfoot.reading.aligned.lines import (
     Word,
     headish,
     is_value,
+    parted,
+    starts_panel,
     tokens_of,
-    values_of,
     words_of,
 )
 from crossfoot.reading.tables.headings import NOTHING
@@ -92,7 +93,7 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
     for below in lines[number + 1 : number + 42]:
         if below.rule:
             continue
-        label, values = _parted(text, below)
+        label, values = parted(text, below)
         if below.blank and rows:
             continue
         if (not label and not values) or (not values and rows > 1):
@@ -142,12 +143,14 @@ def rows_below(
                 break
             number += 1
             continue
-        label, values = _parted(text, line)
+        label, values = parted(text, line)
         if NOTE.match(line.text) or _is_sentence(label, values):
             break
         if not values:
+            if raw and starts_panel(lines, number, lines[raw[0][0]]):
+                break
             goes_on = bool(raw) or (
-                number + 1 < len(lines) and bool(_parted(text, lines[number + 1])[1])
+                number + 1 < len(lines) and bool(parted(text, lines[number + 1])[1])
             )
             if not goes_on or not _section(line, number, end):
                 break
@@ -208,15 +211,6 @@ def _section(line: Line, number: int, end: int) -> bool:
     return len(line.text.strip()) <= 40 and number - end <= 1 and "=" not in line.text
 
 
-def _parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
-    """Return the words of a row's label and its values, told from the right."""
-    words = values_of(text, words_of(text, line.start, line.end))
-    cut = len(words)
-    while cut > 0 and is_value(words[cut - 1].text):
-        cut -= 1
-    return words[:cut], words[cut:]
-
-
 def _placed(
     text: str,
     lines: Sequence[Line],
@@ -252,7 +246,7 @@ def _placed(
             len(values) > 0 and len(values) < width and not loose and values[0].end - offset <= left
         ):
             label, values = [*label, values[0]], values[1:]
-        cells = _assigned(values, spans, offset, loose)
+        cells = assigned(values, spans, offset, loose)
         name = (
             Word(text[label[0].start : label[-1].end], label[0].start, label[-1].end)
             if label
@@ -287,9 +281,10 @@ def _collapsed(
     )
 
 
-def _assigned(
+def assigned(
     values: Sequence[Word], spans: Sequence[tuple[int, int]], offset: int, loose: bool
 ) -> list[Word | None]:
+    """Give each value of a row its column: in order where alignment is lost, else by place."""
     cells: list[Word | None] = [None] * len(spans)
     if len(values) == len(spans) or loose:
         for index, word in enumerate(values[: len(spans)]):

@@ -21,6 +21,7 @@ from crossfoot.reading.aligned.lines import (
     tokens_of,
     words_of,
 )
+from crossfoot.reading.aligned.wrapped import with_panels
 from crossfoot.reading.fold import fold
 
 _LONGEST = 20_000
@@ -172,6 +173,7 @@ class _Finder:
         rows_found, columns, end = headed.rows_below(self.text, self.lines, number + 1, columns)
         if not rows_found:
             return number + 1
+        rows_found, columns, end = with_panels(self.text, self.lines, rows_found, columns, end)
         heads = self.headers(number, columns)
         rows = [(_place(row.label), *(_place(cell) for cell in row.cells)) for row in rows_found]
         first = number - len(heads) + 1

@@ -67,6 +67,10 @@ class Word(NamedTuple):
     end: int
 
 
+#: The label of a row: what stands before the first wide gap.
+_FIRST = re.compile(r"\S+(?: \S+)*(?=  )")
+
+
 class Line(NamedTuple):
     """A line: its place without the line feed."""
 
@@ -201,3 +205,40 @@ _RELATIONS = frozenset({"<", ">", "<=", ">=", "≤", "≥", "="})
 #: What a number ends with.
 _ENDS = re.compile(r"\d[a-e]?\*{0,4}$")
 _ENCLOSED = re.compile(rf"[(\[]{NUMERAL}[)\]]\*{{0,3}}|[(\[]{NUMERAL}[,;–-]{NUMERAL}[)\]]")
+
+
+def parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
+    """Return the words of a row's label and its values, told from the right."""
+    words = values_of(text, words_of(text, line.start, line.end))
+    cut = len(words)
+    while cut > 0 and is_value(words[cut - 1].text):
+        cut -= 1
+    return words[:cut], words[cut:]
+
+
+def label_in(line: Line) -> str | None:
+    """Return what stands before the first wide gap of a line, from its margin."""
+    found = _FIRST.match(line.text)
+    return found.group() if found is not None else None
+
+
+def starts_panel(lines: Sequence[Line], number: int, first: Line) -> bool:
+    """Say whether a line without numbers heads further columns of the rows above.
+
+    Parameters
+    ----------
+    lines
+        The lines.
+    number
+        The line that may.
+    first
+        The line of the first row above.
+    """
+    if number + 1 >= len(lines) or not lines[number].text.startswith("  "):
+        return False
+    label = label_in(first)
+    return (
+        label is not None
+        and label == label_in(lines[number + 1])
+        and not any(is_value(word) for word in lines[number].text.split())
+    )

@@ -42,7 +42,8 @@ ROLES: tuple[Role, ...] = (
     Role(
         "df",
         "df Df DF dl FG gl GL ddl gdl GdL",
-        "df dof dfdiff degreesoffreedom degreeoffreedom dfs freiheitsgrade freiheitsgrad fg"
+        "df dof dfdiff dfconstraint degreesoffreedom degreeoffreedom dfs freiheitsgrade"
+        " freiheitsgrad fg"
         " degrésdeliberté degrésdeliberte gradosdelibertad grausdeliberdade gradidilibertà"
         " vrijheidsgraden frihetsgrader 自由度 자유도",
     ),
@@ -55,7 +56,8 @@ ROLES: tuple[Role, ...] = (
     Role(
         "df2",
         "DFd DFD ν2",
-        "df2 dendf denominatordf dfden dfd ddof2 dferror dfresidual dfresiduals dfwithin errordf"
+        "df2 dendf denominatordf dfden dfdenom dfd ddof2 dferror dfresidual dfresiduals dfwithin"
+        " errordf"
         " residualdf dfdenominator denomdf dendof residualdegreesoffreedom errordegreesoffreedom"
         " nennerdf dofresiduals",
     ),
@@ -83,7 +85,7 @@ ROLES: tuple[Role, ...] = (
         "p_adjusted",
         "q",
         "padj adjp adjustedp padjusted pbonf pbonferroni ptukey pholm pfdr"
-        " adjpvalue adjustedpvalue correctedp pcorr pcorrected qvalue sigb psidak pgg phf"
+        " pvaluehs adjpvalue adjustedpvalue correctedp pcorr pcorrected qvalue sigb psidak pgg phf"
         " pggepsilon"
         " pr(>f[gg]) pr(>f[hf]) p[gg] p[hf]",
     ),
@@ -163,7 +165,8 @@ ROLES: tuple[Role, ...] = (
         "ci_low",
         "LL LB LCI",
         "lower lowerbound lowerlimit lower95% cilower lowerci conflow cilow"
-        " lowercl lcl lowerconfint lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
+        " lowercl lcl confintlow confintlower lowerconfint"
+        " lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
         " 2.5% 0.025 [0.025 untergrenze limiteinférieure límiteinferior 95%cilow 95%cill lwr"
         " 95%confidenceintervallowerbound 95%cilowerbound lowerlimitof95%ci q2.5 cil",
     ),
@@ -171,7 +174,8 @@ ROLES: tuple[Role, ...] = (
         "ci_high",
         "UL UB UCI",
         "upper upperbound upperlimit upper95% ciupper upperci confhigh cihigh"
-        " uppercl ucl upperconfint upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
+        " uppercl ucl confintupp confintupper upperconfint"
+        " upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
         " 0.975 0.975] obergrenze limitesupérieure límitesuperior 95%cihigh 95%ciul upr"
         " 95%confidenceintervalupperbound 95%ciupperbound upperlimitof95%ci q97.5 ciu",
     ),
