@@ -146,6 +146,8 @@ def rows_below(
         label, values = parted(text, line)
         if NOTE.match(line.text) or _is_sentence(label, values):
             break
+        if raw and blanks and len(values) < 2 and _indent(line) > _indent(lines[raw[0][0]]) + 8:
+            break  # below the table, in the middle of the page
         if not values:
             if raw and starts_panel(lines, number, lines[raw[0][0]]):
                 break
@@ -170,11 +172,15 @@ def rows_below(
     return _placed(text, lines, raw, columns, first), columns, end
 
 
+def _indent(line: Line) -> int:
+    return len(line.text) - len(line.text.lstrip())
+
+
 def _with_unnamed(columns: Columns, counts: Sequence[int]) -> Columns:
     """Take words before the first known heading for headings too, if rows have as many values."""
     if not counts:
         return columns
-    usual = max(set(counts), key=counts.count)
+    usual = max(set(counts), key=lambda count: (counts.count(count), count))
     extra = usual - len(columns.heads)
     if max(counts) < len(columns.heads):
         return _with_whole_intervals(columns)

@@ -18,8 +18,6 @@ from crossfoot.reading.aligned.lines import (
     Word,
     headish,
     lines_of,
-    tokens_of,
-    words_of,
 )
 from crossfoot.reading.aligned.wrapped import with_panels
 from crossfoot.reading.fold import fold
@@ -33,6 +31,8 @@ _HOPE = re.compile(
 )
 
 
+#: What two spaces part.
+_FIELD = re.compile(r"\S+(?: \S+)*")
 _RELATED = re.compile(r"[=<>≤≥≈]|\bp-value\b")
 _CASES = re.compile(r"\(?\b[Nn]\s?=\s?[\d,]+\)?")
 
@@ -192,14 +192,16 @@ class _Finder:
             or (not headish(above.text) and not _completes(above))
         ):
             return [own]
-        tokens = tokens_of(self.text, words_of(self.text, above.start, above.end))
+        fields = [
+            (above.start + found.start(), above.start + found.end())
+            for found in _FIELD.finditer(above.text)
+        ]
         upper: list[tuple[int, int] | None] = [None]
-        used = 0
         for head in columns.heads:
-            match = next((t for t in tokens if _over(t, head, above, self.lines[number])), None)
-            upper.append((match.start, match.end) if match else None)
-            used += match is not None
-        return [tuple(upper), own] if used >= len(tokens) - 1 and used else [own]
+            match = next((f for f in fields if _over(f, head, above, self.lines[number])), None)
+            upper.append(match)
+        used = len(set(upper) - {None})
+        return [tuple(upper), own] if used >= len(fields) - 1 and used else [own]
 
     def fields(self) -> None:
         """Take runs of lines that hold labels with values, wide apart."""
@@ -288,7 +290,7 @@ def _completes(line: Line) -> bool:
     return not any(char.isdigit() for char in line.text) and "  " in line.text.strip()
 
 
-def _over(token: Token, head: Token, above: Line, below: Line) -> bool:
-    """Say whether a word of the line above stands over a heading."""
-    start, end = token.start - above.start, token.end - above.start
+def _over(field: tuple[int, int], head: Token, above: Line, below: Line) -> bool:
+    """Say whether words of the line above stand over a heading."""
+    start, end = field[0] - above.start, field[1] - above.start
     return start < head.end - below.start and head.start - below.start < end

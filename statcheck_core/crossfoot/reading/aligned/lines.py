@@ -20,6 +20,8 @@ _HEADISH = re.compile(
 RULE = re.compile(r"[-=_+*~─━═|:. ]*(?:[-=_*~─━═]{3}|-\+-)[-=_+*~─━═|:. ]*")
 _ATOM = re.compile(rf"(?:[<>≤≥=]\s?)?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?|\*{{1,4}}")
 _DF_TAIL = re.compile(r" ?\(df\s?=\s?\d+(?:[;,]\s?\d+)?\)$")
+#: A long number may end with its decimal point.
+_POINT = re.compile(r"(?<=\d{4})\.$")
 #: What stands between the numbers of one value.
 _BETWEEN = re.compile(r"[()\[\],;]| (?:to|–) |(?<=\d) (?=[-.\d])")
 #: Words that stand in columns of numbers.
@@ -161,7 +163,7 @@ def is_value(word: str) -> bool:
         return True
     if len(word) > 40 or not any(char.isdigit() for char in word):
         return False
-    bare = _DF_TAIL.sub("", word).lstrip("<>≤≥= ")
+    bare = _POINT.sub("", _DF_TAIL.sub("", word).lstrip("<>≤≥= "))
     parts = [part.strip() for part in _BETWEEN.split(bare)]
     numbers = [part for part in parts if part]
     return 0 < len(numbers) <= 4 and all(_ATOM.fullmatch(part) for part in numbers)

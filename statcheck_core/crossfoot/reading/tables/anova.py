@@ -144,6 +144,7 @@ def _settled(lines: list[Line]) -> list[Line]:
         for line in lines
         if line.kind not in {"uncorrected", "intercept"}
     ]
+    lines = _within(lines)
     if not any(line.kind == "error" for line in lines):
         for number, line in enumerate(lines):
             tested = any("F" in other.cells for other in lines[:number])
@@ -151,6 +152,19 @@ def _settled(lines: list[Line]) -> list[Line]:
                 lines[number] = line._replace(kind="error")
                 break
     return [line._replace(kind="effect") if line.kind == "blank" else line for line in lines]
+
+
+def _within(lines: list[Line]) -> list[Line]:
+    """Tell the error of ``Between instruments`` and ``Within instruments``, whatever they are."""
+    names = [line.label.lower().partition(" ") for line in lines]
+    pairs = {name for word, _, name in names if name and word == "between"}
+    pairs &= {name for word, _, name in names if word == "within"}
+    if not pairs or any(line.kind == "error" for line in lines):
+        return lines
+    return [
+        line._replace(kind="error") if word == "within" and name in pairs else line
+        for line, (word, _, name) in zip(lines, names, strict=True)
+    ]
 
 
 def _strata(lines: list[Line]) -> list[list[Line]]:
