@@ -124,7 +124,7 @@ mean-comparison: t=2.12 p=.04 -> note p-from-t t
 correlation: r=.44 n=45 p=.002 -> nothing
 coefficient: b=.44 t=2.12 p=.04 -> nothing
 overall-model: F=8.72 R2=.21 p<.01 n=100 -> note p-from-f F
-effect: F(2,57)=4.22 p=.000 -> conflict p-from-f F; note bounds p
+effect: F(2,57)=4.22 p=.000 -> conflict p-from-f p; note bounds p
 """
 
 

@@ -33,7 +33,7 @@ from simulation.results import FAMILIES, claims
 MANY = int(os.environ.get("CROSSFOOT_REMEDIES", "60"))
 
 #: Percentages that are reached, less what chance takes with 60 results a slip.
-FIRST, IN_THREE = 74, 86
+FIRST, IN_THREE = 76, 88
 
 
 class Score(NamedTuple):
