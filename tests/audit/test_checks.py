@@ -43,7 +43,7 @@ def test_a_context_that_breaks_an_assumption_is_the_reason(context: str, reason:
     found = checks(f"overall-model: R2=.30 F(3,96)=8.51 p<.001 [{context}]")
     assert found["p-from-f"] == "agrees"
     assert found["f-from-r2"].startswith(f"not-applicable: {reason}")
-    assert "It needs another case: " in found["f-from-r2"]
+    assert "It holds only if " in found["f-from-r2"]
 
 
 def test_what_is_not_printed_is_the_reason() -> None:

@@ -62,7 +62,7 @@ coefficient: b=1.00 se=.50 df=58 p=.025 -> doubt p-from-t p
 # the whole model
 overall-model: R2=.21 F(3,96)=8.51 p<.001 n=100 -> nothing
 overall-model: R2=.21 R2_adj=.185 F(3,96)=8.51 p<.001 n=100 -> nothing
-overall-model: R2=.30 F(3,96)=8.51 p<.001 -> conflict f-from-r2 R2
+overall-model: R2=.30 F(3,96)=8.51 p<.001 -> conflict f-from-r2 F
 overall-model: R2=.30 F(3,96)=8.51 p<.001 [robust] -> nothing
 overall-model: R2=.30 F(3,96)=8.51 p<.001 [weighted] -> nothing
 overall-model: R2=.31 R2_adj=.17 F(4,79)=8.70 p<.001 -> conflict r2-adjusted R2_adj

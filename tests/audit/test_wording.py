@@ -37,7 +37,7 @@ def said(low: float, high: float, like: str = "", apart: tuple[float, float] | N
         (59.9999999999, 60.0000000001, "57", "= 60"),
         (60, math.inf, "57", "at least 60"),
         (-math.inf, 0.0123, ".05", "at most .013"),
-        (-math.inf, 5e-5, ".05", "at most 5.0e-5"),
+        (-math.inf, 5e-5, ".05", "at most .00005"),
         (-math.inf, 0.0, ".05", "at most 0"),
         (1e-9, 0.003, ".05", "at most .003"),
         (1.21e-9, 1.33e-9, ".05", "between 1.2e-9 and 1.4e-9"),

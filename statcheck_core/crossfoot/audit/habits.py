@@ -46,7 +46,8 @@ def usual(printed: Printed, proposal: Proposal) -> float:
     quantity = printed.reading.quantity
     counts = QUANTITIES[quantity].whole and not (before.fraction or after.fraction)
     bound = (proposal.relation or printed.reading.relation) in "<>≤≥"
-    if counts or bound or decimals_of(before) == decimals_of(after):
+    same = proposal.rounded or decimals_of(before) == decimals_of(after)
+    if counts or bound or same:
         return 1.0
     alike = _alike(printed)
     return _share(quantity, before, alike) / _share(quantity, after, alike)

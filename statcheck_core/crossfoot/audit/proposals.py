@@ -8,7 +8,7 @@ from typing import NamedTuple
 
 from crossfoot.audit.literals import Numeral, written
 from crossfoot.laws.interval import EVERYTHING, Interval, meet
-from crossfoot.laws.quantities import domain
+from crossfoot.laws.quantities import QUANTITIES, domain
 from crossfoot.model import Reading
 
 #: More literals than this fit what is implied, and none of them follows.
@@ -61,13 +61,23 @@ class Printed(NamedTuple):
 class Proposal(NamedTuple):
     """What could have stood there: a numeral after a relation.
 
-    ``also`` has changes that the same slip made to other readings.
+    Attributes
+    ----------
+    numeral, relation
+        The numeral, and the relation before it where that changes too.
+    share
+        The chance that the slip, made on it, gives what is printed.
+    also
+        Changes that the same slip made to other readings.
+    rounded
+        Whether it stands for all numbers that round to it: more decimals do not follow.
     """
 
     numeral: Numeral
     share: float
     relation: str = ""
     also: tuple[tuple[int, Numeral], ...] = ()
+    rounded: bool = False
 
 
 class Slip(NamedTuple):
@@ -114,13 +124,25 @@ def fitting(printed: Printed, share: float, among: Interval = EVERYTHING) -> Ite
     implied = _bounded(printed, among)
     if implied is None:
         return
-    most = len(printed.numeral.fraction)
-    # A share is printed with two decimals at least, and nothing large with any.
-    fewest = 2 if domain(printed.reading.quantity).high <= 1 else 1 if implied.high < 10 else 0
-    for decimals in range(most, min(most, fewest) - 1, -1):
+    most, fewest = len(printed.numeral.fraction), _fewest(printed, implied)
+    for decimals in range(max(most, fewest), fewest - 1, -1):
         if _few(written(0.0, printed.numeral, decimals).unit, implied):
-            yield from _literals(printed, share, decimals, implied)
+            for proposal in _literals(printed, share, decimals, implied):
+                yield proposal._replace(rounded=decimals < most)
             return
+
+
+def _fewest(printed: Printed, implied: Interval) -> int:
+    """Return the fewest decimals that a number is printed with: a share has two, a large one none.
+
+    A count has those that it is printed with.
+    """
+    quantity = printed.reading.quantity
+    if QUANTITIES[quantity].whole:
+        return len(printed.numeral.fraction)
+    if domain(quantity).high <= 1:
+        return max(0, 2 + printed.numeral.power)
+    return 1 if implied.high < 10 else 0
 
 
 def fitting_with(printed: Printed, share: float, decimals: int) -> Iterator[Proposal]:

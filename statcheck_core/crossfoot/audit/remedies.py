@@ -114,12 +114,13 @@ def _mirrored(printed: Printed) -> bool:
 
 
 def _same(one: _Candidate, other: _Candidate) -> bool:
-    """Say whether two candidates give one number, if not with the same decimals, by one slip."""
+    """Say whether a candidate gives the number of another, if with other decimals by one slip."""
     if (one.reading, one.relation) != (other.reading, other.relation):
         return False
     apart = abs(one.numeral.value - other.numeral.value)
     coarser = max(one.numeral.unit, other.numeral.unit)
-    rounded = one.reason == other.reason and one.numeral.unit != other.numeral.unit
+    alike = one.reason in (other.reason, PLAIN.reason)
+    rounded = alike and one.numeral.unit != other.numeral.unit
     return apart <= coarser * (0.5 if rounded else 0) + 1e-12
 
 
@@ -207,9 +208,11 @@ def _plausible(printed: Printed, proposal: Proposal) -> float:
     size, old = abs(proposal.numeral.value), abs(printed.numeral.value)
     wide = other.high - other.low > WIDE * unit and 0 < old < size
     order = old / size if wide else 1.0
-    if common is None or not 0 < narrower < math.inf or proposal.relation:
+    exact = one.low == one.high
+    if common is None or exact or not 0 < narrower < math.inf or proposal.relation:
         return order
-    return order * max((common.high - common.low) / narrower, 0.02)
+    part = max((common.high - common.low) / narrower, 0.02)
+    return order * (min(1.0, part) if proposal.rounded else part)
 
 
 def _tried(case: Case, candidate: _Candidate, skip: int) -> tuple[bool, int]:

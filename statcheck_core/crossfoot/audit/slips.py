@@ -18,11 +18,11 @@ from crossfoot.audit.proposals import Printed, Proposal, Slip, fitting
 
 def _other(printed: Printed) -> Iterator[Proposal]:
     """Return what follows from the rest, where no slip explains what is printed."""
-    yield from fitting(printed, 10.0 ** -max(2, len(digits.digits_of(printed.numeral))))
+    yield from fitting(printed, 1.0)
 
 
 #: No slip at all: what follows from the rest.
-PLAIN = Slip("other", 1.0, "what the other numbers give", _other, crosses=True)
+PLAIN = Slip("other", 0.001, "what the other numbers give", _other, crosses=True)
 
 #: One that turns a number into one on the other side of zero, and leaves the rest.
 SIGN = Slip("sign lost", 2.0, "the sign lost or added", digits.signed, crosses=True)

@@ -69,7 +69,7 @@ def square_for_root(printed: Printed) -> Iterator[Proposal]:
 
 def adjusted_for_plain(printed: Printed) -> Iterator[Proposal]:
     """Undo that adjusted R² stands for R²: it is the R² of which what is printed is adjusted."""
-    if printed.reading.quantity != "R2":
+    if printed.reading.quantity != "R2" or printed.reading.high > 1:
         return
     for one in printed.find("df1"):
         for two in printed.find("df2"):

@@ -10,7 +10,7 @@ import math
 import sys
 from collections.abc import Sequence
 
-from crossfoot.audit.literals import Numeral
+from crossfoot.audit.literals import Numeral, numeral
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Reading
@@ -37,8 +37,8 @@ _MOST_DECIMALS = 14
 #: Numbers below this are as good as zero.
 _LEAST = 1e-300
 
-#: Numbers below this are written with an exponent.
-_SMALL = 1e-4
+#: Numbers below this are written with an exponent; a single bound can be smaller.
+_SMALL, _SMALL_ALONE = 1e-4, 1e-5
 
 
 def between(interval: Interval, like: Numeral = PLAIN, apart: Interval | None = None) -> str:
@@ -124,7 +124,7 @@ def _bound(bound: float, up: bool, like: Numeral, apart: Interval | None) -> str
     """Return one bound, rounded away from what it bounds."""
     if abs(bound - round(bound)) <= _CLOSE * abs(bound):
         return f"{round(bound)}"
-    if abs(bound) < _SMALL:
+    if abs(bound) < _SMALL_ALONE:
         return _scientific(bound, up)
     decimals = _decimals(like, abs(bound), abs(bound))
     text = _rounded(bound, decimals, up)
@@ -170,7 +170,12 @@ def _styled(text: str, like: Numeral) -> str:
         digits = digits[1:]
     if like.mark == ",":
         digits = digits.replace(".", ",")
-    return f"{sign}{digits}{like.tail if like.power == -2 else ''}"
+    return f"{sign}{digits}{_percent(like)}"
+
+
+def _percent(like: Numeral) -> str:
+    """Return the percent sign of a numeral that is worth hundredths, by a word in the text even."""
+    return (like.tail or "%") if like.power == -2 else ""
 
 
 def are_marks(quantity: str, term: str | None) -> bool:
@@ -191,8 +196,13 @@ def named(reading: Reading) -> str:
 
 def printed(reading: Reading) -> str:
     """Return a reading as it is printed."""
-    unit = "%" if reading.quantity == "ci_level" and reading.literal.isdigit() else ""
-    return f"{named(reading)} {reading.relation} {reading.literal}{unit}"
+    return f"{named(reading)} {reading.relation} {literal_of(reading)}"
+
+
+def literal_of(reading: Reading) -> str:
+    """Return a literal as it is printed, with the percent sign that stands apart from it."""
+    found = numeral(reading)
+    return reading.literal + ("" if found is None or found.tail else _percent(found))
 
 
 def phrase(readings: Sequence[Reading]) -> str:
@@ -211,7 +221,7 @@ def phrase(readings: Sequence[Reading]) -> str:
             inside = ", ".join(by_key[key].literal for key in keys)
             term = f" ({reading.term})" if reading.term else ""
             head = f"{symbol(reading.quantity)}({inside}){term}"
-            heads[place] = f"{head} {reading.relation} {reading.literal}"
+            heads[place] = f"{head} {reading.relation} {literal_of(reading)}"
     rest = [r for r in readings if r.quantity in _FREEDOM and (r.quantity, r.term) not in held]
     whole = len(rest) == (1 if rest and rest[0].quantity == "df" else 2)
     words = [
@@ -250,3 +260,10 @@ def listed(words: Sequence[str], joint: str = "and") -> str:
     if len(words) < 2:
         return "".join(words)
     return f"{', '.join(words[:-1])} {joint} {words[-1]}"
+
+
+def inside(sentence: str) -> str:
+    """Return a sentence as it stands inside another."""
+    first = sentence.partition(" ")[0]
+    lower = first.isalpha() and first.istitle() and len(first) > 1
+    return (sentence[0].lower() + sentence[1:] if lower else sentence).removesuffix(".")
