@@ -101,7 +101,7 @@ def test_what_is_shown_never_says_more_than_is_known(low: float, width: float, l
         ("correlation: p=.03 df=43", "p = .03 with 43 degrees of freedom"),
         ("mean-comparison: t(58)=2.1 F(1,58)=4.4", "t(58) = 2.1 and F(1, 58) = 4.4"),
         ("model-change: F_change(1,96)=9.58", "ΔF(1, 96) = 9.58"),
-        ("anova-table: F:x=3.1 df1:x=2 p:x=.05", "F (x) = 3.1, df1 (x) = 2 and p (x) = .05"),
+        ("anova-table: F:x=3.1 df1:x=2 p:x=.05", "F (x) = 3.1, df (x) = 2 and p (x) = .05"),
     ],
 )  # fmt: skip
 def test_readings_as_one_would_write_them(text: str, words: str) -> None:

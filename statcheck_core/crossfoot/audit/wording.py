@@ -185,7 +185,9 @@ def are_marks(quantity: str, term: str | None) -> bool:
 
 def named(reading: Reading) -> str:
     """Return a reading's symbol, with its row in a table; marks of significance are of a p."""
-    name, row = symbol(reading.quantity), reading.term or ""
+    row = reading.term or ""
+    # A row of a table has one column of degrees of freedom.
+    name = symbol("df" if row and reading.quantity == "df1" else reading.quantity)
     if row == REDUCED:
         return f"{name} of the step before"
     if not are_marks(reading.quantity, row):
@@ -223,7 +225,8 @@ def phrase(readings: Sequence[Reading]) -> str:
             head = f"{symbol(reading.quantity)}({inside}){term}"
             heads[place] = f"{head} {reading.relation} {literal_of(reading)}"
     rest = [r for r in readings if r.quantity in _FREEDOM and (r.quantity, r.term) not in held]
-    whole = len(rest) == (1 if rest and rest[0].quantity == "df" else 2)
+    kinds = sorted(reading.quantity for reading in rest)
+    whole = kinds in (["df"], ["df1", "df2"]) and not _rows(rest)
     words = [
         heads.get(place, printed(reading))
         for place, reading in enumerate(readings)
@@ -235,6 +238,11 @@ def phrase(readings: Sequence[Reading]) -> str:
     return f"{listed(words)} with {freedom}" if words else freedom
 
 
+def _rows(readings: Sequence[Reading]) -> bool:
+    """Say whether degrees of freedom stand in several rows of a table, that of the error aside."""
+    return len({reading.term for reading in readings if reading.quantity != "df2"}) > 1
+
+
 def plural(readings: Sequence[Reading]) -> bool:
     """Say whether :func:`phrase` names more than one thing."""
     text = phrase(readings)
@@ -242,9 +250,15 @@ def plural(readings: Sequence[Reading]) -> bool:
 
 
 def subjects(readings: Sequence[Reading]) -> list[str]:
-    """Return the symbols of readings, all degrees of freedom together as the last of them."""
+    """Return the symbols of readings, all degrees of freedom together as the last of them.
+
+    Those of several rows of a table are named each.
+    """
+    freedom = [reading for reading in readings if reading.quantity in _FREEDOM]
+    if _rows(freedom):
+        return list(dict.fromkeys(named(reading) for reading in readings))
     names = [named(reading) for reading in readings if reading.quantity not in _FREEDOM]
-    if len(names) < len(readings):
+    if freedom:
         names.append("the degrees of freedom")
     return list(dict.fromkeys(names))
 
