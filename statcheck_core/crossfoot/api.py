@@ -15,7 +15,7 @@ from crossfoot.expressions import expression
 from crossfoot.results import Derivation, Scan
 from crossfoot.settings import Settings, read
 
-PathLike = str | os.PathLike[str]
+PathLike = str | bytes | os.PathLike[str]
 
 #: Halves of surrogate pairs, which no encoding can hold.
 _HALVES = expression("[\ud800-\udfff]")
@@ -98,7 +98,7 @@ def scan_file(path: PathLike, language: str | None = None, *, alpha: float | Non
     "It can't be read: no such file or directory."
     """
     settings = _settings(alpha=alpha, language=language)
-    return Scan([files.scan_file(os.fspath(path), settings)])
+    return Scan([files.scan_file(os.fsdecode(path), settings)])
 
 
 def scan_paths(
@@ -138,10 +138,10 @@ def scan_paths(
     <crossfoot.Scan: 0 documents read, 2 could not be read, no reported result found.>
     """
     settings = _settings(alpha=alpha, language=language, exclude=exclude)
-    several = [paths] if isinstance(paths, (str, os.PathLike)) else paths
+    several = [paths] if isinstance(paths, (str, bytes, os.PathLike)) else paths
     warnings: list[str] = []
     reports = files.scan_paths(
-        [os.fspath(path) for path in several],
+        [os.fsdecode(path) for path in several],
         Policy(settings),
         lambda path, problem: warnings.append(f"{path}: {problem}"),
     )

@@ -43,7 +43,7 @@ def test_a_context_that_breaks_an_assumption_is_the_reason(context: str, reason:
     found = checks(f"overall-model: R2=.30 F(3,96)=8.51 p<.001 [{context}]")
     assert found["p-from-f"] == "agrees"
     assert found["f-from-r2"].startswith(f"not-applicable: {reason}")
-    assert "It needs another case: " in found["f-from-r2"]
+    assert "It holds only if " in found["f-from-r2"]
 
 
 def test_what_is_not_printed_is_the_reason() -> None:
@@ -125,3 +125,36 @@ def test_what_is_of_another_test_or_number_is_no_conflict(text: str) -> None:
 def test_an_interval_of_an_estimate_that_is_not_printed_makes_a_doubt() -> None:
     found = checks("coefficient: se=0.5 t(38)=1.1 p=.28 ci_low=2.4 ci_high=4.4 ci_level=95%")
     assert found["ci-against-p"] == "doubt: The interval is that of the estimate that is tested."
+
+
+TABLE = (
+    "anova-table: ss:model=30.0 df1:model=3 ss:soil=20.0 df1:soil=2 ss:shade=10.0 df1:shade=1 "
+    "ss:error=60.0 df2=50 ss:total=90.0 df:total=53"
+)
+
+
+def test_the_effects_of_a_table_add_up_to_its_model() -> None:
+    assert checks(TABLE) == {"anova-sums": "agrees", "anova-df": "agrees"}
+    single = TABLE.replace(" ss:shade=10.0 df1:shade=1", "").replace("soil=20.0", "soil=30.0")
+    assert checks(single.replace("soil=2 ", "soil=3 ")) == {
+        "anova-sums": "agrees",
+        "anova-df": "agrees",
+    }
+    found = checks(TABLE.replace("df1:shade=1", "df1:shade=2"))
+    assert found == {"anova-sums": "agrees", "anova-df": "conflict"}
+    # Sums of squares of effects that overlap add up to less than the model's.
+    doubt = checks(TABLE.replace("ss:shade=10.0", "ss:shade=15.0"))["anova-sums"]
+    assert doubt.startswith("doubt: Sums of squares are sequential")
+
+
+def test_degrees_of_freedom_in_several_rows_are_named() -> None:
+    made = audit_claim(claim(TABLE.replace("df1:shade=1", "df1:shade=2")), 0.05)
+    assert made.findings[0].message == (
+        "df (model) is printed as 3, but df (soil) = 2 and df (shade) = 2 give df (model) = 4. "
+        "Look at df (model), df (soil) or df (shade)."
+    )
+
+
+def test_the_step_before_is_that_of_a_change() -> None:
+    assert checks("model-change: R2=.36 R2:reduced=.30 R2_change=.06")["r2-change"] == "agrees"
+    assert checks("model-change: R2=.36 R2:reduced=.25 R2_change=.06")["r2-change"] == "conflict"

@@ -70,6 +70,11 @@ def test_what_is_no_plain_numeral_is_left_alone(literal: str) -> None:
     assert numeral(Reading("p", "<", literal, -math.inf, 1e-6, Span(0, 1))) is None
 
 
+@pytest.mark.parametrize("literal", ["1e-400", "1e400", "3.7e-320"])
+def test_what_no_float_can_hold_is_left_alone(literal: str) -> None:
+    assert numeral(Reading("F", "=", literal, 0.0, math.inf, Span(0, 1))) is None
+
+
 def test_a_numeral_that_its_interval_contradicts_is_left_alone() -> None:
     assert numeral(Reading("p", "=", ".05", 0.2, 0.3, Span(0, 3))) is None
     assert numeral(Reading("p", "=", ".05", 0.0, 0.1, Span(0, 3))) is None

@@ -9,8 +9,9 @@ import pytest
 from audit.notation import claim, reading
 from crossfoot.audit import audit_claim
 from crossfoot.audit.case import make_case, shape_of
+from crossfoot.audit.habits import usual
 from crossfoot.audit.literals import numerals
-from crossfoot.audit.proposals import Printed
+from crossfoot.audit.proposals import Printed, Proposal
 from crossfoot.audit.remedies import EFFORT, KEPT, MOST, Weighted, remedies, shortlist
 from crossfoot.audit.slips import SLIPS
 from crossfoot.laws.interval import Interval
@@ -75,9 +76,11 @@ def undone(slip: str, text: str, low: float = -math.inf, high: float = math.inf)
         ("root for square", "R2_adj=-.1", -1, 1, []),
         ("square for root", "R=.210", 0.4581, 0.4584, [".458"]),
         ("square for root", "F=.210", 0, 1, []),
+        ("square for root", "r=.210", -0.4584, -0.4581, ["−.458"]),
         ("adjusted for plain", "R2=.185 df1=3 df2=96", 0.2099, 0.2101, [".210"]),
         ("adjusted for plain", "R2=.185 df1=3 df2=96", 0.3, 0.31, []),
         ("adjusted for plain", "R2=.185 df1=3", 0.2099, 0.2101, []),
+        ("adjusted for plain", "R2=.185 R2_adj=.18", 0.2099, 0.2101, [".210"]),
         ("adjusted for plain", "R2_adj=.185 df1=3 df2=96", 0.2099, 0.2101, []),
         ("plain for adjusted", "R2_adj=.21 R2=.208", 0.18, 0.184, [".18"]),
         ("plain for adjusted", "R2_adj=.21 R2=.308", 0.18, 0.184, []),
@@ -103,6 +106,9 @@ def undone(slip: str, text: str, low: float = -math.inf, high: float = math.inf)
         ("another bound", "p=.001", 0.002, 0.003, []),
         ("copied", "p=.21 R2=.21", 0.0311, 0.0313, [".031", ".03"]),
         ("copied", "R2=.45 p=.45", 0.211, 0.213, [".21"]),
+        ("copied", "t=2.10 df=2.10", -2.611, -2.609, ["−2.61"]),
+        ("copied", "se=0.659 b=0.659", 1.2, 1.3, []),
+        ("copied", "n=57 df=57", 60, 60, ["60"]),
         ("copied", "p=.21 R2=.22", 0.0311, 0.0313, []),
         ("copied", "p=.5 R2=.5", 0.0311, 0.0313, []),
         ("other", "p=.21", 0.0311, 0.0313, [".03"]),
@@ -259,6 +265,62 @@ def test_marks_are_not_changed() -> None:
 def test_one_number_is_proposed_once() -> None:
     found = changes(claim("mean-comparison: t(32)=-2.45 p=.200"))
     assert [c.remedy.literal for c in found if c.remedy.quantity == "p"] == [".020"]
+
+
+def test_one_number_by_one_slip_is_proposed_once_whatever_its_decimals() -> None:
+    found = changes(claim("coefficient: odds_ratio=2.460 ci_low=2.460 ci_high=4.07 ci_level=95%"))
+    limits = [c.remedy.literal for c in found if c.remedy.quantity == "ci_low"]
+    assert limits[0] == "1.49"
+    assert not {"1.487", "1.488"} & set(limits)
+
+
+def test_no_part_of_what_is_printed_is_proposed() -> None:
+    """More decimals of the same number can't agree where the number does not."""
+    found = changes(claim("overall-model: R2=0.2040 R2_adj=0.204 n=7"))
+    assert "0.2040" not in [c.remedy.literal for c in found]
+
+
+@pytest.mark.parametrize(
+    ("text", "expected"),
+    [
+        # A number that was copied from elsewhere says nothing of the sign.
+        ("correlation: r=.568 df=6 ci_low=.568 ci_high=0.909 ci_level=95%", "ci_low -.228"),
+        ("overall-model: R2=.16 R2_adj=.1647 F=0.329 df1=3 df2=5 p=.806", "R2_adj -.336"),
+        # Where the sign alone can be wrong, nothing else is.
+        ("coefficient: b=0.84 se=0.13 t=−6.46 p<.001", "t 6.46, b −0.84"),
+        # A rounded zero has no side.
+        ("coefficient: b=-0.0 se=0.12 z=-0.441 p=.6592 odds_ratio=0.95", "b -0.05"),
+    ],
+)
+def test_the_other_side_of_zero(text: str, expected: str) -> None:
+    made = [f"{c.remedy.quantity} {c.remedy.literal}" for c in changes(claim(text))]
+    assert set(expected.split(", ")) <= set(made)
+    if ", " in expected:
+        assert expected == ", ".join(made)
+
+
+@pytest.mark.parametrize(
+    ("text", "before", "rarer"),
+    [
+        ("F=7.41", "7.4", True),
+        ("F=7.4", "7.41", False),
+        ("F=7.41 t=2.7", "7.4", False),
+        ("p=.02", ".021", False),
+        ("R2=.458", ".46", False),
+        ("R2=45.8%", "46%", False),
+    ],
+)
+def test_decimals_that_are_seldom_printed_are_seldom_proposed(
+    text: str, before: str, rarer: bool
+) -> None:
+    made = claim(f"effect: {text}")
+    one = made.readings[0]
+    printed = Printed(made.readings, numerals(made.readings), 0, domain(one.quantity), "−")
+    old = numerals((reading(one.quantity, "=", before),))[0]
+    assert old is not None
+    share = usual(printed, Proposal(old, 1.0))
+    assert share < 1 if rarer else share > 1
+    assert usual(printed, Proposal(printed.numeral, 1.0)) == 1
 
 
 def test_no_p_with_more_decimals_than_people_print() -> None:

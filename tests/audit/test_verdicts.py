@@ -62,7 +62,7 @@ coefficient: b=1.00 se=.50 df=58 p=.025 -> doubt p-from-t p
 # the whole model
 overall-model: R2=.21 F(3,96)=8.51 p<.001 n=100 -> nothing
 overall-model: R2=.21 R2_adj=.185 F(3,96)=8.51 p<.001 n=100 -> nothing
-overall-model: R2=.30 F(3,96)=8.51 p<.001 -> conflict f-from-r2 R2
+overall-model: R2=.30 F(3,96)=8.51 p<.001 -> conflict f-from-r2 F
 overall-model: R2=.30 F(3,96)=8.51 p<.001 [robust] -> nothing
 overall-model: R2=.30 F(3,96)=8.51 p<.001 [weighted] -> nothing
 overall-model: R2=.31 R2_adj=.17 F(4,79)=8.70 p<.001 -> conflict r2-adjusted R2_adj
@@ -124,7 +124,7 @@ mean-comparison: t=2.12 p=.04 -> note p-from-t t
 correlation: r=.44 n=45 p=.002 -> nothing
 coefficient: b=.44 t=2.12 p=.04 -> nothing
 overall-model: F=8.72 R2=.21 p<.01 n=100 -> note p-from-f F
-effect: F(2,57)=4.22 p=.000 -> conflict p-from-f F; note bounds p
+effect: F(2,57)=4.22 p=.000 -> conflict p-from-f p; note bounds p
 """
 
 

@@ -37,7 +37,7 @@ def said(low: float, high: float, like: str = "", apart: tuple[float, float] | N
         (59.9999999999, 60.0000000001, "57", "= 60"),
         (60, math.inf, "57", "at least 60"),
         (-math.inf, 0.0123, ".05", "at most .013"),
-        (-math.inf, 5e-5, ".05", "at most 5.0e-5"),
+        (-math.inf, 5e-5, ".05", "at most .00005"),
         (-math.inf, 0.0, ".05", "at most 0"),
         (1e-9, 0.003, ".05", "at most .003"),
         (1.21e-9, 1.33e-9, ".05", "between 1.2e-9 and 1.4e-9"),
@@ -101,7 +101,7 @@ def test_what_is_shown_never_says_more_than_is_known(low: float, width: float, l
         ("correlation: p=.03 df=43", "p = .03 with 43 degrees of freedom"),
         ("mean-comparison: t(58)=2.1 F(1,58)=4.4", "t(58) = 2.1 and F(1, 58) = 4.4"),
         ("model-change: F_change(1,96)=9.58", "ΔF(1, 96) = 9.58"),
-        ("anova-table: F:x=3.1 df1:x=2 p:x=.05", "F (x) = 3.1, df1 (x) = 2 and p (x) = .05"),
+        ("anova-table: F:x=3.1 df1:x=2 p:x=.05", "F (x) = 3.1, df (x) = 2 and p (x) = .05"),
     ],
 )  # fmt: skip
 def test_readings_as_one_would_write_them(text: str, words: str) -> None:

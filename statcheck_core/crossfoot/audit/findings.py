@@ -25,7 +25,7 @@ from crossfoot.laws.quantities import domain
 from crossfoot.model import Finding
 
 #: A finding points at the reading of its best remedy if that carries this share of all weights.
-SURE = 0.5
+SURE = 0.6
 
 #: An edge of an interval this close to the significance level lies on it.
 _EDGE = 1e-9

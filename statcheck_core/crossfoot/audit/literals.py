@@ -164,6 +164,8 @@ def _powered(numeral: Numeral, reading: Reading) -> Numeral | None:
     for power in powers:
         candidate = numeral._replace(power=power)
         at, unit = candidate.value, candidate.unit
+        if not 0 < unit < math.inf or math.isinf(at):  # beyond what a float can hold
+            continue
         if reading.relation in "<≤>≥":
             edge = reading.high if reading.relation in "<≤" else reading.low
             if abs(edge - at) <= unit * _NEAR:

@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from crossfoot.audit.case import NOTHING
 from crossfoot.audit.literals import Numeral, numeral
 from crossfoot.audit.wording import between, listed, named, printed
+from crossfoot.laws import IDENTITIES
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Claim, Finding, Reading, Remedy
@@ -37,7 +38,8 @@ def _zero_p(claim: Claim) -> Iterator[Finding]:
         name = named(reading)
         if reading.relation in "<≤":
             message = f"{name} is printed as {reading.relation} {reading.literal}, but no p value "
-            yield Finding("bounds", "note", message + "lies below zero.", index)
+            working = (f"Printed: {printed(reading)}", "Formula: 0 ≤ p ≤ 1")
+            yield Finding("bounds", "note", message + "lies below zero.", index, working=working)
         else:
             most = between(Interval(0.0, reading.high), literal)
             message = (
@@ -82,4 +84,9 @@ def _without_freedom(claim: Claim) -> Iterator[Finding]:
                 f"{printed(reading)} is printed without {listed(missing)}, so that p can't be "
                 "recomputed from it."
             )
-            yield Finding(slug, "note", message, index)
+            working = (
+                f"Printed: {printed(reading)}",
+                f"Not printed: {listed(missing)}",
+                f"Formula: {IDENTITIES[slug].formula}",
+            )
+            yield Finding(slug, "note", message, index, working=working)

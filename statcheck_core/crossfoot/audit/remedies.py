@@ -14,11 +14,12 @@ from typing import NamedTuple
 
 from crossfoot.audit.case import Case, fits
 from crossfoot.audit.faults import implied
+from crossfoot.audit.habits import customary, usual
 from crossfoot.audit.literals import Numeral, numerals
-from crossfoot.audit.proposals import Printed, Proposal, Slip
-from crossfoot.audit.slips import PLAIN, SIGN, SLIPS
-from crossfoot.audit.slips_of_quantities import customary
+from crossfoot.audit.proposals import Printed, Proposal, Slip, span
+from crossfoot.audit.slips import CROSSING, PLAIN, SIGNS, SLIPS
 from crossfoot.audit.wording import are_marks
+from crossfoot.laws.identity import mirror
 from crossfoot.laws.interval import Interval, meet
 from crossfoot.laws.quantities import domain, symbol
 from crossfoot.model import Reading, Remedy
@@ -69,29 +70,15 @@ def remedies(case: Case, cells: Set[int], skip: int = 0) -> list[Weighted]:
     skip
         Bits of steps that need not agree: those that fail for another reason.
     """
-    literals = numerals(case.readings)
-    minus = _minus(literals)
-    found: list[_Candidate] = []
-    used = (case.plan.strict | case.plan.doubtful) & ~skip
-    every = frozenset(range(case.plan.printed))
-    for index, reading in enumerate(case.claim.readings):
-        marks = are_marks(reading.quantity, reading.term)
-        if case.at[index] not in cells or literals[index] is None or marks:
-            continue
-        for side, slips in _sides(reading):
-            possible = implied(case, case.at[index], used, every, side)
-            printed = Printed(case.readings, literals, index, possible or side, minus)
-            found += _candidates(printed, slips, possible is not None)
-    found.sort(key=lambda candidate: -candidate.weight)
+    found = sorted(_proposed(case, cells, skip), key=lambda candidate: -candidate.weight)
     kept: list[_Candidate] = []
-    seen: set[tuple[int, str, float]] = set()
     effort = max(EFFORT, PASSES * case.plan.brief.bit_count())
     for candidate in found:
+        if any(_same(candidate, other) for other in kept):
+            continue
         agrees, taken = _tried(case, candidate, skip)
         effort -= taken
-        said = (candidate.reading, candidate.relation, round(candidate.numeral.value, 12))
-        if agrees and said not in seen:
-            seen.add(said)
+        if agrees:
             kept.append(candidate)
         if effort <= 0 or len(kept) == KEPT:
             break
@@ -99,6 +86,42 @@ def remedies(case: Case, cells: Set[int], skip: int = 0) -> list[Weighted]:
         Weighted(_remedy(case, candidate), candidate.weight, candidate.reason == PLAIN.reason)
         for candidate in kept
     ]
+
+
+def _proposed(case: Case, cells: Set[int], skip: int) -> Iterator[_Candidate]:
+    """Return what slips could have made into the readings of some cells."""
+    literals = numerals(case.readings)
+    minus = _minus(literals)
+    used = (case.plan.strict | case.plan.doubtful) & ~skip
+    every = frozenset(range(case.plan.printed))
+    for index, (reading, literal) in enumerate(zip(case.claim.readings, literals, strict=False)):
+        marks = are_marks(reading.quantity, reading.term)
+        if case.at[index] not in cells or literal is None or marks:
+            continue
+        alone = False
+        for order, side in enumerate(_sides(reading, literal)):
+            possible = implied(case, case.at[index], used, every, side)
+            printed = Printed(case.readings, literals, index, possible or side, minus)
+            own = order == 0 or literal.value == 0
+            slips = SLIPS if own else SIGNS if alone or _mirrored(printed) else CROSSING
+            yield from _candidates(printed, slips, possible is not None)
+            alone = alone or possible is not None
+
+
+def _mirrored(printed: Printed) -> bool:
+    """Say whether nothing but the sign of what is printed need be wrong."""
+    return meet(mirror(span(printed.reading)), printed.implied) is not None
+
+
+def _same(one: _Candidate, other: _Candidate) -> bool:
+    """Say whether a candidate gives the number of another, if with other decimals by one slip."""
+    if (one.reading, one.relation) != (other.reading, other.relation):
+        return False
+    apart = abs(one.numeral.value - other.numeral.value)
+    coarser = max(one.numeral.unit, other.numeral.unit)
+    alike = one.reason in (other.reason, PLAIN.reason)
+    rounded = alike and one.numeral.unit != other.numeral.unit
+    return apart <= coarser * (0.5 if rounded else 0) + 1e-12
 
 
 def shortlist(changes: Sequence[Weighted], place: int) -> list[Weighted]:
@@ -114,17 +137,13 @@ def shortlist(changes: Sequence[Weighted], place: int) -> list[Weighted]:
     return shown
 
 
-def _sides(reading: Reading) -> list[tuple[Interval, Sequence[Slip]]]:
-    """Return the sides of zero on which a quantity can lie, and what could go wrong there.
-
-    A number on the other side has another sign, whatever else.
-    """
+def _sides(reading: Reading, literal: Numeral) -> list[Interval]:
+    """Return the sides of zero on which a quantity can lie, that of the literal first."""
     low, high = domain(reading.quantity)
     if low >= 0:
-        return [(Interval(low, high), SLIPS)]
-    negative, positive = Interval(low, 0.0), Interval(0.0, high)
-    own, other = (negative, positive) if reading.high <= 0 else (positive, negative)
-    return [(own, SLIPS), (other, (SIGN,))]
+        return [Interval(low, high)]
+    sides = [Interval(0.0, high), Interval(low, 0.0)]
+    return sides[::-1] if literal.value < 0 else sides
 
 
 def _minus(literals: Sequence[Numeral | None]) -> str:
@@ -150,7 +169,7 @@ def _candidates(printed: Printed, slips: Sequence[Slip], alone: bool) -> Iterato
             relation = proposal.relation or reading.relation
             key = (relation, proposal.numeral.text, proposal.also)
             weight = slip.weight * proposal.share * QUANTITY_WEIGHTS.get(reading.quantity, 1.0)
-            weight *= _plausible(printed, proposal)
+            weight *= _plausible(printed, proposal) * usual(printed, proposal)
             old = merged.get(key)
             total = weight + (old.weight if old else 0.0)
             reason = old.reason if old and best[key] >= weight else slip.reason
@@ -163,7 +182,10 @@ def _candidates(printed: Printed, slips: Sequence[Slip], alone: bool) -> Iterato
 
 
 def _possible(printed: Printed, proposal: Proposal) -> bool:
-    return meet(_interval(printed, proposal), printed.implied) is not None
+    """Say whether a proposal meets what is implied, which no part of what is printed does."""
+    one = _interval(printed, proposal)
+    low, high = span(printed.reading)
+    return meet(one, printed.implied) is not None and not (low <= one.low and one.high <= high)
 
 
 def _interval(printed: Printed, proposal: Proposal) -> Interval:
@@ -186,9 +208,11 @@ def _plausible(printed: Printed, proposal: Proposal) -> float:
     size, old = abs(proposal.numeral.value), abs(printed.numeral.value)
     wide = other.high - other.low > WIDE * unit and 0 < old < size
     order = old / size if wide else 1.0
-    if common is None or not 0 < narrower < math.inf or proposal.relation:
+    exact = one.low == one.high
+    if common is None or exact or not 0 < narrower < math.inf or proposal.relation:
         return order
-    return order * max((common.high - common.low) / narrower, 0.02)
+    part = max((common.high - common.low) / narrower, 0.02)
+    return order * (min(1.0, part) if proposal.rounded else part)
 
 
 def _tried(case: Case, candidate: _Candidate, skip: int) -> tuple[bool, int]:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable, Collection, Mapping
 
 from crossfoot.audit.binding import CUSTOMARY, Cell
-from crossfoot.audit.wording import listed
+from crossfoot.audit.wording import inside, listed
 from crossfoot.laws.assumptions import ASSUMPTIONS, CONTEXTS
 from crossfoot.laws.identity import Form, Identity
 from crossfoot.laws.quantities import FORMAL, QUANTITIES, symbol
@@ -58,7 +58,8 @@ def why_silent(
             return f"It speaks of {listed([_KINDS[key] for key in kinds], 'or')} only."
         broken = breach(identity, form)
         if broken is not None:
-            return f"{CONTEXTS[broken[0]]} It needs another case: {ASSUMPTIONS[broken[1]].text}"
+            needed = inside(ASSUMPTIONS[broken[1]].text)
+            return f"{CONTEXTS[broken[0]]} It holds only if {needed}."
         missing = [name for name in missing if name != "ci_level"]
         if missing:
             return f"Not printed: {listed([symbol(name) for name in missing])}."

@@ -5,8 +5,9 @@ from __future__ import annotations
 import math
 from collections.abc import Callable, Iterator
 
-from crossfoot.audit.literals import Numeral, written
-from crossfoot.audit.proposals import Printed, Proposal, fitting, span
+from crossfoot.audit.habits import THRESHOLDS, likely_decimals, threshold_like
+from crossfoot.audit.literals import written
+from crossfoot.audit.proposals import Printed, Proposal, fitting, fitting_with, span
 from crossfoot.audit.slips_of_digits import digits_of
 from crossfoot.laws import IDENTITIES
 from crossfoot.laws.interval import Interval, meet
@@ -18,7 +19,9 @@ def freedom_swapped(printed: Printed) -> Iterator[Proposal]:
         for index in printed.find("df2"):
             other = printed.numerals[index]
             assert other is not None  # find() leaves the others out
-            yield Proposal(other, 1.0, also=((index, printed.numeral),))
+            # An error with fewer degrees of freedom than the effect is rare.
+            share = 1.0 if other.value < printed.numeral.value else 0.1
+            yield Proposal(other, share, also=((index, printed.numeral),))
 
 
 def cases_for_freedom(printed: Printed) -> Iterator[Proposal]:
@@ -59,18 +62,22 @@ def square_for_root(printed: Printed) -> Iterator[Proposal]:
     """Undo that R² stands for R, or r² for r."""
     low, high = span(printed.reading)
     if printed.reading.quantity in ("R", "r") and low > 0:
-        yield from fitting(printed, 1.0, Interval(math.sqrt(low), math.sqrt(high)))
+        least, most = math.sqrt(low), math.sqrt(high)
+        yield from fitting(printed, 1.0, Interval(least, most))
+        yield from fitting(printed, 1.0, Interval(-most, -least))
 
 
 def adjusted_for_plain(printed: Printed) -> Iterator[Proposal]:
-    """Undo that adjusted R² stands for R²: adjusted, what is implied would print so."""
-    if printed.reading.quantity != "R2":
+    """Undo that adjusted R² stands for R²: it is the R² of which what is printed is adjusted."""
+    if printed.reading.quantity != "R2" or printed.reading.high > 1:
         return
     for one in printed.find("df1"):
         for two in printed.find("df2"):
             freedom = span(printed.readings[one]), span(printed.readings[two])
-            if meet(_ADJUSTED.value(printed.implied, *freedom), span(printed.reading)):
-                yield from fitting(printed, 1.0)
+            yield from fitting(printed, 1.0, _UNADJUSTED.value(span(printed.reading), *freedom))
+    for index in printed.find("R2_adj"):
+        if meet(span(printed.readings[index]), span(printed.reading)):
+            yield from fitting(printed, 0.5)
 
 
 def plain_for_adjusted(printed: Printed) -> Iterator[Proposal]:
@@ -93,22 +100,17 @@ def times(factor: float) -> Callable[[Printed], Iterator[Proposal]]:
     return undo
 
 
-_ADJUSTED = next(
+_UNADJUSTED = next(
     form
     for form in IDENTITIES["r2-adjusted"].forms
-    if form.gives == "R2_adj" and form.takes == ("R2", "df1", "df2")
+    if form.gives == "R2" and form.takes == ("R2_adj", "df1", "df2")
 )
-#: Decimals that p values are rarely printed with more of (common practice, no source).
-_P_DECIMALS = 4
-
-#: Bounds that p values are commonly printed with (common practice, no source).
-_THRESHOLDS = (0.1, 0.05, 0.01, 0.005, 0.001, 0.0005, 0.0001)
 
 
 def value_for_bound(printed: Printed) -> Iterator[Proposal]:
     """Undo that ``=`` stands for ``<``: the number is a threshold and p lies below it."""
     numeral = printed.numeral
-    threshold = any(math.isclose(numeral.value, threshold) for threshold in _THRESHOLDS)
+    threshold = any(math.isclose(numeral.value, threshold) for threshold in THRESHOLDS)
     stated = printed.reading.quantity == "p" and printed.reading.relation in "=≈"
     if stated and threshold and printed.implied.high <= numeral.value:
         yield Proposal(numeral, 1.0, "<")
@@ -128,51 +130,24 @@ def another_bound(printed: Printed) -> Iterator[Proposal]:
     """Undo that a threshold stands where p meets another one."""
     if printed.reading.quantity != "p" or printed.reading.relation not in "<≤":
         return
-    for threshold in _THRESHOLDS:
-        number = written(threshold, printed.numeral, _decimals(threshold, printed.numeral))
-        lower = max((t for t in _THRESHOLDS if t < threshold), default=0.0)
+    for threshold in THRESHOLDS:
+        number = threshold_like(threshold, printed.numeral)
+        lower = max((t for t in THRESHOLDS if t < threshold), default=0.0)
         if lower < printed.implied.high <= threshold:
             yield Proposal(number, 0.25)
 
 
-def _decimals(number: float, like: Numeral) -> int:
-    """Return the decimals that a threshold needs."""
-    return max(0, math.ceil(-math.log10(number) - 1e-9) + like.power)
-
-
 def copied(printed: Printed) -> Iterator[Proposal]:
-    """Undo that a neighbour's number was written twice."""
+    """Undo that a neighbour's number was written twice: nothing is left of what stood there."""
     digits = digits_of(printed.numeral)
-    for index, other in enumerate(printed.numerals):
-        same = index != printed.place and other is not None and digits_of(other) == digits
-        if same and len(digits.strip("0")) > 1:
-            # The number that it took the place of had decimals of its own.
-            own = 3 if printed.reading.quantity == "p" else 2
-            share = 1 / (len(printed.numerals) - 1)
-            for decimals in {own, len(printed.numeral.fraction)}:
-                like = written(0.0, printed.numeral, decimals)
-                literals = list(printed.numerals)
-                literals[printed.place] = like
-                part = 1.0 if decimals == own else 0.5
-                yield from fitting(printed._replace(numerals=literals), share * part)
-            return
-
-
-def customary(printed: Printed, proposal: Proposal) -> bool:
-    """Say whether people print a proposal so.
-
-    They print a bound on p as ``< .01`` but not as ``< .010``, and neither zeros nor many.
-    """
-    relation = proposal.relation or printed.reading.relation
-    if printed.reading.quantity != "p":
-        return True
-    most = max(_P_DECIMALS, len(printed.numeral.fraction))
-    if proposal.numeral.value == 0 or len(proposal.numeral.fraction) > most:
-        return False
-    if relation not in "<>≤≥" or proposal.numeral.text == printed.numeral.text:
-        return True
-    return any(
-        written(threshold, proposal.numeral, _decimals(threshold, proposal.numeral)).text
-        == proposal.numeral.text
-        for threshold in _THRESHOLDS
-    )
+    alike = [
+        index
+        for index, other in enumerate(printed.numerals)
+        if index != printed.place and other is not None and digits_of(other) == digits
+    ]
+    if not alike or len(digits.strip("0")) < 2:
+        return
+    # What it took the place of had decimals of its own.
+    share = len(alike) / (len(printed.numerals) - 1)
+    for decimals in sorted(likely_decimals(printed)):
+        yield from fitting_with(printed, share, decimals)

@@ -10,7 +10,7 @@ import math
 import sys
 from collections.abc import Sequence
 
-from crossfoot.audit.literals import Numeral
+from crossfoot.audit.literals import Numeral, numeral
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Reading
@@ -37,8 +37,8 @@ _MOST_DECIMALS = 14
 #: Numbers below this are as good as zero.
 _LEAST = 1e-300
 
-#: Numbers below this are written with an exponent.
-_SMALL = 1e-4
+#: Numbers below this are written with an exponent; a single bound can be smaller.
+_SMALL, _SMALL_ALONE = 1e-4, 1e-5
 
 
 def between(interval: Interval, like: Numeral = PLAIN, apart: Interval | None = None) -> str:
@@ -124,7 +124,7 @@ def _bound(bound: float, up: bool, like: Numeral, apart: Interval | None) -> str
     """Return one bound, rounded away from what it bounds."""
     if abs(bound - round(bound)) <= _CLOSE * abs(bound):
         return f"{round(bound)}"
-    if abs(bound) < _SMALL:
+    if abs(bound) < _SMALL_ALONE:
         return _scientific(bound, up)
     decimals = _decimals(like, abs(bound), abs(bound))
     text = _rounded(bound, decimals, up)
@@ -170,7 +170,12 @@ def _styled(text: str, like: Numeral) -> str:
         digits = digits[1:]
     if like.mark == ",":
         digits = digits.replace(".", ",")
-    return f"{sign}{digits}{like.tail if like.power == -2 else ''}"
+    return f"{sign}{digits}{_percent(like)}"
+
+
+def _percent(like: Numeral) -> str:
+    """Return the percent sign of a numeral that is worth hundredths, by a word in the text even."""
+    return (like.tail or "%") if like.power == -2 else ""
 
 
 def are_marks(quantity: str, term: str | None) -> bool:
@@ -180,7 +185,9 @@ def are_marks(quantity: str, term: str | None) -> bool:
 
 def named(reading: Reading) -> str:
     """Return a reading's symbol, with its row in a table; marks of significance are of a p."""
-    name, row = symbol(reading.quantity), reading.term or ""
+    row = reading.term or ""
+    # A row of a table has one column of degrees of freedom.
+    name = symbol("df" if row and reading.quantity == "df1" else reading.quantity)
     if row == REDUCED:
         return f"{name} of the step before"
     if not are_marks(reading.quantity, row):
@@ -191,8 +198,13 @@ def named(reading: Reading) -> str:
 
 def printed(reading: Reading) -> str:
     """Return a reading as it is printed."""
-    unit = "%" if reading.quantity == "ci_level" and reading.literal.isdigit() else ""
-    return f"{named(reading)} {reading.relation} {reading.literal}{unit}"
+    return f"{named(reading)} {reading.relation} {literal_of(reading)}"
+
+
+def literal_of(reading: Reading) -> str:
+    """Return a literal as it is printed, with the percent sign that stands apart from it."""
+    found = numeral(reading)
+    return reading.literal + ("" if found is None or found.tail else _percent(found))
 
 
 def phrase(readings: Sequence[Reading]) -> str:
@@ -211,9 +223,10 @@ def phrase(readings: Sequence[Reading]) -> str:
             inside = ", ".join(by_key[key].literal for key in keys)
             term = f" ({reading.term})" if reading.term else ""
             head = f"{symbol(reading.quantity)}({inside}){term}"
-            heads[place] = f"{head} {reading.relation} {reading.literal}"
+            heads[place] = f"{head} {reading.relation} {literal_of(reading)}"
     rest = [r for r in readings if r.quantity in _FREEDOM and (r.quantity, r.term) not in held]
-    whole = len(rest) == (1 if rest and rest[0].quantity == "df" else 2)
+    kinds = sorted(reading.quantity for reading in rest)
+    whole = kinds in (["df"], ["df1", "df2"]) and not _rows(rest)
     words = [
         heads.get(place, printed(reading))
         for place, reading in enumerate(readings)
@@ -225,6 +238,11 @@ def phrase(readings: Sequence[Reading]) -> str:
     return f"{listed(words)} with {freedom}" if words else freedom
 
 
+def _rows(readings: Sequence[Reading]) -> bool:
+    """Say whether degrees of freedom stand in several rows of a table, that of the error aside."""
+    return len({reading.term for reading in readings if reading.quantity != "df2"}) > 1
+
+
 def plural(readings: Sequence[Reading]) -> bool:
     """Say whether :func:`phrase` names more than one thing."""
     text = phrase(readings)
@@ -232,9 +250,15 @@ def plural(readings: Sequence[Reading]) -> bool:
 
 
 def subjects(readings: Sequence[Reading]) -> list[str]:
-    """Return the symbols of readings, all degrees of freedom together as the last of them."""
+    """Return the symbols of readings, all degrees of freedom together as the last of them.
+
+    Those of several rows of a table are named each.
+    """
+    freedom = [reading for reading in readings if reading.quantity in _FREEDOM]
+    if _rows(freedom):
+        return list(dict.fromkeys(named(reading) for reading in readings))
     names = [named(reading) for reading in readings if reading.quantity not in _FREEDOM]
-    if len(names) < len(readings):
+    if freedom:
         names.append("the degrees of freedom")
     return list(dict.fromkeys(names))
 
@@ -250,3 +274,10 @@ def listed(words: Sequence[str], joint: str = "and") -> str:
     if len(words) < 2:
         return "".join(words)
     return f"{', '.join(words[:-1])} {joint} {words[-1]}"
+
+
+def inside(sentence: str) -> str:
+    """Return a sentence as it stands inside another."""
+    first = sentence.partition(" ")[0]
+    lower = first.isalpha() and first.istitle() and len(first) > 1
+    return (sentence[0].lower() + sentence[1:] if lower else sentence).removesuffix(".")

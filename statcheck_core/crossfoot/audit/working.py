@@ -13,7 +13,9 @@ from crossfoot.audit.wording import (
     PLAIN,
     are_marks,
     between,
+    inside,
     listed,
+    literal_of,
     named,
     phrase,
     plural,
@@ -73,7 +75,7 @@ def conclusion(case: Case, cell: int, result: Interval, takes: Iterable[int]) ->
     reading = case.readings[index]
     relation = "" if reading.relation == "=" else f"{reading.relation} "
     marks = are_marks(reading.quantity, reading.term)
-    lead = f"{named(reading)} is {'' if marks else 'printed as '}{relation}{reading.literal}"
+    lead = f"{named(reading)} is {'' if marks else 'printed as '}{relation}{literal_of(reading)}"
     shown = between(_opened(case, cell, result), hand(case, cell), case.box[cell])
     readings = case.readings_at(takes)
     if not readings:
@@ -166,11 +168,4 @@ def _assumed(unstated: Iterable[str]) -> list[str]:
 
 def taken_for_granted(unstated: Iterable[str]) -> str:
     """Return the sentence that says what a doubt rests on."""
-    return f"This is sure only if {listed([_inner(text) for text in unstated])}."
-
-
-def _inner(sentence: str) -> str:
-    """Return a sentence as it stands inside another."""
-    first = sentence.partition(" ")[0]
-    lower = first.isalpha() and first.istitle() and len(first) > 1
-    return (sentence[0].lower() + sentence[1:] if lower else sentence).removesuffix(".")
+    return f"This is sure only if {', and if '.join(inside(text) for text in unstated)}."

@@ -88,7 +88,7 @@ def unknown(slug: str, known: tuple[str, ...]) -> str:
     """Return what to say of a name that no identity has."""
     from difflib import get_close_matches  # only a mistake needs it
 
-    near = get_close_matches(slug, known, 3, 0.4) or [name for name in known if slug in name][:3]
+    near = get_close_matches(slug, known, 3, 0.5) or [name for name in known if slug in name][:3]
     meant = f" Perhaps {' or '.join(near)}?" if near else ""
     return f"There is no identity {slug!r}.{meant} “crossfoot identities” lists them all."
 

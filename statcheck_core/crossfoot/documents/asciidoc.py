@@ -32,7 +32,8 @@ _VERBATIM = frozenset("-.`")
 
 def split(text: str) -> tuple[Block, ...]:
     """Split into paragraphs, headings, listings and tables."""
-    return _Splitter(text).run()
+    splitter = _Splitter(text)
+    return splitter.lines.walk(splitter.line)
 
 
 class _Splitter:
@@ -42,13 +43,6 @@ class _Splitter:
         self.lines = Lines(text)
         self.attributes = ""  # of the block that follows
         self.unclosed: set[str] = set()
-
-    def run(self) -> tuple[Block, ...]:
-        """Return the blocks."""
-        number = 0
-        while number < len(self.lines.lines):
-            number = self.line(number)
-        return tuple(self.lines.blocks)
 
     def line(self, number: int) -> int:
         """Handle what starts at a line and return the next line to handle."""

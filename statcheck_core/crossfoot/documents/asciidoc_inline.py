@@ -3,8 +3,9 @@
 from __future__ import annotations
 
 import re
+from collections.abc import Iterable
 
-from crossfoot.documents.edits import MOST_MARKS, Edit, Marks, Pairs, apply_edits
+from crossfoot.documents.edits import Edit, Marks, Walk, show_marked
 from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.tags import entity_at
 from crossfoot.documents.visible import OPAQUE, Builder
@@ -42,27 +43,17 @@ _KNOWN = {
 
 
 def show_inline(
-    out: Builder, source: str, start: int, end: int, line_edits: list[Edit] | None = None
+    out: Builder, source: str, start: int, end: int, line_edits: Iterable[Edit] = ()
 ) -> None:
     """Show ``source[start:end]``, with edits that the lines call for."""
-    walk = _Walk(source, start, end)
-    walk.pairs.edits.extend(line_edits or ())
-    position = start
-    left = MOST_MARKS
-    while left and (found := _MARK.next(source, position, end)):
-        left -= 1
-        position = walk.mark(found)
-    apply_edits(out, source, start, end, walk.pairs.edits)
+    show_marked(out, (start, end), _MARK, _Walk(source, start, end), line_edits)
 
 
-class _Walk:
+class _Walk(Walk):
     """Writes down what each mark does."""
 
     def __init__(self, source: str, start: int, end: int) -> None:
-        self.source = source
-        self.end = end
-        self.pairs = Pairs(source, start, end)
-        self.edits = self.pairs.edits
+        super().__init__(source, start, end)
         self.struck = False  # whether the role before says so
 
     def mark(self, found: re.Match[str]) -> int:
@@ -82,20 +73,15 @@ class _Walk:
             self.edits.append(Edit(found.start(), found.start() + 1))
         elif found["role"]:
             self.struck = "line-through" in found["roles"]
-            self.edits.append(Edit(*found.span()))
+            self.replace(found)
         elif found["attribute"]:
             shown = _KNOWN.get(found["attribute"][1:-1], OPAQUE)
-            self.edits.append(Edit(*found.span(), shown))
+            self.replace(found, shown)
         elif found["pass"]:
             self.around(found, "plus3")
         else:
-            self.edits.append(Edit(*found.span(), OPAQUE if found["ref"] else ""))
+            self.replace(found, OPAQUE if found["ref"] else "")
         return found.end()
-
-    def around(self, found: re.Match[str], group: str, shown: tuple[str, str] = ("", "")) -> None:
-        """Put ``shown`` in place of what stands around a group."""
-        self.edits.append(Edit(found.start(), found.start(group), shown[0]))
-        self.edits.append(Edit(found.end(group), found.end(), shown[1]))
 
     def pair(self, mark: str, at: int, after: int) -> None:
         """Handle a mark of emphasis, code or highlighting; a double one acts within words."""
@@ -118,7 +104,7 @@ class _Walk:
         if name in ("stem", "latexmath", "asciimath"):
             out = Builder()
             show_math(out, self.source, *found.span("body"))
-            self.edits.append(Edit(*found.span(), out.build()))
+            self.replace(found, out.build())
         elif name.startswith("footnote"):
             self.around(found, "body", (" (", ")") if found["body"] else ("", ""))
         elif (
@@ -126,4 +112,4 @@ class _Walk:
         ):
             self.around(found, "body")
         else:
-            self.edits.append(Edit(*found.span(), OPAQUE))
+            self.replace(found, OPAQUE)

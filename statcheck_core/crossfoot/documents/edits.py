@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import re
+from abc import ABC, abstractmethod
 from collections.abc import Iterable
 from typing import NamedTuple
 
@@ -57,6 +58,19 @@ class Marks:
                 return found
             start = candidate.end()
         return None
+
+
+def show_marked(
+    out: Builder, span: tuple[int, int], marks: Marks, walk: Walk, line_edits: Iterable[Edit]
+) -> None:
+    """Show a stretch of source, with what its marks do and with edits that its lines call for."""
+    position, end = span
+    walk.edits.extend(line_edits)
+    left = MOST_MARKS
+    while left and (found := marks.next(walk.source, position, end)):
+        left -= 1
+        position = walk.mark(found)
+    apply_edits(out, walk.source, *span, walk.edits)
 
 
 class Closings:
@@ -121,3 +135,26 @@ class Pairs:
             self.edits.append(Edit(begin, after))
         elif not right.isspace() and not left.isalnum():
             self._open[key] = (at, after)
+
+
+class Walk(ABC):
+    """Writes down what each mark of a stretch of source does; a format says how."""
+
+    def __init__(self, source: str, start: int, end: int) -> None:
+        self.source = source
+        self.end = end
+        self.pairs = Pairs(source, start, end)
+        self.edits = self.pairs.edits
+
+    @abstractmethod
+    def mark(self, found: re.Match[str]) -> int:
+        """Handle a mark and return where to go on."""
+
+    def replace(self, found: re.Match[str], shown: str | Visible = "") -> None:
+        """Show something in place of a mark."""
+        self.edits.append(Edit(*found.span(), shown))
+
+    def around(self, found: re.Match[str], group: str, shown: tuple[str, str] = ("", "")) -> None:
+        """Show something in place of what stands around a group."""
+        self.edits.append(Edit(found.start(), found.start(group), shown[0]))
+        self.edits.append(Edit(found.end(group), found.end(), shown[1]))

@@ -2,16 +2,9 @@
 
 from __future__ import annotations
 
-from crossfoot.documents.format import Definitions, Reader
-from crossfoot.documents.html import show_in
-from crossfoot.documents.markup_blocks import split_markup
-from crossfoot.documents.markup_tables import read_table
+from crossfoot.documents.markup_reader import markup_reader
 from crossfoot.documents.markup_text import Dialect
-from crossfoot.documents.table import Table
-from crossfoot.documents.tags import angle_comments
-from crossfoot.documents.visible import Visible
 from crossfoot.documents.words import words
-from crossfoot.model import Block
 
 DIALECT = Dialect(
     blocks=words(
@@ -34,20 +27,4 @@ DIALECT = Dialect(
     sections=frozenset(("sec", "abstract", "ack", "app", "trans-abstract")),
 )
 
-
-def split(text: str) -> tuple[Block, ...]:
-    """Split into blocks."""
-    return split_markup(text, DIALECT)
-
-
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
-    """Show a block."""
-    return show_in(DIALECT, kind, source)
-
-
-def table(source: str, definitions: Definitions) -> Table:
-    """Read a table."""
-    return read_table(source, DIALECT)
-
-
-READER = Reader(split, show, angle_comments, table=table)
+READER = markup_reader(DIALECT)

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
+
 from crossfoot.model import Block
 
 
@@ -17,6 +19,16 @@ class Lines:
             self.starts.append(start)
             start += len(line) + 1
         self.blocks: list[Block] = []
+
+    def walk(self, handle: Callable[[int], int]) -> tuple[Block, ...]:
+        """Return the blocks that ``handle`` makes of all lines.
+
+        It handles what starts at a line, and returns the next line to handle.
+        """
+        number = 0
+        while number < len(self.lines):
+            number = handle(number)
+        return tuple(self.blocks)
 
     def add(self, kind: str, first: int, last: int, level: int = 0, offset: int = 0) -> int:
         """Make a block of the lines from ``first`` up to, not including, ``last``.

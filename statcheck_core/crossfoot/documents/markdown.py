@@ -10,7 +10,8 @@ from __future__ import annotations
 import re
 
 from crossfoot.documents.format import Definitions, Reader
-from crossfoot.documents.markdown_chunk import Chunk, Opening, analyse
+from crossfoot.documents.markdown_blocks import Chunk, Opening
+from crossfoot.documents.markdown_chunk import analyse
 from crossfoot.documents.table import Table
 from crossfoot.documents.tags import angle_comments
 from crossfoot.documents.visible import Visible

@@ -14,9 +14,9 @@ from itertools import islice
 from crossfoot.documents.edits import Edit, apply_edits
 from crossfoot.documents.emphasis import Run, emphasis_edits, run_of
 from crossfoot.documents.markdown_math import Formulas, Mark, first_after, formula
-from crossfoot.documents.tags import Tag, attribute_span, entity_at, tag_at
+from crossfoot.documents.markdown_tags import APART, TAGS, image
+from crossfoot.documents.tags import Tag, entity_at, tag_at
 from crossfoot.documents.visible import OPAQUE, Builder, Visible
-from crossfoot.documents.words import words
 from crossfoot.expressions import expression
 
 # Every alternative starts with a plain character: so the search skips text at full speed.
@@ -39,18 +39,6 @@ _RUN = expression(r"\{?[A-Za-z]{1,12}\}? ")
 _ROLE = expression(r"\{([a-z:]{1,20})\}$")
 _AUTOLINK = expression(r"<([A-Za-z][A-Za-z0-9+.-]{1,20}:[^\s<>]{0,500})>")
 
-#: Tags that Markdown passes on to HTML; others are text that looks like one (``p<b and c>3``).
-_TAGS = words(
-    "a abbr b bdi big blockquote br caption center cite code col colgroup dd del details dfn div "
-    "dl dt em figcaption figure font h1 h2 h3 h4 h5 h6 hr i img ins kbd li mark math nobr ol p pre "
-    "q s samp section small span strike strong sub summary sup table tbody td tfoot th thead tr tt "
-    "u ul var wbr"
-)
-#: Of those, the ones that part what stands before from what follows.
-_APART = words(
-    "blockquote br caption center dd details div dl dt figcaption figure h1 h2 h3 h4 h5 h6 hr li "
-    "ol p pre section summary table td th tr ul"
-)
 _STRUCK = frozenset(("del", "s", "strike"))
 
 
@@ -249,7 +237,7 @@ class _Inline:
                 return self._edit(mark.start, stop + 3)
             self.no_comment = True
         tag = tag_at(source, mark.start, self.end)
-        if tag and tag.name in _TAGS:
+        if tag and tag.name in TAGS:
             return self._tag(tag)
         link = _AUTOLINK.match(source, mark.start, self.end)
         if link:
@@ -265,7 +253,7 @@ class _Inline:
                 self.struck_tag = None
         elif tag.name in ("sup", "sub"):
             return self._script_tag(tag)
-        elif tag.name in _APART:
+        elif tag.name in APART:
             return self._edit(tag.start, tag.end, "\n")
         elif tag.name == "img":
             return self._edit(tag.start, tag.end, image(self.source, tag))
@@ -300,11 +288,3 @@ def _marks(source: str, start: int, end: int, edits: Sequence[Edit]) -> Iterator
         for found in _MARK.finditer(source, start, edit.start):
             yield Mark(found.start(), found.end(), found[0])
         start = edit.end
-
-
-def image(source: str, tag: Tag) -> Visible | str:
-    """Show an image: the formula in its alternative text, else nothing that can be read."""
-    span = attribute_span(tag, "alt")
-    if span and source[span.start] == source[span.end - 1] == "$" and span.end - span.start > 2:
-        return formula(source, span.start + 1, span.end - 1)
-    return OPAQUE

@@ -43,9 +43,11 @@ def table(source: str, definitions: Definitions) -> Table:
     """Read a table, which may be raw HTML or LaTeX."""
     head = source.lstrip()[:2]
     if head[:1] == "<":
-        from crossfoot.documents import html  # only few documents hold such tables
+        # Only few documents hold such tables.
+        from crossfoot.documents.html import DIALECT
+        from crossfoot.documents.markup_tables import read_table as read_markup
 
-        return html.table(source, definitions)
+        return read_markup(source, DIALECT)
     if head[:1] == "\\":
         from crossfoot.documents import latex
 

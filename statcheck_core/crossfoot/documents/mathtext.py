@@ -8,8 +8,8 @@ can make it fail or slow. What a command shows is declared in
 from __future__ import annotations
 
 import re
-from typing import NamedTuple
 
+from crossfoot.documents.tex_arguments import Arguments
 from crossfoot.documents.tex_symbols import (
     COMMANDS,
     DROPPED,
@@ -20,7 +20,6 @@ from crossfoot.documents.tex_symbols import (
     SYMBOLS,
     UNITS,
     Arg,
-    Args,
 )
 from crossfoot.documents.tex_tokens import (
     COMMENT,
@@ -39,12 +38,8 @@ from crossfoot.documents.tex_tokens import (
 )
 from crossfoot.documents.visible import OPAQUE, Builder
 
-#: Most arguments that are waited for, most tokens that are read in one block: far beyond any text.
-_MOST_ARGS = 40
+#: Most tokens that are read in one block: far beyond any text.
 _MOST_TOKENS = 40_000
-
-#: Deepest nesting of groups that is followed; deeper braces are passed over.
-_DEEPEST = 500
 
 
 def show_math(out: Builder, source: str, start: int, end: int) -> None:
@@ -57,28 +52,8 @@ def show_tex(out: Builder, source: str, start: int, end: int) -> None:
     _Setter(out, source, end, math=False, comments=True).run(start)
 
 
-class _Frame(NamedTuple):
-    """An open group: the arguments it heads, if it is one, and what to go back to."""
-
-    args: Args
-    math: bool
-    hidden: bool
-
-
-class _Setter:
+class _Setter(Arguments):
     """Walks over TeX source and shows it."""
-
-    def __init__(self, out: Builder, source: str, end: int, math: bool, comments: bool) -> None:
-        self.out = out
-        self.source = source
-        self.end = end
-        self.math = math
-        self.comments = comments
-        self.hidden = False
-        self.stack: list[_Frame] = []
-        self.skipped = 0  # groups deeper than _DEEPEST
-        self.args: Args = ()  # those that the next group or character is the first of
-        self.mark = 0  # where the command they belong to stands
 
     def run(self, position: int) -> None:
         """Show everything from ``position`` on."""
@@ -114,92 +89,6 @@ class _Setter:
             return self.special(char, at, after)
         return after
 
-    # What is shown.
-
-    def keep(self, start: int, end: int) -> None:
-        """Show the source as it stands."""
-        if not self.hidden:
-            self.out.keep(self.source, start, end)
-
-    def put(self, text: str, start: int, end: int) -> None:
-        """Show ``text`` for the source from ``start`` to ``end``."""
-        if self.hidden:
-            return
-        if len(text) == end - start and self.source.startswith(text, start):
-            self.out.keep(self.source, start, end)
-        else:
-            self.out.put(text, start, end)
-
-    def words(self, start: int, end: int) -> None:
-        """Show plain characters; the first may be an argument."""
-        while self.args and start < end:
-            if self.source[start].isspace():
-                start += 1
-                continue
-            if self.source[start] == "[" and self.args[0].before not in ("^{", "_{"):
-                option = OPTION.match(self.source, start, self.end)
-                if option and option.end() <= end:
-                    start = option.end()
-                    continue
-            if self.args[0].hide:
-                self.args = ()
-            else:
-                self.begin(start)
-                self.keep(start, start + 1)
-                start += 1
-                self.finish(start, start)
-        self.keep(start, end)
-
-    def symbol(self, text: str, at: int, after: int) -> None:
-        """Show a sign, which may be an argument."""
-        if self.args:
-            self.begin(at)
-            self.put(text, at, after)
-            self.finish(after, after)
-        else:
-            self.put(text, at, after)
-
-    # Arguments.
-
-    def begin(self, at: int) -> None:
-        """Open the next argument, which starts at ``at``."""
-        arg = self.args[0]
-        self.put(arg.before, self.mark, at)
-        self.stack.append(_Frame(self.args, self.math, self.hidden))
-        self.args = ()
-        self.hidden = self.hidden or arg.hide
-        if arg.math is not None:
-            self.math = arg.math
-
-    def finish(self, at: int, after: int) -> None:
-        """Close the group or argument that was opened last."""
-        frame = self.stack.pop()
-        self.math, self.hidden = frame.math, frame.hidden
-        self.args = frame.args[1:]
-        self.mark = at
-        if not frame.args:
-            return
-        arg = frame.args[0]
-        self.put(arg.after, at, after)
-        if arg.opaque and self.source.startswith("{", after):
-            self.put(OPAQUE, at, after)
-            self.args = (Arg(opaque=True), *self.args)
-
-    def take(self, args: Args, at: int) -> None:
-        """Expect the arguments of a command, which may itself be an argument."""
-        if len(self.args) > _MOST_ARGS:
-            self.args = ()
-        if self.args:
-            outer = self.args[0]
-            self.put(outer.before, self.mark, at)
-            last = args[-1]
-            last = last._replace(after=last.after + outer.after, hide=last.hide or outer.hide)
-            args = (*args[:-1], last, *self.args[1:])
-        self.args = args
-        self.mark = at
-
-    # Tokens.
-
     def special(self, char: str, at: int, after: int) -> int:
         """Handle a character with a meaning of its own."""
         if char == "{":
@@ -219,24 +108,6 @@ class _Setter:
             self.args = ()
             self.math = not self.math
         return after
-
-    def open_group(self, after: int) -> None:
-        """Enter a group."""
-        if len(self.stack) >= _DEEPEST:
-            self.skipped += 1
-            self.args = ()
-        elif self.args:
-            self.begin(after)
-        else:
-            self.stack.append(_Frame((), self.math, self.hidden))
-
-    def close_group(self, at: int) -> None:
-        """Leave a group; a brace too many shows nothing."""
-        self.args = ()
-        if self.skipped:
-            self.skipped -= 1
-        elif self.stack:
-            self.finish(at, at + 1)
 
     def script(self, char: str, at: int) -> int:
         """Raise or lower what follows; raised stars are significance marks and stay."""

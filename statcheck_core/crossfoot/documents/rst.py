@@ -44,7 +44,8 @@ _ADMONITIONS = words(
 
 def split(text: str) -> tuple[Block, ...]:
     """Split into paragraphs, headings, literal blocks and tables."""
-    return _Splitter(text).run()
+    splitter = _Splitter(text)
+    return splitter.lines.walk(splitter.line)
 
 
 class _Splitter:
@@ -53,13 +54,6 @@ class _Splitter:
     def __init__(self, text: str) -> None:
         self.lines = Lines(text)
         self.styles: list[str] = []  # adornments of headings, outermost first
-
-    def run(self) -> tuple[Block, ...]:
-        """Return the blocks."""
-        number = 0
-        while number < len(self.lines.lines):
-            number = self.line(number)
-        return tuple(self.lines.blocks)
 
     def line(self, number: int) -> int:
         """Handle what starts at a line and return the next line to handle."""

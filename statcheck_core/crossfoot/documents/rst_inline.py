@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Iterable
 
-from crossfoot.documents.edits import MOST_MARKS, Edit, Marks, Pairs, apply_edits
+from crossfoot.documents.edits import Edit, Marks, Walk, show_marked
 from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.visible import OPAQUE, Builder
 from crossfoot.expressions import expression
@@ -21,64 +21,50 @@ _MARK = Marks(
 _TARGET = expression(r"\s*<[^<>]*>$")
 _RAISED = frozenset(("sup", "superscript"))
 _LOWERED = frozenset(("sub", "subscript"))
+_UNSEEN = frozenset(("cite", "citep", "citet", "cite:p", "cite:t", "raw"))
 
 
 def show_inline(
     out: Builder, source: str, start: int, end: int, line_edits: Iterable[Edit] = ()
 ) -> None:
     """Show ``source[start:end]``, with edits that the lines call for."""
-    pairs = Pairs(source, start, end)
-    pairs.edits.extend(line_edits)
-    position = start
-    left = MOST_MARKS
-    while left and (found := _MARK.next(source, position, end)):
-        left -= 1
-        position = found.end()
-        _handle(pairs, found)
-    apply_edits(out, source, start, end, pairs.edits)
+    show_marked(out, (start, end), _MARK, _Walk(source, start, end), line_edits)
 
 
-def _handle(pairs: Pairs, found: re.Match[str]) -> None:
-    """Write down what a mark does."""
-    edits = pairs.edits
-    if found["escape"]:
-        space = found["escape"][1].isspace()
-        edits.append(Edit(found.start(), found.end() if space else found.start() + 1))
-    elif found["literal"] is not None:
-        _around(edits, found, "literal")
-    elif found["text"] is not None:
-        _interpreted(edits, found)
-    elif found["stars"]:
-        pairs.mark(found["stars"], *found.span())
-    elif found["note"]:
-        edits.append(Edit(*found.span()))
-    elif found["bar"]:
-        edits.append(Edit(*found.span(), OPAQUE))
-    elif found["ref"]:
-        edits.append(Edit(*found.span()))
+class _Walk(Walk):
+    """Writes down what each mark does."""
 
+    def mark(self, found: re.Match[str]) -> int:
+        """Handle a mark and return where to go on."""
+        if found["escape"]:
+            space = found["escape"][1].isspace()
+            end = found.end() if space else found.start() + 1
+            self.edits.append(Edit(found.start(), end))
+        elif found["literal"] is not None:
+            self.around(found, "literal")
+        elif found["text"] is not None:
+            self.interpreted(found)
+        elif found["stars"]:
+            self.pairs.mark(found["stars"], *found.span())
+        else:
+            self.replace(found, OPAQUE if found["bar"] else "")
+        return found.end()
 
-def _around(edits: list[Edit], found: re.Match[str], group: str) -> None:
-    """Drop what stands around a group."""
-    edits.append(Edit(found.start(), found.start(group)))
-    edits.append(Edit(found.end(group), found.end()))
-
-
-def _interpreted(edits: list[Edit], found: re.Match[str]) -> None:
-    """Show interpreted text: a formula, raised or lowered text, a link."""
-    role = found["role"] or found["suffix"] or ""
-    inner, stop = found.span("text")
-    if role == "math":
-        out = Builder()
-        show_math(out, found.string, inner, stop)
-        edits.append(Edit(*found.span(), out.build()))
-    elif role in _RAISED or role in _LOWERED:
-        stars = role in _RAISED and set(found["text"]) <= set("*†‡")
-        edits.append(Edit(found.start(), inner, "" if stars else "^{" if role in _RAISED else "_{"))
-        edits.append(Edit(stop, found.end(), "" if stars else "}"))
-    elif role in ("cite", "citep", "citet", "cite:p", "cite:t", "raw"):
-        edits.append(Edit(*found.span(), OPAQUE))
-    else:
-        target = _TARGET.search(found["text"]) if found["link"] or role else None
-        edits.append(Edit(found.start(), inner))
-        edits.append(Edit(inner + target.start() if target else stop, found.end()))
+    def interpreted(self, found: re.Match[str]) -> None:
+        """Show interpreted text: a formula, raised or lowered text, a link."""
+        role = found["role"] or found["suffix"] or ""
+        if role == "math":
+            out = Builder()
+            show_math(out, found.string, *found.span("text"))
+            self.replace(found, out.build())
+        elif role in _RAISED or role in _LOWERED:
+            stars = role in _RAISED and set(found["text"]) <= set("*†‡")
+            before = "" if stars else "^{" if role in _RAISED else "_{"
+            self.around(found, "text", (before, "" if stars else "}"))
+        elif role in _UNSEEN:
+            self.replace(found, OPAQUE)
+        else:
+            inner, stop = found.span("text")
+            target = _TARGET.search(found["text"]) if found["link"] or role else None
+            self.edits.append(Edit(found.start(), inner))
+            self.edits.append(Edit(inner + target.start() if target else stop, found.end()))

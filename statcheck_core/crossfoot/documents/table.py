@@ -7,7 +7,7 @@ read in them finds its way back to the source as it does in prose.
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Sequence
 from typing import NamedTuple
 
 from crossfoot.documents.visible import Builder, Visible, flat
@@ -185,18 +185,6 @@ class TableBuilder:
         self._length += len(visible.text)
         self._at = end
         return Span(start, self._length)
-
-
-def rows_of(table: Table) -> Iterator[list[Cell]]:
-    """Yield the cells of each row that has any."""
-    row: list[Cell] = []
-    for cell in table.cells:
-        if row and cell.row != row[0].row:
-            yield row
-            row = []
-        row.append(cell)
-    if row:
-        yield row
 
 
 def shown_table(visible: Visible) -> Table:

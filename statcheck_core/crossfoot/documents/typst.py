@@ -33,7 +33,8 @@ _COMMENTS = expression(
 
 def split(text: str) -> tuple[Block, ...]:
     """Split into paragraphs, headings, raw text and tables."""
-    return _Splitter(text).run()
+    splitter = _Splitter(text)
+    return splitter.lines.walk(splitter.line)
 
 
 class _Splitter:
@@ -43,13 +44,6 @@ class _Splitter:
         self.text = text
         self.lines = Lines(text)
         self.unbalanced = False  # whether brackets were found that nothing closes
-
-    def run(self) -> tuple[Block, ...]:
-        """Return the blocks."""
-        number = 0
-        while number < len(self.lines.lines):
-            number = self.line(number)
-        return tuple(self.lines.blocks)
 
     def line(self, number: int) -> int:
         """Handle what starts at a line and return the next line to handle."""

@@ -3,8 +3,9 @@
 from __future__ import annotations
 
 import re
+from collections.abc import Iterable
 
-from crossfoot.documents.edits import MOST_MARKS, Edit, Marks, Pairs, apply_edits
+from crossfoot.documents.edits import Edit, Marks, Walk, show_marked
 from crossfoot.documents.typst_math import show_typst_math
 from crossfoot.documents.visible import OPAQUE, Builder
 
@@ -23,27 +24,17 @@ _AROUND = {"super": ("^{", "}"), "sub": ("_{", "}"), "footnote": (" (", ")")}
 
 
 def show_inline(
-    out: Builder, source: str, start: int, end: int, line_edits: list[Edit] | None = None
+    out: Builder, source: str, start: int, end: int, line_edits: Iterable[Edit] = ()
 ) -> None:
     """Show ``source[start:end]``, with edits that the lines call for."""
-    walk = _Walk(source, start, end)
-    walk.pairs.edits.extend(line_edits or ())
-    position = start
-    left = MOST_MARKS
-    while left and (found := _MARK.next(source, position, end)):
-        left -= 1
-        position = walk.mark(found)
-    apply_edits(out, source, start, end, walk.pairs.edits)
+    show_marked(out, (start, end), _MARK, _Walk(source, start, end), line_edits)
 
 
-class _Walk:
+class _Walk(Walk):
     """Writes down what each mark does."""
 
     def __init__(self, source: str, start: int, end: int) -> None:
-        self.source = source
-        self.end = end
-        self.pairs = Pairs(source, start, end)
-        self.edits = self.pairs.edits
+        super().__init__(source, start, end)
         self.brackets: list[tuple[str | None, int]] = []  # what closes each; where it opened
 
     def mark(self, found: re.Match[str]) -> int:
@@ -53,36 +44,35 @@ class _Walk:
         elif found["math"] is not None:
             out = Builder()
             show_typst_math(out, self.source, *found.span("math"))
-            self.edits.append(Edit(*found.span(), out.build()))
+            self.replace(found, out.build())
         elif found["function"]:
             self.function(found)
         elif found["bracket"]:
             self.bracket(found["bracket"], *found.span())
         elif found["raw"] is not None:
-            self.edits.append(Edit(found.start(), found.start() + 1))
-            self.edits.append(Edit(found.end() - 1, found.end()))
+            self.around(found, "raw")
         elif found["escape"]:
             self.edits.append(Edit(found.start(), found.start() + 1))
         elif found["dash"]:
-            self.edits.append(Edit(*found.span(), "–" if len(found["dash"]) == 2 else "—"))
+            self.replace(found, "–" if len(found["dash"]) == 2 else "—")
         elif found["space"]:
-            self.edits.append(Edit(*found.span(), " "))
+            self.replace(found, " ")
         else:
             shown = OPAQUE if found["ref"] or found["hash"] else ""
-            self.edits.append(Edit(*found.span(), shown))
+            self.replace(found, shown)
         return found.end()
 
     def function(self, found: re.Match[str]) -> None:
         """Handle a function: its content is shown, its value is unknown."""
         name = found["name"]
         if not found["open"]:
-            self.edits.append(Edit(*found.span(), OPAQUE))
+            self.replace(found, OPAQUE)
             return
         before, close = _AROUND.get(name, ("", ""))
         stars = re.compile(r"[*†‡\\]{1,9}\]").match(self.source, found.end(), self.end)
         if name == "super" and stars:
             before, close = "", ""
-        self.edits.append(Edit(*found.span(), before))
+        self.replace(found, before)
         self.brackets.append((None if name == "strike" else close, found.start()))
 
     def bracket(self, char: str, at: int, after: int) -> None:

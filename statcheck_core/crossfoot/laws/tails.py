@@ -130,12 +130,6 @@ def t_tails(t: float, df: float) -> float:
     return _deep(df / 2, 0.5, math.log(df) - 2 * math.log(t), 0.0)
 
 
-def t_tail(t: float, df: float) -> float:
-    """Return the area of t beyond ``t``."""
-    half = t_tails(t, df) / 2
-    return half if t > 0 else 1 - half
-
-
 def r_tails(r: float, df: float) -> float:
     """Return the area of a correlation beyond ``abs(r)`` on both sides, where none exists.
 
@@ -163,11 +157,6 @@ def chi2_tail(chi2: float, df: float) -> float:
 def z_tails(z: float) -> float:
     """Return the area of the normal distribution beyond ``abs(z)`` on both sides."""
     return 2 * float(ndtr(-abs(z)))
-
-
-def z_tail(z: float) -> float:
-    """Return the area of the normal distribution beyond ``z``."""
-    return float(ndtr(-z))
 
 
 def f_at(p: float, df1: float, df2: float) -> float:
