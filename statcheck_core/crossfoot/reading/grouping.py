@@ -182,6 +182,9 @@ def _joins(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor, index:
     if head == "odds_ratio" and head not in heads and widest <= 0.5:
         return not own & {"F", "F_change", "r"}  # b, its test, its p, and the ratio
     if "p" in {items[i].head for i in range(anchor.last, index)}:
+        if head in {"t", "z"} and own <= _COEFFICIENT and widest <= 0.5:
+            # `β = …, p = …, t(118) = …`, unless a p of its own follows the t.
+            return not any(item.head == "p" for item in items[index + 1 : index + 2])
         # `t(96) = …, p = …, β = …` is one test; a β that a t of its own follows is the next.
         return (
             head in _COEFFICIENT and own <= {"t", "z"} and widest < _gap_to_test(items, gaps, index)

@@ -58,7 +58,7 @@ NOTATIONS: tuple[Notation, ...] = (
         r"(?:(?i:sig\.(?:\s?F)?(?:\s?change)?(?:\s?\(2-tailed\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation)(?=\s?[=<])"
         r"|associated\sprobability(?:\svalue)?)"
         r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
-        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
+        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|Pr(?=\s?=\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
         True,
         "sSPpa",
         "Prob > F = 0.0312, F(2, 57) = 3.69",
@@ -163,7 +163,9 @@ NOTATIONS: tuple[Notation, ...] = (
         "ci",
         r"(?:(?:(?:CI|KI|IC|BI)\s?(?:à\s|al\s|del\s|di\s)?[_({]{0,2}(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?[)}]?|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{0,3}"
         r"(?:CIs?|KI|IC|BI|confidence\s(?:intervals?|limits?)|Konfidenzintervall|intervalle?\sde\sconfiance"
-        r"|intervalo\sde\sconfian[zç]a|intervallo\sdi\sconfidenza|betrouwbaarheidsinterval|konfidensintervall?))(?![a-z])|CI(?=\s?[:=]?\s?[\[(]\s?[-+]?[.\d]|:\s?[-+]?[.\d]))",
+        r"|intervalo\sde\sconfian[zç]a|intervallo\sdi\sconfidenza|betrouwbaarheidsinterval|konfidensintervall?)"
+        r"(?:\s(?:for|of|on|around)\s(?:the|this)\s(?:mean\s)?(?:difference|change|slope|estimate|effect|contrast)s?)?)"
+        r"(?![a-z])|CI(?=\s?[:=]?\s?[\[(]\s?[-+]?[.\d]|:\s?[-+]?[.\d]))",
         True,
         "CKIB56789ic",
         "b = 0.42, SE = 0.11, 95% CI [0.20, 0.64], t(96) = 3.82",
