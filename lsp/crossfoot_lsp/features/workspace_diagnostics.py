@@ -40,7 +40,7 @@ class Workspace:
         async with self._turn, _Progress(server, token) as progress:
             folders = [path for path in server.folders.values() if path]
             paths = await loop.run_in_executor(
-                server.workers.long, self.files.find, folders, server.configuration.rules
+                server.workers, self.files.find, folders, server.configuration.rules
             )
             for number, path in enumerate(paths):
                 if progress.cancelled:
@@ -50,7 +50,7 @@ class Workspace:
                 if server.store.is_open(path) or server.configuration.excludes(path):
                     continue
                 entry = await loop.run_in_executor(
-                    server.workers.long,
+                    server.workers,
                     self.files.read,
                     path,
                     server.configuration.settings(path),
