@@ -32,6 +32,14 @@ class Workspace:
         self.news = asyncio.Event()  # set when files or settings have changed
         self.answered = False
         self._turn = asyncio.Lock()
+        self._open: set[str] = set()
+
+    def changed(self, uri: str) -> None:
+        """Take note of what is opened, and so left to the editor's other questions, or closed."""
+        is_open = self._server.store.entry(uri) is not None
+        if is_open != (uri in self._open):
+            (self._open.add if is_open else self._open.discard)(uri)
+            self.news.set()
 
     async def entries(self, token: types.ProgressToken | None) -> AsyncIterator[Entry]:
         """Yield what each file that is not open holds, with progress, until it is cancelled."""
