@@ -8,6 +8,7 @@ import logging
 import os
 import sys
 from collections.abc import Callable, Coroutine, Mapping
+from concurrent.futures import ThreadPoolExecutor
 from functools import cached_property
 from typing import TYPE_CHECKING, Any
 
@@ -21,7 +22,6 @@ from crossfoot_lsp.names import path_of
 from crossfoot_lsp.protocol import Protocol
 from crossfoot_lsp.raw import NOTHING, Raw
 from crossfoot_lsp.transport import Listener, Sender
-from crossfoot_lsp.workers import make_workers
 
 if TYPE_CHECKING:
     from crossfoot_lsp.configuration import Configuration
@@ -57,7 +57,7 @@ class Server(LanguageServer):
     def __init__(self) -> None:
         self.client = Client()
         self.folders: dict[str, str] = {}
-        self.workers = make_workers()
+        self.workers = ThreadPoolExecutor(2, "crossfoot")
         self.sent: set[str] = set()
         self._options: object = None
         self._listeners: list[Callable[[str], object]] = []
@@ -178,7 +178,7 @@ class Server(LanguageServer):
         finally:
             if "store" in self.__dict__:
                 self.store.give_up()
-            self.workers.give_up()
+            self.workers.shutdown(wait=False, cancel_futures=True)
 
     async def _serve(self, source: int, target: int) -> int:
         self._loop = asyncio.get_running_loop()

@@ -104,6 +104,11 @@ class Snapshot:
         self.superseded = False
         self.number = next(_numbers)
 
+    @property
+    def size(self) -> int:
+        """How long its texts are together."""
+        return sum(len(part.text.content) for part in self.parts)
+
     def part(self, uri: str) -> Part | None:
         """Return the part with a name."""
         return next((part for part in self.parts if part.uri == uri), None)

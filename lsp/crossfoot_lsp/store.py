@@ -7,6 +7,7 @@ from __future__ import annotations
 
 import asyncio
 from collections.abc import Callable, Iterable, Iterator, Sequence
+from concurrent.futures import Executor
 from typing import NamedTuple
 
 from lsprotocol import types
@@ -17,10 +18,12 @@ from crossfoot_lsp.languages import NOTEBOOK, format_of, is_text
 from crossfoot_lsp.names import path_of
 from crossfoot_lsp.snapshot import Part, Snapshot, in_a_row
 from crossfoot_lsp.text import Text
-from crossfoot_lsp.workers import Workers
 
 #: An edit this long makes much of a document new.
 _LARGE = 50_000
+
+#: A text longer than this is always read on a thread of its own.
+_LONG = 2_000_000
 
 
 class View(NamedTuple):
@@ -56,7 +59,7 @@ class Entry:
         self._cold = self._cold or cold
         self._reading = None
 
-    async def report(self, workers: Workers) -> Report | None:
+    async def report(self, workers: Executor) -> Report | None:
         """Return the report on the newest version; whoever asks shares one reading of it.
 
         None means that it was superseded meanwhile.
@@ -64,16 +67,27 @@ class Entry:
         snapshot = self.snapshot
         if self._known is not None and self._known[0] is snapshot:
             return self._known[1]
-        if self._reading is None:
-            loop = asyncio.get_running_loop()
-            threads = workers.long if self._cold else workers.short
-            self._reading = loop.run_in_executor(threads, snapshot.read, self._cold)
-        report = await asyncio.shield(self._reading)
+        if self._cold or snapshot.size > _LONG:
+            if self._reading is None:
+                loop = asyncio.get_running_loop()
+                self._reading = loop.run_in_executor(workers, snapshot.read, self._cold)
+            report = await asyncio.shield(self._reading)
+        else:
+            # All but a little is remembered: it is read before a thread would have woken up. But
+            # what has come in goes first, or a burst of edits would be read one by one.
+            await asyncio.sleep(0)
+            report = self._known_or_read(snapshot)
         if report is None or self.snapshot is not snapshot:
             return None
         self._known = (snapshot, report)
         self._cold = False
         return report
+
+    def _known_or_read(self, snapshot: Snapshot) -> Report | None:
+        """Return the report on a version that somebody else may have read meanwhile."""
+        if self._known is not None and self._known[0] is snapshot:
+            return self._known[1]
+        return snapshot.read(False)
 
 
 class Store:
@@ -82,7 +96,7 @@ class Store:
     Parameters
     ----------
     workers
-        Threads for reading.
+        Threads for what takes longer to read.
     configuration
         What is set for each file.
     encoding
@@ -93,7 +107,7 @@ class Store:
 
     def __init__(
         self,
-        workers: Workers,
+        workers: Executor,
         configuration: Configuration,
         encoding: str,
         changed: Callable[[str], object],

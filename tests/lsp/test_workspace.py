@@ -200,6 +200,13 @@ async def test_a_question_waits_for_news_where_files_are_watched(folder: Path) -
         event = types.FileEvent(uri_of(folder / "right.md"), types.FileChangeType.Changed)
         editor.workspace_did_change_watched_files(types.DidChangeWatchedFilesParams([event]))
         assert len(await waiting) == 2
+        # What is opened is left to other questions, what is closed comes back.
+        waiting = asyncio.ensure_future(ask(editor))
+        uri = editor.open(WRONG, "wrong.md", folder=str(folder))
+        assert len(await waiting) == 1
+        waiting = asyncio.ensure_future(ask(editor))
+        editor.shut(uri)
+        assert len(await waiting) == 2
 
 
 async def scan(editor: Editor) -> object:

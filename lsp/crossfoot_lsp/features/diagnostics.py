@@ -21,6 +21,7 @@ def start(server: Server) -> None:
     """Watch texts, so that an editor that can't ask is sent what is found in them."""
     if server.client.pulls:
         server.on_change(server.told.changed)
+        server.on_change(server.workspace_files.changed)
     else:
         server.on_change(_Sending(server).changed)
 

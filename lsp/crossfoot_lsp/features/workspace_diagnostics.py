@@ -32,6 +32,14 @@ class Workspace:
         self.news = asyncio.Event()  # set when files or settings have changed
         self.answered = False
         self._turn = asyncio.Lock()
+        self._open: set[str] = set()
+
+    def changed(self, uri: str) -> None:
+        """Take note of what is opened, and so left to the editor's other questions, or closed."""
+        is_open = self._server.store.entry(uri) is not None
+        if is_open != (uri in self._open):
+            (self._open.add if is_open else self._open.discard)(uri)
+            self.news.set()
 
     async def entries(self, token: types.ProgressToken | None) -> AsyncIterator[Entry]:
         """Yield what each file that is not open holds, with progress, until it is cancelled."""
@@ -40,7 +48,7 @@ class Workspace:
         async with self._turn, _Progress(server, token) as progress:
             folders = [path for path in server.folders.values() if path]
             paths = await loop.run_in_executor(
-                server.workers.long, self.files.find, folders, server.configuration.rules
+                server.workers, self.files.find, folders, server.configuration.rules
             )
             for number, path in enumerate(paths):
                 if progress.cancelled:
@@ -50,7 +58,7 @@ class Workspace:
                 if server.store.is_open(path) or server.configuration.excludes(path):
                     continue
                 entry = await loop.run_in_executor(
-                    server.workers.long,
+                    server.workers,
                     self.files.read,
                     path,
                     server.configuration.settings(path),

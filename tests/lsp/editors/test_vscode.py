@@ -9,6 +9,7 @@ import subprocess
 import time
 from collections.abc import Iterator
 from pathlib import Path
+from typing import Any
 from urllib.error import URLError
 from urllib.request import urlopen
 
@@ -31,6 +32,20 @@ title: Bank slope
 The plots differed in slope, *F*(2, 57) = 4.31, *p* = .081, as the crew had expected.
 """
 
+NOTES: dict[str, Any] = {
+    "nbformat": 4,
+    "nbformat_minor": 5,
+    "metadata": {},
+    "cells": [
+        {
+            "cell_type": "markdown",
+            "id": "first",
+            "metadata": {},
+            "source": ["The banks differed, F(2, 57) = 4.31, p = .081."],
+        }
+    ],
+}
+
 SETTINGS = {
     "editor.fontSize": 15,
     "editor.hover.delay": 100,
@@ -50,7 +65,11 @@ SETTINGS = {
 def package() -> Path:
     """Return the extension as it is given to people, built anew if its sources are newer."""
     vsix = EXTENSION / "crossfoot.vsix"
-    sources = [EXTENSION / "package.json", *(EXTENSION / "src").iterdir()]
+    sources = [
+        EXTENSION / "package.json",
+        EXTENSION / "tsconfig.json",
+        *(EXTENSION / "src").iterdir(),
+    ]
     if vsix.exists() and all(vsix.stat().st_mtime >= s.stat().st_mtime for s in sources):
         return vsix
     if not (EXTENSION / "node_modules").exists():
@@ -81,6 +100,7 @@ def served(tmp_path: Path) -> Iterator[str]:
     folder, home = tmp_path / "paper", tmp_path / "home"
     folder.mkdir()
     (folder / "draft.qmd").write_text(DRAFT)
+    (folder / "notes.ipynb").write_text(json.dumps(NOTES))
     # Which command starts the server is a setting of the machine, all others are the person's.
     for kind, settings in (("User", SETTINGS), ("Machine", {"crossfoot.command": COMMAND})):
         (home / "data" / kind).mkdir(parents=True)
@@ -144,6 +164,7 @@ def test_a_draft_is_checked_explained_mended_and_allowed(served: str, tmp_path: 
     assert "*p* = .018, as the crew had expected." in seen["text"]
     assert "Crossfoot: 1 result: 1 agrees" in seen["lens"]
     assert "because it was copied from the registered report -->" in seen["allowed"]
-    assert len(seen["pictures"]) == 8
+    assert seen["cell"] == NOTES["cells"][0]["source"][0]
+    assert len(seen["pictures"]) == 9
     for name in seen["pictures"]:
         assert (pictures / f"{name}.png").stat().st_size > 10_000

@@ -51,6 +51,16 @@ async function picture(name) {
   seen.pictures.push(name);
 }
 
+async function open(name) {
+  const file = page.locator(".quick-input-list .monaco-list-row", { hasText: name }).first();
+  await until(`find ${name}`, file, async (timeout) => {
+    await page.keyboard.press("Escape");
+    await page.keyboard.press("Control+P");
+    await input.fill(name, { timeout });
+  });
+  await until(`open ${name}`, page.locator(".tab", { hasText: name }), (timeout) => file.click({ timeout }));
+}
+
 const editor = page.locator(".editor-instance .view-lines").first();
 const squiggle = editor.locator("xpath=..").locator(".squiggly-error").first();
 const menu = page.locator(".action-widget:not(.action-list-submenu-panel)");
@@ -85,15 +95,7 @@ async function choose(words, timeout) {
 
 try {
   await until("the window", page.locator(".monaco-workbench"), () => page.goto(url));
-  const file = page.locator(".quick-input-list .monaco-list-row", { hasText: "draft.qmd" }).first();
-  await until("find the draft", file, async (timeout) => {
-    await page.keyboard.press("Escape");
-    await page.keyboard.press("Control+P");
-    await input.fill("draft.qmd", { timeout });
-  });
-  await until("open the draft", page.locator(".tab", { hasText: "draft.qmd" }), async (timeout) => {
-    await file.click({ timeout });
-  });
+  await open("draft.qmd");
   await until("the squiggle", squiggle);
   await picture("1-squiggle");
 
@@ -148,6 +150,16 @@ try {
     await page.locator(".statusbar-item", { hasText: "Crossfoot" }).first().click({ timeout });
   });
   await picture("8-summary");
+
+  await open("notes.ipynb");
+  // The cell is drawn in a frame above the list of cells, at its top; there it can be opened.
+  const cells = page.locator(".notebookOverlay .cell-list-container").first();
+  await until("the cell", cells.locator(".squiggly-error").first(), async (timeout) => {
+    const { x, y } = await cells.boundingBox({ timeout });
+    await page.mouse.dblclick(x + 150, y + 35);
+  });
+  seen.cell = await text(cells.locator(".view-lines"));
+  await picture("9-notebook");
 } catch (error) {
   await picture("problem").catch(() => undefined);
   seen.problem = {
