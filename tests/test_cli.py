@@ -272,6 +272,14 @@ class TestOutputFile:
         assert (status, out) == (2, "")
         assert err.startswith(f"crossfoot: {target}: The output can't be written: ")
 
+    def test_a_dash_is_standard_output(self, folder, run):
+        assert run("scan", "fine.md", "-o", "-") == run("scan", "fine.md")
+        assert not os.path.exists("-")
+
+    def test_an_empty_name_is_shown(self, folder, run):
+        assert run("scan", "fine.md", "-o", "")[2].startswith("crossfoot: '': The output can't be ")
+        assert "'': There is no such file" in run("scan", "")[2]
+
     def test_a_device_is_written_to(self, folder, run):
         assert run("scan", "fine.md", "-o", os.devnull) == (0, "", "")
         assert not os.path.isfile(os.devnull)

@@ -66,7 +66,8 @@ def configure(parser: ArgumentParser) -> None:
         "-o",
         "--output",
         metavar="FILE",
-        help="write findings to this file, which appears only when it is complete",
+        help="write findings to this file, which appears only when it is complete; - for standard "
+        "output",
     )
     parser.add_argument(
         "--explain",

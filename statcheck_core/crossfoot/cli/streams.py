@@ -17,7 +17,7 @@ def complain(path: str | None, message: str) -> None:
     """Tell the person at the terminal what went wrong, and with which path."""
     from crossfoot.output.safe import safe  # all being well, there is nothing to say
 
-    subject = "" if path is None else f"{safe(path)}: "
+    subject = "" if path is None else f"{safe(path) or repr(path)}: "
     sys.stderr.write(f"crossfoot: {subject}{safe(message)}\n")
 
 
@@ -54,11 +54,11 @@ class Destination:
     Parameters
     ----------
     path
-        The file, or None for standard output.
+        The file; None or ``-`` for standard output.
     """
 
     def __init__(self, path: str | None) -> None:
-        self._path = None if path is None else os.path.realpath(path)
+        self._path = None if path in (None, "-") else os.path.realpath(path)
         self._part: str | None = None
         self._stream: TextIO = sys.stdout
 
