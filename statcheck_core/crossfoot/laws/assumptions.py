@@ -20,6 +20,7 @@ CONTEXTS: Mapping[str, str] = {
     "Greenhouse and Geisser do.",
     "scaled-df": "Both degrees of freedom are multiplied by one number, as Greenhouse and Geisser "
     "do.",
+    "limiting-df": "Degrees of freedom are infinite: p is of the limit of t or F.",
     "adjusted-p": "p values are adjusted for the number of comparisons.",
     "pseudo-r2": "What is called R² is an analogue of it or is not taken within the sample of "
     "the fit.",
@@ -175,7 +176,7 @@ _ASSUMPTIONS = (
     _assumption(
         "unadjusted-df",
         "The degrees of freedom are the counts of the design, without adjustment.",
-        "adjusted-df imputed mixed survey",
+        "adjusted-df limiting-df imputed mixed survey",
     ),
     _assumption(
         "proportional-df",

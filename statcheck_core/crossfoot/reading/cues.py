@@ -142,6 +142,7 @@ CUES: tuple[Cue, ...] = (
             "through the origin; without an intercept; without intercept; no intercept; "
             "no-intercept; intercept suppressed; intercept was omitted; zero intercept; "
             "without a constant; without constant; no constant; constant suppressed; "
+            "not contain a constant; uncentered; uncentred; "
             "durch den ursprung; ohne achsenabschnitt; ohne konstante; sans constante; "
             "sin constante; par l'origine"
         ),

@@ -26,6 +26,7 @@ from crossfoot.reading.tables.headings import NOTHING
 _FIELD = re.compile(r"\S+(?: \S+)*")
 #: The types of columns, as some data frames print them.
 _TYPES = re.compile(r"\s*(?:<[a-z]{2,6}>\s*)+")
+_CATEGORY = re.compile(r"[A-Za-z_][\w.]{0,40}=[\w.]{1,20}")
 #: A relation that is not in brackets.
 _STATED = re.compile(r"=(?![^()]*\))")
 #: Roles that do not make a line one of headings.
@@ -60,14 +61,16 @@ def headings_in(text: str, line: Line) -> Columns | None:
     others = [t for t in tokens if not t.heading.roles]
     if len({t.heading.roles for t in known}) < 2 or len(others) > len(known) + 1:
         return None
-    if any(is_value(t.text) or not set("=;{}").isdisjoint(t.text) for t in others):
+    # The first may say of which category the coefficients are: "grade=2".
+    first = tokens[0] if _CATEGORY.fullmatch(tokens[0].text) else None
+    if any(is_value(t.text) or not (t is first or set("=;{}").isdisjoint(t.text)) for t in others):
         return None
-    first = next(
+    start_of_heads = next(
         i for i, t in enumerate(tokens) if t.heading.roles and t.heading.roles != ("label",)
     )
     heads: list[Token] = []
     spans: list[tuple[int, int]] = []
-    for token in tokens[first:]:
+    for token in tokens[start_of_heads:]:
         start, end = token.start - line.start, token.end - line.start
         if token.heading.roles == ("ci_low", "ci_high"):
             # One heading over both limits.
@@ -76,7 +79,7 @@ def headings_in(text: str, line: Line) -> Columns | None:
         else:
             heads.append(token)
             spans.append((start, end))
-    return Columns(tuple(tokens[:first]), tuple(heads), tuple(spans))
+    return Columns(tuple(tokens[:start_of_heads]), tuple(heads), tuple(spans))
 
 
 def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:

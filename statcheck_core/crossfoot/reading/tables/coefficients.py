@@ -261,7 +261,7 @@ def _symbols(sheet: Sheet, lines: list[Line]) -> list[Line]:
             )
             for key, found in line.cells.items()
         }
-        if foreign:
+        if foreign or _is_error_of_ratio(line):
             cells.pop("se", None)
         settled.append(line._replace(cells=cells))
     return settled
@@ -284,6 +284,17 @@ def _foreign_error(lines: list[Line], estimate: str) -> bool:
     """Say whether the standard errors are of something else: most t are not b/SE."""
     checked = [fit for line in lines if (fit := _is_ratio_of(line, estimate)) is not None]
     return len(checked) >= 3 and 2 * sum(checked) < len(checked)
+
+
+def _is_error_of_ratio(line: Line) -> bool:
+    """Say whether the standard error is the odds ratio's own: z is ln OR over SE/OR."""
+    ratio, se, z = (line.cells.get(key) for key in ("odds_ratio", "se", "z"))
+    if ratio is None or se is None or z is None or "b" in line.cells:
+        return False
+    if ratio.low <= 0 or se.low <= 0:
+        return False
+    ends = [math.log(r) * r / s for r in (ratio.low, ratio.high) for s in (se.low, se.high)]
+    return min(ends) <= z.high and z.low <= max(ends)
 
 
 def _is_ratio_of(line: Line, estimate: str) -> bool | None:

@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Sequence
 
-from crossfoot.model import Claim, Reading
+from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.tables.columns import labels_of, roles_in, side_by_side
 from crossfoot.reading.tables.contents import NONE, content_of, is_blank
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, head_df, marked, reading
@@ -189,6 +189,10 @@ def _read(
     *,
     has_p: bool,
 ) -> None:
+    if text in _INFINITE and column.heading.roles == ("df2" if test == "F" else "df",):
+        cells.setdefault(column.heading.roles[0], _infinite(sheet, column.heading.roles[0], start))
+        contexts.append("limiting-df")
+        return
     content = content_of(text, start) or NONE
     roles = column.heading.roles
     one = "df1" if test == "F" else "df"
@@ -209,7 +213,7 @@ def _read(
     if sum(not number.bracket for number in numbers) > len(roles):
         numbers = ()  # which of them is meant is not known
     for role, number in zip(roles, numbers, strict=False):
-        quantity = one if role == "df" else role
+        quantity = one if role == "df" or (role == "df1" and test != "F") else role
         if quantity not in _ROLES:
             continue
         found = reading(sheet, number, quantity)
@@ -228,6 +232,18 @@ def _read(
         cells.setdefault("stars", mark)
         contexts += ["default-stars"] if default else []
     contexts += column.heading.contexts
+
+
+#: Degrees of freedom without end: the reference distribution is the limit of t or F.
+_INFINITE = frozenset({"Inf", "inf", "∞"})
+#: As good as these: tail areas differ from those of the limit by less than they are known.
+_AS_GOOD_AS = 1e12
+
+
+def _infinite(sheet: Sheet, quantity: str, start: int) -> Reading:
+    end = start + len(next(word for word in _INFINITE if sheet.folded.startswith(word, start)))
+    literal = sheet.shown[start:end]
+    return Reading(quantity, "=", literal, _AS_GOOD_AS, _AS_GOOD_AS, Span(start, end))
 
 
 def _glued(literal: str) -> tuple[str, str] | None:

@@ -51,15 +51,14 @@ ROLES: tuple[Role, ...] = (
         "df1",
         "DFn DFN ν1",
         "df1 numdf numeratordf dfnum dfn ddof1 dfmodel modeldf dfeffect dfbetween dfregression"
-        " regressiondf hypothesisdf dfnumerator numdof dfhypothesis zählerdf",
+        " regressiondf dfconstraint hypothesisdf dfnumerator numdof dfhypothesis zählerdf",
     ),
     Role(
         "df2",
         "DFd DFD ν2",
         "df2 dendf denominatordf dfden dfdenom dfd ddof2 dferror dfresidual dfresiduals dfwithin"
-        " errordf"
-        " residualdf dfdenominator denomdf dendof residualdegreesoffreedom errordegreesoffreedom"
-        " nennerdf dofresiduals",
+        " errordf residualdf dfdenominator denomdf dendof residualdegreesoffreedom"
+        " errordegreesoffreedom nennerdf dofresiduals",
     ),
     Role("df_change", "", "Δdf deltadf chidf chisqdf dfchange changeindf dfdifference diffdf"),
     Role("df_residual", "", "resdf residdf dfresid residualdf(model)"),
@@ -112,7 +111,8 @@ ROLES: tuple[Role, ...] = (
         " estimatedcoefficient slope regressionskoeffizient koeffizient koeffizienten schätzer"
         " schätzung coeficiente coefficiente coëfficiënt estimateb bestimate coefficientb"
         " coefficientestimate unstandardized unstandardised bunstandardized bweight 系数 回归系数"
-        " dy/dx ey/ex dy/ex ey/dx marginaleffect estimation estimación stima estimativa 계수 unstd",
+        " emmean lsmean emmeans lsmeans dy/dx ey/ex dy/ex ey/dx marginaleffect"
+        " estimation estimación stima estimativa 계수 unstd",
     ),
     Role("β", "β ß", "beta"),
     Role(
@@ -163,7 +163,7 @@ ROLES: tuple[Role, ...] = (
     Role("r", "r", "pearsonr pearsonsr correlation correlationcoefficient"),
     Role(
         "ci_low",
-        "LL LB LCI",
+        "LL LB LCI LCB LCL",
         "lower lowerbound lowerlimit lower95% cilower lowerci conflow cilow"
         " lowercl lcl confintlow confintlower lowerconfint"
         " lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
@@ -172,7 +172,7 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "ci_high",
-        "UL UB UCI",
+        "UL UB UCI UCB UCL",
         "upper upperbound upperlimit upper95% ciupper upperci confhigh cihigh"
         " uppercl ucl confintupp confintupper upperconfint"
         " upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
