@@ -47,6 +47,7 @@ _UNIT = re.compile(
 _GLUED = re.compile(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.
 _GOES_ON = re.compile(r",\d")
+_COUNTED = re.compile(r"\s?d\.?f\b(?!\s?[=:])")
 _COUNT_SPACES = {0x20: HARD_SPACE}
 _GROUPED = re.compile(r",\d{3}(?!\d)")
 
@@ -103,6 +104,8 @@ def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
         return not_significant(*insignificant.span())
     end = match.end()
     if _GOES_ON.match(folded, end) and "." not in match.group():
+        return None
+    if quantity in _UNITLESS and _COUNTED.match(folded, end):  # χ² 1 df
         return None
     if _GLUED.match(folded, end) or (quantity in _UNITLESS and _UNIT.match(folded, end)):
         return None

@@ -161,7 +161,7 @@ ROLES: tuple[Role, ...] = (
     Role("r", "r", "pearsonr pearsonsr correlation correlationcoefficient"),
     Role(
         "ci_low",
-        "LL LB LCI",
+        "LL LB LCI LCB",
         "lower lowerbound lowerlimit lower95% cilower lowerci conflow cilow"
         " lowercl lcl lowercibound confintlow confintlower lowerconfint"
         " lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
@@ -170,7 +170,7 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "ci_high",
-        "UL UB UCI",
+        "UL UB UCI UCB",
         "upper upperbound upperlimit upper95% ciupper upperci confhigh cihigh"
         " uppercl ucl uppercibound confintupp confintupper upperconfint"
         " upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
