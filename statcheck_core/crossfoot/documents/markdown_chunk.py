@@ -86,7 +86,7 @@ class _Analysis:
         if self.first >= 0 and quote and not self.quoted:
             self.flush()
         ruled = number + 1 < len(self.lines) and "--" in self.lines[number + 1][:60]
-        if rest[0].isalpha() and "|" not in rest and "<!--" not in rest and not ruled:
+        if not ruled and _plain(rest):
             return self.words(number, rest, quote is not None)
         return (
             self.fence(number, rest)
@@ -284,6 +284,17 @@ class _Analysis:
         if not self.listed and number == 0 and last == len(self.lines):
             self.code = (0, len(self.chunk.rstrip()))
         return last
+
+
+#: What the lines start with that are more than words, digits aside.
+_STRUCTURAL = frozenset(" \t>`~#*-_=+:[<\\")
+
+
+def _plain(line: str) -> bool:
+    """Tell, without a miss, a line that can only be words, or an item of a list."""
+    if line[0] in _STRUCTURAL or "|" in line or "<!--" in line:
+        return False
+    return not line[0].isdigit() or ("```" not in line and "~~~" not in line)
 
 
 def _dashed(line: str) -> bool:
