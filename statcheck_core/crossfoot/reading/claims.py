@@ -131,8 +131,10 @@ def _of_one_effect(group: Group, folded: str, start: int) -> bool:
     """Say whether the words of a sentence nearest before its F speak of an effect, not a model."""
     test = next(item for item in group.items if item.head == "F")
     lead = folded[start : test.start]
-    effect, model = ([m.start() for m in words.finditer(lead)] for words in (_ONE_EFFECT, _MODEL))
-    return bool(effect) and max(effect) > max(model, default=-1)
+    effects = [match.start() for match in _ONE_EFFECT.finditer(lead)]
+    if not effects:
+        return False
+    return effects[-1] > max((match.start() for match in _MODEL.finditer(lead)), default=-1)
 
 
 #: Effects of one fit stand no further apart, in claims.

@@ -312,7 +312,7 @@ def contexts_of(sentence: str, block: str, lead: str) -> frozenset[str]:
     found = cues_in(block).contexts
     if found & _NEAR:
         found = (found - _NEAR) | (found & cues_in(sentence).contexts)
-    if re.search(_REPORTED, lead[-120:]):
+    if ("(19" in lead or "(20" in lead) and re.search(_REPORTED, lead[-120:]):
         found |= {"quoted"}
     opened = lead.rfind("(")
     if opened > lead.rfind(")") and re.search(_CITATION, lead[max(opened, len(lead) - 160) :]):

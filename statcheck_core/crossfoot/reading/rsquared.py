@@ -44,17 +44,22 @@ _APART = frozenset(",;:=")
 _REACH = 26
 
 
+#: Within so many characters behind the name a word about it starts.
+_LEAD = 5
+
+
 def read_r_squared(text: Text, name: Name) -> Item | None:
     """Read an R² of any kind; words and indices around the name say which."""
     folded = text.folded
     start, end = name.match.span()
-    both = _BOTH().match(folded, end) if name.notation.quantity == "R2" else None
+    worded = any(map(str.isalpha, folded[end : end + _LEAD]))
+    both = _BOTH().match(folded, end) if worded and name.notation.quantity == "R2" else None
     if both is not None and (parts := _two(text, both.end(), name)):
         return Item("R2", parts, start, parts[-1].end)
     before = None
     if folded[start - 1 : start].strip(" \n") or folded[start - 2 : start - 1] not in _APART:
         before = _BEFORE.search(folded, max(0, start - _REACH), start)
-    after = _AFTER.match(folded, end)
+    after = _AFTER.match(folded, end) if worded else None
     inside = _INSIDE.search(name.match.group())
     said = {
         key

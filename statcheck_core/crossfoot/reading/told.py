@@ -67,6 +67,7 @@ _REVERSED = expression(
     r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
 _TURNED = {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}
+_WORD_IN_BRACKETS = expression(r"\(\s?[^\W\d]")
 _ADJUSTED = expression(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
 _INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
 # The p-value for F(2, 57) = 3.90 is .026
@@ -98,7 +99,8 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
             sign = _TURNED[match["sign"]]
             low, high = numerals.bounds(sign, numeral)
             yield Item("p", (Part("p", sign, *match.span("number"), low, high),), *match.span())
-    for match in _ADJUSTED.finditer(folded, start, end):  # R² = .39 … (adjusted .37)
+    opened = _WORD_IN_BRACKETS.search(folded, start, end) is not None
+    for match in _ADJUSTED.finditer(folded, start, end) if opened else ():  # … (adjusted .37)
         part = known_number(text, match, "number", "R2_adj")
         if part is not None:
             yield Item("R2_adj", (part,), *match.span())

@@ -35,6 +35,7 @@ _BARE = expression(r" (?=[-+]?\d{0,5}[.,]\d++(?![\d.,]?\d|\s?[%=<>]))")
 _SPACES = expression(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
 # A worked line, `= 1 − (1−.90)(20)/17 = .882`: only the last value counts.
 _TERM = r"(?:[\d\s.,/()+×*·^²-]|_?\{[^{}=]{1,14}\}|MS[EBWR]?|SS[EBWRT]?|R|[nk](?![a-z]))"
+_IN_TERMS = frozenset("MSEBWRTnk")  # letters of a term without braces
 _WORKED = lazily(
     rf"\s*+=\s*+(?P<formula>{_TERM}{{3,70}}=\s*+(?:{_TERM}{{3,60}}=\s*+)?)(?P<value>{NUMERAL})"
 )
@@ -143,7 +144,11 @@ def not_significant(start: int, end: int) -> Part:
 def _has_second_sign(folded: str, at: int) -> bool:
     """Say, cheaply, whether a worked line can stand at ``at``: two ``=`` with a sum between."""
     first = folded.find("=", at, at + 4)
-    return first >= 0 and folded.find("=", first + 1, first + 140) >= 0
+    second = folded.find("=", first + 1, first + 140) if first >= 0 else -1
+    if second < 0:
+        return False
+    between = folded[first + 1 : second]
+    return "{" in between or not any(c.isalpha() and c not in _IN_TERMS for c in between)
 
 
 def _may_stand_bare(folded: str, quantity: str, name: Name) -> bool:
