@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import logging
 import os
 from collections.abc import Callable, Iterable
 from typing import NamedTuple
@@ -25,6 +26,8 @@ from crossfoot_lsp.notebooks import NotebookText
 from crossfoot_lsp.snapshot import Part, Snapshot
 from crossfoot_lsp.text import Text
 from crossfoot_lsp.words import claim_name
+
+_LOG = logging.getLogger("crossfoot_lsp")
 
 
 class Entry(NamedTuple):
@@ -96,7 +99,9 @@ class ClosedFiles:
         try:
             report = scan_document(document, settings)
         except Exception:
-            return None  # a fault of ours in one file must not cost the others
+            # A fault of ours in one file must not cost the others.
+            _LOG.exception("%s could not be read", path)
+            return None
         entry = Entry(
             stamp,
             f"file-{snapshot.number}",

@@ -7,6 +7,7 @@ cells are the parts of it. A text has one part, itself.
 from __future__ import annotations
 
 import gc
+import logging
 from collections.abc import Callable, Sequence
 from functools import cached_property
 from itertools import count
@@ -25,6 +26,8 @@ from crossfoot_lsp.text import Text
 _GAP = "\n\n"
 
 _numbers = count(1)
+
+_LOG = logging.getLogger("crossfoot_lsp")
 
 
 class Part(NamedTuple):
@@ -157,10 +160,10 @@ class Snapshot:
             if cold and not _warmed(document, self.settings, lambda: self.superseded):
                 return None
             report = scan_document(document, self.settings)
-        except Exception as error:
+        except Exception:
             # A fault of ours in one document must not cost the editor its server.
-            problem = f"Crossfoot itself failed on it ({type(error).__name__}: {error})."
-            return Report(Document(self.path, self.language, "", ()), (), problem)
+            _LOG.exception("%s could not be read", self.path)
+            return Report(Document(self.path, self.language, "", ()))
         if cold:
             gc.freeze()  # what is remembered now stays for long, and is not worth looking at again
         return report
