@@ -106,6 +106,20 @@ class TestWordsThatReachFurther:
         table = "| | b | SE | t | p |\n|---|---|---|---|---|\n| A | 0.90 | 0.30 | 3.00 | .004 |"
         assert contexts(f"{prose}\n\n{table}\n") == [("generalised",)]
 
+    def test_the_prose_after_a_printout_quotes_its_adjusted_p_values(self) -> None:
+        printout = (
+            "```\ncontrast estimate     SE  df z.ratio p.value\n"
+            "shade     0.07831 0.0222 Inf   3.525  0.0030\n\n{}\n```\n"
+        )
+        quoted = "Shade told, *z* = 3.53, *p* = .003.\n"
+        told = printout.format("P value adjustment: holm method for 8 tests")
+        assert contexts(f"{told}\n{quoted}") == [("adjusted-p",), ("adjusted-p",)]
+        assert identities(f"{told}\n{quoted}") == []
+        # Neither where nothing is adjusted, nor in another section.
+        plain = printout.format("Results are on the log scale")
+        assert identities(f"{plain}\n{quoted}") == ["p-from-z", "p-from-z"]
+        assert identities(f"{told}\n# Another study\n\n{quoted}") == ["p-from-z"]
+
 
 class TestRemarks:
     def test_allow_settles_the_claim_before_it_on_its_line(self) -> None:

@@ -509,6 +509,11 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
         _one("coefficient alone", "coefficient", without(ratio, "odds_ratio")),
         _one("limits of b", "coefficient", ratio_with_limits_of_b, "limits-of-ratio"),
         _one("error of ratio", "coefficient", ratio_with_its_own_error, "error-of-coefficient"),
+        _one(
+            "error of ratio alone",
+            "coefficient",
+            without(ratio_with_its_own_error, "b"),
+        ),
         _one("profile", "coefficient", without(profile_ratio, "b"), "wald-limits"),
         _one("many degrees", "coefficient", many_degrees, "wald-statistic"),
     ),

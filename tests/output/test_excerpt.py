@@ -51,6 +51,13 @@ def test_markup_is_not_quoted(quoted):
     )
 
 
+def test_an_item_of_a_list_is_quoted_alone(quoted):
+    for mark in ("-", "*", "1."):
+        text = f"{mark} soil: p = .03\n{mark} wind: p = «.05»\n{mark} rain: p = .07"
+        sign = mark if mark == "1." else "•"
+        assert quoted(text, "markdown") == f"{sign} wind: p = «.05»"
+
+
 def test_a_long_sentence_is_cut_between_words(quoted):
     words = quoted("word " * 100 + "p = «.05» " + "word " * 100)
     assert words.startswith("… word ")

@@ -81,6 +81,29 @@ def test_another_odds_ratio_is_reported(name: str) -> None:
         assert ("odds-ratio", "conflict") in found
 
 
+def ratio(fit: Any, name: str, error: float, z: float) -> str:
+    """A predictor by its odds ratio, with a standard error of one kind or the other."""
+    low, high = np.exp(fit.conf_int().loc[name])
+    return (
+        f"In a logistic regression, OR = {np.exp(fit.params[name]):.3f}, SE = {error:.4f}, "
+        f"z = {z:.2f}, p {p_of(fit.pvalues[name])}, 95% CI [{low:.3f}, {high:.3f}]."
+    )
+
+
+@pytest.mark.parametrize("name", LOGISTIC)
+def test_the_standard_error_may_be_that_of_the_ratio(name: str) -> None:
+    """Some programs print it by the delta method: the ratio times that of the coefficient."""
+    fit = logistic(name)
+    for predictor in fit.params.index[1:]:
+        se, z = fit.bse[predictor], fit.tvalues[predictor]
+        own = se * np.exp(fit.params[predictor])
+        assert findings(ratio(fit, predictor, se, z)) == []
+        assert findings(ratio(fit, predictor, own, z)) == []
+        if abs(z) > 0.5:  # z between the two conventions can't be told from either
+            wrong = ratio(fit, predictor, own, z * 10)
+            assert ("odds-ratio", "conflict") in findings(wrong), wrong
+
+
 @pytest.mark.parametrize("decimals", [2, 3])
 @pytest.mark.parametrize("name", ["longley", "stackloss", "statecrime", "ccard"])
 def test_variance_inflation_is_accepted(name: str, decimals: int) -> None:

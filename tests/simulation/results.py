@@ -231,6 +231,14 @@ def _logistic(rng: Generator, size: int) -> Values:
     }  # fmt: skip
 
 
+def _ratio(rng: Generator, size: int) -> Values:
+    """An odds ratio with its own standard error, by the delta method, or the coefficient's."""
+    values = dict(_logistic(rng, size))
+    own = values["se"] * values["odds_ratio"]
+    values["se"] = np.where(rng.random(size) < 0.5, own, values["se"])
+    return values
+
+
 def _change(rng: Generator, size: int) -> Values:
     df1 = rng.integers(1, 5, size).astype(float)
     df2 = np.floor(8 + 10 ** rng.uniform(0.8, 2.8, size))
@@ -291,6 +299,9 @@ FAMILIES = (
             "b se z p ci_low ci_high"), ("generalised",)),
     Family("Wald", "coefficient", _logistic,
            ("b se chi2+df p", "b se chi2+df p odds_ratio", "b se z+df p", "chi2+df p"), share=2),
+    Family("ratio", "coefficient", _ratio,
+           ("odds_ratio se z p", "odds_ratio se z p ci_low ci_high ci_level", "odds_ratio se p"),
+           ("generalised",), share=2),
     Family("change", "model-change", _change,
            ("R2 R2_change F_change df1 df2 p", "R2_change F_change df1 df2 p",
             "R2 R2_change df1 df2 p", "R2 R2_change f2"), share=4),

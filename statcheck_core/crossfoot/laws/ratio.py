@@ -54,7 +54,17 @@ def _error(z: Interval, b: Interval) -> Interval:
 
 
 def _z_of_ratio(ratio: Interval, se: Interval) -> Interval:
-    return divide(logarithm(ratio), se)
+    """Return z where SE may be that of the coefficient or that of the ratio.
+
+    To first order the ratio's is the ratio times the coefficient's (the delta method), so that z
+    lies between ln x/SE and x·ln x/SE. The former is the smaller one and rises with x; the latter
+    is convex, so that it is largest at an end.
+    """
+    low = logarithm(ratio).low
+    high = max(
+        multiply(Interval(x, x), logarithm(Interval(x, x))).high for x in (ratio.low, ratio.high)
+    )
+    return divide(Interval(low, max(low, high)), se)
 
 
 def _wald(b: Interval, se: Interval, df: Interval) -> Interval:
@@ -102,10 +112,9 @@ ODDS_RATIO = identity(
         form("se", "SE = b/z", "z b", _error, assumed=_ERROR, beside="odds_ratio"),
         form(
             "z",
-            "z = ln OR/SE",
+            "z between ln OR/SE (SE of b) and OR·ln OR/SE (SE of OR)",
             "odds_ratio se",
             _z_of_ratio,
-            assumed="error-of-coefficient",
             unless="b",
         ),
         form(

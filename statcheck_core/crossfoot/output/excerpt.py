@@ -27,7 +27,10 @@ _MOST_ROWS = 6
 #: A word this long is no word, and may be cut.
 _LONG_WORD = 30
 
-_SENTENCE_END = expression(r"[.!?][\"”’»)]{0,2}\s+(?=[A-ZÀ-ÞΑ-ΩА-Я“\"«(])")
+#: Where a sentence or an item of a list ends and another begins.
+_END = expression(
+    r"[.!?][\"”’»)]{0,2}\s+(?=[A-ZÀ-ÞΑ-ΩА-Я“\"«(])|\n[ \t]{0,20}(?=(?:•|\d{1,3}[.)])[ \t])"
+)
 _RAISED = expression(r"\^\{([^{}]{0,40})\}")
 _LOWERED = expression(r"_\{([^{}]{0,40})\}")
 _HIGH = str.maketrans("0123456789+-−()n", "⁰¹²³⁴⁵⁶⁷⁸⁹⁺⁻⁻⁽⁾ⁿ")
@@ -125,10 +128,10 @@ def _show(document: Document, block: Block) -> Visible:
 
 
 def _before(text: str, start: int, prose: bool, clean: Callable[[str], str]) -> str:
-    """Return what to show before an index: from the start of its sentence, or of its line."""
+    """Return what to show before an index: from the start of its sentence, item or line."""
     reach = max(0, start - _BEFORE)
     if prose:
-        begins = [found.end() for found in _SENTENCE_END.finditer(text, reach, start)]
+        begins = [found.end() for found in _END.finditer(text, reach, start)]
     else:
         begins = [found for found in [text.rfind("\n", reach, start) + 1] if found]
     if begins or not reach:
@@ -140,10 +143,10 @@ def _before(text: str, start: int, prose: bool, clean: Callable[[str], str]) -> 
 
 
 def _after(text: str, end: int, prose: bool, clean: Callable[[str], str]) -> str:
-    """Return what to show after an index: up to the end of its sentence, or of its line."""
+    """Return what to show after an index: up to the end of its sentence, item or line."""
     reach = min(len(text), end + _AFTER)
     if prose:
-        found = _SENTENCE_END.search(text, end, reach)
+        found = _END.search(text, end, reach)
         stop = found.end() if found else -1
     else:
         stop = text.find("\n", end, reach)
