@@ -128,7 +128,7 @@ def _with_counts(
             for c in claims
             if c.kind == "coefficient"
             and _model_of(c, models) is model
-            and not is_intercept(_name(c))
+            and not any(map(is_intercept, c.label.split(", ")))
         ]
         for model in (None, *models)
     }
