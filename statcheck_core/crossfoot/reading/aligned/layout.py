@@ -10,7 +10,6 @@ from crossfoot.documents.table import Cell, Table
 from crossfoot.documents.visible import Visible
 from crossfoot.model import Span
 from crossfoot.reading.aligned import fitted, headed, listed, pairs
-from crossfoot.reading.aligned.headed import Columns
 from crossfoot.reading.aligned.lines import (
     NOTE,
     Line,
@@ -19,6 +18,7 @@ from crossfoot.reading.aligned.lines import (
     headish,
     lines_of,
 )
+from crossfoot.reading.aligned.placing import Columns
 from crossfoot.reading.aligned.wrapped import with_panels
 from crossfoot.reading.fold import fold
 

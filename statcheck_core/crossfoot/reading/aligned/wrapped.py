@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 
-from crossfoot.reading.aligned.headed import Columns, Row, assigned
 from crossfoot.reading.aligned.lines import (
     Line,
     is_value,
@@ -13,6 +12,7 @@ from crossfoot.reading.aligned.lines import (
     tokens_of,
     words_of,
 )
+from crossfoot.reading.aligned.placing import Columns, Row, assigned
 
 
 def with_panels(

@@ -10,6 +10,7 @@ from crossfoot.reading.tables.contents import content_of, is_blank
 from crossfoot.reading.tables.grid import EMPTY, Box, Panel
 from crossfoot.reading.tables.headings import NOTHING, Heading
 from crossfoot.reading.tables.making import Column
+from crossfoot.reading.tables.rows import label_of
 
 #: Quantities that may follow the name of what they are of.
 _NAMED = frozenset({"F", "t", "p", "df", "b", "β", "beta", "se", "z", "r", "ms", "ss", "chi2"})
@@ -186,6 +187,17 @@ def labels_of(panel: Panel, columns: Sequence[Column]) -> list[Column]:
         if is_label(panel, column):
             found.append(column)
     return found
+
+
+def name_of(row: Sequence[Box], labels: Sequence[Column]) -> str:
+    """Return what a row is called; a mere number counts what its column's heading says."""
+    words = [
+        f"{column.box.text} {row[column.number].text}"
+        if row[column.number].text.isdigit() and column.box.text
+        else row[column.number].text
+        for column in labels
+    ]
+    return label_of(", ".join(filter(None, words)))
 
 
 def side_by_side(columns: Sequence[Column], roles: Collection[str]) -> list[list[Column]]:

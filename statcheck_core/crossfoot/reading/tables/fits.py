@@ -8,12 +8,11 @@ from typing import NamedTuple
 
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import headings
-from crossfoot.reading.tables.columns import labels_of
+from crossfoot.reading.tables.columns import labels_of, name_of
 from crossfoot.reading.tables.contents import Content, Number, content_of
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.headings import NOTHING, Heading
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, marked, reading
-from crossfoot.reading.tables.rows import label_of
 
 #: Roles that speak of a model and of nothing else.
 FIT = frozenset(
@@ -94,14 +93,6 @@ def fit_rows(sheet: Sheet, groups: Sequence[Sequence[Column]], names: Sequence[s
         for name, found, said in zip(names, entries, contexts, strict=True)
     ]
     return Found(tuple(model_claims(sheet, models, with_coefficients=True)), frozenset(rows))
-
-
-def _label(row: tuple[Box, ...], labels: Sequence[Column]) -> str:
-    """Return what a row calls its model; a mere number is one of what the heading says."""
-    label = label_of(", ".join(row[c.number].text for c in labels if row[c.number].text))
-    if label.isdigit() and labels[0].box.text:
-        return f"{label_of(labels[0].box.text)} {label}"
-    return label
 
 
 def _are_pairs(row: tuple[Box, ...], groups: Sequence[Sequence[Column]]) -> bool:
@@ -185,7 +176,7 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     rows: set[int] = set()
     for index, row in enumerate(sheet.panel.rows):
         words = tuple(row[c.number] for c in labels if row[c.number].text)
-        label = _label(row, labels)
+        label = name_of(row, labels)
         entries: list[Entry] = []
         contexts: list[str] = []
         for column in columns:
@@ -213,7 +204,7 @@ def steps_in(sheet: Sheet) -> list[tuple[int, str]]:
     told = {claim.label for claim in found.claims}
     steps: list[tuple[int, str]] = []
     for index in sorted(found.rows):
-        label = _label(sheet.panel.rows[index], labels)
+        label = name_of(sheet.panel.rows[index], labels)
         if label in told and _STEP.match(label):
             steps.append((index, label))
     return steps

@@ -6,10 +6,10 @@ import re
 from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.tables.columns import labels_of, roles_in, side_by_side
+from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
 from crossfoot.reading.tables.contents import NONE, content_of, is_blank
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, head_df, marked, reading
-from crossfoot.reading.tables.rows import kind_of, label_of
+from crossfoot.reading.tables.rows import kind_of
 
 _KINDS = {
     "F": "effect",
@@ -118,7 +118,7 @@ def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
     waiting: list[int] = []
     for index, row in enumerate(sheet.panel.rows):
         words = [row[c.number] for c in labels if row[c.number].text]
-        label = label_of(", ".join(box.text for box in words))
+        label = name_of(row, labels)
         cells: dict[str, Reading] = {}
         contexts: list[str] = []
         for column in columns:

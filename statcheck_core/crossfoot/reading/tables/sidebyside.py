@@ -9,11 +9,10 @@ from typing import NamedTuple
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import fits
 from crossfoot.reading.tables.brackets import Sample, may_be_error, told_apart
-from crossfoot.reading.tables.columns import labels_of
+from crossfoot.reading.tables.columns import labels_of, name_of
 from crossfoot.reading.tables.contents import Content, Number, content_of, in_order, is_blank
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, marked, reading, value
-from crossfoot.reading.tables.rows import label_of
 
 _ESTIMATES = frozenset({"b", "β", "beta"})
 _RATIO = re.compile(r"\bodds\sratios?|\bOR\b|exponentiated", re.IGNORECASE)
@@ -115,7 +114,7 @@ def _estimates(
             for c in labels
             if (row[c.number].text and row[c.number].row == row[0].row) or row[c.number].text
         )
-        label = label_of(", ".join(box.text for box in words))
+        label = name_of(row, labels)
         starts = bool(label) and not _continues(sheet, index, labels)
         if starts:
             open_ = {}

@@ -122,22 +122,17 @@ def _with_counts(
 
     The number of predictors is that of the model's rows, which is sure only if it lists them all.
     """
-    rows = {
-        id(model): [
-            c
-            for c in claims
-            if c.kind == "coefficient"
-            and _model_of(c, models) is model
-            and not is_intercept(_name(c))
-        ]
-        for model in (None, *models)
-    }
+    owners = [claim if claim.kind in _FITS else _model_of(claim, models) for claim in claims]
+    rows: dict[int, list[Claim]] = {}
+    names_of: dict[int, set[str]] = {}
+    for claim, model in zip(claims, owners, strict=True):
+        if claim.kind == "coefficient" and not any(map(is_intercept, claim.label.split(", "))):
+            rows.setdefault(id(model), []).append(claim)
+            names_of.setdefault(id(model), set()).add(_name(claim, model))
     before: Claim | None = None
     counted: list[Claim] = []
-    for claim in claims:
-        model = claim if claim.kind in _FITS else _model_of(claim, models)
-        own = rows.get(id(model), [])
-        names = {_name(other) for other in own}
+    for claim, model in zip(claims, owners, strict=True):
+        own, names = rows.get(id(model), []), names_of.get(id(model), set())
         n = _printed(model, "n") if model else None
         n = n or cases
         # Where names come twice, several models share one summary.
@@ -148,7 +143,7 @@ def _with_counts(
             elif claim.kind == "overall-model" and not _tells(claim, "df1", "df2", "k"):
                 claim = claim._replace(given=(*claim.given, _count("k", len(own), own)))
             elif claim.kind == "model-change" and before is not None:
-                claim = _with_step(claim, names, {_name(o) for o in rows[id(before)]}, n, own)
+                claim = _with_step(claim, names, names_of.get(id(before), set()), n, own)
         if claim.kind in _FITS:
             before = model
         counted.append(claim)
@@ -169,9 +164,9 @@ def _with_step(
     )
 
 
-def _name(claim: Claim) -> str:
+def _name(claim: Claim, model: Claim | None) -> str:
     """Return the name of a predictor without that of its model."""
-    return claim.label.rpartition(", ")[0] or claim.label
+    return claim.label if model is None else claim.label.removesuffix(f", {model.label}")
 
 
 def _tells(claim: Claim, *quantities: str) -> bool:
