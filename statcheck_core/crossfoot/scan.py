@@ -57,6 +57,9 @@ def _opened(path: str, text: str, language: str) -> Document:
     return documents.open_document(path, text.encode("utf-8", "replace"), language)
 
 
+#: What holds for a printout and for the prose that retells it.
+_RETOLD = frozenset({"adjusted-p"})
+
 #: A note below a printout is no longer than this.
 _LONGEST_NOTE = 240
 
@@ -67,6 +70,8 @@ class _Scope:
     def __init__(self, assumed: Sequence[Assume]) -> None:
         self.document: frozenset[str] = frozenset()
         self.section: frozenset[str] = frozenset()
+        #: What the last printout of the section says of its p values, and so of their retelling.
+        self.printed: frozenset[str] = frozenset()
         self.alpha: float | None = None
         self.section_alpha: float | None = None
         self.methods = False
@@ -75,6 +80,7 @@ class _Scope:
 
     def heading(self, block: Block) -> None:
         self.section = frozenset()
+        self.printed = frozenset()
         self.section_alpha = None
         if block.level <= self._level or not self.methods:
             self._level = block.level
@@ -99,12 +105,18 @@ class _Scope:
 
     def apply(self, claim: Claim, noted: frozenset[str]) -> Claim:
         alpha = claim.alpha or self.section_alpha or self.alpha
-        inherited = self.document or self.section or noted
+        inherited = self.document or self.section or self.printed or noted
         if inherited:
-            inherited = (self.document | self.section | noted) - _opposed(claim.context)
+            retold = self.printed if not _several_df(claim) else frozenset()
+            inherited = (self.document | self.section | retold | noted) - _opposed(claim.context)
         if not inherited and alpha == claim.alpha:
             return claim
         return claim._replace(context=tuple(sorted({*claim.context, *inherited})), alpha=alpha)
+
+
+def _several_df(claim: Claim) -> bool:
+    """Say whether a test is of several degrees of freedom at once, so that it is no comparison."""
+    return any(reading.quantity == "df1" and reading.low > 1 for reading in claim.readings)
 
 
 def _opposed(context: Iterable[str]) -> set[str]:
@@ -131,6 +143,10 @@ def _audited(document: Document, assumed: Sequence[Assume], settings: Settings) 
             for claim in reading.claims:
                 number += 1
                 yield Placed(f"c{number}", start, audit(scope.apply(claim, noted), level))
+            if kind == "verbatim":
+                scope.printed = frozenset(
+                    _RETOLD.intersection(*(c.context for c in reading.claims))
+                )
         elif reading.cues.contexts or reading.cues.alpha:
             said = titled(source) if kind == "heading" else spreading(source)
             scope.spread(said, reading.cues.alpha)

@@ -92,7 +92,7 @@ effect: F(1,58)=9.41 p=.003 omega2=.20 -> doubt omega2 omega2
 coefficient: b=-0.84 se=0.13 t=-6.46 p<.001 -> nothing
 coefficient: b=-0.84 se=0.13 t=6.46 p<.001 -> conflict t-from-b-se t; conflict signs t
 coefficient: b=0.5 ci_low=0.1 ci_high=0.9 -> nothing
-coefficient: b=0.7 ci_low=0.1 ci_high=0.9 -> conflict ci-centre ci_low
+coefficient: b=0.7 ci_low=0.1 ci_high=0.9 -> doubt ci-centre ci_low
 coefficient: b=2.0 se=0.5 df=50 ci_low=1.0 ci_high=3.0 -> nothing
 coefficient: b=2.0 se=0.5 df=50 ci_low=0.5 ci_high=3.5 -> doubt ci-from-se se
 coefficient: b=2.0 se=0.5 df=50 ci_low=0.5 ci_high=3.5 ci_level=95% -> conflict ci-from-se se

@@ -483,6 +483,9 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     ),
     "ci-centre": (
         _one("row", "coefficient", coefficient),
+        _one("row without an error", "coefficient", without(coefficient, "se")),
+        _one("normal test", "coefficient", without(coefficient, "se", "t")),
+        _one("interval alone", "coefficient", without(coefficient, "se", "t", "z")),
         _one("standardised", "coefficient", limits_of_beta),
         _one("skewed", "coefficient", skewed_limits, "symmetric-limits"),
     ),

@@ -20,6 +20,7 @@ from crossfoot.laws.arithmetic import (
 from crossfoot.laws.declare import COEFFICIENT, Solution, form, identity
 from crossfoot.laws.identity import Form
 from crossfoot.laws.interval import Interval
+from crossfoot.laws.quantities import symbol
 
 
 def _t_critical(level: Interval, df: Interval) -> Interval:
@@ -118,6 +119,24 @@ CI_FROM_SE = identity(
 )
 
 
+_SYMMETRIC = "symmetric-limits"
+
+
+def _centred(
+    name: str, *, unless: str, needs: str = "", assumed: str = "", beside: str = ""
+) -> list[Form]:
+    """Return the centre from both limits, and each limit from the centre and the other."""
+    it = symbol(name)
+    solved = (
+        (name, f"{it} = (lower limit + upper limit)/2", "ci_low ci_high", middle),
+        ("ci_low", f"lower limit = 2{it} − upper limit", f"{name} ci_high", _other_limit),
+        ("ci_high", f"upper limit = 2{it} − lower limit", f"{name} ci_low", _other_limit),
+    )
+    return [
+        form(*each, needs=needs, assumed=assumed, beside=beside, unless=unless) for each in solved
+    ]
+
+
 CI_CENTRE = identity(
     "ci-centre",
     "estimate at the centre of its interval",
@@ -127,54 +146,12 @@ CI_CENTRE = identity(
         form("b", "lower limit ≤ b ≤ upper limit", "ci_low ci_high", between, unless="odds_ratio"),
         form("ci_low", "lower limit ≤ b", "b", at_most, unless="odds_ratio"),
         form("ci_high", "upper limit ≥ b", "b", at_least, unless="odds_ratio"),
-        form(
-            "b",
-            "b = (lower limit + upper limit)/2",
-            "ci_low ci_high",
-            middle,
-            needs="symmetric-limits",
-            unless="odds_ratio",
-        ),
-        form(
-            "ci_low",
-            "lower limit = 2b − upper limit",
-            "b ci_high",
-            _other_limit,
-            needs="symmetric-limits",
-            unless="odds_ratio",
-        ),
-        form(
-            "ci_high",
-            "upper limit = 2b − lower limit",
-            "b ci_low",
-            _other_limit,
-            needs="symmetric-limits",
-            unless="odds_ratio",
-        ),
-        form(
-            "beta",
-            "β = (lower limit + upper limit)/2",
-            "ci_low ci_high",
-            middle,
-            assumed="symmetric-limits limits-of-beta",
-            unless="b odds_ratio",
-        ),
-        form(
-            "ci_low",
-            "lower limit = 2β − upper limit",
-            "beta ci_high",
-            _other_limit,
-            assumed="symmetric-limits limits-of-beta",
-            unless="b odds_ratio",
-        ),
-        form(
-            "ci_high",
-            "upper limit = 2β − lower limit",
-            "beta ci_low",
-            _other_limit,
-            assumed="symmetric-limits limits-of-beta",
-            unless="b odds_ratio",
-        ),
+        # Beside an error or a test of the estimate the interval is the one that goes with them.
+        *_centred("b", needs=_SYMMETRIC, beside="se", unless="odds_ratio"),
+        *_centred("b", needs=_SYMMETRIC, beside="t", unless="se odds_ratio"),
+        *_centred("b", needs=_SYMMETRIC, beside="z", unless="se t odds_ratio"),
+        *_centred("b", assumed=_SYMMETRIC, unless="se t z odds_ratio"),
+        *_centred("beta", assumed=f"{_SYMMETRIC} limits-of-beta", unless="b odds_ratio"),
     ),
     needs="limits-of-coefficient",
     assumption="The interval is that of the estimate printed beside it, and its limits lie at "

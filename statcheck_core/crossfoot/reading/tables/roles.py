@@ -165,7 +165,7 @@ ROLES: tuple[Role, ...] = (
         "ci_low",
         "LL LB LCI LCB LCL",
         "lower lowerbound lowerlimit lower95% cilower lowerci conflow cilow"
-        " lowercl lcl confintlow confintlower lowerconfint"
+        " lowercl lcl lowercibound confintlow confintlower lowerconfint"
         " lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
         " 2.5% 0.025 [0.025 untergrenze limiteinférieure límiteinferior 95%cilow 95%cill lwr"
         " 95%confidenceintervallowerbound 95%cilowerbound lowerlimitof95%ci q2.5 cil",
@@ -174,7 +174,7 @@ ROLES: tuple[Role, ...] = (
         "ci_high",
         "UL UB UCI UCB UCL",
         "upper upperbound upperlimit upper95% ciupper upperci confhigh cihigh"
-        " uppercl ucl confintupp confintupper upperconfint"
+        " uppercl ucl uppercibound confintupp confintupper upperconfint"
         " upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
         " 0.975 0.975] obergrenze limitesupérieure límitesuperior 95%cihigh 95%ciul upr"
         " 95%confidenceintervalupperbound 95%ciupperbound upperlimitof95%ci q97.5 ciu",
