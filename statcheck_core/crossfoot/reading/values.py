@@ -48,6 +48,7 @@ _UNIT = expression(
 _GLUED = expression(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.
 _GOES_ON = expression(r",\d")
+_COUNTED = expression(r"\s?d\.?f\b(?!\s?[=:])")
 _COUNT_SPACES = {0x20: HARD_SPACE}
 _GROUPED = expression(r",\d{3}(?!\d)")
 
@@ -104,6 +105,8 @@ def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
         return not_significant(*insignificant.span())
     end = match.end()
     if _GOES_ON.match(folded, end) and "." not in match.group():
+        return None
+    if quantity in _UNITLESS and _COUNTED.match(folded, end):  # χ² 1 df
         return None
     if _GLUED.match(folded, end) or (quantity in _UNITLESS and _UNIT.match(folded, end)):
         return None

@@ -70,7 +70,7 @@ class Word(NamedTuple):
 
 
 #: The label of a row: what stands before the first wide gap.
-_FIRST = re.compile(r"\S+(?: \S+)*(?=  )")
+_FIRST = re.compile(r"\s*(\S+(?: \S+)*)(?=  )")
 
 
 class Line(NamedTuple):
@@ -219,9 +219,13 @@ def parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
 
 
 def label_in(line: Line) -> str | None:
-    """Return what stands before the first wide gap of a line, from its margin."""
+    """Return what stands before the first wide gap of a line."""
     found = _FIRST.match(line.text)
-    return found.group() if found is not None else None
+    return found.group(1) if found is not None else None
+
+
+def _margin(line: Line) -> int:
+    return len(line.text) - len(line.text.lstrip())
 
 
 def starts_panel(lines: Sequence[Line], number: int, first: Line) -> bool:
@@ -236,7 +240,7 @@ def starts_panel(lines: Sequence[Line], number: int, first: Line) -> bool:
     first
         The line of the first row above.
     """
-    if number + 1 >= len(lines) or not lines[number].text.startswith("  "):
+    if number + 1 >= len(lines) or _margin(lines[number]) < _margin(first) + 2:
         return False
     label = label_in(first)
     return (
