@@ -22,7 +22,9 @@ _PLUS_MINUS = lazily(
 )
 _AND_ERROR = lazily(rf"\s?(?:\(\s?±?|±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\)?")
 # A number in brackets behind a coefficient, and what tests that coefficient behind it.
-_BRACKETED = lazily(rf"\s?\(\s?(?P<number>{NUMERAL})\s?\)(?=\s?[,;]\s?(?:[tTzZ]|Wald\s[zt])\b)")
+_BRACKETED = lazily(
+    rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ]|Wald\s[zt])\b)"
+)
 _ENCLOSING = lazily(
     rf"\s?\[\s?(?P<low>{NUMERAL})\s?(?:,|;|-|to)\s?(?P<high>{NUMERAL})\s?\](?!\s?(?:HDI|CrI|credible))"
 )

@@ -13,6 +13,15 @@ from itertools import pairwise
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part
 from crossfoot.reading.lazily import lazily
+from crossfoot.reading.lookalikes import (
+    in_call,
+    is_drawn,
+    is_logged,
+    is_of_classifier,
+    is_power,
+    is_supposed,
+    near,
+)
 
 _STATISTICAL = lazily(
     r"anova|regress|effect|interact|signific|varian|model|test|differ|predict|explain|estimat"
@@ -25,20 +34,13 @@ _FIT = lazily(
     re.IGNORECASE,
 )
 _EFFECT = lazily(r"effect|interact|differ|main|signific", re.IGNORECASE)
-_OTHER_TEST = lazily(r"\bF\s?[(\[_]")
-#: A name, its bracket, and arguments written without spaces.
-_CALL = lazily(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
-#: "If t(28) = 2.05 were found …", "would need r = .41 to …", "beyond the cut-off χ²(4) = 18.47"
-_SUPPOSED = lazily(
-    r"(?:\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what)|\b(?:would|must|should|to)\s(?:need|reach|exceed|detect|have|be|obtain|find)"
-    r"|\b(?:point|percentile|quantile|distribution)\sof|\bwould\sbe\s\w+\s(?:for|at|with|if)|\b[Aa]ssum(?:e|ing)|\b[Ee]\.g\.,?"
-    r"|\b(?:above|beyond|below|over|under|exceeds|exceeding|than)|\b(?:cut-?off|threshold|criterion|critical)\w*(?:\s\w+){0,2})"
-    r"\s(?:an?\s|the\s)?(?:cut-?off\s)?$"
-)
-_CLASSIFIER = lazily(
-    r"precision|recall|F-?(?:measure|score)|classif|accuracy|\bf1\b(?!\s?\()|epoch|\bloss\b",
+_RELATED = lazily(
+    r"correlat|associat|relat|coefficient|Pearson|Spearman|zusammenh|corrél|korrel|相关|相関|상관|samvar|verband",
     re.IGNORECASE,
 )
+#: A parameter that goes on where p ends: `t = 0.25, p = 0.001, z = 3.5`.
+_OTHER_LETTER = lazily(r"[,;]\s?(?![nNdgrRMVW]\b)[a-zA-Z]\s?=\s?[\d.]")
+_OTHER_TEST = lazily(r"\bF\s?[(\[_]")
 _DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
 _LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
@@ -63,11 +65,11 @@ def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
     quantities = {part.quantity for item in items for part in item.parts}
     heads = _SHARES if anchor is None else {anchor}
     test = next((item for item in items if item.head in heads), None)
-    if test is not None and _SUPPOSED().search(text, max(0, test.start - 36), test.start):
+    if test is not None and is_supposed(test, text):
         return False
     if any(p.quantity == "df" and p.high < _LEAST_DF for item in items for p in item.parts):
         return False
-    if not items or _in_call(text, items[0].start):
+    if not items or in_call(text, items[0].start):
         return False
     if anchor in {"F", "F_change"}:
         return _is_f_test(anchor, items, quantities, text)
@@ -79,23 +81,6 @@ def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
 
 
 _LEAST_DF = 0.9
-#: How far around a group words are looked for, in characters: so that the cost of a long
-#: paragraph grows with its length and not with its square.
-_REACH = 400
-
-
-def _near(words: re.Pattern[str], items: Sequence[Item], text: str) -> bool:
-    """Say whether words stand around a group of items."""
-    first = max(0, min(item.start for item in items) - _REACH)
-    return words.search(text, first, max(item.end for item in items) + _REACH) is not None
-
-
-def _in_call(text: str, start: int) -> bool:
-    """Say whether a place stands among the arguments of a call: ``plot(x, t=2.5, p=.03)``."""
-    opened = text.rfind("(", max(0, start - 60), start)
-    if opened < 1 or text.find(")", opened, start) >= 0 or opened + 1 == start:
-        return False
-    return _CALL().search(text, max(0, opened - 30), start) is not None
 
 
 def _has_p(items: Sequence[Item]) -> bool:
@@ -121,16 +106,20 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
     support = has_p or bool(quantities & _SUPPORT)
     if "df2" not in quantities:
         if value.relation == "=":
-            return support and not _near(_CLASSIFIER(), items, text)
+            return support and not is_of_classifier(items, text)
         # `F < 1` alone says little, and yet what it says of an effect.
         plural = "plural" in test.flags
-        bound = plural or _near(_EFFECT(), items, text) or _near(_OTHER_TEST(), items, text)
+        bound = plural or near(_EFFECT(), items, text) or near(_OTHER_TEST(), items, text)
         exact = any(p.quantity == "p" and p.relation == "=" for i in items for p in i.parts)
         return (plural or not exact) and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
     if support or "lower" in test.flags or error.high < _FEWEST:
         return support
-    return _spelt(text, value) or (value.relation != "=" and _near(_STATISTICAL(), items, text))
+    if not _spelt(text, value) or _is_lowered(test, text):  # an index, if words do not tell
+        return (value.relation != "=" and near(_STATISTICAL(), items, text)) or (
+            _spelt(text, value) and near(_STATISTICAL(), items, text)
+        )
+    return True
 
 
 def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str) -> bool:
@@ -140,12 +129,16 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     if "by-name" in test.flags and not has_p:
         return False
     if anchor == "r":
-        has_p = has_p and _p_is_near(items, test, text)
+        has_p = has_p and _p_isnear(items, test, text)
         counted = bool(quantities & {"df", "n"})
         possible = value.high >= -1.0 and value.low <= 1.0
         if counted and not has_p and "df" not in quantities and not _side_by_side(items, text):
             return False
-        if not counted and _near(_CLASSIFIER(), items, text):
+        if "df" not in quantities and (is_of_classifier(items, text) or is_power(items, text)):
+            return False
+        if not (counted or near(_RELATED(), items, text) or _is_listed(items, test, text)):
+            return False
+        if _is_lowered(test, text) and not has_p:
             return False
         return _spelt(text, value) and (has_p or counted) and (possible or "df" in quantities)
     if anchor == "z":
@@ -155,13 +148,14 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     if (flat or by_unit or text[test.start] == "T") and not has_p:
         return False
     if "df" in quantities:
-        return has_p or _spelt(text, value) or _near(_STATISTICAL(), items, text)
+        told = near(_STATISTICAL(), items, text)
+        return has_p or told or (_spelt(text, value) and not _is_lowered(test, text))
     if anchor == "t" and quantities & {"b", "beta", "se"}:
         return True
     return has_p and _follows_or_told(items, test, value, text)
 
 
-def _p_is_near(items: Sequence[Item], test: Item, text: str) -> bool:
+def _p_isnear(items: Sequence[Item], test: Item, text: str) -> bool:
     """Say whether p follows a test, or stands right before it."""
     p = next(item for item in items if item.head == "p")
     before = text[p.end : test.start]
@@ -170,11 +164,26 @@ def _p_is_near(items: Sequence[Item], test: Item, text: str) -> bool:
 
 def _follows_or_told(items: Sequence[Item], test: Item, value: Part, text: str) -> bool:
     """Say whether p follows a test that prints no df, or words tell that it is one."""
-    told = _near(_STATISTICAL(), items, text)
+    told = near(_STATISTICAL(), items, text)
     p = next(item for item in items if item.head == "p")
+    if _OTHER_LETTER().match(text, p.end):
+        return False
     if p.start > test.start:
         return told or _spelt(text, value)
     return told and _LIST_MARKS.fullmatch(text, p.end, test.start) is not None
+
+
+def _is_lowered(test: Item, text: str) -> bool:
+    """Say whether the df of a test are lowered, as the indices of a sequence are."""
+    first = next((part for part in test.parts if part.quantity in {"df", "df1"}), None)
+    return first is not None and text[test.start : first.start].rstrip().endswith("_{")
+
+
+def _is_listed(items: Sequence[Item], test: Item, text: str) -> bool:
+    """Say whether marks of a list stand between a test and its p."""
+    p = next((item for item in items if item.head == "p"), test)
+    between = text[min(p.end, test.end) : max(p.start, test.start)]
+    return not set(",;()").isdisjoint(between)
 
 
 def _side_by_side(items: Sequence[Item], text: str) -> bool:
@@ -185,8 +194,10 @@ def _side_by_side(items: Sequence[Item], text: str) -> bool:
 def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> bool:
     if not any(_spelt(text, part) for item in items for part in item.parts):
         return False
-    if quantities & {"se", "ci_low", "t", "z"}:
+    if quantities & {"t", "z"} or {"p", "se"} <= quantities:
         return True
+    if quantities & {"se", "ci_low"}:
+        return not is_drawn(items, text)
     # With a p alone beside it, the two must stand in one list: `(β = .31, p = .001)`.
     for first, second in pairwise(items):
         if second.head == "p" and first.parts[-1].relation == "=":
@@ -205,4 +216,6 @@ def _is_fit(items: Sequence[Item], text: str) -> bool:
         if "percent" not in item.flags
         and re.search(r"[.,%]\d|%", text[item.parts[-1].start : item.parts[-1].end])
     ]
-    return bool(printed) and (len(items) > 1 or _near(_FIT(), items, text))
+    if is_logged(items, text):
+        return False
+    return bool(printed) and (len(items) > 1 or near(_FIT(), items, text))

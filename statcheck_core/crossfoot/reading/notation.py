@@ -98,7 +98,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "R2_adj",
-        r"(?:[aA]dj(?:usted)?[\s._-]?[rR](?:2|²|[\s._-]?sq(?:uared?)?)|[rR](?:2|²|[\s._-]?sq(?:uared?)?)[._-]?adj(?:usted)?)(?![a-zA-Z\d])",
+        r"(?:[aA]dj(?:usted)?[\s._-]?[rR](?:2|²|[\s._-]?sq(?:uared?)?)|[rR](?:2|²|[\s._-]?sq(?:uared?)?)[._-]?adj(?:usted)?|R\s?\(adj\.?\)\s?²)(?![a-zA-Z\d])",
         True,
         "aArR",
         "r2 = 0.210, adj_r2 = 0.185, F(3, 96) = 8.51",
@@ -153,7 +153,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "chi2-of",
-        r"(?:[HQ](?=\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
+        r"(?:[HQ](?=\s?=\s?\d{1,4}[.,]\d+\s?[,;(]\s?d\.?f|\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
         r"|(?:LRT?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of)\s))",
         False,
         "HQGLlSsWw卡",
@@ -327,7 +327,7 @@ _INITIALS = "".join(sorted(set("".join(n.initials for n in NOTATIONS))))
 #: How names begin that have three letters or more in a row: most words of a text are passed over
 #: by this alone.
 _FIRST_LETTERS = """
-adj aor ass bar bes bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dof err est eta exp
+adj aor ass bar bes bet cha chi coe coh cor cra ddl ddo deg del den dfd dfn dfs dof err est eta exp
 fch fin fli fre fri fst fva gdl gen gra hed hel inc jic ken kes khi kik kji kor kru lev lik log
 lrt lut mdi min mse msr msw mul nob num obs odd ome pad par pbo pco pea pen pes pfd pho poi pon
 pow ppe pro ptu ptw pva qui reg res rho rms rob roo rse rsq sam sco see sem sig slo spe sta std

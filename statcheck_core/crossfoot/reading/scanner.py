@@ -28,7 +28,8 @@ _FOR_WHAT = lazily(
 )
 _NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
 _DEALT = lazily(
-    r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b)"
+    r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b"
+    r"|(?<!\w)[pP]\s?=\s?0?[.,]\d{1,5},\s(?:and\s)?0?[.,]\d)"
 )
 #: What may be printed once for all tests of a sentence.
 _ONCE_FOR_ALL = frozenset({"df-pair", "df", "n"})
@@ -72,6 +73,7 @@ def items_in(folded: str, zones: Sequence[tuple[int, int]]) -> list[Item]:
 
 def _named(text: Text, start: int, end: int) -> Iterator[Item]:
     done = start
+    listed = False  # whether several numbers of one test have been read
     for name in names(text.folded, start, end):
         if name.match.start() < done:
             continue
@@ -82,10 +84,10 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
             item = item._replace(flags=(*item.flags, "all"))
         yield item
         done = item.end
-        if "plural" in item.flags or _shares_out(text, item):
+        if "plural" in item.flags or (listed and item.head == "p") or _shares_out(text, item):
             for other in _further_values(text, item):
                 yield other
-                done = other.end
+                done, listed = other.end, True
 
 
 def _is_for_all(text: Text, item: Item) -> bool:
@@ -225,6 +227,8 @@ def _read_p(text: Text, name: Name) -> Item | None:
         sided = _SIDED().match(inner)
         if sided is not None:
             flags = (*flags, "one-sided" if sided["one"].lower() in {"one", "1"} else "two-sided")
+        elif inner.strip().isdigit():
+            return None
         elif bracket["lowered"] or _ADJUSTED_LABEL().search(inner):
             flags = _index_of_p(inner)
         else:

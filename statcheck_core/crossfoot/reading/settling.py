@@ -99,8 +99,9 @@ def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item
         return {number: item for number, (_, item) in zip(tests, ps, strict=True)}
     if len(ps) == 1 and "plural" in ps[0][1].flags:
         return dict.fromkeys(tests, ps[0][1])
-    # More p than one, and not one for each: whose they are is not said.
-    return {tests[-1]: None} if len(ps) > 1 else {}
+    # More p than one, and not one for each, or one behind a list: whose they are is not said.
+    listed = any("listed" in item.flags for item in groups[tests[-1]].items if item.head != "p")
+    return {tests[-1]: None} if len(ps) > 1 or listed else {}
 
 
 def settle(group: Group, text: str) -> Group | None:

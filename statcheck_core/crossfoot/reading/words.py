@@ -48,7 +48,7 @@ VERB_UNSPACED = r"(?:为|為|是|は|が|는|은|达|:)"
 
 #: Degrees of freedom.
 DEGREES = (
-    r"(?:(?i:d\.?\s?f\.?|dof|degrees?\sof\sfreedom|grados\sde\slibertad|gradi\sdi\slibertà"
+    r"(?:(?i:d\.?\s?f\.?(?:'?s(?![a-z]))?|dof|degrees?\sof\sfreedom|grados\sde\slibertad|gradi\sdi\slibertà"
     r"|graus\sde\sliberdade|degrés\sde\sliberté|gdl)|ddl|g\.?\s?l\.?|FG|Freiheitsgrade?n?"
     r"|vrijheidsgraden|fri(?:hets|heds)grader|vapausast\w+|自由度|자유도)"
 )
