@@ -35,14 +35,14 @@ def fullest(group: list[Placed]) -> Placed:
 
 def alike(first: Claim, second: Claim) -> bool:
     """Say whether two claims print the same statistic and nothing that differs."""
-    here, there = _single(first), _single(second)
+    here, there = single(first), single(second)
     common = here.keys() & there.keys()
     if len(common) < _SHARED or not common & _STATISTICS:
         return False
     return all(_meet(here[key], there[key]) for key in common)
 
 
-def _single(claim: Claim) -> dict[str, Reading]:
+def single(claim: Claim) -> dict[str, Reading]:
     """Return the readings of which there is one of their quantity."""
     found: dict[str, Reading] = {}
     several: set[str] = set()

@@ -32,14 +32,24 @@ def scan_document(document: Document, settings: Settings = DEFAULTS) -> Report:
     if problem is not None:
         return Report(document, problem=problem)
     if "rossfoot" not in document.text:
-        return Report(document, tuple(_audited(document, (), settings)))
+        return Report(document, tuple(_compared(document, list(_audited(document, (), settings)))))
     from crossfoot.remarked import remarks_in, settled  # few documents hold a remark
 
     remarks = remarks_in(document)
-    placed = settled(document, list(_audited(document, remarks.assumed, settings)), remarks.allowed)
+    placed = _compared(document, list(_audited(document, remarks.assumed, settings)))
+    placed = settled(document, placed, remarks.allowed)
     if remarks.problems:
         document = document._replace(problems=(*document.problems, *remarks.problems))
     return Report(document, tuple(placed))
+
+
+def _compared(document: Document, placed: list[Placed]) -> list[Placed]:
+    """Compare the claims of a document with each other, where there are several."""
+    if len(placed) < 2 and "N" not in document.text:
+        return placed
+    from crossfoot.restated import compared
+
+    return compared(document, placed)
 
 
 def claims_of(text: str, language: str = "plain") -> tuple[Claim, ...]:

@@ -30,7 +30,7 @@ from typing import Any, NamedTuple
 FOLDER = Path(__file__).parent
 
 #: Files of the corpus, in the order they are scored.
-FILES = ("survey.jsonl", "more.jsonl")
+FILES = ("survey.jsonl", "more.jsonl", "further.jsonl")
 
 #: Name of the format in Crossfoot, by the suffix an entry names.
 LANGUAGES: Mapping[str, str] = {

@@ -27,7 +27,7 @@ RESTATEMENT = identity(
 SAMPLE_FLOW = identity(
     "sample-flow",
     "the sample against the degrees of freedom",
-    "df1 + df2 + 1 ≤ n of the sample",
+    "df1 + df2 ≤ n of the sample",
     "n df1 df2 df",
     (),
     needs="unadjusted-df independent-cases",
