@@ -166,7 +166,9 @@ def _with_step(
 
 def _name(claim: Claim, model: Claim | None) -> str:
     """Return the name of a predictor without that of its model."""
-    return claim.label if model is None else claim.label.removesuffix(f", {model.label}")
+    if model is None:
+        return claim.label.split(", ")[0]  # what follows may name one of several models
+    return claim.label.removesuffix(f", {model.label}")
 
 
 def _tells(claim: Claim, *quantities: str) -> bool:
