@@ -108,6 +108,10 @@ def test_a_sample_that_is_large_enough_or_not_the_only_one_is_none(methods: str)
     assert doubts(methods, RESULT) == []
 
 
+def test_the_cases_of_one_test_are_no_sample() -> None:
+    assert doubts("Sites differed, χ²(2, N = 40) = 3.10, p = .212.", RESULT) == []
+
+
 def test_a_result_with_its_own_sample_is_left_to_it() -> None:
     assert doubts("We asked N = 50 riders.", "Load and rut: r = .41, n = 90, p < .001.") == []
 

@@ -167,10 +167,20 @@ def _is_found(mention: _Mention, key: str) -> bool:
 
 def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int, Check, Finding]]:
     """Yield the results that need more cases than the one sample of a document has."""
-    totals = {int(m["n"].replace(",", "")): m.span("n") for m in _TOTAL.finditer(document.text)}
-    if len(totals) != 1 or not placed or _SEVERAL.search(document.text) is not None:
+    told = [(int(m["n"].replace(",", "")), m.span("n")) for m in _TOTAL.finditer(document.text)]
+    of_results = {
+        item.base + reading.span.start
+        for item in placed
+        for reading in item.audited.claim.readings
+        if reading.quantity == "n"
+    }
+    # The N in the brackets of a test is of that test, and need not be the whole sample.
+    samples = [(total, span) for total, span in told if span[0] not in of_results]
+    if len({total for total, _ in told}) != 1 or not samples or not placed:
         return
-    ((total, span),) = totals.items()
+    if _SEVERAL.search(document.text) is not None:
+        return
+    total, span = samples[0]
     for number, item in enumerate(placed):
         claim = item.audited.claim
         numbers = single(claim)
