@@ -23,7 +23,9 @@ from crossfoot.laws import IDENTITIES, ONE_SIDED, Form, Identity, confine
 from crossfoot.laws.assumptions import ASSUMPTIONS
 from crossfoot.laws.interval import Interval
 from crossfoot.model import Claim
+from crossfoot.scan import scan_text
 from simulation.errors import RULES, Spoilt
+from simulation.prose import paragraphs
 from simulation.results import FAMILIES, Family, claims
 
 RESULTS = int(os.environ.get("CROSSFOOT_SIMULATE", "100000"))
@@ -62,6 +64,18 @@ def test_whatever_is_printed_of_a_correct_result_none_of_it_is_called_wrong(fami
         for finding in judge(claim, 0.05).findings:
             said = [(r.quantity, r.relation, r.literal) for r in claim.readings]
             assert finding.severity in ("doubt", "note"), (finding.message, said)
+
+
+@pytest.mark.parametrize("language", ["markdown", "plain"])
+def test_results_side_by_side_are_kept_apart(language: str) -> None:
+    """From drawn prose every result is read, none is put together of two, and all agree."""
+    for text, count in paragraphs(RESULTS // 200, 60):
+        shown = text if language == "markdown" else text.replace("*", "")
+        found = scan_text(shown, language).claims
+        assert len(found) == count, shown
+        for placed in found:
+            said = [f.message for f in placed.audited.findings if f.severity != "note"]
+            assert not said, (shown, said)
 
 
 @pytest.mark.parametrize("name", ["missing", "factorial", "unmarked one-sided", "normal limits"])
