@@ -111,7 +111,7 @@ def _related(
         location = snapshot.location(span_of(placed, index))
         places.append(types.DiagnosticRelatedInformation(location, words))
     for span in finding.elsewhere:
-        words = "printed here too"
+        words = "printed here"
         places.append(types.DiagnosticRelatedInformation(snapshot.location(span), words))
     return places or None
 

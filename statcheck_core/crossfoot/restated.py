@@ -9,11 +9,13 @@ from __future__ import annotations
 import math
 from collections import defaultdict
 from collections.abc import Iterator, Mapping, Sequence
+from functools import lru_cache
 from itertools import combinations
 from typing import NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.laws.quantities import QUANTITIES
+from crossfoot.memo import remembered
 from crossfoot.mentions import single
 from crossfoot.model import SEVERITIES, Check, Document, Finding, Placed, Reading, Span
 
@@ -30,7 +32,6 @@ _NOT_DIGITS = expression(r"\D+")
 _TOTAL = expression(
     r"(?<![A-Za-z])N[*_$}\s]{0,4}=[\s$]{0,3}(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})(?![\d.,]*\d)"
 )
-#: Words that tell of more rows than cases, or of more samples than one.
 _SEVERAL = expression(
     r"repeated|within[- ]|trials?\b|session|waves?\b|longitudinal|panel|time[- ]?points?"
     r"|multilevel|mixed|(?:[Ss]tudy|[Ee]xperiment|[Ss]ample)\s?[2-9]|[Ss]tudies|[Ee]xperiments|subsample|measure[sd]"
@@ -108,8 +109,11 @@ def _pairs(mentions: Sequence[_Mention]) -> Iterator[tuple[int, int]]:
     printed: dict[tuple[str, str], list[int]] = defaultdict(list)
     for number, mention in enumerate(mentions):
         for key, reading in mention.numbers.items():
-            if key not in _COMMON and _digits(reading) > 1:
-                printed[key, f"{(reading.low + reading.high) / 2:.2g}"].append(number)
+            if key in _COMMON:
+                continue
+            near = _near(reading.relation, reading.literal, reading.low, reading.high)
+            if near is not None:
+                printed[key, near].append(number)
     shared: dict[tuple[int, int], int] = defaultdict(int)
     for numbers in printed.values():
         for pair in combinations(numbers, 2) if len(numbers) <= _CROWD else ():
@@ -167,7 +171,11 @@ def _is_found(mention: _Mention, key: str) -> bool:
 
 def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int, Check, Finding]]:
     """Yield the results that need more cases than the one sample of a document has."""
-    told = [(int(m["n"].replace(",", "")), m.span("n")) for m in _TOTAL.finditer(document.text)]
+    told = [
+        (total, Span(block.start + start, block.start + end))
+        for block in document.blocks
+        for total, start, end in _totals(block.source)
+    ]
     of_results = {
         item.base + reading.span.start
         for item in placed
@@ -175,10 +183,10 @@ def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int
         if reading.quantity == "n"
     }
     # The N in the brackets of a test is of that test, and need not be the whole sample.
-    samples = [(total, span) for total, span in told if span[0] not in of_results]
+    samples = [(total, span) for total, span in told if span.start not in of_results]
     if len({total for total, _ in told}) != 1 or not samples or not placed:
         return
-    if _SEVERAL.search(document.text) is not None:
+    if any(_tells_of_several(block.source) for block in document.blocks):
         return
     total, span = samples[0]
     for number, item in enumerate(placed):
@@ -194,8 +202,22 @@ def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int
             yield number, Check("sample-flow", "doubt"), _outgrown(item, numbers, key, total, span)
 
 
+@remembered
+def _tells_of_several(source: str) -> bool:
+    """Say whether a block tells of more rows than cases, or of more samples than one."""
+    return _SEVERAL.search(source) is not None
+
+
+@remembered
+def _totals(source: str) -> tuple[tuple[int, int, int], ...]:
+    """Return the sizes of samples that a block prints, each with where it starts and ends."""
+    if "N" not in source:
+        return ()
+    return tuple((int(m["n"].replace(",", "")), *m.span("n")) for m in _TOTAL.finditer(source))
+
+
 def _outgrown(
-    item: Placed, numbers: Mapping[str, Reading], key: str, total: int, span: tuple[int, int]
+    item: Placed, numbers: Mapping[str, Reading], key: str, total: int, span: Span
 ) -> Finding:
     readings = item.audited.claim.readings
     symbols = "df1 + df2" if "df1" in numbers else "df + 1"
@@ -211,7 +233,7 @@ def _outgrown(
             f"Printed elsewhere: N = {total}",
             f"A fit of n cases leaves {symbols} ≤ n.",
         ),
-        elsewhere=(Span(*span),),
+        elsewhere=(span,),
     )
 
 
@@ -219,9 +241,19 @@ def _meet(first: Reading, second: Reading) -> bool:
     return first.low <= second.high and second.low <= first.high
 
 
+@lru_cache(2**14)
+def _near(relation: str, literal: str, low: float, high: float) -> str | None:
+    """Return what numbers that may be alike share; None for one that tells too little."""
+    return f"{(low + high) / 2:.2g}" if _significant(relation, literal) > 1 else None
+
+
 def _digits(reading: Reading) -> int:
     """Return the significant digits of a number; a bound has none."""
-    found = _MANTISSA.search(reading.literal)
-    if reading.relation != "=" or found is None:
+    return _significant(reading.relation, reading.literal)
+
+
+def _significant(relation: str, literal: str) -> int:
+    found = _MANTISSA.search(literal)
+    if relation != "=" or found is None:
         return 0
     return len(_NOT_DIGITS.sub("", found.group()).lstrip("0"))

@@ -10,14 +10,18 @@ from typing import Any
 from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
+from crossfoot.laws.quantities import symbol
+from crossfoot.model import Span
 from crossfoot.places import where
 from crossfoot.scan import scan_text
-from crossfoot_lsp.lookup import span_of
+from crossfoot_lsp.lookup import all_readings, span_of
 from serving.wire import wire
 
 PIECES = [
     "So F(2, 57) = 4.31, p = .052. ",
     "So *t*(40) = 2.20, *p* = .017. ",
+    "Of N = 30 plots, R² = .131, F(2, 57) = 4.31, p = .018. ",
+    "Again R² = .131, F(2, 57) = 4.31, p = .052. ",
     "t(40) = 9.20, p = .000",
     "$R^2 = .31$, $F(2, 57) = 4.31$, ",
     "| Term | b | SE | t | p |\n|---|---|---|---|---|\n| x | 0.42 | 0.11 | 9.82 | .367 |\n",
@@ -42,21 +46,35 @@ def position(text: str, offset: int) -> dict[str, int]:
 
 
 def fresh(text: str) -> list[tuple[object, ...]]:
-    """Return what a scan finds: place, identity and message."""
+    """Return what a scan finds: place, identity, message, and the places it rests on."""
     report = scan_text(text)
-    spans = [
-        (span_of(placed, finding.reading), finding.identity, finding.message)
-        for placed in report.claims
-        for finding in placed.audited.findings
-        if finding.settled is None
-    ]
-    spans += [(p.span, "remark", p.message) for p in report.document.problems if p.span]
     found: list[tuple[object, ...]] = []
-    for span, identity, message in spans:
+
+    def take(span: Span, identity: str, message: str, related: list[tuple[Span, str]]) -> None:
         place = where(report.document, span)
         start, end = position(text, span.start), position(text, span.end)
         assert (place.start.line, place.end.line) == (start["line"] + 1, end["line"] + 1)
-        found.append((*start.values(), *end.values(), identity, message))
+        places = [(*position(text, s.start).values(), words) for s, words in related]
+        found.append((*start.values(), *end.values(), identity, message, places))
+
+    for placed in report.claims:
+        readings = all_readings(placed.audited.claim)
+        for finding in placed.audited.findings:
+            related = [
+                (
+                    span_of(placed, index),
+                    f"{symbol(readings[index].quantity)} {readings[index].relation} "
+                    f"{readings[index].literal}",
+                )
+                for index in finding.related
+            ]
+            related += [(span, "printed here") for span in finding.elsewhere]
+            if finding.settled is None:
+                span = span_of(placed, finding.reading)
+                take(span, finding.identity, finding.message, related)
+    for problem in report.document.problems:
+        if problem.span:
+            take(problem.span, "remark", problem.message, [])
     return sorted(found, key=repr)
 
 
@@ -68,6 +86,10 @@ def shown(marks: Sequence[Any]) -> list[tuple[object, ...]]:
                 *mark["range"]["end"].values(),
                 mark["code"],
                 mark["message"],
+                [
+                    (*place["location"]["range"]["start"].values(), place["message"])
+                    for place in mark.get("relatedInformation") or ()
+                ],
             )
             for mark in marks
         ),

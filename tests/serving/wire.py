@@ -67,7 +67,12 @@ class Wire:
             {
                 "processId": None,
                 "rootUri": None,
-                "capabilities": {"textDocument": {"diagnostic": {}}},
+                "capabilities": {
+                    "textDocument": {
+                        "diagnostic": {},
+                        "publishDiagnostics": {"relatedInformation": True},
+                    }
+                },
             },
         )
         await self.notify("initialized", {})
