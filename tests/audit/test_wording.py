@@ -11,10 +11,20 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from audit.notation import claim, reading
-from crossfoot.audit import wording
+from crossfoot.audit import audit_claim, wording
 from crossfoot.audit.literals import numeral
-from crossfoot.audit.wording import PLAIN, between, listed, named, phrase, plural, subjects
+from crossfoot.audit.wording import (
+    PLAIN,
+    between,
+    listed,
+    named,
+    phrase,
+    plural,
+    printed,
+    subjects,
+)
 from crossfoot.laws.interval import Interval
+from crossfoot.scan import claims_of
 
 
 def said(low: float, high: float, like: str = "", apart: tuple[float, float] | None = None) -> str:
@@ -135,3 +145,10 @@ def test_lists() -> None:
 
 def test_examples() -> None:
     assert doctest.testmod(wording).failed == 0
+
+
+def test_a_bound_in_words_has_no_relation() -> None:
+    (made,) = claims_of("The plots differed, t(40) = 2.20, p = n.s.")
+    assert printed(made.readings[-1]) == "p n.s."
+    message = audit_claim(made, 0.05).findings[0].message
+    assert message.startswith("p is printed as n.s., but t(40) = 2.20 gives p between 0.033")

@@ -71,10 +71,24 @@ def remedies(case: Case, cells: Set[int], skip: int = 0) -> list[Weighted]:
         Bits of steps that need not agree: those that fail for another reason.
     """
     found = sorted(_proposed(case, cells, skip), key=lambda candidate: -candidate.weight)
+    kept = _agreeing(case, found, skip, [])
+    # What follows from the rest is worth a try, however many slips come before it.
+    plain = [candidate for candidate in found if candidate.reason == PLAIN.reason]
+    kept += _agreeing(case, plain, skip, kept)
+    return [
+        Weighted(_remedy(case, candidate), candidate.weight, candidate.reason == PLAIN.reason)
+        for candidate in kept
+    ]
+
+
+def _agreeing(
+    case: Case, found: Sequence[_Candidate], skip: int, known: Sequence[_Candidate]
+) -> list[_Candidate]:
+    """Return the first candidates with which everything agrees, but for those that are known."""
     kept: list[_Candidate] = []
     effort = max(EFFORT, PASSES * case.plan.brief.bit_count())
     for candidate in found:
-        if any(_same(candidate, other) for other in kept):
+        if any(_same(candidate, other) for other in (*known, *kept)):
             continue
         agrees, taken = _tried(case, candidate, skip)
         effort -= taken
@@ -82,10 +96,7 @@ def remedies(case: Case, cells: Set[int], skip: int = 0) -> list[Weighted]:
             kept.append(candidate)
         if effort <= 0 or len(kept) == KEPT:
             break
-    return [
-        Weighted(_remedy(case, candidate), candidate.weight, candidate.reason == PLAIN.reason)
-        for candidate in kept
-    ]
+    return kept
 
 
 def _proposed(case: Case, cells: Set[int], skip: int) -> Iterator[_Candidate]:

@@ -122,7 +122,7 @@ def bound_for_value(printed: Printed) -> Iterator[Proposal]:
     if relation in "<>≤≥":
         yield Proposal(numeral, 1.0, "=")
         # Nobody prints that p is above a very small number.
-        if printed.reading.quantity != "p" or numeral.value >= 0.01:
+        if printed.reading.quantity != "p" or numeral.value >= 0.05:
             yield Proposal(numeral, 0.5, {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}[relation])
 
 

@@ -198,7 +198,13 @@ def named(reading: Reading) -> str:
 
 def printed(reading: Reading) -> str:
     """Return a reading as it is printed."""
-    return f"{named(reading)} {reading.relation} {literal_of(reading)}"
+    sign = f"{reading.relation} " if not is_word(reading) else ""
+    return f"{named(reading)} {sign}{literal_of(reading)}"
+
+
+def is_word(reading: Reading) -> bool:
+    """Say whether what stands for a bound is a word, such as ``n.s.``."""
+    return reading.literal[:1].isalpha()
 
 
 def literal_of(reading: Reading) -> str:

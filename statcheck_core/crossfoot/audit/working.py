@@ -14,6 +14,7 @@ from crossfoot.audit.wording import (
     are_marks,
     between,
     inside,
+    is_word,
     listed,
     literal_of,
     named,
@@ -73,7 +74,8 @@ def conclusion(case: Case, cell: int, result: Interval, takes: Iterable[int]) ->
     index = case.reading_at(cell)
     assert index is not None  # a finding points at a reading
     reading = case.readings[index]
-    relation = "" if reading.relation == "=" else f"{reading.relation} "
+    bare = reading.relation == "=" or is_word(reading)
+    relation = "" if bare else f"{reading.relation} "
     marks = are_marks(reading.quantity, reading.term)
     lead = f"{named(reading)} is {'' if marks else 'printed as '}{relation}{literal_of(reading)}"
     shown = between(_opened(case, cell, result), hand(case, cell), case.box[cell])
