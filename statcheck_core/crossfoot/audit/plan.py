@@ -16,6 +16,7 @@ from crossfoot.audit.drafts import Draft, Shape, broken_assumption, connected, g
 from crossfoot.audit.narrow import Step, bits
 from crossfoot.audit.rows import BINDERS
 from crossfoot.audit.silence import why_silent
+from crossfoot.audit.wording import are_marks
 from crossfoot.laws import IDENTITIES, ONE_SIDED
 from crossfoot.laws.assumptions import ASSUMPTIONS
 from crossfoot.laws.identity import Identity
@@ -188,7 +189,7 @@ def _step(
         if index[cell] >= printed and cell.quantity in CUSTOMARY:
             unstated += filter(None, [CUSTOMARY[cell.quantity].assumption])
     for context, (quantity, assumption) in TAKEN_FOR_GRANTED.items():
-        if context in shape.context and any(cell.quantity == quantity for cell in draft.cells):
+        if context in shape.context and any(_is_taken(cell, quantity) for cell in draft.cells):
             unstated.append(assumption)
     counting = shape.kind in _COUNTING and not shape.fractional
     counted = index[draft.gives] >= printed and QUANTITIES[draft.gives.quantity].whole
@@ -201,6 +202,11 @@ def _step(
         tuple(unstated),
         counting and counted and _ADJUSTING.isdisjoint(shape.context),
     )
+
+
+def _is_taken(cell: Cell, quantity: str) -> bool:
+    """Say whether what is taken for granted of a quantity bears on a cell: of p, on its marks."""
+    return cell.quantity == quantity and (quantity != "p" or are_marks(*cell))
 
 
 def _linked(steps: Sequence[Step], equations: Sequence[tuple[int, ...]]) -> list[Step]:

@@ -231,6 +231,7 @@ def phrase(readings: Sequence[Reading]) -> str:
             head = f"{symbol(reading.quantity)}({inside}){term}"
             heads[place] = f"{head} {reading.relation} {literal_of(reading)}"
     rest = [r for r in readings if r.quantity in _FREEDOM and (r.quantity, r.term) not in held]
+    rest.sort(key=lambda reading: _FREEDOM.index(reading.quantity))
     kinds = sorted(reading.quantity for reading in rest)
     whole = kinds in (["df"], ["df1", "df2"]) and not _rows(rest)
     words = [

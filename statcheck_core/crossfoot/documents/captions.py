@@ -69,7 +69,7 @@ _COLON = expression(r":(?![:\w-])\s")
 _NOTE = expression(
     r"[*\s]{0,4}(?:notes?\b|anmerkung(?:en)?\b|remarques?\b|notas?\b|legend\b|注|source\s?:)[*\s]{0,4}[.:\s]|[*\s]{0,2}[a-e][.)]?\s{1,3}R[\s-]?sq"
     r"|.{0,60}?(?<!\w)[*†‡+]{1,4}\s?'?\s?(?:[*_]?p[*_]?|=|:|significant|indicates|denotes)?\s?(?:-?values?)?\s?(?:<|≤|&lt;|&le;|=\s?p|significant|sig\.|0?\.\d)"
-    r"|.{0,12}p\s?(?:<|≤|&lt;)\s?\.?\d[\d.,]*\s?[*†]|.{0,8}\*{1,3},?\s.{0,30}(?:significan|level)"
+    r"|.{0,12}p\s?(?:<|≤|&lt;)\s?\.?\d[\d.,]*\s?[*†]|.{0,8}\*{1,3}[,.]?\s.{0,30}(?:significan|level)"
     r"|.{0,40}(?:standard\serrors?|std\.?\serr\w*|t[\s-]?(?:statistics?|stats?|values?|ratios?)|p[\s-]?values?|SEs?|confidence\sintervals?"
     r"|Standardfehler)\b.{0,50}(?:in|between)\s(?:the\s)?(?:parenthes|bracket|square|round|Klammern)"
     r"|.{0,8}(?:values|numbers|figures|entries|cell\sentries)\b.{0,30}(?:parenthes|bracket)"

@@ -75,6 +75,9 @@ def _whole(
     readings: list[Reading] = []
     for line, name in zip(effects, _names(effects), strict=True):
         readings += _effect_readings(line, None if single else name)
+    beside = [line.cells["df2"] for line in effects if "df2" in line.cells]
+    if len({(found.low, found.high) for found in beside}) == 1:
+        readings.append(beside[0])
     if model is not None:
         readings += _effect_readings(model, "model")
     if error is not None:

@@ -64,17 +64,16 @@ def anova(sheet: Sheet) -> Found | None:
 def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
     has_p = any(column.heading.roles == ("p",) for column in columns)
     over, labels = _sections(sheet, labels_of(sheet.panel, sheet.columns))
-    section = ""
+    section = label = ""
     lines: list[Line] = []
     for index, row in enumerate(sheet.panel.rows):
         named = [row[c.number] for c in over if row[c.number].text]
         words = [row[c.number] for c in labels if row[c.number].text] or named
         section = label_of(" ".join(box.text for box in named)) if named else section
         correction = next((c for box in words if (c := correction_of(box.text))), "")
-        named = [box for box in words if not correction_of(box.text)] or words
-        label = label_of(" ".join(box.text for box in named))
-        if correction and not lines and not named:
-            continue
+        named = [box for box in words if not correction_of(box.text)]
+        if named or not correction:
+            label = label_of(" ".join(box.text for box in named))
         cells: dict[str, Reading] = {}
         contexts: list[str] = [correction] if correction else []
         boxes = [row[c.number] for c in columns]

@@ -25,7 +25,7 @@ _OTHERWISE = re.compile(
     r"partial|controlling|above\sthe\sdiagonal|below\sthe\sdiagonal|upper\striangle|covarianc|disattenuat|loadings",
     re.IGNORECASE,
 )
-_ONE = re.compile(r"1[.,]0{2,}")
+_ONE = re.compile(r"1(?:[.,]0{2,})?")
 _COEFFICIENT = re.compile(
     r"(?:pearson|spearman|kendall)\b.{0,30}|.{0,20}\bcorrelation(?:\scoefficient)?|r|r_\{?s\}?|rho|ρ|τ",
     re.IGNORECASE,

@@ -16,7 +16,7 @@ from crossfoot.reading.tables.contents import Number
 _MARK = r"(?P<mark>\*{1,4}|†{1,2}|‡|(?<![\w.])\+(?=\s?p))"
 _LEVEL = r"(?P<level>0?[.,]\d{1,4}|\d{1,2}(?:\.\d)?\s?%)"
 _SAID = re.compile(
-    rf"{_MARK}['\s]{{0,2}}(?:=|:|\(|denotes|indicates|means|for)?\s?(?:[pP](?:[\s-]?values?)?\s?(?:[<≤]|less\sthan)=?\s?|[<≤]\s?"
+    rf"{_MARK}['\s.]{{0,2}}(?:[Cc]orrelation\sis\s)?(?:=|:|\(|denotes|indicates|means|for)?\s?(?:[pP](?:[\s-]?values?)?\s?(?:[<≤]|less\sthan)=?\s?|[<≤]\s?"
     rf"|(?:statistically\s)?(?:significant|significance|sig\.?)\s(?:at|level:?)\s(?:the\s)?(?:p\s?[<≤]\s?)?)?{_LEVEL}"
 )
 _SAID_AFTER = re.compile(rf"[pP]\s?[<≤]\s?{_LEVEL}\s?(?:=|:|\()?\s?{_MARK}")
@@ -152,14 +152,12 @@ def _marks(text: str, at: int) -> dict[str, Mark]:
         percent = "%" in found["levels"] or "percent" in text[found.end() : found.end() + 12]
         listed: dict[str, Mark] = {}
         for sign, literal in zip(signs, levels, strict=True):
-            level = _level(
-                literal.group() + ("%" if percent and "%" not in literal.group() else "")
-            )
+            printed = literal.group().strip()
+            printed += "%" if percent and "%" not in printed else ""
+            level = _level(printed)
             start = at + found.start("levels")
             if level is not None:
-                listed[sign] = Mark(
-                    level, literal.group(), start + literal.start(), start + literal.end()
-                )
+                listed[sign] = Mark(level, printed, start + literal.start(), start + literal.end())
         if len(listed) == len(signs) and _fall(listed):
             return listed
     return marks if _fall(marks) else {}

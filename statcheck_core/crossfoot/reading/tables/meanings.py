@@ -31,7 +31,15 @@ class Line(NamedTuple):
 
 def settled(sheet: Sheet, lines: list[Line]) -> list[Line]:
     """Tell what β, brackets and marks are, from all rows together."""
-    return _symbols(sheet, _distributions(_with_enclosed(sheet, lines)))
+    return _symbols(sheet, _distributions(_with_enclosed(sheet, _walds(lines))))
+
+
+def _walds(lines: list[Line]) -> list[Line]:
+    """Take all Wald statistics for z where some have a sign, which no χ² has."""
+    named = {key for line in lines for key in line.cells}
+    if not {"z", "chi2"} <= named:
+        return lines
+    return [line._replace(cells=_renamed(line.cells, "chi2", "z")) for line in lines]
 
 
 def _distributions(lines: list[Line]) -> list[Line]:
@@ -39,12 +47,12 @@ def _distributions(lines: list[Line]) -> list[Line]:
     wider = [fit for line in lines if (fit := _is_wider(line)) is not None]
     if len(wider) < 3 or 2 * sum(wider) < len(wider):
         return lines
-    return [line._replace(cells=_as_t(line.cells)) for line in lines]
+    return [line._replace(cells=_renamed(line.cells, "z", "t")) for line in lines]
 
 
-def _as_t(cells: dict[str, Reading]) -> dict[str, Reading]:
+def _renamed(cells: dict[str, Reading], old: str, new: str) -> dict[str, Reading]:
     return {
-        ("t" if key == "z" else key): found._replace(quantity="t") if key == "z" else found
+        (new if key == old else key): found._replace(quantity=new) if key == old else found
         for key, found in cells.items()
     }
 
@@ -66,7 +74,7 @@ def _with_enclosed(sheet: Sheet, lines: list[Line]) -> list[Line]:
     if kind is None:
         samples = [s for line in loose if (s := _sample(sheet, line)) is not None]
         kind = told_apart(samples) if samples else None
-        if kind is None and may_be_error(samples):
+        if kind is None and may_be_error(samples) and not _tested(lines):
             kind = "se?"
     if kind not in {"se", "t", "z", "p", "se?"}:
         return lines
@@ -85,6 +93,11 @@ def _with_enclosed(sheet: Sheet, lines: list[Line]) -> list[Line]:
     return settled
 
 
+def _tested(lines: Sequence[Line]) -> bool:
+    """Say whether something is printed that a standard error could be held against."""
+    return any({"t", "z", "p", "chi2", "ci_low"} & line.cells.keys() for line in lines)
+
+
 def _sample(sheet: Sheet, line: Line) -> Sample | None:
     assert line.enclosed is not None
     found = reading(sheet, line.enclosed, "se")
@@ -92,8 +105,8 @@ def _sample(sheet: Sheet, line: Line) -> Sample | None:
     first, second = value(estimate), value(found)
     if first is None or second is None:
         return None
-    marks = line.cells.get("stars")
-    return Sample(first, second, (marks.low, marks.high) if marks is not None else None)
+    p = line.cells.get("p") or line.cells.get("stars")
+    return Sample(first, second, (p.low, p.high) if p is not None else None)
 
 
 def _symbols(sheet: Sheet, lines: list[Line]) -> list[Line]:
