@@ -16,7 +16,7 @@ from crossfoot.reading.estimates import (
 )
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
-from crossfoot.reading.notation import Name, names
+from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import read_r_squared
 from crossfoot.reading.told import told
