@@ -82,6 +82,27 @@ def test_an_adjusted_p_is_not_the_p_of_the_test() -> None:
     )
 
 
+def test_few_digits_are_alike_by_chance() -> None:
+    here = "Load mattered, b = 0.42, SE = 0.11, β = .36."
+    assert doubts(here, "Age mattered, b = 0.42, SE = 0.11, β = .63.") == []
+
+
+def test_what_one_expression_says_of_several_results_is_no_mention() -> None:
+    here = "Load mattered, b = 0.427, SE = 0.112, β = .36."
+    there = "All slopes were b = 0.427, SE = 0.112, β = .63, both ts(58) > 3.1, all ps < .01."
+    assert doubts(here, there)[1:] == []
+
+
+def test_intervals_of_other_levels_differ_in_their_level() -> None:
+    assert (
+        doubts(
+            "Load mattered, b = 0.427, SE = 0.112, 95% CI [0.203, 0.651].",
+            "Load mattered, b = 0.427, SE = 0.112, 90% CI [0.203, 0.651].",
+        )
+        == []
+    )
+
+
 def test_what_the_result_itself_shows_is_not_said_twice() -> None:
     right = "Tillage mattered, F(2, 57) = 3.90, p = .026, ηp² = .12."
     wrong = "Tillage mattered, F(2, 57) = 3.90, p = .026, ηp² = .21."

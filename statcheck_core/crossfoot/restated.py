@@ -6,7 +6,6 @@ may be measured more than once; what is found here is a doubt.
 
 from __future__ import annotations
 
-import math
 from collections import defaultdict
 from collections.abc import Iterator, Mapping, Sequence
 from functools import lru_cache
@@ -32,10 +31,13 @@ _NOT_DIGITS = expression(r"\D+")
 _TOTAL = expression(
     r"(?<![A-Za-z])N[*_$}\s]{0,4}=[\s$]{0,3}(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})(?![\d.,]*\d)"
 )
-_SEVERAL = expression(
-    r"repeated|within[- ]|trials?\b|session|waves?\b|longitudinal|panel|time[- ]?points?"
-    r"|multilevel|mixed|(?:[Ss]tudy|[Ee]xperiment|[Ss]ample)\s?[2-9]|[Ss]tudies|[Ee]xperiments|subsample|measure[sd]"
-)
+#: Words that tell of more rows than cases, or of more samples than one; substrings, which are
+#: looked for faster than a pattern.
+_SEVERAL = (
+    "repeated", "within-", "within ", "trial", "session", "wave", "longitudinal", "panel",
+    "time point", "time-point", "timepoint", "multilevel", "mixed", "studies", "experiments",
+    "study 2", "experiment 2", "sample 2", "subsample", "measured", "measures",
+)  # fmt: skip
 _COUNTING = frozenset({"overall-model", "effect", "correlation", "coefficient", "mean-comparison"})
 _NOT_COUNTS = frozenset(
     {"adjusted-df", "imputed", "mixed", "survey", "repeated-measures", "by-item", "quoted"}
@@ -184,28 +186,28 @@ def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int
     }
     # The N in the brackets of a test is of that test, and need not be the whole sample.
     samples = [(total, span) for total, span in told if span.start not in of_results]
-    if len({total for total, _ in told}) != 1 or not samples or not placed:
-        return
-    if any(_tells_of_several(block.source) for block in document.blocks):
+    if len({total for total, _ in told}) != 1 or not samples:
         return
     total, span = samples[0]
-    for number, item in enumerate(placed):
-        claim = item.audited.claim
-        numbers = single(claim)
-        key = "df2" if "df2" in numbers else "df"
-        if claim.kind not in _COUNTING or key not in numbers or "n" in numbers:
-            continue
-        if not _NOT_COUNTS.isdisjoint(claim.context):
-            continue
-        least = numbers[key].low + (numbers["df1"].low if "df1" in numbers else 1.0)
-        if math.isfinite(least) and least > total:
-            yield number, Check("sample-flow", "doubt"), _outgrown(item, numbers, key, total, span)
+    found = [
+        (number, Check("sample-flow", "doubt"), _outgrown(item, numbers, key, total, span))
+        for number, item in enumerate(placed)
+        for key, numbers in _counted(item)
+        if numbers[key].low + (numbers["df1"].low if "df1" in numbers else 1.0) > total
+    ]
+    words = document.text.lower() if found else ""
+    if not any(word in words for word in _SEVERAL):
+        yield from found
 
 
-@remembered
-def _tells_of_several(source: str) -> bool:
-    """Say whether a block tells of more rows than cases, or of more samples than one."""
-    return _SEVERAL.search(source) is not None
+def _counted(placed: Placed) -> Iterator[tuple[str, Mapping[str, Reading]]]:
+    """Yield the degrees of freedom that count cases, and all numbers with them."""
+    claim = placed.audited.claim
+    numbers = single(claim)
+    key = "df2" if "df2" in numbers else "df"
+    counts = claim.kind in _COUNTING and _NOT_COUNTS.isdisjoint(claim.context)
+    if counts and key in numbers and "n" not in numbers:
+        yield key, numbers
 
 
 @remembered

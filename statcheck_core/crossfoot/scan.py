@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING
 from crossfoot import documents
 from crossfoot.model import Audited, Block, Claim, Document, Placed, Report
 from crossfoot.reading import read_block
-from crossfoot.reading.cues import above, is_methods, spreading, titled
+from crossfoot.reading.contexts import above, is_methods, spreading, titled
 from crossfoot.settings import DEFAULTS, Settings
 
 if TYPE_CHECKING:

@@ -19,7 +19,7 @@ import pytest
 from benchmarks.drafts import draft
 from crossfoot.audit import audit_claim
 from crossfoot.reading import read_block
-from crossfoot.reading.cues import cues_in
+from crossfoot.reading.contexts import cues_in
 from crossfoot.scan import claims_of, scan_text
 
 MEGABYTE = 1_000_000

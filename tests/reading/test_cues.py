@@ -4,7 +4,8 @@ from __future__ import annotations
 
 import pytest
 
-from crossfoot.reading.cues import CUES, cues_in
+from crossfoot.reading.contexts import cues_in
+from crossfoot.reading.cues import CUES
 from crossfoot.scan import claims_of
 
 RESULT = "F(2, 57) = 3.90, p = .026"

@@ -4,7 +4,8 @@ from __future__ import annotations
 
 import pytest
 
-from crossfoot.reading.notation import NOTATIONS, Notation, names
+from crossfoot.reading.names import names
+from crossfoot.reading.notation import NOTATIONS, Notation
 from crossfoot.scan import claims_of
 
 #: Scanner's words for what the neighbours settle, and what they become in the examples.

@@ -20,7 +20,7 @@ from crossfoot.expressions import expression
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Block, Claim, Document, Report, Span
 from crossfoot.reading.fold import fold
-from crossfoot.reading.notation import names
+from crossfoot.reading.names import names
 
 #: Visible characters before the cursor in which a name is looked for.
 _REACH = 60

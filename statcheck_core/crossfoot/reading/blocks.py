@@ -10,7 +10,8 @@ from crossfoot.documents.visible import Builder, Visible, compose, place
 from crossfoot.expressions import expression
 from crossfoot.memo import remembered
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.cues import CUES, Cues, cues_in
+from crossfoot.reading.contexts import Cues, cues_in
+from crossfoot.reading.cues import CUES
 from crossfoot.reading.fold import fold
 
 #: Nothing is read in a block without one of these: a relation, or a word or markup that stands

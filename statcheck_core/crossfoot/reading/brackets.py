@@ -8,7 +8,7 @@ from typing import NamedTuple
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
-from crossfoot.reading.notation import Name
+from crossfoot.reading.names import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
 from crossfoot.reading.words import VERB_UNSPACED
 

@@ -7,9 +7,10 @@ from collections.abc import Sequence
 
 from crossfoot.expressions import expression
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.cues import alpha_of, contexts_of, cues_in
-from crossfoot.reading.grouping import Group, same_sentence, sentence_around
+from crossfoot.reading.contexts import alpha_of, contexts_of, cues_in
+from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import SCANNER_FLAGS, Item, Part
+from crossfoot.reading.sentences import same_sentence, sentence_around
 from crossfoot.reading.settling import settle, shared
 
 _MODEL = expression(

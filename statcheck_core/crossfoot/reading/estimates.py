@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
-from crossfoot.reading.notation import Name
+from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
 

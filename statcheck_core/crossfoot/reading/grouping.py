@@ -14,6 +14,7 @@ from typing import NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item
+from crossfoot.reading.sentences import ABBREVIATION, BULLET, SENTENCE_END
 
 _ANCHORS = frozenset({"F", "F_change", "t", "r", "z", "chi2", "b", "β", "beta", "odds_ratio"})
 _COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
@@ -47,14 +48,6 @@ APART = 9.0
 _CROWD = 40
 
 _WORD = expression(r"[^\W\d_]{2,}")
-_SENTENCE_END = expression(r"[.!?][)\]\"”’']?\s+(?=[^\W\d_]|$)|[.!?]\s*$|。")
-_ENDS = ".!?。"
-#: How far around a result its sentence is looked for, in characters.
-_REACH = 600
-_ABBREVIATION = expression(
-    r"\b(?:adj|approx|bzw|ca|cf|coef|corr|e\.g|Eq|est|et al|Fig|i\.e|korr|max|min|n\.s|No|p|part|pp"
-    r"|resp|sq|std|Tab|vs|z\.B)\.\s*$"
-)
 _LINK = frozenset(
     {
         "with",
@@ -79,7 +72,6 @@ _LINK = frozenset(
         "model",
     }
 )
-_BULLET = expression(r"\n\s*(?:[•*+-]|\d+[.)])\s")
 
 
 class Group(NamedTuple):
@@ -100,12 +92,12 @@ def gap(text: str, first: Item, second: Item) -> float:
     if not between.strip(" ;\n"):
         return 0.6
     words = [word for word in _WORD.findall(between) if word.lower() not in _LINK]
-    bullets = len(_BULLET.findall(between))
+    bullets = len(BULLET.findall(between))
     strength = 0.1 + min(len(words), 6) + 2.5 * between.count(";")
     if bullets:
         return 1.5 * bullets + 0.3 * min(len(words), 8)
-    end = _SENTENCE_END.search(between)
-    if end is not None and not _ABBREVIATION.search(between, 0, end.end()):
+    end = SENTENCE_END.search(between)
+    if end is not None and not ABBREVIATION.search(between, 0, end.end()):
         strength = max(strength, APART if words else 1.5)
     elif between.count(")") > between.count("("):
         strength += 1.0
@@ -289,40 +281,3 @@ def _runs(items: Sequence[Item], gaps: Sequence[float], start: int, stop: int) -
             run = []
         run.append(item)
     return [*groups, Group(tuple(run), None)] if run else groups
-
-
-def sentence_around(text: str, start: int, end: int) -> tuple[int, int]:
-    """Return the bounds of the sentence, or bullet, that ``text[start:end]`` stands in."""
-    first = _sentence_start(text, max(0, start - _REACH), start)
-    bullet = text.rfind("\n", first, start)
-    while bullet >= 0:
-        if _BULLET.match(text, bullet):
-            first = bullet + 1
-            break
-        bullet = text.rfind("\n", first, bullet)
-    limit = min(len(text), end + _REACH)
-    following = _SENTENCE_END.search(text, end, limit)
-    last = following.start() + 1 if following else limit
-    next_bullet = _BULLET.search(text, end, last)
-    return first, next_bullet.start() if next_bullet else last
-
-
-def same_sentence(text: str, first: tuple[int, int], second: tuple[int, int]) -> bool:
-    """Say whether two places of a text stand in one sentence."""
-    (_, start), (end, _) = sorted((first, second))
-    match = _SENTENCE_END.search(text, start, max(start, end))
-    return match is None or bool(
-        _ABBREVIATION.search(text, max(0, match.start() - 12), match.end())
-    )
-
-
-def _sentence_start(text: str, first: int, start: int) -> int:
-    """Return where the last sentence that begins in ``text[first:start]`` does, else ``first``."""
-    at = start
-    while True:
-        at = max(text.rfind(mark, first, at) for mark in _ENDS)
-        if at < 0:
-            return first
-        match = _SENTENCE_END.match(text, at, start + 1)
-        if match is not None and not _ABBREVIATION.search(text, max(0, at - 12), at + 2):
-            return min(match.end(), start)

@@ -7,7 +7,7 @@ import re
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
-from crossfoot.reading.notation import Name
+from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
 from crossfoot.reading.words import ADJUSTED, CHANGED, PSEUDO

@@ -16,7 +16,7 @@ from crossfoot.reading.estimates import (
 )
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.lazily import lazily
-from crossfoot.reading.notation import Name, names
+from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import read_r_squared
 from crossfoot.reading.told import told
@@ -222,6 +222,8 @@ def _read_p(text: Text, name: Name) -> Item | None:
     before = _ADJUSTED_BEFORE.search(text.folded, max(0, start - 14), start)
     if _ADJUSTED_NAME.search(printed) or before:
         flags = ("adjusted-p",)
+    elif "perm" in printed:
+        flags = ("resampled",)
     bracket = BRACKETS.match(text.folded, end)
     if bracket is not None and (inner := bracket["round"] or bracket["lowered"]):
         sided = _SIDED().match(inner)

@@ -7,8 +7,9 @@ from collections.abc import Iterable, Sequence
 from itertools import pairwise
 
 from crossfoot.reading.genuine import is_result
-from crossfoot.reading.grouping import Group, same_sentence
+from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import Item, Part
+from crossfoot.reading.sentences import same_sentence
 
 _TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
 _COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})

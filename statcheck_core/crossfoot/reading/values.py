@@ -9,7 +9,7 @@ from crossfoot.reading import numerals
 from crossfoot.reading.fold import HARD_SPACE
 from crossfoot.reading.items import WHOLE, Part, Text
 from crossfoot.reading.lazily import lazily
-from crossfoot.reading.notation import Name
+from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.words import VERB, VERB_UNSPACED
 

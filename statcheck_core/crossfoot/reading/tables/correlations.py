@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.cues import cues_in
+from crossfoot.reading.contexts import cues_in
 from crossfoot.reading.tables import headings
 from crossfoot.reading.tables.columns import labels_of
 from crossfoot.reading.tables.contents import Content, content_of, is_blank

@@ -8,7 +8,7 @@ import re
 from typing import NamedTuple
 
 from crossfoot.reading import numerals
-from crossfoot.reading.cues import cues_in
+from crossfoot.reading.contexts import cues_in
 from crossfoot.reading.items import Part
 from crossfoot.reading.tables.contents import Number
 

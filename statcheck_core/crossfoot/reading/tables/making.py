@@ -6,7 +6,7 @@ from collections.abc import Iterable, Sequence
 from typing import NamedTuple
 
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.cues import cues_in
+from crossfoot.reading.contexts import cues_in
 from crossfoot.reading.tables import contents, legend
 from crossfoot.reading.tables.contents import Content, Number
 from crossfoot.reading.tables.grid import Box, Panel

@@ -7,7 +7,8 @@ from collections.abc import Callable, Iterable, Sequence
 
 from crossfoot.documents.table import Table
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.cues import CUES, cues_in
+from crossfoot.reading.contexts import cues_in
+from crossfoot.reading.cues import CUES
 from crossfoot.reading.fold import fold
 from crossfoot.reading.tables import legend as legends
 from crossfoot.reading.tables.anova import anova, bare

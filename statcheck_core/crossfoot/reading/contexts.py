@@ -1,0 +1,163 @@
+"""What the words of a block mean for its results: contexts, and the significance level."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterable
+from functools import lru_cache
+from typing import NamedTuple
+
+from crossfoot.reading.cues import CUES
+
+# Patterns are compiled when first used: most documents need none of them, and start-up counts.
+_CITATION = r"[A-Z][\w'’-]{1,30}[^()]{0,60}?\b(?:19|20)\d\d[a-z]?\s?[,;:]"
+_REPORTED = (
+    r"\b[A-Z][\w'’-]{1,30}(?:\s(?:and|&)\s[A-Z][\w'’-]{1,30}|\set\sal\.)?\s\((?:19|20)\d\d[a-z]?\)"
+    r"\s(?:\w+\s)?(?:reported|found|obtained|observed|showed|gave|got)\b[^.;]{0,70}$"
+)
+_ALPHA = (
+    r"(?:(?:α|alpha)(?:\s(?:level|was|set|of|at|is|to))*\s?=?\s?|significance\s(?:level|threshold)(?:\s(?:was|set|of|at|is|to|used))*\s?(?:p\s?[<≤]\s?|=\s?)?)"
+    r"(?P<level>0?[.,]\d{1,4}|\d{1,2}(?:\.\d)?\s?%)"
+    r"|p\s?[<≤]\s?(?P<below>0?[.,]\d{1,4})\s(?:(?:was|were|is|are)\s)?(?:considered|deemed|taken|regarded|treated|as|defined|indicat)\w*"
+    r"[^.]{0,40}signific"
+)
+#: What a heading says for its section, and a paragraph for the table below it.
+_OF_MODELS = frozenset({"generalised", "other-null", "resampled", "variance-ratio"})
+#: A paragraph no longer than this may be a caption, though nothing marks it as one.
+_LONGEST_LINE = 200
+_WORD_OF_ALPHA = ("alpha", "α", "significan")
+#: Words of a heading under which a paragraph speaks for the whole document.
+_METHODS = (
+    "method", "analys", "statist", "approach", "design", "procedure", "material", "model",
+    "estimat", "data",
+)  # fmt: skip
+
+
+class Cues(NamedTuple):
+    """What the words of a block say."""
+
+    contexts: frozenset[str] = frozenset()
+    alpha: float | None = None
+
+
+@lru_cache(maxsize=2048)
+def cues_in(text: str) -> Cues:
+    """Return the contexts that the words of a folded text mean, and the alpha it states."""
+    low = broken = text.lower()
+    for mark in _BREAKS:
+        broken = broken.replace(mark, " ")
+    starts = _STARTS.intersection({word[:_LENGTH] for word in broken.split()})
+    found = {number for start in starts for stem, number in _BY_START[start] if stem in low}
+    if not text.isascii():
+        found.update(number for stem, number in _UNSPACED if stem in low)
+    if not found and not starts and "α" not in low:
+        return _NO_CUES
+    return Cues(_confirmed(found, low), _alpha(text, low))
+
+
+def _confirmed(found: Iterable[int], low: str) -> frozenset[str]:
+    cues = (CUES[number] for number in found)
+    return frozenset(cue.context for cue in cues if not cue.confirm or re.search(cue.confirm, low))
+
+
+def contexts_of(sentence: str, block: str, lead: str) -> frozenset[str]:
+    """Return the contexts of a result.
+
+    Parameters
+    ----------
+    sentence
+        The sentence it stands in.
+    block
+        The whole block.
+    lead
+        What stands before the result in its sentence; a citation in an open bracket there says
+        that the result is quoted.
+    """
+    found = cues_in(block).contexts
+    if found & _NEAR:
+        found = (found - _NEAR) | (found & cues_in(sentence).contexts)
+    if ("(19" in lead or "(20" in lead) and re.search(_REPORTED, lead[-120:]):
+        found |= {"quoted"}
+    opened = lead.rfind("(")
+    if opened > lead.rfind(")") and re.search(_CITATION, lead[max(opened, len(lead) - 160) :]):
+        found |= {"quoted"}
+    return found
+
+
+def alpha_of(sentence: str, block: str) -> float | None:
+    """Return the significance level that the sentence of a result states, if it does."""
+    return cues_in(sentence).alpha if cues_in(block).alpha is not None else None
+
+
+def is_methods(heading: str) -> bool:
+    """Say whether a heading is one under which methods are described."""
+    low = heading.lower()
+    return any(word in low for word in _METHODS)
+
+
+def spreading(text: str) -> frozenset[str]:
+    """Return the contexts that a paragraph without a result states for those that follow."""
+    contexts = cues_in(text).contexts & _SPREADS
+    low = text.lower() if contexts else ""
+    return frozenset(
+        cue.context
+        for cue in CUES
+        if cue.spreads
+        and cue.context in contexts
+        and (not cue.general or re.search(cue.general, low))
+    )
+
+
+def titled(text: str) -> frozenset[str]:
+    """Return the contexts that a heading states for its section."""
+    return spreading(text) | (cues_in(text).contexts & _OF_MODELS)
+
+
+def above(text: str) -> frozenset[str]:
+    """Return the contexts that a paragraph states for the table or printout right below it."""
+    contexts = cues_in(text).contexts
+    if len(text) > _LONGEST_LINE:
+        return contexts & _OF_MODELS
+    # A line alone is a caption. Where it speaks of ratios, they are what the table estimates.
+    return contexts | {"other-null"} if "ratio-scale" in contexts else contexts
+
+
+def _alpha(text: str, low: str) -> float | None:
+    if not any(word in low for word in _WORD_OF_ALPHA):
+        return None
+    match = re.search(_ALPHA, text, re.IGNORECASE)
+    if match is None:
+        return None
+    literal = (match["level"] or match["below"]).replace(",", ".").strip()
+    level = float(literal.rstrip("% ")) / 100 if literal.endswith("%") else float(literal)
+    return level if 0 < level < 0.5 else None
+
+
+#: Stems are looked up by the first letters of their first word, since looking for each of them in
+#: every paragraph takes longer than the rest of reading it. Those of scripts without spaces are
+#: looked for as they are.
+_LENGTH = 5
+_STEMS = tuple((stem, number) for number, cue in enumerate(CUES) for stem in cue.stems)
+_UNSPACED = tuple(pair for pair in _STEMS if max(pair[0]) >= "\u3000")
+#: What may stand right before or behind a word.
+_BREAKS = "-–([/'\"“‘_),.;:="
+
+
+def _first_letters(stem: str) -> str:
+    for mark in _BREAKS:
+        stem = stem.replace(mark, " ")
+    return stem.split()[0][:_LENGTH]
+
+
+def _by_start() -> dict[str, tuple[tuple[str, int], ...]]:
+    found: dict[str, list[tuple[str, int]]] = {"alpha": [], "signi": []}
+    for pair in _STEMS:
+        found.setdefault(_first_letters(pair[0]), []).append(pair)
+    return {start: tuple(pairs) for start, pairs in found.items()}
+
+
+_BY_START = _by_start()
+_STARTS = frozenset(_BY_START)
+_NO_CUES = Cues()
+_NEAR = frozenset(cue.context for cue in CUES if cue.near)
+_SPREADS = frozenset(cue.context for cue in CUES if cue.spreads)
