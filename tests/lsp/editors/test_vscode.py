@@ -4,10 +4,12 @@ from __future__ import annotations
 
 import json
 import os
+import signal
 import socket
 import subprocess
 import time
 from collections.abc import Iterator
+from contextlib import suppress
 from pathlib import Path
 from typing import Any
 from urllib.error import URLError
@@ -115,13 +117,18 @@ def served(tmp_path: Path) -> Iterator[str]:
     serve = [*common, "--bind-addr", f"127.0.0.1:{port}", "--auth", "none"]
     serve += ["--disable-telemetry", "--disable-update-check", "--disable-workspace-trust"]
     with (tmp_path / "log").open("w") as log:
-        process = subprocess.Popen(serve, env=environment, stdout=log, stderr=log)
+        process = subprocess.Popen(
+            serve, env=environment, stdout=log, stderr=log, start_new_session=True
+        )
         try:
             wait_for(port)
             yield f"http://127.0.0.1:{port}/?folder={folder}"
         finally:
             process.terminate()
-            process.wait(30)
+            process.wait(60)
+            # What it started for the extension may wait for a window that never comes back.
+            with suppress(ProcessLookupError):
+                os.killpg(process.pid, signal.SIGKILL)
 
 
 def wait_for(port: int) -> None:
