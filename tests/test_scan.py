@@ -194,3 +194,15 @@ def test_editing_one_paragraph_reads_one_paragraph() -> None:
 def test_claims_of_a_text() -> None:
     (claim,) = claims_of("F(2, 57) = 4.31, n = 60")
     assert [reading.quantity for reading in claim.readings] == ["df1", "df2", "F", "n"]
+
+
+def test_half_of_a_surrogate_pair_is_a_character_like_any_other() -> None:
+    half = "\ud83d"
+    claims = scan_text(f"{half} {RIGHT} {half}").claims
+    assert [placed.audited.claim.span for placed in claims] == [
+        placed.audited.claim.span._replace(
+            start=placed.audited.claim.span.start + 2, end=placed.audited.claim.span.end + 2
+        )
+        for placed in scan_text(RIGHT).claims
+    ]
+    assert len(claims_of(f"{half} {RIGHT}", "markdown")) == 1

@@ -103,7 +103,7 @@ def _stands_for(reading: Reading) -> Interval:
 def misplaced(case: Case) -> bool:
     """Say whether some reading lies outside all that its quantity can be."""
     return any(
-        meet(interval, domain) is None
+        interval.low > domain.high or interval.high < domain.low
         for interval, domain in zip(case.box, case.plan.domains, strict=True)
     )
 

@@ -19,8 +19,12 @@ EVERYTHING = Interval(-math.inf, math.inf)
 
 def meet(first: Interval, second: Interval) -> Interval | None:
     """Return the common part of two intervals, or None where they are disjoint."""
-    low = first.low if first.low > second.low else second.low
-    high = first.high if first.high < second.high else second.high
+    low, high = first
+    least, most = second
+    if low <= least and most <= high:
+        return second
+    low = low if low > least else least
+    high = high if high < most else most
     return Interval(low, high) if low <= high else None
 
 
