@@ -76,6 +76,8 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
         # "…, F(2, 57) = 7.41, p = .001. Tukey's test …": corrections concern what follows.
         contexts -= {"adjusted-p"} - cues_in(sentence).contexts
     kind = _kind(group.anchor, {part.quantity for part in unique}, sentence)
+    if kind == "model-change" and _is_of_whole(unique):
+        kind = "overall-model"
     if kind == "overall-model" and group.anchor == "F" and _of_one_effect(group, folded, start):
         kind = "effect"
     return Claim(
@@ -126,6 +128,16 @@ def _kind(anchor: str | None, quantities: set[str], sentence: str) -> str:
         "r": "correlation",
         "chi2": "frequency",
     }.get(anchor or "", "overall-model")
+
+
+def _is_of_whole(parts: Sequence[Part]) -> bool:
+    """Say whether an F beside both R² and ΔR² can be that of R², so that it need not be of ΔR²."""
+    known = {part.quantity: part for part in parts if part.relation == "="}
+    if not known.keys() >= {"F", "R2", "R2_change", "df1", "df2"} or known["R2"].high >= 1:
+        return False
+    ratio = known["df2"].low / known["df1"].low
+    least, most = (share / (1 - share) * ratio for share in known["R2"][4:6])
+    return least <= known["F"].high and known["F"].low <= most
 
 
 def _of_one_effect(group: Group, folded: str, start: int) -> bool:

@@ -23,7 +23,7 @@ _PLUS_MINUS = lazily(
 _AND_ERROR = lazily(rf"\s?(?:\(\s?±?|±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\)?")
 # A number in brackets behind a coefficient, and what tests that coefficient behind it.
 _BRACKETED = lazily(
-    rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ]|Wald\s[zt])\b)"
+    rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ]\b|Wald\s[zt]\b|9\d\s?%))"
 )
 _ENCLOSING = lazily(
     rf"\s?\[\s?(?P<low>{NUMERAL})\s?(?:,|;|-|to)\s?(?P<high>{NUMERAL})\s?\](?!\s?(?:HDI|CrI|credible))"

@@ -189,15 +189,15 @@ def _joins(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor, index:
 
 
 def _gap_to_test(items: Sequence[Item], gaps: Sequence[float], index: int) -> float:
-    """Return the widest gap up to the t or z that comes before the next coefficient, or 0.6."""
+    """Return the widest gap up to the t or z that comes before the next coefficient, or 0.7."""
     widest = 0.0
     for number in range(index + 1, len(items)):
         widest = max(widest, gaps[number - 1])
         if items[number].head in {"t", "z"}:
-            return min(widest, 0.6)
+            return min(widest, 0.7)
         if items[number].head in _COEFFICIENT:
             break
-    return 0.6
+    return 0.7
 
 
 def _first_cut(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor) -> tuple[int, int]:

@@ -168,14 +168,14 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "df1",
-        r"(?:df_?\{?1\}?|df\s?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
+        r"(?:df_?\{?1\}?|df[\s_]?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
         True,
         "dnDN",
         "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
     ),
     Notation(
         "df2",
-        r"(?:df_?\{?2\}?|df\s?\(?(?:den(?:om)?|error|residuals?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
+        r"(?:df_?\{?2\}?|df[\s_]?\(?(?:den(?:om)?|error|resid(?:uals?)?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
         r"|Df\s?Residuals|(?i:(?:error|residual)\s(?:df|degrees\sof\sfreedom)))",
         True,
         "dnDeErR",

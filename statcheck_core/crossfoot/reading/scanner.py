@@ -27,6 +27,7 @@ _FOR_WHAT = lazily(
     r"\s(?:for|of|on)\s(?:the\s)?[^\W\d][\w-]{0,30}(?:\s[^\W\d][\w-]{0,30})?(?=\s(?:was|is|=))"
 )
 _NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
+_P_LIST = lazily(rf"\s?,?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
 _DEALT = lazily(
     r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b"
     r"|(?<!\w)[pP]\s?=\s?0?[.,]\d{1,5},\s(?:and\s)?0?[.,]\d)"
@@ -47,7 +48,10 @@ _ADJUSTED_BEFORE = expression(
 _ADJUSTED_LABEL = lazily(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
 # χ with its df beneath and its square above: χ_{1}^{2}
 _INDEX = expression(r"χ_\{?(?P<df>\d{1,3})\}?\s?\^")
-_CRITICAL = expression(r"crit", re.IGNORECASE)
+_CRITICAL_BEFORE = lazily(
+    r"crit\w*\.?\s(?:values?:?\s)?(?:(?:of|for)\s)?(?:the\s)?$", re.IGNORECASE
+)
+_CRITICAL_BEHIND = lazily(r"(?:\s?\([^()]{1,20}\))?[\s_({-]{0,3}crit", re.IGNORECASE)
 _RANK = lazily(r"ρ|rho|Spearman|_\{?s|rs$")
 
 
@@ -100,6 +104,8 @@ def _is_for_all(text: Text, item: Item) -> bool:
 
 def _shares_out(text: Text, item: Item) -> bool:
     """Say whether the sentence goes on to deal out numbers: ``respectively``, ``ps < .05``."""
+    if item.head == "p" and _P_LIST().match(text.folded, item.end) is not None:
+        return True
     if (
         item.head not in {"F", "t", "r", "z", "chi2", "p"}
         or _NEXT_VALUE.match(text.folded, item.end) is None
@@ -138,18 +144,27 @@ def _read_plain(text: Text, name: Name) -> Item | None:
     return Item(quantity, parts, name.match.start(), end, flags)
 
 
+def _is_critical(text: Text, start: int, end: int) -> bool:
+    """Say whether a statistic is a critical value: ``F_crit``, ``the critical F(2, 57)``."""
+    return (
+        _CRITICAL_BEHIND().match(text.folded, end) is not None
+        or _CRITICAL_BEFORE().search(text.folded, max(0, start - 30), start) is not None
+    )
+
+
 def _read_f(text: Text, name: Name) -> Item | None:
     """F with its degrees of freedom before or behind, perhaps worked out as MS/MS."""
     printed, quantity = name.match.group(), name.notation.quantity
     start, end = name.match.span()
-    if _CRITICAL.search(text.folded, max(0, start - 22), end + 8):
+    if _is_critical(text, start, end):
         return None
     degrees = degrees_after(text, end, ("df1", "df2"))
     if not degrees.possible:
         return None
     # F1 and F2 by subjects and items, and a lower-case f, are tests only with both df.
     units = _by_unit(printed)
-    value = value_after(text, degrees.end, quantity, name, bare=len(degrees.parts) == 2)
+    bare = len(degrees.parts) == 2 or text.folded[max(0, start - 2) : start] in {", ", "; "}
+    value = value_after(text, degrees.end, quantity, name, bare=bare)
     if value is None or value.high < 0:
         return None
     if (units or printed == "f") and len(degrees.parts) != 2 and value.relation == "=":
@@ -197,7 +212,7 @@ def _read_one_df(text: Text, name: Name) -> Item | None:
     if quantity == "chi2" and (inside := _INDEX.search(printed)) is not None:
         one = count_at(text, inside["df"], name.match.start() + inside.start("df"), "df")
         degrees = degrees._replace(parts=(*((one,) if one else ()), *degrees.parts))
-    if not degrees.possible or _CRITICAL.search(text.folded, name.match.end(), degrees.end + 5):
+    if not degrees.possible or _is_critical(text, name.match.start(), name.match.end()):
         return None
     at = degrees.end
     if text.folded[at : at + 1] == "|" == text.folded[name.match.start() - 1]:

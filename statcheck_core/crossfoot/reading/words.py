@@ -11,7 +11,7 @@ PARTIAL = r"(?:[pP]art(?:i[^\W\d_]{1,8}|\.)|[pP]ar[cz]ial\w{0,2}|část\w+|部�
 #: Corrected for the number of predictors.
 ADJUSTED = (
     r"(?:adj(?:usted|\.)?|angepasst\w*|bereinigt\w*|corrected|korrigiert\w*|korr\.|korrigerat?|korrigert|korrigeret|adjustiert\w*"
-    r"|ajust[ée]\w*|ajusta[dt]\w*|aj\.|corretto|corr\.|corrigé\w*|corrigido|corregid\w*|aggiustat\w*|gecorrigeerd\w*|aangepast\w*"
+    r"|ajust[ée]\w*|ajust\.|ajusta[dt]\w*|aj\.|corretto|corr\.|corrigé\w*|corrigido|corregid\w*|aggiustat\w*|gecorrigeerd\w*|aangepast\w*"
     r"|juster\w*|adjustad\w*|korjattu|mukautettu|korrigált|módosított|調整済み?|调整后?的?|調整後?の?|修正后?的?|校正"
     r"|수정된?|조정된?|düzeltilmiş|skorygowan\w*|upraven\w*|korigovan\w*|hiệu\schỉnh|скорр?ектированн\w*|скоригован\w*)"
 )
