@@ -23,7 +23,10 @@ from crossfoot.reading import read_block
 from crossfoot.reading.cues import cues_in
 from crossfoot.scan import scan_text
 
-SIZE = 1_000_000
+MEGABYTE = 1_000_000
+
+#: Of each text; what it costs is told for a megabyte.
+SIZE = MEGABYTE // 4
 
 #: Repeated without end: brackets, digits, spaces, unclosed math, tables, tags, entities, emphasis,
 #: tiny paragraphs, nesting, code, numbers.
@@ -78,12 +81,12 @@ def hostile(part: str, size: int, language: str) -> str:
 
 
 def growth(part: str, language: str) -> tuple[float, float]:
-    """Return what a megabyte costs, and how many times as much as half of it."""
+    """Return what a megabyte costs, and how many times as much the whole text as its half."""
     half, whole = (hostile(part, size, language) for size in (SIZE // 2, SIZE))
     least, most = cost(half, language), cost(whole, language)
     if most > MOST * max(least, LEAST):  # disturbed, perhaps
         least, most = cost(half, language), min(most, cost(whole, language))
-    return most, most / max(least, LEAST)
+    return most * MEGABYTE / SIZE, most / max(least, LEAST)
 
 
 @pytest.mark.parametrize("language", [*FORMATS])
