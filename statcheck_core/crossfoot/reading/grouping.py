@@ -74,6 +74,10 @@ _LINK = frozenset(
 )
 
 
+#: Words that may open a sentence which goes on a list of numbers: `N = 58. Adjusted R² = …`
+_OPENING = frozenset({"note", "adjusted", "adj", "multiple", "total", "overall", "partial"})
+
+
 class Group(NamedTuple):
     """Items of one claim, in printed order; ``anchor`` is the test's quantity, or None."""
 
@@ -98,12 +102,20 @@ def gap(text: str, first: Item, second: Item) -> float:
         return 1.5 * bullets + 0.3 * min(len(words), 8)
     end = SENTENCE_END.search(between)
     if end is not None and not ABBREVIATION.search(between, 0, end.end()):
-        strength = max(strength, APART if words else 1.5)
+        opening = {word.lower() for word in _WORD.findall(between, end.end())}
+        goes_on = opening <= _OPENING and not words and _is_listed(text, second)
+        strength = max(strength, 2.5 if goes_on else APART)
     elif between.count(")") > between.count("("):
         strength += 1.0
     if re.search(r"\b(?:and|und|et|y|e|en|och|og|while|but|whereas)\b", between):
         strength += 1.5
     return strength
+
+
+def _is_listed(text: str, item: Item) -> bool:
+    """Say whether an item with its sign is followed by a mark, and so goes on a list of numbers."""
+    signed = not set("=<>≤≥≈:").isdisjoint(text[item.start : item.end])
+    return signed and text[item.end : item.end + 1] in ",;.)]\n"
 
 
 def group(text: str, items: Sequence[Item]) -> list[Group]:

@@ -135,6 +135,8 @@ def _read_plain(text: Text, name: Name) -> Item | None:
     value = value_after(text, at, quantity, name)
     if value is None:
         return None
+    if quantity == "R" and value.low > 1 and "." not in text.folded[value.start : value.end]:
+        return None  # a radius
     parts: tuple[Part, ...] = (value,)
     end = value.end
     flags: tuple[str, ...] = ()

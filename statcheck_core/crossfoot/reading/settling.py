@@ -19,6 +19,8 @@ _OWN_INTERVAL = frozenset(
 )
 #: Effect sizes that belong to χ² alone.
 _OF_COUNTS = frozenset({"phi", "cramers_v"})
+#: What may stand in a sentence of its own and speak of the tests in the one before.
+_LEFT_OVER = frozenset({"p", "n", "df", "df-pair"})
 #: A residual standard deviation is read beside one of these.
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
 
@@ -29,7 +31,23 @@ def shared(groups: Sequence[Group], text: str) -> Iterable[Group]:
     ``32% and 40% … F = …, F = …, respectively; both ps < .001``: listed percentages go to the
     tests in order, listed p values likewise, and one plural p to each test that has none.
     """
-    groups = _given_to_all(groups, text)
+    for sentence in _sentences(_given_to_all(groups, text), text):
+        yield from _dealt(sentence)
+
+
+def _sentences(groups: Sequence[Group], text: str) -> Iterable[Sequence[Group]]:
+    """Yield the groups of each sentence with a test, and with it what belongs to no test."""
+    run: list[Group] = []
+    for group in groups:
+        apart = run and not same_sentence(text, _place(run[-1].items[-1]), _place(group.items[0]))
+        if apart and not all(item.head in _LEFT_OVER for item in group.items):
+            yield run
+            run = []
+        run.append(group)
+    yield run
+
+
+def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
     tests = [number for number, group in enumerate(groups) if group.anchor in _TESTS]
     shares = [
         item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
@@ -115,6 +133,7 @@ def settle(group: Group, text: str) -> Group | None:
     if not {item.head for item in items} & _WITH_S:
         items = [item for item in items if item.head != "s"]
     items = [item for item in items if not _doubled(item, items)]
+    items = _own_p(items, group.anchor)
     if group.anchor in {"F", "F_change"}:
         items = _df_of_f(items)
     if group.anchor in _COEFFICIENT:
@@ -196,6 +215,14 @@ def _doubled(item: Item, items: Sequence[Item]) -> bool:
             for other in items
         )
     return False
+
+
+def _own_p(items: list[Item], anchor: str | None) -> list[Item]:
+    """Drop a p before a test that has one behind it: it is of something that is not read."""
+    test = next((item for item in items if item.head == anchor), None)
+    if test is None or not any(i.head == "p" and i.start > test.start for i in items):
+        return items
+    return [item for item in items if item.head != "p" or item.start > test.start]
 
 
 def _same(first: Part, second: Part) -> bool:
