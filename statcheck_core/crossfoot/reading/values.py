@@ -50,6 +50,7 @@ _GLUED = expression(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.
 _GOES_ON = expression(r",\d")
 _COUNTED = expression(r"\s?d\.?f\b(?!\s?[=:])")
+_POINTED = expression(r"-?\d{1,3}[.]\d{3}")
 _COUNT_SPACES = {0x20: HARD_SPACE}
 _GROUPED = expression(r",\d{3}(?!\d)")
 
@@ -111,9 +112,10 @@ def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
         return None
     if _GLUED.match(folded, end) or (quantity in _UNITLESS and _UNIT.match(folded, end)):
         return None
-    numeral = numerals.parse(
-        match.group(), decimal_comma=text.decimal_comma, whole=quantity in WHOLE
-    )
+    # A statistic is seldom in the thousands: beside decimal commas 3.756 is a decimal still.
+    pointed = quantity in _UNITLESS and _POINTED.fullmatch(match.group()) is not None
+    comma = text.decimal_comma and not pointed
+    numeral = numerals.parse(match.group(), decimal_comma=comma, whole=quantity in WHOLE)
     if numeral is None or (numeral.percent and quantity in _UNITLESS - _SHARES):
         return None
     return Part(quantity, relation, at, end, *numerals.bounds(relation, numeral))
