@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from crossfoot.expressions import expression
 
-SENTENCE_END = expression(r"[.!?][)\]\"”’']?\s+(?=[^\W\d_]|$)|[.!?]\s*$|。")
+SENTENCE_END = expression(r"[.!?][)\]\"”’']?\s+(?=\uFFFC?[^\W\d_]|\(|$)|[.!?]\s*$|。")
 _ENDS = ".!?。"
 #: How far around a result its sentence is looked for, in characters.
 _REACH = 600

@@ -19,8 +19,8 @@ _OWN_INTERVAL = frozenset(
 )
 #: Effect sizes that belong to χ² alone.
 _OF_COUNTS = frozenset({"phi", "cramers_v"})
-#: What may stand in a sentence of its own and speak of the tests in the one before.
-_LEFT_OVER = frozenset({"p", "n", "df", "df-pair"})
+#: Counts, which may be of the tests in the sentence before.
+_LEFT_OVER = frozenset({"n", "df", "df-pair"})
 #: A residual standard deviation is read beside one of these.
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
 
@@ -40,11 +40,16 @@ def _sentences(groups: Sequence[Group], text: str) -> Iterable[Sequence[Group]]:
     run: list[Group] = []
     for group in groups:
         apart = run and not same_sentence(text, _place(run[-1].items[-1]), _place(group.items[0]))
-        if apart and not all(item.head in _LEFT_OVER for item in group.items):
+        if apart and not all(_is_left_over(item) for item in group.items):
             yield run
             run = []
         run.append(group)
     yield run
+
+
+def _is_left_over(item: Item) -> bool:
+    """Say whether an item in a sentence of its own speaks of the tests in the one before."""
+    return item.head in _LEFT_OVER or (item.head == "p" and "plural" in item.flags)
 
 
 def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
