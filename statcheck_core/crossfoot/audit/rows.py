@@ -218,6 +218,8 @@ def bind_beside_marks(
         # The df beside a Wald test are those of χ², not those of the error.
         own = [cell for cell in own if cell.quantity != "df"]
         unprinted -= {"df"}
+    if Cell("F") in own:
+        unprinted -= {"F_change"}  # F may be that of the whole model, as may p be
     bound = list(bind_prose(identity, own, unprinted))
     reduced = Cell("R2", REDUCED)
     if identity.slug != "r2-change" or reduced not in cells:

@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import re
 from collections.abc import Sequence
-from typing import NamedTuple
 
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import headings
@@ -13,35 +12,18 @@ from crossfoot.reading.tables.contents import Content, Number, content_of
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.headings import NOTHING, Heading
 from crossfoot.reading.tables.making import Column, Found, Sheet, claim, marked, reading
+from crossfoot.reading.tables.steps import CHANGE, Entry, Model, parted, whose_test
 
 #: Roles that speak of a model and of nothing else.
 FIT = frozenset(
     {"R", "R2", "R2_adj", "R2_change", "F", "F_change", "p_change", "s", "n", "df1", "df2"}
 )
 _STRONG = frozenset({"R2", "R2_adj", "R2_change", "F", "F_change"})
-_CHANGE = frozenset({"R2_change", "F_change", "p_change"})
 _SHARES = frozenset({"R2", "R2_adj", "R2_change", "R"})
 
 
 #: The label of a row that starts a step.
 _STEP = re.compile(r"(?:step|block|model|stage|schritt|étape|paso)\b", re.IGNORECASE)
-
-
-class Entry(NamedTuple):
-    """One number of a model, under the role that its heading gives it."""
-
-    role: str
-    reading: Reading
-    box: Box
-
-
-class Model(NamedTuple):
-    """What is printed of one model, in printed order."""
-
-    label: str
-    entries: tuple[Entry, ...]
-    boxes: tuple[Box, ...]
-    contexts: tuple[str, ...] = ()
 
 
 def is_fit(label: str) -> bool:
@@ -127,7 +109,7 @@ def entries_of(
         found.append(Entry("p", p, box))
     mark, default = marked(sheet, content)
     if mark is not None and heading.roles[0] in {"F", "F_change", "R2", "R2_adj", "R2_change"}:
-        change = heading.roles[0] in _CHANGE
+        change = heading.roles[0] in CHANGE
         found.append(Entry("p_change" if change else "p", mark, box))
         contexts += ["default-stars"] if default else []
     contexts += heading.contexts
@@ -222,12 +204,13 @@ def model_claims(
     """Return the claims of models, each step with the R² of the step before it."""
     claims: list[Claim] = []
     before: Reading | None = None
+    whose = whose_test(models)
     for model in models:
-        for part in _split(model):
+        for part in parted(model, whose):
             roles = {entry.role for entry in part.entries}
             if not _tells(roles, with_coefficients):
                 continue
-            change = bool(roles & _CHANGE)
+            change = bool(roles & CHANGE)
             given = (before._replace(term="reduced"),) if change and before is not None else ()
             readings = [entry.reading for entry in part.entries]
             label = model.label or sheet.title or ("step" if change else "model")
@@ -252,24 +235,3 @@ def _tells(roles: set[str], with_coefficients: bool) -> bool:
     if not roles & _STRONG or len(roles) < 2:
         return False
     return with_coefficients or bool(roles & (_STRONG - {"R2"})) or bool(roles & {"R", "p"})
-
-
-def _split(model: Model) -> list[Model]:
-    """Split a model that prints both its own F and that of the change into two claims."""
-    roles = [entry.role for entry in model.entries]
-    if not ("F" in roles and "F_change" in roles):
-        return [model]
-    own: list[Entry] = []
-    change: list[Entry] = []
-    current = own
-    for entry in model.entries:
-        if entry.role in _CHANGE:
-            current = change
-        elif entry.role in {"F", "R2", "R2_adj", "R", "n", "s"}:
-            current = own
-        current.append(entry)
-    shared = [entry for entry in own if entry.role == "R2"]
-    return [
-        model._replace(entries=tuple(own)),
-        model._replace(entries=(*shared, *change)),
-    ]

@@ -7,9 +7,10 @@ from collections.abc import Sequence
 
 from crossfoot.reading.tables import headings
 from crossfoot.reading.tables.contents import content_of, is_blank
-from crossfoot.reading.tables.fits import FIT, Entry, Model, entries_of, model_claims
+from crossfoot.reading.tables.fits import FIT, entries_of, model_claims
 from crossfoot.reading.tables.grid import Box
 from crossfoot.reading.tables.making import Found, Sheet
+from crossfoot.reading.tables.steps import Entry, Model
 
 _ROLES = FIT | {"p", "se"}
 #: F and p alone, or R² alone, may be anything.

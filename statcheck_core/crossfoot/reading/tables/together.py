@@ -49,6 +49,7 @@ def joined(
     models = [c for c in (*claims, *rest) if c.kind in {"overall-model", "model-change"}]
     analyses = [c for c in claims if c.kind == "anova-table"]
     claims = [_with_df(claim, models, analyses, df) for claim in claims]
+    claims = _with_only(claims, [model for model in models if model.kind == "overall-model"])
     if complete:
         claims = _with_counts(claims, models, cases)
     claims += rest
@@ -102,6 +103,28 @@ def _with_df(
     return claim._replace(given=(*claim.given, df._replace(quantity="df", term=None)))
 
 
+def _with_only(claims: Sequence[Claim], models: Sequence[Claim]) -> list[Claim]:
+    """Give the only predictor of a model its F and R², which are t² and r² there."""
+    owners = [_model_of(c, models) if c.kind == "coefficient" else None for c in claims]
+    own: dict[int, int] = {}
+    for claim, model in zip(claims, owners, strict=True):
+        if model is not None and not _is_intercept(claim):
+            own[id(model)] = own.get(id(model), 0) + 1
+    linked: list[Claim] = []
+    for claim, model in zip(claims, owners, strict=True):
+        df1 = None if model is None else _printed(model, "df1")
+        alone = model is not None and own.get(id(model)) == 1 and not _is_intercept(claim)
+        if model is not None and alone and df1 is not None and df1.low == df1.high == 1:
+            more = [_printed(model, quantity) for quantity in ("F", "R2", "df1")]
+            claim = claim._replace(given=(*claim.given, *filter(None, more)))
+        linked.append(claim)
+    return linked
+
+
+def _is_intercept(claim: Claim) -> bool:
+    return any(map(is_intercept, claim.label.split(", ")))
+
+
 def _df_of(claim: Claim, models: Sequence[Claim], analyses: Sequence[Claim]) -> Reading | None:
     """Return the error df of the model that a coefficient is of, if there is no doubt which."""
     own = [model for model in models if model.label and claim.label.endswith(f", {model.label}")]
@@ -126,7 +149,7 @@ def _with_counts(
     rows: dict[int, list[Claim]] = {}
     names_of: dict[int, set[str]] = {}
     for claim, model in zip(claims, owners, strict=True):
-        if claim.kind == "coefficient" and not any(map(is_intercept, claim.label.split(", "))):
+        if claim.kind == "coefficient" and not _is_intercept(claim):
             rows.setdefault(id(model), []).append(claim)
             names_of.setdefault(id(model), set()).add(_name(claim, model))
     before: Claim | None = None
