@@ -7,7 +7,6 @@ from typing import NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.names import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
 from crossfoot.reading.words import VERB_UNSPACED
@@ -38,17 +37,17 @@ _SEPARATORS = tuple(
         (",", r","),
     )
 )
-_PAIR = lazily(
+_PAIR = expression(
     rf"\s*+(?:(?:[=:]|{VERB_UNSPACED}|(?:was|were|are|of)\s)\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
 )
-_PAIR_BEFORE = lazily(
+_PAIR_BEFORE = expression(
     rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
     r"(?P<b>\d+(?:[.,]\d+)?)\s?\)?\s?$"
 )
-_ONE_BEFORE = lazily(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")
-_TRAILING_PAIR = lazily(rf"\*{{0,4}}\s?\((?P<a>{COUNT})\s?[,;]\s?(?P<b>{COUNT})\)")
-_ONE_DECIMAL = lazily(r"\s?[=:]?\s?\d+,\d+(?!\d)")
-_F_BEFORE = lazily(r"(?<![A-Za-z])F(?![A-Za-z])")
+_ONE_BEFORE = expression(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")
+_TRAILING_PAIR = expression(rf"\*{{0,4}}\s?\((?P<a>{COUNT})\s?[,;]\s?(?P<b>{COUNT})\)")
+_ONE_DECIMAL = expression(r"\s?[=:]?\s?\d+,\d+(?!\d)")
+_F_BEFORE = expression(r"(?<![A-Za-z])F(?![A-Za-z])")
 #: How far before "degrees of freedom" their numbers may stand, in characters.
 _REACH = 24
 
@@ -112,7 +111,7 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
 
 def pair_behind(text: Text, end: int) -> tuple[tuple[Part, ...], int]:
     """Return the bare bracketed pair of ``F = 5.12 (3, 44)``, and where it ends."""
-    match = _TRAILING_PAIR().match(text.folded, end)
+    match = _TRAILING_PAIR.match(text.folded, end)
     parts = _both(text, match) if match is not None else ()
     return (parts, match.end()) if match is not None and parts else ((), end)
 
@@ -120,8 +119,8 @@ def pair_behind(text: Text, end: int) -> tuple[tuple[Part, ...], int]:
 def read_degrees(text: Text, name: Name) -> Item | None:
     """Read ``df = 3, 71``, ``3 and 44 degrees of freedom``, ``df = 12`` or ``47 df``."""
     folded, start, end = text.folded, name.match.start(), name.match.end()
-    match = None if _is_decimal(text, start, end) else _PAIR().match(folded, end)
-    match = match or _PAIR_BEFORE().search(folded, max(0, start - _REACH), start)
+    match = None if _is_decimal(text, start, end) else _PAIR.match(folded, end)
+    match = match or _PAIR_BEFORE.search(folded, max(0, start - _REACH), start)
     if match is not None:
         parts = _both(text, match)
         if not parts:
@@ -130,16 +129,16 @@ def read_degrees(text: Text, name: Name) -> Item | None:
     value = value_after(text, end, "df", name)
     if value is not None:
         return Item("df", (value,), start, value.end)
-    match = _ONE_BEFORE().search(folded, max(0, start - _REACH // 2), start)
+    match = _ONE_BEFORE.search(folded, max(0, start - _REACH // 2), start)
     part = count_at(text, match["a"], match.start("a"), "df") if match is not None else None
     return Item("df", (part,), part.start, end) if part is not None else None
 
 
 def _is_decimal(text: Text, start: int, end: int) -> bool:
     """Say whether ``df = 38,6`` is one number: the comma is decimal, and no F stands before."""
-    if not text.decimal_comma or _ONE_DECIMAL().match(text.folded, end) is None:
+    if not text.decimal_comma or _ONE_DECIMAL.match(text.folded, end) is None:
         return False
-    return _F_BEFORE().search(text.folded, max(0, start - 40), start) is None
+    return _F_BEFORE.search(text.folded, max(0, start - 40), start) is None
 
 
 def _flattened(text: Text, at: int, *, two: bool) -> Degrees:

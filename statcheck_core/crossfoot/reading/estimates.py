@@ -2,30 +2,30 @@
 
 from __future__ import annotations
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
 
-_LIMITS = lazily(
+_LIMITS = expression(
     r"\s*+(?:(?:[=:,]|of|was|from|for\s(?:the\s)?\w{1,12})\s*+)?(?:[:=]\s*+)?(?:(?:\(|\[|from\s)\s*+)?"
     rf"(?P<low>{NUMERAL})\s*+(?:,|;|to|and|-|bis|à|a|tot|til|till|y|\.\.|\|)\s*+(?P<high>{NUMERAL})"
     r"\s?[\])]?"
 )
-_LIMITS_BELOW = lazily(rf":\s*\n\s*(?P<low>{NUMERAL})\s+(?P<high>{NUMERAL})\s*(?:\n|$)")
-_LIMITS_BEFORE = lazily(
+_LIMITS_BELOW = expression(rf":\s*\n\s*(?P<low>{NUMERAL})\s+(?P<high>{NUMERAL})\s*(?:\n|$)")
+_LIMITS_BEFORE = expression(
     rf"[(\[]\s?(?P<low>{NUMERAL})\s?(?:,|;|to|-|bis|à|a)\s?(?P<high>{NUMERAL})\s?[,;]\s?$"
 )
-_PLUS_MINUS = lazily(
+_PLUS_MINUS = expression(
     rf"\s?(?:±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.|SEM|standard error)"
 )
-_AND_ERROR = lazily(rf"\s?(?:\(\s?±?|±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\)?")
+_AND_ERROR = expression(rf"\s?(?:\(\s?±?|±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\)?")
 # A number in brackets behind a coefficient, and what tests that coefficient behind it.
-_BRACKETED = lazily(
+_BRACKETED = expression(
     rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ]\b|Wald\s[zt]\b|9\d\s?%))"
 )
-_ENCLOSING = lazily(
+_ENCLOSING = expression(
     rf"\s?\[\s?(?P<low>{NUMERAL})\s?(?:,|;|-|to)\s?(?P<high>{NUMERAL})\s?\](?!\s?(?:HDI|CrI|credible))"
 )
 
@@ -37,7 +37,7 @@ def behind_coefficient(text: Text, value: Part) -> tuple[tuple[Part, ...], int, 
     which is an interval where it holds the coefficient.
     """
     end = value.end
-    for pattern, flags in ((_PLUS_MINUS(), ()), (_BRACKETED(), ("perhaps-se",))):
+    for pattern, flags in ((_PLUS_MINUS, ()), (_BRACKETED, ("perhaps-se",))):
         match = pattern.match(text.folded, end)
         error = known_number(text, match, "number", "se") if match is not None else None
         if match is not None and error is not None:
@@ -47,7 +47,7 @@ def behind_coefficient(text: Text, value: Part) -> tuple[tuple[Part, ...], int, 
 
 def enclosing(text: Text, value: Part) -> tuple[tuple[Part, ...], int]:
     """Return the limits in square brackets right behind a number that lies between them."""
-    match = _ENCLOSING().match(text.folded, value.end)
+    match = _ENCLOSING.match(text.folded, value.end)
     if match is None:
         return (), value.end
     low, high = (known_number(text, match, key, f"ci_{key}") for key in ("low", "high"))
@@ -60,9 +60,9 @@ def read_interval(text: Text, name: Name) -> Item | None:
     """Read a confidence interval with its level."""
     start, end = name.match.span()
     match = (
-        _LIMITS().match(text.folded, end)
-        or _LIMITS_BELOW().match(text.folded, end)
-        or _LIMITS_BEFORE().search(text.folded, max(0, start - 40), start)
+        _LIMITS.match(text.folded, end)
+        or _LIMITS_BELOW.match(text.folded, end)
+        or _LIMITS_BEFORE.search(text.folded, max(0, start - 40), start)
     )
     if match is None:
         return None
@@ -81,7 +81,7 @@ def read_interval(text: Text, name: Name) -> Item | None:
 def read_estimate_with_error(text: Text, name: Name) -> Item | None:
     """Read ``B(SE) = 0.81 (0.30)`` or ``estimate ± SE: 0.81 ± 0.30``."""
     value = value_after(text, name.match.end(), "b", name)
-    match = _AND_ERROR().match(text.folded, value.end) if value is not None else None
+    match = _AND_ERROR.match(text.folded, value.end) if value is not None else None
     error = known_number(text, match, "number", "se") if match is not None else None
     if value is None or match is None or error is None:
         return None

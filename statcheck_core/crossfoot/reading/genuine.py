@@ -12,7 +12,6 @@ from itertools import pairwise
 
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.lookalikes import (
     in_call,
     is_drawn,
@@ -23,24 +22,24 @@ from crossfoot.reading.lookalikes import (
     near,
 )
 
-_STATISTICAL = lazily(
+_STATISTICAL = expression(
     r"anova|regress|effect|interact|signific|varian|model|test|differ|predict|explain|estimat"
     r"|analys|correlat|coefficient|quadrat",
     re.IGNORECASE,
 )
-_FIT = lazily(
+_FIT = expression(
     r"regress|model|varian|\bfit|predict|explain|account|correlat|adjusted|determination|squared?\b|quadrat"
     r"|modell|modèle|varianz|回归|回帰|決定",
     re.IGNORECASE,
 )
-_EFFECT = lazily(r"effect|interact|differ|main|signific", re.IGNORECASE)
-_RELATED = lazily(
+_EFFECT = expression(r"effect|interact|differ|main|signific", re.IGNORECASE)
+_RELATED = expression(
     r"correlat|associat|relat|coefficient|Pearson|Spearman|zusammenh|corrél|korrel|相关|相関|상관|samvar|verband",
     re.IGNORECASE,
 )
 #: A parameter that goes on where p ends: `t = 0.25, p = 0.001, z = 3.5`.
-_OTHER_LETTER = lazily(r"[,;]\s?(?![nNdgrRMVW]\b)[a-zA-Z]\s?=\s?[\d.]")
-_OTHER_TEST = lazily(r"\bF\s?[(\[_]")
+_OTHER_LETTER = expression(r"[,;]\s?(?![nNdgrRMVW]\b)[a-zA-Z]\s?=\s?[\d.]")
+_OTHER_TEST = expression(r"\bF\s?[(\[_]")
 _DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
 _LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
@@ -109,15 +108,15 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
             return support and not is_of_classifier(items, text)
         # `F < 1` alone says little, and yet what it says of an effect.
         plural = "plural" in test.flags
-        bound = plural or near(_EFFECT(), items, text) or near(_OTHER_TEST(), items, text)
+        bound = plural or near(_EFFECT, items, text) or near(_OTHER_TEST, items, text)
         exact = any(p.quantity == "p" and p.relation == "=" for i in items for p in i.parts)
         return (plural or not exact) and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
     if support or "lower" in test.flags or error.high < _FEWEST:
         return support
     if not _spelt(text, value) or _is_lowered(test, text):  # an index, if words do not tell
-        return (value.relation != "=" and near(_STATISTICAL(), items, text)) or (
-            _spelt(text, value) and near(_STATISTICAL(), items, text)
+        return (value.relation != "=" and near(_STATISTICAL, items, text)) or (
+            _spelt(text, value) and near(_STATISTICAL, items, text)
         )
     return True
 
@@ -136,7 +135,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
             return False
         if "df" not in quantities and (is_of_classifier(items, text) or is_power(items, text)):
             return False
-        if not (counted or near(_RELATED(), items, text) or _is_listed(items, test, text)):
+        if not (counted or near(_RELATED, items, text) or _is_listed(items, test, text)):
             return False
         if _is_lowered(test, text) and not has_p:
             return False
@@ -148,7 +147,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     if (flat or by_unit or text[test.start] == "T") and not has_p:
         return False
     if "df" in quantities:
-        told = near(_STATISTICAL(), items, text)
+        told = near(_STATISTICAL, items, text)
         return has_p or told or (_spelt(text, value) and not _is_lowered(test, text))
     if anchor == "t" and quantities & {"b", "beta", "se"}:
         return True
@@ -164,9 +163,9 @@ def _p_isnear(items: Sequence[Item], test: Item, text: str) -> bool:
 
 def _follows_or_told(items: Sequence[Item], test: Item, value: Part, text: str) -> bool:
     """Say whether p follows a test that prints no df, or words tell that it is one."""
-    told = near(_STATISTICAL(), items, text)
+    told = near(_STATISTICAL, items, text)
     p = next(item for item in items if item.head == "p")
-    if _OTHER_LETTER().match(text, p.end):
+    if _OTHER_LETTER.match(text, p.end):
         return False
     if p.start > test.start:
         return told or _spelt(text, value)
@@ -218,4 +217,4 @@ def _is_fit(items: Sequence[Item], text: str) -> bool:
     ]
     if is_logged(items, text):
         return False
-    return bool(printed) and (len(items) > 1 or near(_FIT(), items, text))
+    return bool(printed) and (len(items) > 1 or near(_FIT, items, text))

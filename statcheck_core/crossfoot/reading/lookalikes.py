@@ -5,13 +5,13 @@ from __future__ import annotations
 import re
 from collections.abc import Sequence
 
+from crossfoot.expressions import expression
 from crossfoot.reading.items import Item
-from crossfoot.reading.lazily import lazily
 
 #: A name, its bracket, and arguments written without spaces.
-_CALL = lazily(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
+_CALL = expression(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
 #: "If t(28) = 2.05 were found …", "would need r = .41 to …", "beyond the cut-off χ²(4) = 18.47"
-_SUPPOSED = lazily(
+_SUPPOSED = expression(
     r"(?:\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what)"
     r"|\b(?:would|must|should|to)\s(?:need|reach|exceed|detect|have|be|obtain|find)"
     r"|\b(?:point|percentile|quantile|distribution)(?:\s(?:of|is|was))?|\bwould\sbe\s\w+\s(?:for|at|with|if)"
@@ -21,14 +21,14 @@ _SUPPOSED = lazily(
     r"\s(?:an?\s|the\s)?(?:cut-?off\s)?\|?$"
 )
 #: "A value of t = 2.0 was used as cut-off."
-_USED = lazily(r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion)\b")
-_CLASSIFIER = lazily(
+_USED = expression(r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion)\b")
+_CLASSIFIER = expression(
     r"precision|recall|F-?(?:measure|score)|classif|accuracy|\bf1\b(?!\s?\()|epoch|\bloss\b",
     re.IGNORECASE,
 )
-_LOG = lazily(r"\bloss\b|\bepoch|\bstep\s\d")
-_DRAWN = lazily(r"\b(?:[Ss]imulated|[Gg]enerated|drew|drawn|set)\b")
-_POWER = lazily(r"\bpower\b")
+_LOG = expression(r"\bloss\b|\bepoch|\bstep\s\d")
+_DRAWN = expression(r"\b(?:[Ss]imulated|[Gg]enerated|drew|drawn|set)\b")
+_POWER = expression(r"\bpower\b")
 #: How far around a group words are looked for, in characters: so that the cost of a long
 #: paragraph grows with its length and not with its square.
 REACH = 400
@@ -45,30 +45,30 @@ def in_call(text: str, start: int) -> bool:
     opened = text.rfind("(", max(0, start - 60), start)
     if opened < 1 or text.find(")", opened, start) >= 0 or opened + 1 == start:
         return False
-    return _CALL().search(text, max(0, opened - 30), start) is not None
+    return _CALL.search(text, max(0, opened - 30), start) is not None
 
 
 def is_supposed(item: Item, text: str) -> bool:
     """Say whether a test is supposed, asked for, or a bound that others are held to."""
-    before = _SUPPOSED().search(text, max(0, item.start - 36), item.start)
-    return before is not None or _USED().match(text, item.end) is not None
+    before = _SUPPOSED.search(text, max(0, item.start - 36), item.start)
+    return before is not None or _USED.match(text, item.end) is not None
 
 
 def is_of_classifier(items: Sequence[Item], text: str) -> bool:
     """Say whether words speak of a classifier, whose F, p and r are other things."""
-    return near(_CLASSIFIER(), items, text)
+    return near(_CLASSIFIER, items, text)
 
 
 def is_logged(items: Sequence[Item], text: str) -> bool:
     """Say whether a program tells of its progress."""
-    return near(_LOG(), items, text, 60)
+    return near(_LOG, items, text, 60)
 
 
 def is_drawn(items: Sequence[Item], text: str) -> bool:
     """Say whether numbers are chosen for data that are made up."""
-    return near(_DRAWN(), items, text, 40)
+    return near(_DRAWN, items, text, 40)
 
 
 def is_power(items: Sequence[Item], text: str) -> bool:
     """Say whether numbers belong to a reckoning of power."""
-    return near(_POWER(), items, text, 40)
+    return near(_POWER, items, text, 40)

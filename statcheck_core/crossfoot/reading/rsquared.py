@@ -6,7 +6,6 @@ import re
 
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
@@ -31,13 +30,13 @@ _GREW = expression(
 )
 _OPEN = expression(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
 #: A number in brackets: `an R² (.21)`; a whole one is a footnote or a sample.
-_IN_BRACKETS = lazily(r"\s?\(\s?(?=(?:\d{0,2}[.,]\d+\s?%?|\d{1,2}\s?%)\s?\))")
+_IN_BRACKETS = expression(r"\s?\(\s?(?=(?:\d{0,2}[.,]\d+\s?%?|\d{1,2}\s?%)\s?\))")
 #: Both at once: `R²/adjusted R² = .21/.19`, `R² (adj. R²) = .21 (.19)`.
-_BOTH = lazily(
+_BOTH = expression(
     rf"\s?(?:/|\(|,|and)\s?{ADJUSTED}[\s-]?(?:[Rr]\s?(?:²|\^\{{?2\}}?|2))?\s?\)?(?=\s?(?:=|:|of|was))",
     re.IGNORECASE,
 )
-_SECOND = lazily(rf"\s?(?:/|\(|,|and)\s?(?P<number>{NUMERAL})")
+_SECOND = expression(rf"\s?(?:/|\(|,|and)\s?(?P<number>{NUMERAL})")
 #: After one of these and a space no word about the name stands before it.
 _APART = frozenset(",;:=")
 #: How far before the name a word about it may stand, in characters.
@@ -53,7 +52,7 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
     folded = text.folded
     start, end = name.match.span()
     worded = any(map(str.isalpha, folded[end : end + _LEAD]))
-    both = _BOTH().match(folded, end) if worded and name.notation.quantity == "R2" else None
+    both = _BOTH.match(folded, end) if worded and name.notation.quantity == "R2" else None
     if both is not None and (parts := _two(text, both.end(), name)):
         return Item("R2", parts, start, parts[-1].end)
     before = None
@@ -82,7 +81,7 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
         quantity, end = "R2_change", grew.end() - 1
     opened = _OPEN.match(folded, end)
     value = value_after(text, opened.end() if opened is not None else end, quantity, name)
-    if value is None and (opened := _IN_BRACKETS().match(folded, end)) is not None:
+    if value is None and (opened := _IN_BRACKETS.match(folded, end)) is not None:
         value = number_at(text, opened.end(), quantity, "=")
     if value is None or _is_count(folded[value.start : value.end], value.low):
         return None
@@ -99,6 +98,6 @@ def _is_count(literal: str, low: float) -> bool:
 def _two(text: Text, at: int, name: Name) -> tuple[Part, ...]:
     """Return R² and adjusted R² where one name stands for both, else nothing."""
     first = value_after(text, at, "R2", name)
-    match = _SECOND().match(text.folded, first.end) if first is not None else None
+    match = _SECOND.match(text.folded, first.end) if first is not None else None
     second = known_number(text, match, "number", "R2_adj") if match is not None else None
     return (first, second) if first is not None and second is not None else ()

@@ -15,44 +15,45 @@ from crossfoot.reading.estimates import (
     read_interval,
 )
 from crossfoot.reading.items import Item, Part, Text
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import read_r_squared
 from crossfoot.reading.told import told
 from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
 
-_RATIO = lazily(rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$")
-_FOR_WHAT = lazily(
+_RATIO = expression(
+    rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$"
+)
+_FOR_WHAT = expression(
     r"\s(?:for|of|on)\s(?:the\s)?[^\W\d][\w-]{0,30}(?:\s[^\W\d][\w-]{0,30})?(?=\s(?:was|is|=))"
 )
 _NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
-_P_LIST = lazily(rf"\s?,?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
-_DEALT = lazily(
+_P_LIST = expression(rf"\s?,?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
+_DEALT = expression(
     r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b"
     r"|(?<!\w)[pP]\s?=\s?0?[.,]\d{1,5},\s(?:and\s)?0?[.,]\d)"
 )
 #: What may be printed once for all tests of a sentence.
 _ONCE_FOR_ALL = frozenset({"df-pair", "df", "n"})
-_FOR_ALL_BEFORE = lazily(r"(?<!\w)(?:both|all|each)(?:\s[a-z]+){0,2}\s$", re.IGNORECASE)
-_FOR_ALL_BEHIND = lazily(
+_FOR_ALL_BEFORE = expression(r"(?<!\w)(?:both|all|each)(?:\s[a-z]+){0,2}\s$", re.IGNORECASE)
+_FOR_ALL_BEHIND = expression(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
 )
-_EXACT_BEHIND = lazily(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
+_EXACT_BEHIND = expression(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
 _ALL = expression(r"(?:both|all|each)\s$")
-_SIDED = lazily(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
+_SIDED = expression(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
 _ADJUSTED_NAME = expression(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
 _ADJUSTED_BEFORE = expression(
     r"(?:adj\.?|adjusted|corrected|Bonferroni|Holm|Tukey)\s?-?$", re.IGNORECASE
 )
-_ADJUSTED_LABEL = lazily(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
+_ADJUSTED_LABEL = expression(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
 # χ with its df beneath and its square above: χ_{1}^{2}
 _INDEX = expression(r"χ_\{?(?P<df>\d{1,3})\}?\s?\^")
-_CRITICAL_BEFORE = lazily(
+_CRITICAL_BEFORE = expression(
     r"crit\w*\.?\s(?:values?:?\s)?(?:(?:of|for)\s)?(?:the\s)?$", re.IGNORECASE
 )
-_CRITICAL_BEHIND = lazily(r"(?:\s?\([^()]{1,20}\))?[\s_({-]{0,3}crit", re.IGNORECASE)
-_RANK = lazily(r"ρ|rho|Spearman|_\{?s|rs$")
+_CRITICAL_BEHIND = expression(r"(?:\s?\([^()]{1,20}\))?[\s_({-]{0,3}crit", re.IGNORECASE)
+_RANK = expression(r"ρ|rho|Spearman|_\{?s|rs$")
 
 
 def items_in(folded: str, zones: Sequence[tuple[int, int]]) -> list[Item]:
@@ -97,21 +98,21 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
 def _is_for_all(text: Text, item: Item) -> bool:
     """Say whether words give a count to all tests: ``both N = 96``, ``df = 1, 96 for each``."""
     return bool(
-        _FOR_ALL_BEFORE().search(text.folded, max(0, item.start - 24), item.start)
-        or _FOR_ALL_BEHIND().match(text.folded, item.end)
+        _FOR_ALL_BEFORE.search(text.folded, max(0, item.start - 24), item.start)
+        or _FOR_ALL_BEHIND.match(text.folded, item.end)
     )
 
 
 def _shares_out(text: Text, item: Item) -> bool:
     """Say whether the sentence goes on to deal out numbers: ``respectively``, ``ps < .05``."""
-    if item.head == "p" and _P_LIST().match(text.folded, item.end) is not None:
+    if item.head == "p" and _P_LIST.match(text.folded, item.end) is not None:
         return True
     if (
         item.head not in {"F", "t", "r", "z", "chi2", "p"}
         or _NEXT_VALUE.match(text.folded, item.end) is None
     ):
         return False
-    return _DEALT().search(text.folded, item.end, item.end + 160) is not None
+    return _DEALT.search(text.folded, item.end, item.end + 160) is not None
 
 
 def _further_values(text: Text, item: Item) -> Iterator[Item]:
@@ -130,7 +131,7 @@ def _read_plain(text: Text, name: Name) -> Item | None:
     """Read a name, a relation and one number; after a coefficient perhaps ``± SE``."""
     quantity = name.notation.quantity
     at = name.match.end()
-    if quantity == "b" and (told_what := _FOR_WHAT().match(text.folded, at)) is not None:
+    if quantity == "b" and (told_what := _FOR_WHAT.match(text.folded, at)) is not None:
         at = told_what.end()
     value = value_after(text, at, quantity, name)
     if value is None:
@@ -149,8 +150,8 @@ def _read_plain(text: Text, name: Name) -> Item | None:
 def _is_critical(text: Text, start: int, end: int) -> bool:
     """Say whether a statistic is a critical value: ``F_crit``, ``the critical F(2, 57)``."""
     return (
-        _CRITICAL_BEHIND().match(text.folded, end) is not None
-        or _CRITICAL_BEFORE().search(text.folded, max(0, start - 30), start) is not None
+        _CRITICAL_BEHIND.match(text.folded, end) is not None
+        or _CRITICAL_BEFORE.search(text.folded, max(0, start - 30), start) is not None
     )
 
 
@@ -195,7 +196,7 @@ def _by_unit(printed: str) -> tuple[str, ...]:
 def _mean_squares(text: Text, start: int, end: int) -> tuple[Part, ...]:
     """Return the mean squares of ``F = 227.4/48.7 = 4.667``."""
     match = (
-        _RATIO().search(text.folded, start, end) if text.folded.find("/", start, end) > 0 else None
+        _RATIO.search(text.folded, start, end) if text.folded.find("/", start, end) > 0 else None
     )
     if match is None:
         return ()
@@ -223,7 +224,7 @@ def _read_one_df(text: Text, name: Name) -> Item | None:
     if value is None:
         return None
     flags = ("plural",) if printed in {"ts", "t's", "rs"} else _by_unit(printed)
-    if quantity == "r" and _RANK().search(printed):
+    if quantity == "r" and _RANK.search(printed):
         flags = ("rank-correlation",)
     if head == "chi2-of":
         flags = ("by-name",)
@@ -243,12 +244,12 @@ def _read_p(text: Text, name: Name) -> Item | None:
         flags = ("resampled",)
     bracket = BRACKETS.match(text.folded, end)
     if bracket is not None and (inner := bracket["round"] or bracket["lowered"]):
-        sided = _SIDED().match(inner)
+        sided = _SIDED.match(inner)
         if sided is not None:
             flags = (*flags, "one-sided" if sided["one"].lower() in {"one", "1"} else "two-sided")
         elif inner.strip().isdigit():
             return None
-        elif bracket["lowered"] or _ADJUSTED_LABEL().search(inner):
+        elif bracket["lowered"] or _ADJUSTED_LABEL.search(inner):
             flags = _index_of_p(inner)
         else:
             return None
@@ -258,7 +259,7 @@ def _read_p(text: Text, name: Name) -> Item | None:
     value = value_after(text, end, "p", name, bare=text.folded[start - 1 : start] in " (,;")
     if value is None:
         return None
-    exact = _EXACT_BEHIND().match(text.folded, value.end) if value.relation != "=" else None
+    exact = _EXACT_BEHIND.match(text.folded, value.end) if value.relation != "=" else None
     value = (exact and number_at(text, exact.end(), "p", "=")) or value  # p < .05 (p = .026)
     if printed.lower() in {"ps", "p's"} or _ALL.search(text.folded, max(0, start - 7), start):
         flags = (*flags, "plural")
@@ -268,16 +269,16 @@ def _read_p(text: Text, name: Name) -> Item | None:
 def _index_of_p(index: str) -> tuple[str, ...]:
     """Return what an index of p says: an unknown one may name a correction."""
     for pattern, flags in _INDICES_OF_P:
-        if pattern().search(index):
+        if pattern.search(index):
             return flags
     return ("adjusted-p",)
 
 
 #: What indices of p say, the first that fits.
 _INDICES_OF_P = (
-    (lazily(r"^(?:GG|HF|[Gg]reenhouse|[Hh]uynh)"), ("adjusted-df",)),
-    (lazily(r"perm|boot|rand|exact|mc\b|sim", re.IGNORECASE), ("resampled",)),
-    (lazily(r"^(?:trend|inter|value|overall|diff|model|group|time|val|obs|[a-z]?)$"), ()),
+    (expression(r"^(?:GG|HF|[Gg]reenhouse|[Hh]uynh)"), ("adjusted-df",)),
+    (expression(r"perm|boot|rand|exact|mc\b|sim", re.IGNORECASE), ("resampled",)),
+    (expression(r"^(?:trend|inter|value|overall|diff|model|group|time|val|obs|[a-z]?)$"), ()),
 )
 
 

@@ -8,7 +8,6 @@ from collections.abc import Iterator
 from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import AND, known_number, not_significant
 from crossfoot.reading.words import ADJUSTED, VERB, VERB_UNSPACED
@@ -24,7 +23,7 @@ _ADJUSTED_SHARE = (
 _VARIANCE_WORD = (
     r"(?:varian|variânc|variation|variabil|Streuung|wariancj|rozptyl|дисперс|方差|变异|分散)"
 )
-_EXPLAINED = lazily(
+_EXPLAINED = expression(
     # 21% of the variance
     rf"(?P<before>{_SHARE})(?:\s{_ADJUSTED_SHARE}\s?\))?(?:的|\s{_OF}|\s?)(?:total\s|overall\s|observed\s"
     rf"|explained\s|gesamten?\s|totale\s)?{_VARIANCE_WORD}"
@@ -58,8 +57,8 @@ _VARIANCE = (
     "rozptyl",
     "дисперс",
 )
-_LISTED_BEFORE = lazily(rf"(?P<share>\d+(?:[.,]\d+)?\s?%)\s(?:{AND}|,)\s$")
-_FURTHER = lazily(
+_LISTED_BEFORE = expression(rf"(?P<share>\d+(?:[.,]\d+)?\s?%)\s(?:{AND}|,)\s$")
+_FURTHER = expression(
     r"(?:additional|further|another|extra|incremental|more|zusätzlich\w*|weitere)\s?(?:an?\s)?$",
     re.IGNORECASE,
 )
@@ -71,18 +70,18 @@ _WORD_IN_BRACKETS = expression(r"\(\s?[^\W\d]")
 _ADJUSTED = expression(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
 _INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
 # The p-value for F(2, 57) = 3.90 is .026
-_P_FOR = lazily(
+_P_FOR = expression(
     rf"[pP][\s-]?value\s(?:for|of|associated\swith|corresponding\sto|that\sbelongs\sto)\s[^;!?]{{3,60}}?\s(?:{VERB})\s(?P<p>0?[.,]\d+)(?![\d%])"
 )
 # 0.42 ± 0.11 SE, t = … : an estimate without a name, if a test of it follows and no second does
-_ESTIMATE = lazily(
+_ESTIMATE = expression(
     rf"(?<=[(\[])\s?(?P<b>{NUMERAL})\s?(?:±|\+/-)\s?(?P<se>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.)\)?\s?[,;]\s?(?=[tTz][\s(_=])"
 )
 # The coefficient on load is positive (0.42, SE = 0.11): what is estimated, in words before
-_NAMED_EARLIER = lazily(
+_NAMED_EARLIER = expression(
     rf"(?:coefficient|estimate[ds]?|effect|slope|elasticity)\b[^.;:()=\d]{{0,60}}[\s(](?P<b>{NUMERAL})\s?[,(;]\s?(?:with\s(?:an?\s)?)?(?:SE|s\.e\.|S\.E\.|standard\serror)\s?[=:]?\s?(?P<se>{NUMERAL})"
 )
-_SAMPLE = lazily(
+_SAMPLE = expression(
     r"(?:[Aa]mong|[Ss]ample\sof|[Tt]otal\sof|[Ii]n\sall)\s(?:the\s)?"
     r"(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})\s(?!of\b)(?=[a-z]{3})"
 )
@@ -105,13 +104,13 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
         if part is not None:
             yield Item("R2_adj", (part,), *match.span())
     if folded.find("value", start, end) >= 0:
-        for match in _P_FOR().finditer(folded, start, end):
+        for match in _P_FOR.finditer(folded, start, end):
             part = known_number(text, match, "p", "p")
             if part is not None:
                 yield Item("p", (part,), *match.span("p"))
     for signs, pattern in ((("±", "+/-"), _ESTIMATE), (("SE", "s.e", "rror"), _NAMED_EARLIER)):
         named = any(folded.find(sign, start, end) >= 0 for sign in signs)
-        for match in pattern().finditer(folded, start, end) if named else ():
+        for match in pattern.finditer(folded, start, end) if named else ():
             estimate, error = (
                 known_number(text, match, "b", "b"),
                 known_number(text, match, "se", "se"),
@@ -121,13 +120,13 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
     words = any(
         folded.find(stem, start, end) >= 0 for stem in ("mong ", "ample of", "otal of", "n all ")
     )
-    for match in _SAMPLE().finditer(folded, start, end) if words else ():
+    for match in _SAMPLE.finditer(folded, start, end) if words else ():
         numeral = numerals.parse(match["n"], whole=True)
         if numeral is not None:
             part = Part("n", "=", *match.span("n"), numeral.low, numeral.high)
             yield Item("n", (part,), *match.span("n"), ("told",))
     if any(folded.find(stem, start, end) >= 0 for stem in _VARIANCE):
-        for match in _EXPLAINED().finditer(folded, start, end):
+        for match in _EXPLAINED.finditer(folded, start, end):
             yield from _shares(text, match, start)
 
 
@@ -137,7 +136,7 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
     first, last = match.span(group)
     if text.folded[first] == "%":  # Turkish writes the sign first
         first += 1
-    further = _FURTHER().search(text.folded, max(start, first - 24), first) is not None
+    further = _FURTHER.search(text.folded, max(start, first - 24), first) is not None
     quantity = "R2_change" if further else "R2"
     part = _share(text, quantity, first, last)
     if part is None:
@@ -147,7 +146,7 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
         if adjusted is not None:
             yield Item("R2_adj", (adjusted,), adjusted.start, adjusted.end)
     flags: tuple[str, ...] = ("percent",)
-    earlier = _LISTED_BEFORE().search(text.folded, max(start, first - 16), first)
+    earlier = _LISTED_BEFORE.search(text.folded, max(start, first - 16), first)
     if earlier is not None:
         other = _share(text, quantity, *earlier.span("share"))
         if other is not None:

@@ -8,7 +8,6 @@ from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.fold import HARD_SPACE
 from crossfoot.reading.items import WHOLE, Part, Text
-from crossfoot.reading.lazily import lazily
 from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.words import VERB, VERB_UNSPACED
@@ -26,7 +25,7 @@ _RELATION = expression(
     rf"[\s*]*+(?:\(\s*+)?(?P<sign>{_SIGN})[\s*]*+(?:np\.float64\()?(?=[-+]?\s?[.,·]?\d|n\.?\s?s|NS|N\.S)"
 )
 # "<", ">" and "=" as some journals' fonts come out of a PDF.
-_DAMAGED = lazily(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
+_DAMAGED = expression(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
 _DAMAGE = {"b": "<", "o": "<", "N": ">", "~": "≈", "∼": "≈"}
 _WORDS = expression(
     rf"\s++{VERB}(?:\s(?:only|about|just|approximately))?\s++(?=[-+]?\s?[.,·]?\d)|['\"]?\s?{VERB_UNSPACED}\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
@@ -36,10 +35,10 @@ _SPACES = expression(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d
 # A worked line, `= 1 − (1−.90)(20)/17 = .882`: only the last value counts.
 _TERM = r"(?:[\d\s.,/()+×*·^²-]|_?\{[^{}=]{1,14}\}|MS[EBWR]?|SS[EBWRT]?|R|[nk](?![a-z]))"
 _IN_TERMS = frozenset("MSEBWRTnk")  # letters of a term without braces
-_WORKED = lazily(
+_WORKED = expression(
     rf"\s*+=\s*+(?P<formula>{_TERM}{{3,70}}=\s*+(?:{_TERM}{{3,60}}=\s*+)?)(?P<value>{NUMERAL})"
 )
-_OPERATION = lazily(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
+_OPERATION = expression(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
 _NUMERAL = expression(NUMERAL)
 _NOT_SIGNIFICANT = expression(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
 _UNIT = expression(
@@ -75,13 +74,13 @@ def value_after(
     """
     folded = text.folded
     if quantity in _MAY_BE_WORKED and _has_second_sign(folded, at):
-        worked = _WORKED().match(folded, at)
-        if worked is not None and _OPERATION().search(worked["formula"]):
+        worked = _WORKED.match(folded, at)
+        if worked is not None and _OPERATION.search(worked["formula"]):
             return number_at(text, worked.start("value"), quantity, "=")
     match = _RELATION.match(folded, at)
     if match is not None:
         return number_at(text, match.end(), quantity, _relation(match["sign"]))
-    damaged = _DAMAGED().match(folded, at) if quantity == "p" else None
+    damaged = _DAMAGED.match(folded, at) if quantity == "p" else None
     if damaged is not None:
         return number_at(text, damaged.end(), quantity, _DAMAGE[damaged["sign"]])
     match = _WORDS.match(folded, at)
