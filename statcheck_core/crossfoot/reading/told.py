@@ -79,7 +79,7 @@ _ESTIMATE = expression(
 )
 # The coefficient on load is positive (0.42, SE = 0.11): what is estimated, in words before
 _NAMED_EARLIER = expression(
-    rf"(?:coefficient|estimate[ds]?|effect|slope|elasticity)\b[^.;:()=\d]{{0,60}}[\s(](?P<b>{NUMERAL})\s?[,(;]\s?(?:with\s(?:an?\s)?)?(?:SE|s\.e\.|S\.E\.|standard\serror)\s?[=:]?\s?(?P<se>{NUMERAL})"
+    rf"(?:coefficient|estimate[ds]?|effect|slope|elasticity)\b(?:(?!\bmean|averag)[^.;:()=\d]){{0,60}}[\s(](?P<b>{NUMERAL})\s?[,(;]\s?(?:with\s(?:an?\s)?)?(?:SE|s\.e\.|S\.E\.|standard\serror)\s?[=:]?\s?(?P<se>{NUMERAL})"
 )
 _SAMPLE = expression(
     r"(?:[Aa]mong|[Ss]ample\sof|[Tt]otal\sof|[Ii]n\sall)\s(?:the\s)?"
