@@ -522,13 +522,18 @@ class TestEnds:
             env=ENVIRON,
             stdout=subprocess.PIPE,
             stderr=subprocess.PIPE,
+            # What runs the tests in the background may ignore the signal, and pass that on.
+            preexec_fn=lambda: signal.signal(signal.SIGINT, signal.SIG_DFL),
         )
-        with running:
+        try:
             opened = os.open(folder / "pipe.md", os.O_WRONLY)  # waits until it is being read
             time.sleep(0.1)
             running.send_signal(signal.SIGINT)
             assert running.communicate(timeout=30) == (b"", b"")
             os.close(opened)
+        finally:
+            running.kill()
+            running.communicate()
         assert running.returncode == 130
 
     def test_an_interrupt_at_any_time(self, folder, run, monkeypatch):
