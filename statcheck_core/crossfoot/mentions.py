@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from collections import Counter
+
 from crossfoot.model import Claim, Placed, Reading, Report
 
 #: Two claims without one of these in common speak of different things.
@@ -44,13 +46,11 @@ def alike(first: Claim, second: Claim) -> bool:
 
 def single(claim: Claim) -> dict[str, Reading]:
     """Return the readings of which there is one of their quantity."""
-    found: dict[str, Reading] = {}
-    several: set[str] = set()
-    for reading in claim.readings:
-        if reading.quantity in found:
-            several.add(reading.quantity)
-        found[reading.quantity] = reading
-    return {key: reading for key, reading in found.items() if key not in several}
+    found = {reading.quantity: reading for reading in claim.readings}
+    if len(found) == len(claim.readings):
+        return found
+    times = Counter(reading.quantity for reading in claim.readings)
+    return {key: reading for key, reading in found.items() if times[key] == 1}
 
 
 def _meet(first: Reading, second: Reading) -> bool:

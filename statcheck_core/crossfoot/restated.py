@@ -14,7 +14,6 @@ from typing import NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.laws.quantities import QUANTITIES
-from crossfoot.memo import remembered
 from crossfoot.mentions import single
 from crossfoot.model import SEVERITIES, Check, Document, Finding, Placed, Reading, Span
 
@@ -28,8 +27,8 @@ _CROWD = 8
 _OTHER_P = frozenset({"adjusted-p", "one-sided", "resampled", "robust"})
 _MANTISSA = expression(r"[\d.,·]+")
 _NOT_DIGITS = expression(r"\D+")
-_TOTAL = expression(
-    r"(?<![A-Za-z])N[*_$}\s]{0,4}=[\s$]{0,3}(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})(?![\d.,]*\d)"
+_TOTAL = expression(  # it starts with a letter, for which a search is fast
+    r"N(?<![A-Za-z]N)[*_$}\s]{0,4}=[\s$]{0,3}(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})(?![\d.,]*\d)"
 )
 #: Words that tell of more rows than cases, or of more samples than one; substrings, which are
 #: looked for faster than a pattern.
@@ -174,10 +173,10 @@ def _is_found(mention: _Mention, key: str) -> bool:
 def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int, Check, Finding]]:
     """Yield the results that need more cases than the one sample of a document has."""
     told = [
-        (total, Span(block.start + start, block.start + end))
-        for block in document.blocks
-        for total, start, end in _totals(block.source)
+        (int(m["n"].replace(",", "")), Span(*m.span("n"))) for m in _TOTAL.finditer(document.text)
     ]
+    if len({total for total, _ in told}) != 1:
+        return
     of_results = {
         item.base + reading.span.start
         for item in placed
@@ -186,7 +185,7 @@ def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int
     }
     # The N in the brackets of a test is of that test, and need not be the whole sample.
     samples = [(total, span) for total, span in told if span.start not in of_results]
-    if len({total for total, _ in told}) != 1 or not samples:
+    if not samples:
         return
     total, span = samples[0]
     found = [
@@ -208,14 +207,6 @@ def _counted(placed: Placed) -> Iterator[tuple[str, Mapping[str, Reading]]]:
     counts = claim.kind in _COUNTING and _NOT_COUNTS.isdisjoint(claim.context)
     if counts and key in numbers and "n" not in numbers:
         yield key, numbers
-
-
-@remembered
-def _totals(source: str) -> tuple[tuple[int, int, int], ...]:
-    """Return the sizes of samples that a block prints, each with where it starts and ends."""
-    if "N" not in source:
-        return ()
-    return tuple((int(m["n"].replace(",", "")), *m.span("n")) for m in _TOTAL.finditer(source))
 
 
 def _outgrown(
