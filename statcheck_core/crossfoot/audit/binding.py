@@ -48,6 +48,7 @@ TAKEN_FOR_GRANTED: Mapping[str, tuple[str, str]] = {
         "p",
         "The marks of significance stand for the usual levels of .05, .01 and .001.",
     ),
+    "told-cases": ("n", "Each case is one row of the analysis."),
     "counted-rows": ("df1", "The rows of the table are all the predictors of each step."),
 }
 

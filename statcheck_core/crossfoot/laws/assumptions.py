@@ -40,6 +40,7 @@ CONTEXTS: Mapping[str, str] = {
     "so that they need not add up.",
     "ratio-limits": "The table says that the interval is that of the odds ratio.",
     "default-stars": "Marks of significance have no legend and are taken for the usual levels.",
+    "told-cases": "The number of cases is that of the table's caption or notes.",
     "counted-rows": "Degrees of freedom are counted from the rows of the table and its cases.",
     "joint": "One expression speaks of several results together.",
 }

@@ -49,6 +49,7 @@ def joined(
     models = [c for c in (*claims, *rest) if c.kind in {"overall-model", "model-change"}]
     analyses = [c for c in claims if c.kind == "anova-table"]
     claims = [_with_df(claim, models, analyses, df) for claim in claims]
+    claims = [_with_cases(claim, cases) for claim in claims]
     claims = _with_only(claims, [model for model in models if model.kind == "overall-model"])
     if complete:
         claims = _with_counts(claims, models, cases)
@@ -87,6 +88,16 @@ def _merged(claim: Claim, note: Claim) -> Claim:
         readings=readings,
         span=claim.span._replace(start=start, end=end),
         context=tuple(sorted({*claim.context, *note.context})),
+    )
+
+
+def _with_cases(claim: Claim, cases: Reading | None) -> Claim:
+    """Give an analysis of variance the number of cases that caption or notes tell."""
+    if claim.kind != "anova-table" or cases is None or _tells(claim, "n"):
+        return claim
+    return claim._replace(
+        given=(*claim.given, cases._replace(term=None)),
+        context=tuple(sorted({*claim.context, "told-cases"})),
     )
 
 
