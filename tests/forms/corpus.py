@@ -29,8 +29,8 @@ from typing import Any, NamedTuple
 
 FOLDER = Path(__file__).parent
 
-#: Files of the corpus, in the order they are scored.
-FILES = ("survey.jsonl", "more.jsonl", "further.jsonl")
+#: Files of the corpus, in the order they are scored. One more file is found by itself.
+FILES = tuple(sorted(path.name for path in FOLDER.glob("*.jsonl")))
 
 #: Name of the format in Crossfoot, by the suffix an entry names.
 LANGUAGES: Mapping[str, str] = {
