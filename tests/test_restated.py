@@ -87,6 +87,12 @@ def test_few_digits_are_alike_by_chance() -> None:
     assert doubts(here, "Age mattered, b = 0.42, SE = 0.11, β = .63.") == []
 
 
+def test_p_follows_from_its_test_and_so_tells_no_more() -> None:
+    """Two t tests of many cases that share t share p as well, whatever their df are."""
+    here = "Load mattered, t(132) = -0.374, p = .709."
+    assert doubts(here, "Age did not, t(177) = -0.374, p = .709.") == []
+
+
 def test_what_one_expression_says_of_several_results_is_no_mention() -> None:
     here = "Load mattered, b = 0.427, SE = 0.112, β = .36."
     there = "All slopes were b = 0.427, SE = 0.112, β = .63, both ts(58) > 3.1, all ps < .01."
