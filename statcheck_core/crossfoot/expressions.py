@@ -7,6 +7,8 @@ compiling them all would take longer than to scan it.
 from __future__ import annotations
 
 import re
+from collections.abc import Iterable
+from itertools import groupby
 from typing import Any, AnyStr, cast
 
 _METHODS = ("findall", "finditer", "fullmatch", "match", "pattern", "search", "split", "sub")
@@ -31,3 +33,12 @@ class _Expression:
 def expression(source: AnyStr, flags: int = 0) -> re.Pattern[AnyStr]:
     """Return the expression that :func:`re.compile` would, compiled when it is first used."""
     return cast("re.Pattern[AnyStr]", _Expression(source, flags))
+
+
+def any_of(words: Iterable[str]) -> re.Pattern[str]:
+    """Return an expression for any of some words, which needs no look at each at every place."""
+    choices = [
+        re.escape(first) + f"(?:{'|'.join(re.escape(word[1:]) for word in group)})"
+        for first, group in groupby(sorted(words, reverse=True), key=lambda word: word[:1])
+    ]
+    return expression("|".join(choices))

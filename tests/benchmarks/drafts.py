@@ -26,9 +26,9 @@ def _result(random_: random.Random) -> str:
     return f"The model fit, *R*² = {share:.2f}, *F*({df1}, {df2}) = {F:.2f}, *p* < .001."
 
 
-def draft(size: int, every: int, *, break_lines: bool = True) -> str:
+def draft(size: int, every: int, *, break_lines: bool = True, seed: int = 7) -> str:
     """Return about ``size`` characters of Markdown with a result every ``every`` characters."""
-    random_ = random.Random(7)
+    random_ = random.Random(seed)
     apart = "\n\n" if break_lines else " "
     parts: list[str] = []
     written = 0

@@ -20,8 +20,10 @@ from crossfoot.documents.visible import OPAQUE, Builder, Visible
 from crossfoot.expressions import expression
 
 # Every alternative starts with a plain character: so the search skips text at full speed.
+# A short word in italics is one mark: it stands where nothing else could be opened or closed.
 _MARK = expression(
-    r"\\[\s\S]|``*|\$\$*|\*\**|__*|~~*|\^|!\[|\[|\]|\{|<(?=[A-Za-z/!])|&(?=[#A-Za-z])"
+    r"\\[\s\S]|``*|\$\$*|\*(?<![^\s(,;]\*)[A-Za-z]{1,3}\*(?!\*)|\*\**|__*|~~*|\^|!\[|\[|\]|\{"
+    r"|<(?=[A-Za-z/!])|&(?=[#A-Za-z])"
 )
 
 #: Most marks that are followed in one stretch: far beyond any prose.
@@ -46,11 +48,8 @@ def show_inline(
     out: Builder, source: str, start: int, end: int, line_edits: Sequence[Edit] = ()
 ) -> None:
     """Show ``source[start:end]``, with edits that the lines call for (quote marks, bullets)."""
-    if not line_edits and not _MARK.search(source, start, end):
-        out.keep(source, start, end)
-        return
     marks = list(islice(_marks(source, start, end, line_edits), _MOST + 1))
-    if len(marks) > _MOST:
+    if not marks or len(marks) > _MOST:
         apply_edits(out, source, start, end, line_edits)
     else:
         inline = _Inline(source, start, end, line_edits, marks)
@@ -98,6 +97,9 @@ class _Inline:
     def _handle(self, mark: Mark) -> int:
         """Handle a mark and return where to go on."""
         first = mark.text[0]
+        if first == "*" and mark.text[1:2].isalpha():
+            self._edit(mark.start, mark.start + 1)
+            return self._edit(mark.end - 1, mark.end)
         if first in "*_":
             self.runs.append(run_of(self.source, mark.start, mark.end, self.start, self.end))
             return mark.end

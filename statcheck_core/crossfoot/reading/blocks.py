@@ -7,7 +7,7 @@ from typing import NamedTuple
 
 from crossfoot.documents import show, table
 from crossfoot.documents.visible import Builder, Visible, compose, place
-from crossfoot.expressions import expression
+from crossfoot.expressions import any_of, expression
 from crossfoot.memo import remembered
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.contexts import Cues, cues_in
@@ -24,7 +24,7 @@ _WORDS = (
     "ariânc", "libert", "liberd", "):", "]:", ") of ", " p of ", " equal to ", ") was ", ") is ",
     "值", "値", "自由度", "':", '":',
 )  # fmt: skip
-_ASCII_WORDS = tuple(word for word in _WORDS if word.isascii())
+_ANY_WORD = any_of(_WORDS)
 _MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")
 #: A test with its degrees of freedom and no sign before its value: `F(2, 57) 3.90`.
 _BARE = expression(r"\((?:(?<=[FtrH²]\s\()|(?<=[FtrH²]\())[\d., ]{1,12}\)\s[-+]?\d{0,4}[.,]\d")
@@ -39,6 +39,7 @@ _RELATED = (
 )
 _BEFORE, _AFTER = 100, 80
 _DIGITS = "0123456789"
+_DIGIT = expression("[0-9]+")
 _SPACED = expression(r"\d \. \d|[=<>] \. \d|\d \d \d|, \d \d \)")
 _SPACED_RUN = expression(r"(?:[\w.,()=<>≤≥+−-] ){5,}[\w.,()=<>≤≥](?!\w)")
 _INK = expression(r"\S+")
@@ -149,20 +150,23 @@ def _zones(text: str) -> list[tuple[int, int]]:
     They lie around each relation that a number follows, and each word that stands for one.
     """
     hits = [match.start() - back for sign, back in _RELATED for match in sign.finditer(text)]
-    for word in _ASCII_WORDS if text.isascii() else _WORDS:
-        at = text.find(word)
-        while at >= 0:
-            hits.append(at)
-            at = text.find(word, at + len(word))
+    # A word far from any digit is of no result, and to look for many words takes long.
+    for start, end in _around([match.start() for match in _DIGIT.finditer(text)], _AFTER, _BEFORE):
+        hits += [match.start() for match in _ANY_WORD.finditer(text, start, end)]
     hits.sort()
-    zones: list[tuple[int, int]] = []
-    for hit in hits:
-        start, end = max(0, hit - _BEFORE), min(len(text), hit + _AFTER)
-        if zones and start <= zones[-1][1]:
-            zones[-1] = (zones[-1][0], end)
+    return [(start, min(end, len(text))) for start, end in _around(hits, _BEFORE, _AFTER)]
+
+
+def _around(places: Sequence[int], before: int, after: int) -> list[tuple[int, int]]:
+    """Return the stretches around sorted places, those that meet as one."""
+    found: list[tuple[int, int]] = []
+    for at in places:
+        start, end = max(0, at - before), at + after
+        if found and start <= found[-1][1]:
+            found[-1] = (found[-1][0], end)
         else:
-            zones.append((start, end))
-    return zones
+            found.append((start, end))
+    return found
 
 
 def squeezed(visible: Visible) -> Visible:

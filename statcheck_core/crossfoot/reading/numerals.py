@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 import re
 import sys
+from functools import lru_cache
 from typing import NamedTuple
 
 from crossfoot.expressions import expression
@@ -55,6 +56,7 @@ class Numeral(NamedTuple):
     percent: bool
 
 
+@lru_cache(maxsize=4096)
 def parse(literal: str, *, decimal_comma: bool = False, whole: bool = False) -> Numeral | None:
     """Return what a folded numeral stands for, or None where it is not one.
 
@@ -123,8 +125,8 @@ def writes_decimal_comma(text: str, start: int = 0, end: int = sys.maxsize) -> b
 
 # "df = 2,57" is a pair.
 _COMMA_EVIDENCE = expression(
-    r"(?<!f)(?<!f[.\s])(?<!f\.\s)(?<![dg]l)(?<![dg]l\s)"
-    r"[=<>≤≥≈]\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))"
+    r"[=<>≤≥≈](?<!f.)(?<!f[.\s].)(?<!f\.\s.)(?<![dg]l.)(?<![dg]l\s.)"
+    r"\s?-?(?:0?,\d|[1-9]\d*,(?:\d{1,2}|\d{4,})(?![\d,]))"
 )
 
 
