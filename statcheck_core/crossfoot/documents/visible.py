@@ -48,26 +48,31 @@ def place(visible: Visible, start: int, end: int) -> Span:
     An empty span maps to the point where it stands. Characters that replace markup map to the
     whole of what they replace.
     """
-    first, after = _at(visible, start)
+    first, after, stop = _at(visible, start)
     if end <= start:
         return Span(first, first)
-    last = after if end == start + 1 else _at(visible, end - 1)[1]
+    if end <= stop:
+        return Span(first, after + (end - start - 1))
+    last = _at(visible, end - 1)[1] if end > start + 1 else after
     return Span(first, last if last > first else first)
 
 
-def _at(visible: Visible, index: int) -> tuple[int, int]:
-    """Return the source span, as two offsets, of the visible character at ``index``."""
+def _at(visible: Visible, index: int) -> tuple[int, int, int]:
+    """Return the source span, as two offsets, of the visible character at ``index``.
+
+    And up to where the text goes on character for character.
+    """
     pieces = visible.pieces
     if not pieces:
-        return 0, 0
+        return 0, 0, 0
     # A piece that starts at the index sorts before a tuple that goes on behind that.
     number = max(0, bisect_right(pieces, (index, _BEHIND)) - 1)
     shown, start, end = pieces[number]
     stop = pieces[number + 1].shown if number + 1 < len(pieces) else len(visible.text)
     if stop - shown != end - start:
-        return start, end
-    at = min(start + index - shown, end)
-    return at, min(at + 1, end)
+        return start, end, 0
+    at = start + index - shown
+    return (at, at + 1, stop) if at < end else (end, end, stop)
 
 
 #: More than any place.

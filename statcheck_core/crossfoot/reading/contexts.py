@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Iterable
 from functools import lru_cache
+from operator import itemgetter
 from typing import NamedTuple
 
 from crossfoot.reading.cues import CUES
@@ -46,7 +47,7 @@ def cues_in(text: str) -> Cues:
     low = broken = text.lower()
     for mark in _BREAKS:
         broken = broken.replace(mark, " ")
-    starts = _STARTS.intersection({word[:_LENGTH] for word in broken.split()})
+    starts = _STARTS.intersection(map(_FIRST_LETTERS, set(broken.split())))
     found = {number for start in starts for stem, number in _BY_START[start] if stem in low}
     if not text.isascii():
         found.update(number for stem, number in _UNSPACED if stem in low)
@@ -137,6 +138,7 @@ def _alpha(text: str, low: str) -> float | None:
 #: every paragraph takes longer than the rest of reading it. Those of scripts without spaces are
 #: looked for as they are.
 _LENGTH = 5
+_FIRST_LETTERS = itemgetter(slice(_LENGTH))
 _STEMS = tuple((stem, number) for number, cue in enumerate(CUES) for stem in cue.stems)
 _UNSPACED = tuple(pair for pair in _STEMS if max(pair[0]) >= "\u3000")
 #: What may stand right before or behind a word.
