@@ -197,6 +197,8 @@ def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> b
         return True
     if quantities & {"se", "ci_low"}:
         return not is_drawn(items, text)
+    if any("dealt" in item.flags for item in items):
+        return _has_p(items)
     # With a p alone beside it, the two must stand in one list: `(β = .31, p = .001)`.
     for first, second in pairwise(items):
         if second.head == "p" and first.parts[-1].relation == "=":

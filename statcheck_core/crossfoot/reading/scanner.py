@@ -19,13 +19,11 @@ from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import read_r_squared
 from crossfoot.reading.told import told
+from crossfoot.reading.unnamed import unnamed
 from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
 
 _RATIO = expression(
     rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$"
-)
-_FOR_WHAT = expression(
-    r"\s(?:for|of|on)\s(?:the\s)?[^\W\d][\w-]{0,30}(?:\s[^\W\d][\w-]{0,30})?(?=\s(?:was|is|=))"
 )
 _NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
 _P_LIST = expression(rf"\s?,?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
@@ -72,6 +70,7 @@ def items_in(folded: str, zones: Sequence[tuple[int, int]]) -> list[Item]:
     for start, end in zones:
         found += _named(text, start, end)
         found += told(text, start, end)
+        found += unnamed(text, start, end)
     found.sort(key=lambda item: item.start)
     return found
 
@@ -131,8 +130,6 @@ def _read_plain(text: Text, name: Name) -> Item | None:
     """Read a name, a relation and one number; after a coefficient perhaps ``± SE``."""
     quantity = name.notation.quantity
     at = name.match.end()
-    if quantity == "b" and (told_what := _FOR_WHAT.match(text.folded, at)) is not None:
-        at = told_what.end()
     value = value_after(text, at, quantity, name)
     if value is None:
         return None
