@@ -45,7 +45,8 @@ class Item(NamedTuple):
         variance), ``told`` (a sample size in words), ``lower`` (a lower-case f), ``by-name`` (a
         test by a name that means much else), ``perhaps-se`` (its last number may be an SE),
         ``if-ratio`` and ``if-enclosed`` (an estimate only if its test or its interval tells so),
-        ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order).
+        ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order),
+        ``grown`` (an R² told beside that of a smaller model).
     """
 
     head: str
@@ -69,5 +70,6 @@ SCANNER_FLAGS = frozenset(
         "if-enclosed",
         "all",
         "dealt",
+        "grown",
     }
 )

@@ -78,7 +78,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?=[\d_₀-₉])|f(?=\s?\()"
+        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?:_\{[A-Za-z][^{}\n]{0,20}\}|_[A-Za-z]{2,12})(?=\s?[(\[]\s?\d)|F(?=[\d_₀-₉])|f(?=\s?\()"
         r"|min\s?F'?(?=\s?\())",
         False,
         "Ffm",
@@ -150,9 +150,9 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "chi2-of",
         r"(?:[HQ](?=\s?=\s?\d{1,4}[.,]\d+\s?[,;(]\s?d\.?f|\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
-        r"|(?:LRT?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of)\s))",
+        r"|(?:LRT?|[dD]eviance(?:\s(?:dropped|fell|decreased|declined|was\sreduced)(?=\sby\s))?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of|by)\s))",
         False,
-        "HQGLlSsWw卡",
+        "HQGLlSsWw卡dD",
         "The Kruskal–Wallis test was significant, H(2) = 9.21, p = .010",
     ),
     Notation(
@@ -261,6 +261,13 @@ NOTATIONS: tuple[Notation, ...] = (
         True,
         "bBrRcCpPeEsSihl",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
+    ),
+    Notation(
+        "b",
+        r"(?:(?:mean\s)?difference|(?:(?:average|mean)\s)?marginal\seffect|AME|gradient)(?=\s?=\s?[-+]?[.\d])",
+        True,
+        "dmagA",
+        "difference = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(
         "n",

@@ -17,7 +17,7 @@ from crossfoot.reading.estimates import (
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
-from crossfoot.reading.rsquared import read_r_squared
+from crossfoot.reading.rsquared import of_two_models, read_r_squared
 from crossfoot.reading.told import told
 from crossfoot.reading.unnamed import unnamed
 from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
@@ -71,6 +71,7 @@ def items_in(folded: str, zones: Sequence[tuple[int, int]]) -> list[Item]:
         found += _named(text, start, end)
         found += told(text, start, end)
         found += unnamed(text, start, end)
+        found += of_two_models(text, start, end)
     found.sort(key=lambda item: item.start)
     return found
 
@@ -174,10 +175,15 @@ def _read_f(text: Text, name: Name) -> Item | None:
     if not degrees.parts:
         behind, end = pair_behind(text, end)
         parts = (*parts, *behind)
-    flags = (*units, *_F_FLAGS.get(printed, ()), *(("lower",) if printed == "f" else ()))
+    flags = (
+        *units,
+        *_F_FLAGS.get(printed, ()),
+        *(("lower",) if printed == "f" or _WORD_BELOW.match(printed) else ()),
+    )
     return Item(quantity, parts, start, end, flags)
 
 
+_WORD_BELOW = expression(r"F_\{?[A-Za-z]{2}")
 _F_FLAGS = {"Fs": ("plural",), "F's": ("plural",)}
 _BY_UNIT = expression(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
 

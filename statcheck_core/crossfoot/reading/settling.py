@@ -167,7 +167,9 @@ def _renamed(item: Item, group: Group) -> Item:
         quantity = "b" if known and not plain else "beta"
         parts = tuple(p._replace(quantity=quantity) if p.quantity == "β" else p for p in item.parts)
         return item._replace(head=quantity, parts=parts)
-    if item.head == "F" and "R2_change" in heads and "R2" not in heads and "F_change" not in heads:
+    grown = any("grown" in other.flags for other in group.items)
+    added = grown or ("R2_change" in heads and "R2" not in heads)
+    if item.head == "F" and added and "F_change" not in heads:
         parts = tuple(
             p._replace(quantity="F_change") if p.quantity == "F" else p for p in item.parts
         )

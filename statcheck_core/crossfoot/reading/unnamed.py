@@ -18,17 +18,17 @@ _ERROR = r"(?:S\.?\s?E\.?|s\.\s?e\.|(?:(?:robust|clustered)\s)?(?:standard|std\.
 #: A standard error or an interval that opens a bracket or goes on a list.
 _SPREAD = expression(
     rf"\s?[,(;\[]\s?(?:with\s(?:an?\s)?)?(?:(?P<error>{_ERROR})(?![A-Za-z])(?:\sof)?\s?[=:]?\s?(?P<se>{NUMERAL})"
-    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:CI|[cC]onfidence))"
+    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:CI|[cC]onfidence)|(?<=\()t\s?=\s?-?\d)"
 )
 #: The number before it, with what it counts in.
 _WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
 _NUMBER = expression(rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?:{_WORD}){{0,5}}$")
-_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "onfidence")
+_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "onfidence", "(t")
 #: An estimate that is said to be one, or a change by so much.
 _ESTIMATED = expression(
-    r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|(?:mean\s)?(?:difference|change))\b"
-    r"[^.;:()=\d]{0,60}|\b(?:rais|increas|decreas|reduc|lower|rose|rise|fell|fall|fewer|drop|declin|grew|gain|higher|chang|improv|short|long|add)\w{0,5}\b"
-    r"[^.;:()=\d]{0,60}\b(?:by|of))[\s,(]{1,3}(?:an?\s)?(?:average\sof\s|about\s|only\s)?$",
+    r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|change|gain|loss|rise|drop|fall|decline"
+    r"|increase|decrease|reduction|improvement|advantage|benefit|premium|penalty|gap)s?\b[^.;:()=\d]{0,60}[\s,(]{1,3}"
+    r"|\bby\s|\bassociated\swith\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
     re.IGNORECASE,
 )
 #: A ratio is no coefficient, and the spread of a mean no test of it.
@@ -84,7 +84,7 @@ def _told_before(text: Text, spread: re.Match[str], start: int) -> Iterator[Item
     if told is None or _OTHERWISE.search(told.group()):
         return
     error = known_number(text, spread, "se", "se") if spread["se"] else None
-    flags = () if error is not None else ("if-enclosed",)
+    flags = () if error is not None or folded[spread.end() - 1].isdigit() else ("if-enclosed",)
     yield from _item(known_number(text, match, "b", "b"), error, *flags)
 
 
