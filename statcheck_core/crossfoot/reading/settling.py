@@ -6,6 +6,7 @@ import re
 from collections.abc import Iterable, Sequence
 from itertools import pairwise
 
+from crossfoot.expressions import expression
 from crossfoot.reading.genuine import is_result
 from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import Item, Part
@@ -262,10 +263,23 @@ def _one_sample_size(items: list[Item], text: str) -> list[Item]:
         if item.head == "n" and (text[item.start] == "n" or "told" in item.flags):
             around = text[max(0, item.start - 160) : item.end + 160]
             several = len(re.findall(r"(?<![A-Za-z])n\s?=\s?\d", around)) > 1
-            if several or item.parts[0].high <= most:
+            if (several and not _is_beside(item, items, text)) or item.parts[0].high <= most:
                 continue
         kept.append(item)
     return kept
+
+
+#: What has a sample of its own: `(R² = .93, n = 56, p < .001)`.
+_SAMPLED = frozenset({"R2", "R2_adj", "r", "chi2"})
+_MARKS = expression(r"[\s,;(]{1,3}")
+_NO_SECOND = expression(r"(?![^=<>()]{0,40}n\s?=)")
+
+
+def _is_beside(item: Item, items: Sequence[Item], text: str) -> bool:
+    """Say whether an n stands right behind what it is the sample of, and no other n with it."""
+    return _NO_SECOND.match(text, item.end) is not None and any(
+        other.head in _SAMPLED and _MARKS.fullmatch(text, other.end, item.start) for other in items
+    )
 
 
 def _of_a_single_slope(item: Item) -> bool:

@@ -14,21 +14,23 @@ from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number
 
-_ERROR = r"(?:S\.?\s?E\.?|s\.\s?e\.|(?:(?:robust|clustered)\s)?(?:standard|std\.?)\serr(?:ors?|\.))"
+_ERROR = (
+    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.)))"
+)
 #: A standard error or an interval that opens a bracket or goes on a list.
 _SPREAD = expression(
     rf"\s?[,(;\[]\s?(?:with\s(?:an?\s)?)?(?:(?P<error>{_ERROR})(?![A-Za-z])(?:\sof)?\s?[=:]?\s?(?P<se>{NUMERAL})"
-    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:CI|[cC]onfidence)|(?<=\()t\s?=\s?-?\d)"
+    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:C[IL]|[cC]onfidence)|(?<=\()t\s?=\s?-?\d)"
 )
 #: The number before it, with what it counts in.
 _WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
 _NUMBER = expression(rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?:{_WORD}){{0,5}}$")
-_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "onfidence", "(t")
+_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "CL", "onfidence", "(t")
 #: An estimate that is said to be one, or a change by so much.
 _ESTIMATED = expression(
     r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|change|gain|loss|rise|drop|fall|decline"
     r"|increase|decrease|reduction|improvement|advantage|benefit|premium|penalty|gap)s?\b[^.;:()=\d]{0,60}[\s,(]{1,3}"
-    r"|\bby\s|\bassociated\swith\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
+    r"|\bby\s|\bassociated\swith\s|\b(?:add|cost|sav|gain|lost|los|cut)(?:ed|e?s|t|ing)?\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
     re.IGNORECASE,
 )
 #: A ratio is no coefficient, and the spread of a mean no test of it.
