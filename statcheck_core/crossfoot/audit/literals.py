@@ -177,6 +177,9 @@ def _powered(numeral: Numeral, reading: Reading) -> Numeral | None:
     return None
 
 
+_GREATEST_POWER = 300
+
+
 def written(number: float, like: Numeral, decimals: int | None = None, minus: str = "-") -> Numeral:
     """Return ``number`` rounded and written in the hand of ``like``.
 
@@ -198,7 +201,10 @@ def written(number: float, like: Numeral, decimals: int | None = None, minus: st
         power = math.floor(math.log10(abs(number)))
         sign = (exponent[2] or "-") if power < 0 else ""
         tail = f"{exponent[1]}{sign}{abs(power):0{len(exponent[3])}d}{exponent[4]}"
-    whole, _, fraction = f"{abs(number) * 10.0**-power:.{places}f}".partition(".")
+    # In two steps, since a power of the smallest numbers has no float.
+    first = min(-power, _GREATEST_POWER)
+    mantissa = abs(number) * 10.0**first * 10.0 ** (-power - first)
+    whole, _, fraction = f"{mantissa:.{places}f}".partition(".")
     if whole == "0" and fraction and like.zeroless:
         whole = ""
     negative = number < 0 and (whole + fraction).strip("0")

@@ -14,6 +14,7 @@ from crossfoot.reading.words import VERB_UNSPACED
 BRACKETS = expression(
     r"\s?(?:_?\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
     r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?[,;]?\s?_\{(?P<more>[^{}\n]{1,12})\})?"
+    r"|_\{\(\}\s?(?P<slipped>[^()\[\]{}\n]{1,40})\)"  # the bracket alone was lowered
     r"|\^\{\s?(?P<raised>\d{1,4})\s?\}_\{\s?(?P<beneath>\d{1,6})\s?\}"
     r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
 )

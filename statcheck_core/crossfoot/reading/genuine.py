@@ -87,9 +87,13 @@ def _has_p(items: Sequence[Item]) -> bool:
     return p is not None and _is_probability(p.parts[0])
 
 
+#: A p above one is a misprint, as 1.4 may be; 2 is a count.
+_MOST = 1.4
+
+
 def _is_probability(part: Part) -> bool:
     """Say whether a number can be meant as a probability, if perhaps misprinted."""
-    return part.high <= 1.0 if part.relation in "<≤" else part.high >= 0.0 and part.low <= 1.5
+    return part.high <= 1.0 if part.relation in "<≤" else part.high >= 0.0 and part.low <= _MOST
 
 
 def _spelt(text: str, part: Part) -> bool:
@@ -197,6 +201,8 @@ def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> b
         return True
     if quantities & {"se", "ci_low"}:
         return not is_drawn(items, text)
+    if any("dealt" in item.flags for item in items):
+        return _has_p(items)
     # With a p alone beside it, the two must stand in one list: `(β = .31, p = .001)`.
     for first, second in pairwise(items):
         if second.head == "p" and first.parts[-1].relation == "=":

@@ -44,7 +44,9 @@ class Item(NamedTuple):
         tests), ``listed`` (one of several numbers of one name), ``percent`` (told as explained
         variance), ``told`` (a sample size in words), ``lower`` (a lower-case f), ``by-name`` (a
         test by a name that means much else), ``perhaps-se`` (its last number may be an SE),
-        ``all`` (printed once for all tests of the sentence).
+        ``if-ratio`` and ``if-enclosed`` (an estimate only if its test or its interval tells so),
+        ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order),
+        ``grown`` (an R² told beside that of a smaller model).
     """
 
     head: str
@@ -56,5 +58,18 @@ class Item(NamedTuple):
 
 #: Flags that speak to the scanner and are no contexts of a claim.
 SCANNER_FLAGS = frozenset(
-    {"plural", "listed", "percent", "told", "lower", "by-name", "perhaps-se", "all"}
+    {
+        "plural",
+        "listed",
+        "percent",
+        "told",
+        "lower",
+        "by-name",
+        "perhaps-se",
+        "if-ratio",
+        "if-enclosed",
+        "all",
+        "dealt",
+        "grown",
+    }
 )

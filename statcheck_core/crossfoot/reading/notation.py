@@ -78,7 +78,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?=[\d_₀-₉])|f(?=\s?\()"
+        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?:_\{[A-Za-z][^{}\n]{0,20}\}|_[A-Za-z]{2,12})(?=\s?[(\[]\s?\d)|F(?=[\d_₀-₉])|f(?=\s?\()"
         r"|min\s?F'?(?=\s?\())",
         False,
         "Ffm",
@@ -113,7 +113,7 @@ NOTATIONS: tuple[Notation, ...] = (
         rf"|p\s?η\s?{_SQUARED}|(?:η|𝜂|Î·|<U\+03B7>|n|\?)(?:\s?_?\{{?p\}}?\s?|ₚ)(?:{_SQUARED}|Â²)"
         rf"|(?:η|𝜂|Î·|<U\+03B7>)\s?(?:{_SQUARED}|Â²)\s*_?\{{?\s?\(?(?:ₚ|p|{PARTIAL})\)?\}}?(?![a-z])"
         rf"|(?i:eta)[\s-]?(?:{_SQUARED}|squared|sq\.?)\s?\(?{PARTIAL}\)?"
-        r"|PES(?![A-Za-z])|np2|n2p|hp2|h2p|g2p|gp2|[ηg]\s?p\s?2|(?<=[;,]\s)[hZ]2(?=\s?=\s?0?\.\d))",
+        r"|(?i:eta)_?\{?(?:2|²)_?p\}?(?![a-z])|PES(?![A-Za-z])|np2|n2p|hp2|h2p|g2p|gp2|[ηg]\s?p\s?2|(?<=[;,]\s)[hZ]2(?=\s?=\s?0?\.\d))",
         True,
         "pPη𝜂nÎ<e?EghZ部부偏č",
         "F(2, 57) = 3.90, p = .026, ηp² = .12",
@@ -150,15 +150,15 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "chi2-of",
         r"(?:[HQ](?=\s?=\s?\d{1,4}[.,]\d+\s?[,;(]\s?d\.?f|\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
-        r"|(?:LRT?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of)\s))",
+        r"|(?:LRT?|[dD]eviance(?:\s(?:dropped|fell|decreased|declined|was\sreduced)(?=\sby\s))?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of|by)\s))",
         False,
-        "HQGLlSsWw卡",
+        "HQGLlSsWw卡dD",
         "The Kruskal–Wallis test was significant, H(2) = 9.21, p = .010",
     ),
     Notation(
         "ci",
         r"(?:(?:(?:CI|KI|IC|BI)\s?(?:à\s|al\s|del\s|di\s)?[_({]{0,2}(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?[)}]?|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{0,3}"
-        r"(?:CIs?|KI|IC|BI|confidence\s(?:intervals?|limits?)|Konfidenzintervall|intervalle?\sde\sconfiance"
+        r"(?:CIs?|CLs?|KI|IC|BI|confidence\s(?:intervals?|limits?)|Konfidenzintervall|intervalle?\sde\sconfiance"
         r"|intervalo\sde\sconfian[zç]a|intervallo\sdi\sconfidenza|betrouwbaarheidsinterval|konfidensintervall?)"
         r"(?:\s(?:for|of|on|around)\s(?:the|this)\s(?:mean\s)?(?:difference|change|slope|estimate|effect|contrast)s?)?)"
         r"(?![a-z])|CI(?=\s?[:=]?\s?[\[(]\s?[-+]?[.\d]|:\s?[-+]?[.\d]))",
@@ -263,6 +263,13 @@ NOTATIONS: tuple[Notation, ...] = (
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(
+        "b",
+        r"(?:(?:mean\s)?difference|(?:(?:average|mean)\s)?marginal\seffect|AME|gradient)(?=\s?=\s?[-+]?[.\d])",
+        True,
+        "dmagA",
+        "difference = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
+    ),
+    Notation(
         "n",
         r"(?:[Nn]{1}(?:obs)?(?:_\{?(?:total|obs)\}?)?(?![\w²^.-]|'\w)|(?i:(?:no\.|number|num\.?)\s?(?:of\s)?obs(?:ervations|\.)?)|(?i:sample\ssize|observations))",
         False,
@@ -280,7 +287,7 @@ NOTATIONS: tuple[Notation, ...] = (
         "r",
         r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
         r"|(?:Pearson[rR]|Spearmanr|Kendalltau)Result\((?:statistic|correlation)"
-        r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?=\s(?:was|is|of|=)\s))",
+        r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?=\s(?:was|is|of|=|between|with|for)\s))",
         False,
         "rPpcCSKρ",
         "r(98) = .41, p < .001",

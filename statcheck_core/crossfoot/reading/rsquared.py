@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import re
+from collections.abc import Iterator
 
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
@@ -27,6 +28,13 @@ _INSIDE = expression(
 )
 _GREW = expression(
     r"\s(?:significantly\s)?(?:increased|rose|improved|grew)\s(?:significantly\s)?(?=by\s)"
+)
+#: R² rose from .12 in Model 1 to .20 in Model 2; the variance explained grew from 12% to 20%.
+_FROM_TO = expression(
+    rf"(?P<name>(?P<adjusted>{ADJUSTED}[\s-])?R\s?(?:²|\^\{{?2\}}?|2|-squared?)|varia(?:nce|tion)(?:\sexplained)?)(?:\s\w+ly)?"
+    r"\s(?:increased|rose|improved|grew|went|climbed|changed|dropped|fell|decreased)(?:\s\w+ly)?"
+    rf"\sfrom\s(?P<first>{NUMERAL})(?:\s[^.;()=<>]{{1,40}}?)??\sto\s(?P<second>{NUMERAL})",
+    re.IGNORECASE,
 )
 _OPEN = expression(r"\s?\((?=\s?=)|\)(?=\s(?:was|is|of)\s)")
 #: A number in brackets: `an R² (.21)`; a whole one is a footnote or a sample.
@@ -88,6 +96,19 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
     start = before.start() if before is not None else start
     flags = ("pseudo-r2",) if "pseudo" in said else ()
     return Item(quantity, (value,), start, value.end, flags)
+
+
+def of_two_models(text: Text, start: int, end: int) -> Iterator[Item]:
+    """Yield the R² of a model and of the next: ``R² rose from .12 to .20``."""
+    if text.folded.find(" from ", start, end) < 0:
+        return
+    for match in _FROM_TO.finditer(text.folded, start, end):
+        quantity = "R2_adj" if match["adjusted"] else "R2"
+        for group in ("first", "second"):
+            part = known_number(text, match, group, quantity)
+            if part is not None and part.high <= 1.0:
+                flags = ("grown",) if group == "second" else ()
+                yield Item(quantity, (part,), *match.span(group), flags)
 
 
 def _is_count(literal: str, low: float) -> bool:

@@ -17,15 +17,13 @@ from crossfoot.reading.estimates import (
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
-from crossfoot.reading.rsquared import read_r_squared
+from crossfoot.reading.rsquared import of_two_models, read_r_squared
 from crossfoot.reading.told import told
+from crossfoot.reading.unnamed import unnamed
 from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
 
 _RATIO = expression(
     rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$"
-)
-_FOR_WHAT = expression(
-    r"\s(?:for|of|on)\s(?:the\s)?[^\W\d][\w-]{0,30}(?:\s[^\W\d][\w-]{0,30})?(?=\s(?:was|is|=))"
 )
 _NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
 _P_LIST = expression(rf"\s?,?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
@@ -72,6 +70,8 @@ def items_in(folded: str, zones: Sequence[tuple[int, int]]) -> list[Item]:
     for start, end in zones:
         found += _named(text, start, end)
         found += told(text, start, end)
+        found += unnamed(text, start, end)
+        found += of_two_models(text, start, end)
     found.sort(key=lambda item: item.start)
     return found
 
@@ -131,8 +131,6 @@ def _read_plain(text: Text, name: Name) -> Item | None:
     """Read a name, a relation and one number; after a coefficient perhaps ``± SE``."""
     quantity = name.notation.quantity
     at = name.match.end()
-    if quantity == "b" and (told_what := _FOR_WHAT.match(text.folded, at)) is not None:
-        at = told_what.end()
     value = value_after(text, at, quantity, name)
     if value is None:
         return None
@@ -177,10 +175,15 @@ def _read_f(text: Text, name: Name) -> Item | None:
     if not degrees.parts:
         behind, end = pair_behind(text, end)
         parts = (*parts, *behind)
-    flags = (*units, *_F_FLAGS.get(printed, ()), *(("lower",) if printed == "f" else ()))
+    flags = (
+        *units,
+        *_F_FLAGS.get(printed, ()),
+        *(("lower",) if printed == "f" or _WORD_BELOW.match(printed) else ()),
+    )
     return Item(quantity, parts, start, end, flags)
 
 
+_WORD_BELOW = expression(r"F_\{?[A-Za-z]{2}")
 _F_FLAGS = {"Fs": ("plural",), "F's": ("plural",)}
 _BY_UNIT = expression(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
 

@@ -6,6 +6,7 @@ import re
 from collections.abc import Iterable, Sequence
 from itertools import pairwise
 
+from crossfoot.expressions import expression
 from crossfoot.reading.genuine import is_result
 from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import Item, Part
@@ -53,7 +54,7 @@ def _is_left_over(item: Item) -> bool:
 
 
 def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
-    tests = [number for number, group in enumerate(groups) if group.anchor in _TESTS]
+    tests = [n for n, group in enumerate(groups) if group.anchor in _TESTS | _COEFFICIENT]
     shares = [
         item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
     ]
@@ -64,7 +65,8 @@ def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
         items = [item for item in group.items if item not in dealt]
         if number in given:
             own = given[number]
-            items = [item for item in items if item.head != "p"] + ([own] if own else [])
+            items = [item for item in items if item.head != "p"]
+            items += [own._replace(flags=(*own.flags, "dealt"))] if own else []
         elif given and group.anchor is None:
             items = [item for item in items if item not in handed]
         if number in deal:
@@ -132,7 +134,7 @@ def settle(group: Group, text: str) -> Group | None:
     """Drop what does not belong, settle names that need the others, or refuse the group."""
     group = _without_nameless(group)
     items = [_renamed(item, group) for item in group.items]
-    items = [_without_doubtful_error(item, items) for item in items]
+    items = [_without_doubtful_error(item, items) for item in items if _is_borne_out(item, items)]
     items = _own_interval(items, group.anchor)
     items = _one_sample_size(items, text)
     if not {item.head for item in items} & _WITH_S:
@@ -166,7 +168,9 @@ def _renamed(item: Item, group: Group) -> Item:
         quantity = "b" if known and not plain else "beta"
         parts = tuple(p._replace(quantity=quantity) if p.quantity == "β" else p for p in item.parts)
         return item._replace(head=quantity, parts=parts)
-    if item.head == "F" and "R2_change" in heads and "R2" not in heads and "F_change" not in heads:
+    grown = any("grown" in other.flags for other in group.items)
+    added = grown or ("R2_change" in heads and "R2" not in heads)
+    if item.head == "F" and added and "F_change" not in heads:
         parts = tuple(
             p._replace(quantity="F_change") if p.quantity == "F" else p for p in item.parts
         )
@@ -185,6 +189,18 @@ def _without_doubtful_error(item: Item, items: Sequence[Item]) -> Item:
     return item._replace(parts=(estimate,))
 
 
+def _is_borne_out(item: Item, items: Sequence[Item]) -> bool:
+    """Say whether a number without a name is an estimate: its test or its interval tells."""
+    if "if-ratio" in item.flags:
+        tests = [part for other in items for part in other.parts if part.quantity in {"t", "z"}]
+        return item.parts[1].low > 0 and any(_is_ratio(test, *item.parts) for test in tests)
+    if "if-enclosed" in item.flags:
+        limits = {part.quantity: part for other in items for part in other.parts}
+        low, high = limits.get("ci_low"), limits.get("ci_high")
+        return bool(low and high and low.low <= item.parts[0].low <= high.high)
+    return True
+
+
 def _is_ratio(test: Part, estimate: Part, error: Part) -> bool:
     """Say whether a test can be an estimate over its error, as printed."""
     least, most = sorted((abs(estimate.low), abs(estimate.high)))
@@ -197,7 +213,8 @@ def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
     kept = []
     for number, item in enumerate(items):
         before = items[number - 1].head if number else None
-        if item.head == "ci" and (before in _OWN_INTERVAL or anchor in {"F", "F_change", "chi2"}):
+        other_test = anchor in {"F", "F_change", "chi2"} and before not in _COEFFICIENT
+        if item.head == "ci" and (before in _OWN_INTERVAL or other_test):
             continue
         kept.append(item)
     unread = {"d"} if anchor == "chi2" else {"d", *_OF_COUNTS}
@@ -246,10 +263,23 @@ def _one_sample_size(items: list[Item], text: str) -> list[Item]:
         if item.head == "n" and (text[item.start] == "n" or "told" in item.flags):
             around = text[max(0, item.start - 160) : item.end + 160]
             several = len(re.findall(r"(?<![A-Za-z])n\s?=\s?\d", around)) > 1
-            if several or item.parts[0].high <= most:
+            if (several and not _is_beside(item, items, text)) or item.parts[0].high <= most:
                 continue
         kept.append(item)
     return kept
+
+
+#: What has a sample of its own: `(R² = .93, n = 56, p < .001)`.
+_SAMPLED = frozenset({"R2", "R2_adj", "r", "chi2"})
+_MARKS = expression(r"[\s,;(]{1,3}")
+_NO_SECOND = expression(r"(?![^=<>()]{0,40}n\s?=)")
+
+
+def _is_beside(item: Item, items: Sequence[Item], text: str) -> bool:
+    """Say whether an n stands right behind what it is the sample of, and no other n with it."""
+    return _NO_SECOND.match(text, item.end) is not None and any(
+        other.head in _SAMPLED and _MARKS.fullmatch(text, other.end, item.start) for other in items
+    )
 
 
 def _of_a_single_slope(item: Item) -> bool:

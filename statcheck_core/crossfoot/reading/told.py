@@ -8,7 +8,6 @@ from collections.abc import Iterator
 from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
-from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import AND, known_number, not_significant
 from crossfoot.reading.words import ADJUSTED, VERB, VERB_UNSPACED
 
@@ -62,6 +61,17 @@ _FURTHER = expression(
     r"(?:additional|further|another|extra|incremental|more|zusätzlich\w*|weitere)\s?(?:an?\s)?$",
     re.IGNORECASE,
 )
+#: Beside what the share is one of: the number of predictors, or other variables already in.
+_ADJUSTING = expression(
+    r"[^.;(]{0,60}?(?:adjust|correct)\w*(?:\sfor\s(?:the\s)?(?:number\sof|degrees\sof|df)|(?!\sfor)\b)",
+    re.IGNORECASE,
+)
+_BEYOND = (
+    r"(?:\b(?:controll|adjust|account|correct|partiall?)ing\s(?:for|out)|\bover\sand\sabove|\bbeyond\b"
+    r"|\b(?:controlled|adjusted)\sfor\b)"
+)
+_BEYOND_BEFORE = expression(_BEYOND + r"[^.;()%]{0,90}$", re.IGNORECASE)
+_BEYOND_BEHIND = expression(r"[^.;()%]{0,60}?" + _BEYOND, re.IGNORECASE)
 _REVERSED = expression(
     r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
@@ -72,14 +82,6 @@ _INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]
 # The p-value for F(2, 57) = 3.90 is .026
 _P_FOR = expression(
     rf"[pP][\s-]?value\s(?:for|of|associated\swith|corresponding\sto|that\sbelongs\sto)\s[^;!?]{{3,60}}?\s(?:{VERB})\s(?P<p>0?[.,]\d+)(?![\d%])"
-)
-# 0.42 ± 0.11 SE, t = … : an estimate without a name, if a test of it follows and no second does
-_ESTIMATE = expression(
-    rf"(?<=[(\[])\s?(?P<b>{NUMERAL})\s?(?:±|\+/-)\s?(?P<se>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.)\)?\s?[,;]\s?(?=[tTz][\s(_=])"
-)
-# The coefficient on load is positive (0.42, SE = 0.11): what is estimated, in words before
-_NAMED_EARLIER = expression(
-    rf"(?:coefficient|estimate[ds]?|effect|slope|elasticity)\b(?:(?!\bmean|averag)[^.;:()=\d]){{0,60}}[\s(](?P<b>{NUMERAL})\s?[,(;]\s?(?:with\s(?:an?\s)?)?(?:SE|s\.e\.|S\.E\.|standard\serror)\s?[=:]?\s?(?P<se>{NUMERAL})"
 )
 _SAMPLE = expression(
     r"(?:[Aa]mong|[Ss]ample\sof|[Tt]otal\sof|[Ii]n\sall)\s(?:the\s)?"
@@ -108,15 +110,6 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
             part = known_number(text, match, "p", "p")
             if part is not None:
                 yield Item("p", (part,), *match.span("p"))
-    for signs, pattern in ((("±", "+/-"), _ESTIMATE), (("SE", "s.e", "rror"), _NAMED_EARLIER)):
-        named = any(folded.find(sign, start, end) >= 0 for sign in signs)
-        for match in pattern.finditer(folded, start, end) if named else ():
-            estimate, error = (
-                known_number(text, match, "b", "b"),
-                known_number(text, match, "se", "se"),
-            )
-            if estimate is not None and error is not None:
-                yield Item("b", (estimate, error), match.start("b"), match.end("se"))
     words = any(
         folded.find(stem, start, end) >= 0 for stem in ("mong ", "ample of", "otal of", "n all ")
     )
@@ -136,8 +129,7 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
     first, last = match.span(group)
     if text.folded[first] == "%":  # Turkish writes the sign first
         first += 1
-    further = _FURTHER.search(text.folded, max(start, first - 24), first) is not None
-    quantity = "R2_change" if further else "R2"
+    quantity = _kind_of_share(text.folded, start, match)
     part = _share(text, quantity, first, last)
     if part is None:
         return
@@ -153,6 +145,20 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
             flags = ("percent", "listed")
             yield Item(quantity, (other,), other.start, other.end, flags)
     yield Item(quantity, (part,), min(first, match.start()), max(last, match.end()), flags)
+
+
+def _kind_of_share(folded: str, start: int, match: re.Match[str]) -> str:
+    """Say of which R² a share is, by what stands around it."""
+    first, last = match.span()
+    if _ADJUSTING.match(folded, last, last + 100):
+        return "R2_adj"
+    if (
+        _FURTHER.search(folded, max(start, first - 24), first)
+        or _BEYOND_BEFORE.search(folded, max(start, first - 120), first)
+        or _BEYOND_BEHIND.match(folded, last, last + 100)
+    ):
+        return "R2_change"
+    return "R2"
 
 
 def _share(text: Text, quantity: str, first: int, last: int) -> Part | None:

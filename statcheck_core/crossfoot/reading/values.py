@@ -41,6 +41,12 @@ _WORKED = expression(
 _OPERATION = expression(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?\s?/")
 _NUMERAL = expression(NUMERAL)
 _NOT_SIGNIFICANT = expression(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
+#: What a name is of, before its number, or the bracket that closes behind a name.
+_FOR_WHAT = (" for ", " of ", " on ", " between ", " in ", ") ")
+_WHAT = expression(
+    r"(?:\)(?=\s)|\s(?:for|of|on|between|in)(?:\s[^\s\d.,;:()=<>][^\s.,;:()=<>]{0,30}(?:\s\d(?=\s))?){1,7}?)"
+    r"(?=\s?[=<>≤≥]|\s(?:was|is|were|equal(?:s|led))\s)"
+)
 _UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
     r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=(.'-]|\s?[=<>(])"
@@ -89,7 +95,23 @@ def value_after(
     if match is not None:
         return number_at(text, match.end(), quantity, match["sign"] or "=")
     match = _BARE.match(folded, at) if bare else None
-    return number_at(text, match.end(), quantity, "=") if match is not None else None
+    if match is not None:
+        return number_at(text, match.end(), quantity, "=")
+    return _after_words(text, at, quantity)
+
+
+def _after_words(text: Text, at: int, quantity: str) -> Part | None:
+    """Return the number that words separate from its name: ``R² for the full model was .34``."""
+    folded = text.folded
+    if not folded.startswith(_FOR_WHAT, at):
+        return None
+    match = _WHAT.match(folded, at)
+    if match is None:
+        return None
+    value = _RELATION.match(folded, match.end()) or _WORDS.match(folded, match.end())
+    return (
+        number_at(text, value.end(), quantity, _relation(value["sign"] or "=")) if value else None
+    )
 
 
 def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:

@@ -1,0 +1,97 @@
+"""Estimates without a name of their own: what is estimated is told in words before the number.
+
+``raises the rate by 0.41 points (s.e. = 0.12)``, ``the mean difference was 31.2 m (95% CI, 8.4 to
+54.0; P = .007)``, ``0.63 (SE 0.21, p < .01)``, ``rose by 23.4 ± 4.8 kg (t = 4.88)``.
+"""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterator
+
+from crossfoot.expressions import expression
+from crossfoot.reading.items import Item, Part, Text
+from crossfoot.reading.numerals import NUMERAL
+from crossfoot.reading.values import known_number
+
+_ERROR = (
+    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.)))"
+)
+#: A standard error or an interval that opens a bracket or goes on a list.
+_SPREAD = expression(
+    rf"\s?[,(;\[]\s?(?:with\s(?:an?\s)?)?(?:(?P<error>{_ERROR})(?![A-Za-z])(?:\sof)?\s?[=:]?\s?(?P<se>{NUMERAL})"
+    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:C[IL]|[cC]onfidence)|(?<=\()t\s?=\s?-?\d)"
+)
+#: The number before it, with what it counts in.
+_WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
+_NUMBER = expression(rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?:{_WORD}){{0,5}}$")
+_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "CL", "onfidence", "(t")
+#: An estimate that is said to be one, or a change by so much.
+_ESTIMATED = expression(
+    r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|change|gain|loss|rise|drop|fall|decline"
+    r"|increase|decrease|reduction|improvement|advantage|benefit|premium|penalty|gap)s?\b[^.;:()=\d]{0,60}[\s,(]{1,3}"
+    r"|\bby\s|\bassociated\swith\s|\b(?:add|cost|sav|gain|lost|los|cut)(?:ed|e?s|t|ing)?\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
+    re.IGNORECASE,
+)
+#: A ratio is no coefficient, and the spread of a mean no test of it.
+_OTHERWISE = expression(
+    r"ratio|odds|hazard|\brisk\b|-fold|\btimes\b|\b(?:mean|average|median)\b(?!\s(?:difference|change|effect))"
+    r"|\bR\b|\bcorrelat",
+    re.IGNORECASE,
+)
+#: 0.63, SE 0.21, p < .01: in a bracket, before what tests it.
+_BRACKETED = expression(
+    rf"[(\[]\s?(?P<b>{NUMERAL})\s?(?:[,;]\s?{_ERROR}\s?[=:]?\s?(?P<se>{NUMERAL})|(?:±|\+/-)\s?(?P<error>{NUMERAL})\s?\(?{_ERROR}\)?)"
+    r"\s?[,;]\s?(?=[tTzZpP](?![A-Za-z]))"
+)
+#: 23.4 ± 4.8 kg per kg N (t = 4.88
+_WITH_TEST = expression(
+    rf"(?<![=<>\w.,±-])(?<![=<>±]\s)(?P<b>{NUMERAL})\s?(?:±|\+/-)\s?(?P<se>{NUMERAL})(?:{_WORD}){{0,5}}\s?[,;(\[]\s?(?=[tz]\s?[(=_\[])"
+)
+
+
+def unnamed(text: Text, start: int, end: int) -> Iterator[Item]:
+    """Yield the estimates of a stretch of text that have no name."""
+    found = {item.start: item for item in _candidates(text, start, end)}
+    yield from found.values()
+
+
+def _candidates(text: Text, start: int, end: int) -> Iterator[Item]:
+    folded = text.folded
+    if any(folded.find(sign, start, end) >= 0 for sign in _SPREAD_SIGNS):
+        for match in _BRACKETED.finditer(folded, start, end):
+            error = known_number(text, match, "se" if match["se"] else "error", "se")
+            yield from _item(known_number(text, match, "b", "b"), error)
+        for match in _SPREAD.finditer(folded, start, end):
+            yield from _told_before(text, match, start)
+    if folded.find("±", start, end) >= 0 or folded.find("+/-", start, end) >= 0:
+        for match in _WITH_TEST.finditer(folded, start, end):
+            pair = known_number(text, match, "b", "b"), known_number(text, match, "se", "se")
+            yield from _item(*pair, "if-ratio")
+
+
+#: How far back the number, and the words that tell what it is, may begin, in characters.
+_REACH, _LEAD = 60, 110
+
+
+def _told_before(text: Text, spread: re.Match[str], start: int) -> Iterator[Item]:
+    """Yield the estimate whose standard error or interval has been met."""
+    folded, at = text.folded, spread.start()
+    match = _NUMBER.search(folded, max(start, at - _REACH), at)
+    if match is None:
+        return
+    first = match.start("b")
+    lead = folded[max(0, first - _LEAD) : first]
+    told = _ESTIMATED.search(lead)
+    if told is None or _OTHERWISE.search(told.group()):
+        return
+    error = known_number(text, spread, "se", "se") if spread["se"] else None
+    flags = () if error is not None or folded[spread.end() - 1].isdigit() else ("if-enclosed",)
+    yield from _item(known_number(text, match, "b", "b"), error, *flags)
+
+
+def _item(estimate: Part | None, error: Part | None, *flags: str) -> Iterator[Item]:
+    if estimate is None:
+        return
+    parts = (estimate,) if error is None else (estimate, error)
+    yield Item("b", parts, estimate.start, parts[-1].end, flags)
