@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import itertools
+import re
 from collections import Counter
 from collections.abc import Sequence
 
@@ -37,11 +38,13 @@ _QUANTITIES = {
 }
 #: Without these a table of sums and means is none of variance.
 _TESTS = frozenset({"F", "df", "df1", "df2", "p"})
+_SQUARES = re.compile(r"\b(?:(?P<mean>mean\s)|sums?\sof\s)squares?\b", re.IGNORECASE)
 _UNLABELLED = frozenset({"ss", "ms", "df"})
 
 
 def anova(sheet: Sheet) -> Found | None:
     """Return the claims of a table with sums of squares, or None where it is none."""
+    sheet = _with_squares(sheet)
     roles = roles_in(sheet.columns)
     if roles & {"rss", "df_residual", "b", "odds_ratio", "R2_change"} or not roles & {"ss", "ms"}:
         return None
@@ -59,6 +62,29 @@ def anova(sheet: Sheet) -> Found | None:
             claims += claims_of(sheet, stratum, columns)
         rows |= {line.number for line in lines}
     return Found(tuple(claims), frozenset(rows)) if claims else None
+
+
+def _with_squares(sheet: Sheet) -> Sheet:
+    """Name the columns of a table whose caption says that they are mean squares.
+
+    Each is headed by what is analysed; degrees of freedom stand beside them all, and one row is
+    the error.
+    """
+    said = _SQUARES.search(sheet.words)
+    if said is None or roles_in(sheet.columns) - {"label"} != {"df"}:
+        return sheet
+    labels = labels_of(sheet.panel, sheet.columns)
+    names = (row[c.number].text for row in sheet.panel.rows for c in labels)
+    if not any(kind_of(name) == "error" for name in names):
+        return sheet
+    role = "ms" if said["mean"] else "ss"
+    columns = tuple(
+        c._replace(heading=c.heading._replace(roles=(role,)), group=label_of(c.box.text))
+        if not c.heading.roles and c not in labels and c.box.text
+        else c
+        for c in sheet.columns
+    )
+    return sheet._replace(columns=columns)
 
 
 def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
@@ -128,7 +154,7 @@ def _read(
         for found in head_df(sheet, column, ("df1", "df2")):
             cells.setdefault(found.quantity, found)
     mark, default = marked(sheet, content, beside_p=has_p)
-    if mark is not None and roles[:1] in {("F",), ("p",)}:
+    if mark is not None and roles[:1] in {("F",), ("p",), ("ms",)}:
         cells.setdefault("stars", mark)
         contexts += ["default-stars"] if default else []
     contexts += column.heading.contexts

@@ -8,7 +8,7 @@ from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import fits
-from crossfoot.reading.tables.columns import labels_of, name_of, side_by_side
+from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
 from crossfoot.reading.tables.contents import NONE, Content, Number, content_of, fitting, in_order
 from crossfoot.reading.tables.making import (
     Column,
@@ -23,12 +23,14 @@ from crossfoot.reading.tables.making import (
 from crossfoot.reading.tables.meanings import Line, plausible, settled
 from crossfoot.reading.tables.rows import is_intercept
 
-_ESTIMATES = frozenset({"b", "β", "beta", "odds_ratio"})
+_ESTIMATES = frozenset({"b", "β", "beta", "odds_ratio", "ratio"})
 _BESIDE = frozenset(
     {"se", "t", "z", "wald", "statistic", "p", "ci_low", "ci_high", "vif", "tolerance"}
 )
 #: What a role is as a quantity, where its name differs.
-_AS = {"wald": "chi2", "statistic": "t"}
+_AS = {"wald": "chi2", "statistic": "t", "ratio": "b"}
+#: What holds of the estimates of a column of ratios.
+_OF_RATIOS = ("ratio-scale", "other-null")
 _OTHERS = frozenset({"p_adjusted", "df2", "df"})
 _HYPOTHESES = re.compile(r"test\sfor\sconstraints|linear\shypothes", re.IGNORECASE)
 
@@ -68,7 +70,10 @@ def _is_model(sheet: Sheet, columns: Sequence[Column]) -> bool:
     """Say whether columns hold an estimate and something that goes with one."""
     roles = [role for column in columns for role in column.heading.roles]
     if _ESTIMATES & set(roles):
-        return bool(_BESIDE & set(roles)) or _has_marks(sheet, columns)
+        beside = _BESIDE & set(roles)
+        if beside == {"p"} and "R2" in roles_in(sheet.columns):
+            return False  # p is that of the model which each row tells of
+        return bool(beside) or _has_marks(sheet, columns)
     return bool({"se", "vif", "tolerance"} & set(roles)) and bool(
         {"t", "z", "tolerance"} & set(roles)
     )
@@ -109,6 +114,9 @@ def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
             enclosed = enclosed or loose
         if of_ratio and "ci_low" in cells:
             contexts.append("of-ratio")
+        if "ratio" in order:
+            contexts += _OF_RATIOS
+            cells.pop("se", None)  # of the ratio, or of its logarithm
         if cells:
             boxes = (*words, *(row[c.number] for c in columns))
             lines.append(Line(index, label, cells, boxes, tuple(given), tuple(contexts), enclosed))

@@ -200,10 +200,18 @@ def name_of(row: Sequence[Box], labels: Sequence[Column]) -> str:
     return label_of(", ".join(filter(None, words)))
 
 
+#: What every table that stands beside others may share with them: counts, told once.
+_SHARED = frozenset({"df", "df1", "df2", "n"})
+#: What a table is about; a column of these starts one.
+_PRIMARY = frozenset({"F", "t", "z", "chi2", "r", "b", "β", "beta", "odds_ratio", "ratio", "wald"})
+
+
 def side_by_side(columns: Sequence[Column], roles: Collection[str]) -> list[list[Column]]:
     """Split the columns of some roles where several tables stand side by side.
 
-    Where a role comes again the next table starts; columns whose role comes once are shared.
+    Where a role comes again the next table starts. Of the columns whose role comes once, counts
+    before the first table and after the last are shared; others belong to the table they stand in,
+    and an estimate or a test between two tables to the second.
     """
     known = [c for c in columns if c.heading.roles and c.heading.roles[0] in roles]
     seen: set[tuple[str, ...]] = set()
@@ -212,10 +220,21 @@ def side_by_side(columns: Sequence[Column], roles: Collection[str]) -> list[list
         (again if column.heading.roles in seen else seen).add(column.heading.roles)
     if not again:
         return [known] if known else []
-    shared = [c for c in known if c.heading.roles not in again]
+    places = [n for n, c in enumerate(known) if c.heading.roles in again]
+    shared: list[Column] = []
+    waiting: list[Column] = []  # what belongs to the table that starts next
     groups: list[list[Column]] = []
-    for column in (c for c in known if c.heading.roles in again):
-        if not groups or any(c.heading.roles == column.heading.roles for c in groups[-1]):
-            groups.append([])
-        groups[-1].append(column)
+    for place, column in enumerate(known):
+        if column.heading.roles in again:
+            if not groups or any(c.heading.roles == column.heading.roles for c in groups[-1]):
+                groups.append(waiting)
+                waiting = []
+            groups[-1] += [*waiting, column]
+            waiting = []
+        elif column.heading.roles[0] in _SHARED and not places[0] < place < places[-1]:
+            shared.append(column)
+        elif not groups or waiting or (column.heading.roles[0] in _PRIMARY and place < places[-1]):
+            waiting.append(column)
+        else:
+            groups[-1].append(column)
     return [[*shared, *group] for group in groups]

@@ -28,13 +28,19 @@ _TOKEN = re.compile(
 )
 _LETTER = re.compile(r"[a-e](?=[\s)\]]|$)")
 _SYMBOL = re.compile(r"[A-Za-zβηχΔ]{1,2}(?:\^\{2\}|²|2)?\s?(?=[=<>≤≥≈])")
-_DEGREES = r"(?P<a{0}>\d{{1,7}}(?:\.\d{{1,4}})?)(?:\s?[;,]\s?(?P<b{0}>\d{{1,9}}(?:\.\d{{1,4}})?))?"
+_DEGREES = (
+    r"(?P<a{0}>\d{{1,7}}(?:\.\d{{1,4}})?)"
+    r"(?:\s?(?:[;,&]|and)\s?(?P<b{0}>\d{{1,9}}(?:\.\d{{1,4}})?))?"
+)
 _DF = re.compile(
     rf"\(\s?d\.?f\.?\s?=?\s?{_DEGREES.format(1)}\s?\)|\bd\.?f\.?\s?=\s?{_DEGREES.format(2)}"
+    rf"|\b(?:on|with|at)\s?{_DEGREES.format(3)}\s?(?:d\.?f\.?(?![a-z])|degrees\sof\sfreedom)",
+    re.IGNORECASE,
 )
+_NAMES_DF = re.compile(r"d\.?f|degrees", re.IGNORECASE)
 #: A test with its degrees of freedom: ``F (2, 33) = 5.257``.
 _TEST = re.compile(
-    r"(?P<symbol>[FtrTχ](?:\^\{2\}|²)?)\s?\(\s?(?P<a>\d{1,7}(?:\.\d{1,4})?)"
+    r"(?P<symbol>[FtrTχHQ](?:\^\{2\}|²)?)\s?\(\s?(?P<a>\d{1,7}(?:\.\d{1,4})?)"
     r"(?:\s?[,;]\s?(?P<b>\d{1,9}(?:\.\d{1,4})?))?\s?\)\s?(?==)"
 )
 _WITH_P = re.compile(
@@ -142,10 +148,10 @@ def content_of(text: str, at: int = 0) -> Content | None:
         sign = _RELATIONS.get("".join(after["relation"].split()), after["relation"])
         p = Number(after["number"], at + after.start("number"), at + after.end("number"), sign)
         return None if inner is None else inner._replace(p=p)
-    if "df" in text or "d.f" in text:
+    if _NAMES_DF.search(text):
         found = _DF.search(text)
         if found is not None:
-            df = _numbers(found, ("a1", "b1", "a2", "b2"), at)
+            df = _numbers(found, ("a1", "b1", "a2", "b2", "a3", "b3"), at)
             cut = found.start()
             if text[found.end() :].strip():
                 return None
@@ -205,6 +211,8 @@ def _scan(text: str, position: int, end: int, at: int, df: tuple[Number, ...]) -
             depth += 1
         elif kind == "close":
             depth -= 1
+        elif kind == "insignificant" and last == "number":
+            continue  # a mark: nothing is said but that there are no stars
         elif kind == "insignificant":
             numbers.append(Number("n.s.", at + start, at + stop, ">", depth > 0, True))
         last = kind

@@ -150,7 +150,9 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     roles = (
         FIT - {"n", "df1", "df2", "R"} if beside_coefficients else FIT | {"p", "df", "statistic"}
     )
-    columns = [c for c in sheet.columns if c.heading.roles and c.heading.roles[0] in roles]
+    columns = _of_selection(
+        [c for c in sheet.columns if c.heading.roles and c.heading.roles[0] in {*roles, "R2_part"}]
+    )
     if not any(c.heading.roles[0] in _STRONG for c in columns):
         return Found(())
     labels = labels_of(sheet.panel, sheet.columns)
@@ -174,6 +176,20 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
             rows.add(index)
     claims = model_claims(sheet, models, with_coefficients=beside_coefficients)
     return Found(tuple(claims), frozenset(rows) if claims else frozenset())
+
+
+def _of_selection(columns: list[Column]) -> list[Column]:
+    """Take the part that each step adds for ΔR², where the R² of the model stands beside it."""
+    roles = {column.heading.roles[0] for column in columns}
+    if not {"R2_part", "R2"} <= roles:
+        return [column for column in columns if column.heading.roles[0] != "R2_part"]
+    renamed = {"R2_part": "R2_change", "F": "F_change"}
+    return [
+        c._replace(heading=c.heading._replace(roles=(renamed.get(role, role),)))
+        if (role := c.heading.roles[0]) in renamed and len(c.heading.roles) == 1
+        else c
+        for c in columns
+    ]
 
 
 def steps_in(sheet: Sheet) -> list[tuple[int, str]]:

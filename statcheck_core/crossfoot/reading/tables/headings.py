@@ -65,6 +65,15 @@ _COMPOSED = re.compile(
 )
 _PERCENT = re.compile(r"\s?[(\[,]?\s?(?:in\s)?(?:%|per\s?cent)\s?[)\]]?$")
 _TYPE = re.compile(r"^type\s(?:i{1,3}v?|[123])\s|\s?\(?type\s(?:i{1,3}v?|[123])\)?$", re.IGNORECASE)
+#: What may stand before an estimate whose model it describes.
+_OF_MODEL = re.compile(
+    r"(?:crude|raw|(?:un|(?:fully|partially|age|sex|mutually)[\s-])?adjusted|(?:uni|bi|multi)vari(?:ate|able)"
+    r"|simple|multiple|pooled|unweighted|weighted)\s(?:analysis\s)?(?=\S)",
+    re.IGNORECASE,
+)
+_ESTIMATES = frozenset({"odds_ratio", "ratio", "b", "β", "beta"})
+#: An F whose p is found by permutation.
+_PSEUDO = re.compile(r"pseudo[\s-]?F|F\.?[\s-]?model", re.IGNORECASE)
 _SIDED = re.compile(r"\s?[(\[](?P<side>one|two|1|2)[-\s]?(?:tailed|sided)[)\]]$", re.IGNORECASE)
 
 #: Pairs that one cell may hold; the second stands in brackets or after a comma.
@@ -75,6 +84,7 @@ _PAIRS = frozenset(
         ("β", "se"), ("β", "t"), ("β", "p"), ("β", "ci"), ("β", "z"),
         ("beta", "se"), ("beta", "t"), ("beta", "p"), ("beta", "ci"),
         ("odds_ratio", "ci"), ("odds_ratio", "p"), ("odds_ratio", "se"),
+        ("ratio", "ci"), ("ratio", "p"), ("ratio", "se"),
         ("F", "p"), ("F", "df"), ("t", "df"), ("t", "p"), ("z", "p"), ("chi2", "p"), ("chi2", "df"),
         ("wald", "df"), ("R2", "R2_adj"), ("R2", "R2_change"), ("r", "p"),
         ("R2_change", "p_change"),
@@ -224,7 +234,18 @@ def _paired(first: str, second: str, offset: int) -> Heading | None:
 
 
 def _trimmed(text: str) -> Heading:
-    """Read a heading that says that its numbers are percentages, or which type of sums they are."""
+    """Read a heading that says more: percentages, types of sums, whose estimate it is."""
+    if _PSEUDO.fullmatch(text):
+        return Heading(("F",), contexts=("resampled",))
+    of = _OF_MODEL.match(text)
+    if of is not None:
+        found = parse(text[of.end() :])
+        if found.level is not None:
+            at = found.level._replace(
+                start=found.level.start + of.end(), end=found.level.end + of.end()
+            )
+            found = found._replace(level=at)
+        return found if found.roles and found.roles[0] in _ESTIMATES else NOTHING
     percent = _PERCENT.search(text)
     if percent is not None and percent.start():
         found = parse(text[: percent.start()])

@@ -7,8 +7,17 @@ from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
-from crossfoot.reading.tables.contents import NONE, content_of, is_blank
-from crossfoot.reading.tables.making import Column, Found, Sheet, claim, head_df, marked, reading
+from crossfoot.reading.tables.contents import NONE, content_of, in_order, is_blank
+from crossfoot.reading.tables.making import (
+    Column,
+    Found,
+    Sheet,
+    claim,
+    head_df,
+    level,
+    marked,
+    reading,
+)
 from crossfoot.reading.tables.rows import kind_of
 
 _KINDS = {
@@ -20,6 +29,7 @@ _KINDS = {
 }
 _EFFECT_SIZES = frozenset({"eta2", "eta2_partial", "omega2"})
 _ROLES = frozenset({*_KINDS, "df", "df1", "df2", "p", "n", *_EFFECT_SIZES})
+_LIMITS = frozenset({"ci_low", "ci_high"})
 _NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2", "se"})
 
 
@@ -27,20 +37,32 @@ def results(sheet: Sheet) -> Found | None:
     """Return the claims of a table of tests, a row each, or None where it is none."""
     sheet = sheet._replace(columns=_of_the_test(_with_symbols(sheet)))
     roles = roles_in(sheet.columns)
+    known = _ROLES | _LIMITS if _are_of_differences(sheet) else _ROLES
     if roles & _NEVER or not roles & set(_KINDS):
         return None
     claims: list[Claim] = []
     rows: set[int] = set()
-    for group in side_by_side(sheet.columns, _ROLES):
+    for group in side_by_side(sheet.columns, known):
         own = {role for column in group for role in column.heading.roles}
         tests = [key for key in _KINDS if key in own]
         if len(tests) == 1 and _supported(sheet, tests[0], own, group):
-            found = _rows(sheet, group, tests[0])
+            kept = [
+                c for c in group if tests[0] in {"t", "z", "r"} or not _LIMITS & {*c.heading.roles}
+            ]
+            found = _rows(sheet, kept, tests[0])
             claims += found.claims
             rows |= found.rows
     return Found(tuple(claims), frozenset(rows)) if claims else None
 
 
+def _are_of_differences(sheet: Sheet) -> bool:
+    """Say whether an interval is that of what is tested, and not of a group's mean."""
+    means = [c for c in sheet.columns if c.heading.roles in {("mean",), ("sd",)}]
+    return not means or _DIFFERENCE.search(sheet.words) is not None
+
+
+#: Said of the mean of differences.
+_DIFFERENCE = re.compile(r"\bdiff(?:erences?|\.)?\b|\bpair(?:s|ed)?\b", re.IGNORECASE)
 #: Headings of what tells how well each of several models fits.
 _CRITERIA = re.compile(r"AICc?|BIC|log-?\s?lik(?:elihood)?|-2\s?LL|deviance", re.IGNORECASE)
 
@@ -61,7 +83,16 @@ def _of_the_test(columns: Sequence[Column]) -> tuple[Column, ...]:
 
 
 #: What a cell calls the test whose result it holds.
-_SYMBOLS = {"F": "F", "t": "t", "T": "t", "r": "r", "χ²": "chi2", "χ^{2}": "chi2"}
+_SYMBOLS = {
+    "H": "chi2",
+    "Q": "chi2",
+    "F": "F",
+    "t": "t",
+    "T": "t",
+    "r": "r",
+    "χ²": "chi2",
+    "χ^{2}": "chi2",
+}
 
 
 def _with_symbols(sheet: Sheet) -> tuple[Column, ...]:
@@ -83,10 +114,21 @@ def _supported(sheet: Sheet, test: str, roles: set[str], columns: Sequence[Colum
     """Say whether headings make a test: a letter alone is none."""
     if test not in {"r", "n"} and "p" in roles and _are_probabilities(sheet, columns):
         return True
-    degrees = bool(roles & {"df", "df1", "df2"}) or any(c.heading.df for c in columns)
+    degrees = bool(roles & {"df", "df1", "df2"}) or any(
+        c.heading.df or _holds_tests(sheet, c) for c in columns
+    )
     if test in {"z", "r"}:
         return "p" in roles and (test == "z" or degrees or "n" in roles)
     return degrees and (bool(roles & {"p", *_EFFECT_SIZES}) or test == "F")
+
+
+def _holds_tests(sheet: Sheet, column: Column) -> bool:
+    """Say whether the first cell of a column tells degrees of freedom beside its number."""
+    first = next(
+        (row[column.number].text for row in sheet.panel.rows if row[column.number].text), ""
+    )
+    content = content_of(first)
+    return content is not None and bool(content.df)
 
 
 def _are_probabilities(sheet: Sheet, columns: Sequence[Column]) -> bool:
@@ -121,9 +163,11 @@ def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
         label = name_of(row, labels)
         cells: dict[str, Reading] = {}
         contexts: list[str] = []
+        levels: tuple[Reading, ...] = ()
         for column in columns:
             box = row[column.number]
             _read(sheet, column, box.text, box.start, test, cells, contexts, has_p=has_p)
+            levels = levels or level(sheet, column)
         if (
             test == "F"
             and "F" not in cells
@@ -146,6 +190,7 @@ def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
         title = ", ".join(part for part in (label, name) if part)
         told = {"df", "df2"} & cells.keys() or test == "z"
         given = () if told else _told_df(sheet, test)
+        given += levels if "ci_low" in cells else ()
         found = claim(
             sheet,
             _KINDS[test],
@@ -210,11 +255,13 @@ def _read(
         roles = ("df1", "df2")
     if len(roles) == 2 and roles[1] == "df" and len(numbers) == 3:
         roles = (roles[0], "df1", "df2")
-    if sum(not number.bracket for number in numbers) > len(roles):
+    if roles == ("ci_low", "ci_high") and len(numbers) == 2:
+        numbers = in_order(numbers, sheet.comma)
+    elif sum(not number.bracket for number in numbers) > len(roles):
         numbers = ()  # which of them is meant is not known
     for role, number in zip(roles, numbers, strict=False):
         quantity = one if role == "df" or (role == "df1" and test != "F") else role
-        if quantity not in _ROLES:
+        if quantity not in _ROLES | _LIMITS:
             continue
         found = reading(sheet, number, quantity)
         if found is not None:

@@ -1,256 +1,11 @@
-"""What columns and rows are called: one declaration a role.
-
-A role is the key of a quantity, or one of a few words for what needs its neighbours to be told:
-``df`` (of what, the row says), ``wald``, ``label``, ``p_adjusted``, ``rss``, ``df_residual``,
-``df_change`` (of the difference of two models).
-Names are compared without case, spaces, dots and hyphens; symbols of one or two letters keep
-their case, because F, f, B, b, R and r differ.
-"""
+"""The role that a heading, or the label of a row, names."""
 
 from __future__ import annotations
 
 import re
 from collections.abc import Mapping
-from typing import NamedTuple
 
-
-class Role(NamedTuple):
-    """The names of one role: ``symbols`` as they stand, ``words`` without case or spaces."""
-
-    role: str
-    symbols: str
-    words: str
-
-
-ROLES: tuple[Role, ...] = (
-    Role(
-        "ss",
-        "SS SSQ SumSq SQ QS SC",
-        "sumofsquares sumofsq sumsofsquares sumsq ssdiff sumsquares squares ssq typeiiisumofsquares"
-        " typeiisumofsquares typeisumofsquares typeiiiss typeiiss typeiss seqss adjss anovass"
-        " partialss quadratsumme quadratsummen summederquadrate sommedescarrés sommecarrés"
-        " sumadecuadrados sommadeiquadrati somadosquadrados somadequadrados kwadratensom"
-        " kvadratsumma 平方和 离均差平方和 제곱합",
-    ),
-    Role(
-        "ms",
-        "MS MSS MeanSq MQ CM",
-        "meansquare meansquares meansq square adjms seqms mittelderquadrate mittlerequadratsumme"
-        " carrémoyen carrésmoyens mediacuadrática cuadradomedio quadradomédio quadratomedio"
-        " gemiddeldekwadraat 均方 平均平方 평균제곱",
-    ),
-    Role(
-        "df",
-        "df Df DF dl FG gl GL ddl gdl GdL",
-        "df dof dfdiff dfconstraint degreesoffreedom degreeoffreedom dfs freiheitsgrade"
-        " freiheitsgrad fg"
-        " degrésdeliberté degrésdeliberte gradosdelibertad grausdeliberdade gradidilibertà"
-        " vrijheidsgraden frihetsgrader 自由度 자유도",
-    ),
-    Role(
-        "df1",
-        "DFn DFN ν1",
-        "df1 numdf numeratordf dfnum dfn ddof1 dfmodel modeldf dfeffect dfbetween dfregression"
-        " regressiondf dfconstraint hypothesisdf dfnumerator numdof dfhypothesis zählerdf",
-    ),
-    Role(
-        "df2",
-        "DFd DFD ν2",
-        "df2 dendf denominatordf dfden dfdenom dfd ddof2 dferror dfresidual dfresiduals dfwithin"
-        " errordf residualdf dfdenominator denomdf dendof residualdegreesoffreedom"
-        " errordegreesoffreedom nennerdf dofresiduals",
-    ),
-    Role("df_change", "", "Δdf deltadf chidf chisqdf dfchange changeindf dfdifference diffdf"),
-    Role("df_residual", "", "resdf residdf dfresid residualdf(model)"),
-    Role("rss", "RSS SSR SSE ssr", "residsumofsquares residualss"),
-    Role(
-        "F",
-        "F F0",
-        "fvalue fratio fstatistic fstat ftest fwert valeurf valeurdef valorf valoref fwaarde"
-        " approxf fvärde f值 fcalculated fcalc fstatistics fobserved estadísticof",
-    ),
-    Role(
-        "p",
-        "P p",
-        "pvalue pvalues pval sig significance significancef signif prob probability prob>f"
-        " prob(f) pr(>f) pr>f p>f p(>f) p(f) pr(>|t|) pr>|t| p>|t| p(>|t|) prob>|t| pr(>|z|)"
-        " pr>|z| p>|z| prob>|z| prob(>|t|) pr(>chisq) pr(>chi2) pr>chisq p>chi2 prob>chi2"
-        " sig(2tailed) sig(twotailed) punc prob(fstatistic) pwert signifikanz valeurp valeurdep"
-        " valorp valordep valorep pwaarde pvärde p值 pexact sigf signifof signifofp asympsig"
-        " asympsig(2sided) p(2tailed) p(twotailed) p(twosided) p(2sided) puncorr fp sigoft"
-        " pofoverallmodel",
-    ),
-    Role(
-        "p_adjusted",
-        "q",
-        "padj adjp adjustedp padjusted pbonf pbonferroni ptukey pholm pfdr"
-        " pvaluehs adjpvalue adjustedpvalue correctedp pcorr pcorrected qvalue sigb psidak pgg phf"
-        " pggepsilon"
-        " pr(>f[gg]) pr(>f[hf]) p[gg] p[hf]",
-    ),
-    Role(
-        "p_one",
-        "",
-        "p(1tailed) p(onetailed) sig(1tailed) sig(onetailed) p(onesided) p(1sided) onetailedp",
-    ),
-    Role("eta2", "η2 ɳ2", "η2 eta2 etasquared etasq esη2 <u+03b7>2 η^2"),
-    Role(
-        "eta2_partial",
-        "",
-        "ηp2 η2p partialeta2 partialetasquared partialη2 partetasq partialetasq np2 pes η2partial"
-        " etap2 eta2p eta2(partial) η2(partial) petasquared <u+03b7>2p parη2 η2part parteta2",
-    ),
-    Role("omega2", "ω2", "ω2 omega2 omegasquared omegasq"),
-    Role(
-        "b",
-        "b B b̂",
-        "estimate estimates est coef coeff coefs coefficient coefficients regressioncoefficient"
-        " unstandardizedb unstandardisedb unstandardizedβ unstandardisedβ unstdb unstdβ"
-        " unstandardizedcoefficient unstandardisedcoefficient unstandardizedcoefficients"
-        " unstandardisedcoefficients unstandardizedcoefficientsb parameterestimate"
-        " estimatedcoefficient slope regressionskoeffizient koeffizient koeffizienten schätzer"
-        " schätzung coeficiente coefficiente coëfficiënt estimateb bestimate coefficientb"
-        " coefficientestimate unstandardized unstandardised bunstandardized bweight 系数 回归系数"
-        " emmean lsmean emmeans lsmeans dy/dx ey/ex dy/ex ey/dx marginaleffect"
-        " estimation estimación stima estimativa 계수 unstd",
-    ),
-    Role("β", "β ß", "beta"),
-    Role(
-        "beta",
-        "",
-        "stdbeta stdβ standardizedbeta standardisedbeta standardizedβ standardisedβ"
-        " standardizedcoefficient standardisedcoefficient standardizedcoefficients"
-        " standardisedcoefficients standardizedcoefficientsbeta standardizedcoefficientsβ"
-        " stdcoef stdcoeff stdestimate betaweight standardized standardised"
-        " standardizedestimate standardisedestimate βstandardized βstandardised bstandardized"
-        " 标准化系数 stdall betastd",
-    ),
-    Role(
-        "se",
-        "SE se S.E. s.e. EE",
-        "stderror standarderror stderr standarderr sterr seb seβ sebeta se(b) se(β) se(beta) bse"
-        " stderrorb standarderrorb stderrors standarderrors standardfehler stdfehler erreurtype"
-        " errortípico errorestándar errorestandar errestándar errorestd errorestd"
-        " errorestándarb errorestandard erropadrão errorestandar"
-        " errorestándard errorest standaardfout"
-        " medelfel 标准误 标准误差 seestimate seofb seest sterror asymptoticstderr 표준오차"
-        " unstandardizedcoefficientsstderror unstandardizedcoefficientsse secoef secoeff",
-    ),
-    Role(
-        "se_robust",
-        "",
-        "robustse robuststderror robuststandarderror robuststderr hcse"
-        " clusteredse clusterse clusteredstandarderror",
-    ),
-    Role(
-        "t",
-        "t T",
-        "tvalue tstat tstatistic tstatistics tratio ttest twert valeurt valeurdet valort valoret"
-        " twaarde tvärde t值 studentt studentst tforh0 tforh0:parameter=0 tvalues",
-    ),
-    Role("z", "z Z", "zvalue zstat zstatistic zratio waldz zwert valeurz zvalues ztest"),
-    Role(
-        "wald",
-        "",
-        "wald waldχ2 waldchi2 waldchisquare waldchisquared waldchisq waldstatistic"
-        " wald(χ2) waldtest",
-    ),
-    Role(
-        "chi2",
-        "χ2 X2",
-        "χ2 chi2 chisquare chisquared chisq lrchisq lrχ2 lrchi2 χ2value chisquarevalue pearsonχ2",
-    ),
-    Role("r", "r", "pearsonr pearsonsr correlation correlationcoefficient"),
-    Role(
-        "ci_low",
-        "LL LB LCI LCB LCL",
-        "lower lowerbound lowerlimit lower95% cilower lowerci conflow cilow"
-        " lowercl lcl lowercibound confintlow confintlower lowerconfint"
-        " lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
-        " 2.5% 0.025 [0.025 untergrenze limiteinférieure límiteinferior 95%cilow 95%cill lwr"
-        " 95%confidenceintervallowerbound 95%cilowerbound lowerlimitof95%ci q2.5 cil",
-    ),
-    Role(
-        "ci_high",
-        "UL UB UCI UCB UCL",
-        "upper upperbound upperlimit upper95% ciupper upperci confhigh cihigh"
-        " uppercl ucl uppercibound confintupp confintupper upperconfint"
-        " upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
-        " 0.975 0.975] obergrenze limitesupérieure límitesuperior 95%cihigh 95%ciul upr"
-        " 95%confidenceintervalupperbound 95%ciupperbound upperlimitof95%ci q97.5 ciu",
-    ),
-    Role(
-        "odds_ratio",
-        "OR aOR AOR",
-        "oddsratio oddsratios or exp(b) exp(β) expb exp(beta) aor"
-        " adjustedor adjustedoddsratio exp(coef) exp(estimate) oddsratioexp(b) oddsratio(or)",
-    ),
-    Role("vif", "VIF", "vif gvif varianceinflationfactor"),
-    Role("tolerance", "", "tolerance tol toleranz"),
-    Role("R", "R", "multipler multiplecorrelation multiplecorrelationcoefficient"),
-    Role(
-        "R2",
-        "R2 r2",
-        "rsquare rsquared rsq multiplersquared multiplersquare multipler2 r2value"
-        " coefficientofdetermination determinationcoefficient r2total totalr2 bestimmtheitsmaß"
-        " r平方 r方 cumulativer2 overallr2 modelr2 unadjustedr2",
-    ),
-    Role(
-        "R2_adj",
-        "R̄2 R2a Ra2",
-        "adjustedr2 adjr2 r2adj adjustedrsquare adjustedrsquared adjrsquare adjrsquared r2adjusted"
-        " adjrsq rsqadj rsq(adj) rsquareadj rsquaredadj adjustedrsq r2(adj) r2(adjusted) r2corr"
-        " adjustedr korrigiertesr2 r2korr korrr2 r2ajusté r2ajustado r2aj adjusteddr2 r2corretto"
-        " 调整后r2 调整r2 调整的r2 r2adj. rsquare(adj) adjustedmultipler2 rsquared(adj)",
-    ),
-    Role(
-        "R2_change",
-        "ΔR2 dR2",
-        "Δr2 r2change rsquarechange rsquaredchange changeinr2 deltar2 r2increment changeinrsquare"
-        " changeinrsquared incrementalr2 r2inc incrementinr2 r2Δ rsqchange ∆r2 r2δ δr2 r2chg",
-    ),
-    Role(
-        "F_change",
-        "ΔF dF",
-        "Δf fchange changeinf fforchange deltaf fforr2change fforchangeinr2 fforΔr2 finc fforδr2"
-        " δf fofchange partialf fΔ fδ f(change) f(Δr2) f(δr2) incrementalf",
-    ),
-    Role(
-        "p_change",
-        "",
-        "sigfchange pforchange pchange pforΔr2 pforδr2 p(Δr2) p(δr2) p(change)"
-        " pofchange pΔr2 pδr2 pforfchange pforr2change pfchange",
-    ),
-    Role(
-        "s",
-        "S SEE RSE RMSE",
-        "rmse rse see rootmse residualstandarderror residualstderror residualse residualstderr"
-        " stderroroftheestimate standarderroroftheestimate stderrorofestimate"
-        " standarderrorofestimate sigma seoftheestimate seofestimate seofregression"
-        " rootmeansquareerror"
-        " rootmeansquarederror residualstandarddeviation residsd residstderror",
-    ),
-    Role(
-        "n",
-        "N n",
-        "observations includedobservations obs numberofobs numberofobservations noobservations"
-        " noofobs numobs nobs numbobs noofobservations samplesize cases noofcases numberofcases"
-        " casesincluded nobservations observationsn n(listwise) 观测值 样本量 样本数"
-        " anzahlbeobachtungen beobachtungen observaciones osservazioni observações n(obs) 관측수",
-    ),
-    Role(
-        "label",
-        "",
-        "source sourceofvariation variable variables predictor predictors term terms parameter"
-        " effect effects factor factors model models step steps covariate covariates"
-        " independentvariable independentvariables iv ivs sourceofvariance component measure"
-        " metric item contrast quelle varianzquelle fuente parameters explanatoryvariable"
-        " explanatoryvariables variationsource modelterm 变量 变异来源 来源 block",
-    ),
-    Role("statistic", "", "statistic"),
-    Role("mean", "M", "mean means m"),
-    Role("sd", "SD", "sd stddev standarddeviation stdev"),
-)
+from crossfoot.reading.tables.vocabulary import ROLES
 
 _POINT = re.compile(r"(?<=\d)\.(?=\d)")
 _DROPPED = str.maketrans("", "", " \t\u00a0.-_:'’*\\,–—$")
@@ -279,6 +34,13 @@ def _keys() -> tuple[Mapping[str, str], Mapping[str, str]]:
 
 
 _SYMBOLS, _WORDS = _keys()
+#: What may stand with the symbol of a test that was carried out, unlike a critical value.
+_COMPUTED = re.compile(
+    r"(?<![a-z])(?:calc(?:ulated|\.)?|cal\.?|comp(?:uted|\.)?|obs(?:erved|\.)?|emp(?:irical|\.)?|value"
+    r"|stat(?:istics?|\.)?|ratio|test|score)(?![a-z])",
+    re.IGNORECASE,
+)
+_TESTS = frozenset({"F", "t", "z", "chi2", "r", "F_change", "wald"})
 #: No heading is longer, so nothing longer is looked up.
 _LONGEST = 60
 
@@ -299,4 +61,15 @@ def role_of(text: str) -> str | None:
         return _SYMBOLS[key]
     if len(key) < 2:
         return None
-    return _WORDS.get(key.lower().replace("δ", "Δ")) or _WORDS.get(key.lower())
+    role = _WORDS.get(key.lower().replace("δ", "Δ")) or _WORDS.get(key.lower())
+    return role or _qualified(text)
+
+
+def _qualified(text: str) -> str | None:
+    """Return the role of the symbol of a test with a word that says that it was computed."""
+    word = _COMPUTED.search(text)
+    if word is None:
+        return None
+    rest = text[: word.start()] + text[word.end() :]
+    role = role_of(rest) if rest.strip() else None
+    return role if role in _TESTS else None
