@@ -20,6 +20,7 @@ DIALECT = Dialect(
     lists=frozenset(("ul", "ol", "dl", "menu")),
     items=frozenset(("li", "dt", "dd")),
     within_items=frozenset(("li", "dt", "dd")),
+    amid=words("script svg button select canvas audio video object noscript datalist"),
 )
 
 READER = markup_reader(DIALECT)

@@ -9,7 +9,7 @@ from __future__ import annotations
 
 import re
 
-from crossfoot.documents.format import Definitions, Reader
+from crossfoot.documents.format import Reader
 from crossfoot.documents.markdown_blocks import Chunk, Opening
 from crossfoot.documents.markdown_chunk import analyse
 from crossfoot.documents.table import Table
@@ -147,18 +147,18 @@ def _front_matter(text: str, blocks: list[Block]) -> int:
     return closing.end()
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     from crossfoot.documents import markdown_shown  # most blocks are never shown
 
-    return markdown_shown.show(kind, source, definitions)
+    return markdown_shown.show(kind, source)
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table, which may be raw HTML or LaTeX."""
     from crossfoot.documents import markdown_shown
 
-    return markdown_shown.table(source, definitions)
+    return markdown_shown.table(source)
 
 
 READER = Reader(split, show, angle_comments, table=table)

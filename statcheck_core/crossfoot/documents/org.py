@@ -6,9 +6,10 @@ import re
 
 from crossfoot.documents.drawn_tables import read_table
 from crossfoot.documents.edits import MOST_MARKS, Closings, Edit, Marks, Pairs, apply_edits
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.mathtext import show_math
+from crossfoot.documents.names import Naming
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table
 from crossfoot.documents.tex_symbols import SYMBOLS
@@ -128,12 +129,12 @@ _MARK = Marks(
 )
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind == "verbatim":
         return _show_verbatim(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     start, end = 0, len(source)
     edits: list[Edit] = []
@@ -173,7 +174,7 @@ def _show_verbatim(source: str) -> Visible:
     return out.build()
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table; its first rule ends the header, the others say nothing."""
     lines = source.split("\n")
     rules = [number for number, line in enumerate(lines) if _RULE.fullmatch(line)]
@@ -280,4 +281,23 @@ def comments(text: str) -> tuple[Comment, ...]:
     )
 
 
-READER = Reader(split, show, comments, table=table)
+def _meaning(found: re.Match[str]) -> tuple[int, str]:
+    """Return the number of arguments of a macro and its body."""
+    body = re.sub(r"\$([1-9])", r"#\1", found["body"].strip())
+    return max(map(int, re.findall(r"#([1-9])", body)), default=0), body
+
+
+_NAMES = Naming(
+    hint="#+",
+    definition=expression(
+        r"^[ \t]*#\+macro:[ \t]+(?P<name>[A-Za-z][\w-]{0,60})[ \t]+(?P<body>[^\n]+)", re.M | re.I
+    ),
+    meaning=_meaning,
+    sign="{{{",
+    call=expression(
+        r"\{\{\{(?P<name>[A-Za-z][\w-]{0,60})"
+        r"(?:\((?P<arguments>(?:[^()\n]|\([^()\n]{0,100}\)){0,300})\))?\}\}\}"
+    ),
+)
+
+READER = Reader(split, show, comments, _NAMES.define, table=table, expand=_NAMES.expand)

@@ -6,9 +6,10 @@ import re
 
 from crossfoot.documents.drawn_tables import DASHES, GRID, read_table
 from crossfoot.documents.edits import Edit
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.mathtext import show_math
+from crossfoot.documents.names import Naming, plain_meaning
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.rst_inline import show_inline
 from crossfoot.documents.table import Table, TableBuilder
@@ -148,12 +149,12 @@ class _Splitter:
         return last
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind == "verbatim":
         return show_printout(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     start, end = 0, len(source)
     if kind == "heading":
@@ -201,7 +202,7 @@ _CELL = expression(r"[ \t]*-(?:[ \t]|$)")
 _FIELD = expression(r'[ \t]*("(?:[^"]|"")*"|[^,]*)[ \t]*(?:,|$)')
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table."""
     directive = _DIRECTIVE.match(source)
     if not directive:
@@ -282,4 +283,16 @@ def comments(text: str) -> tuple[Comment, ...]:
     return tuple(found)
 
 
-READER = Reader(split, show, comments, table=table)
+_NAMES = Naming(
+    hint="replace::",
+    definition=expression(
+        r"^[ \t]*\.\.[ \t]+\|(?P<name>[^|\n]{1,60})\|[ \t]+replace::[ \t]*"
+        r"(?P<body>[^\n]*(?:\n[ \t]+\S[^\n]*)*+)",
+        re.M,
+    ),
+    meaning=plain_meaning,
+    sign="|",
+    call=expression(r"(?<!\\)\|(?P<name>[^|\s](?:[^|\n]{0,58}[^|\s])?)\|_{0,2}"),
+)
+
+READER = Reader(split, show, comments, _NAMES.define, table=table, expand=_NAMES.expand)
