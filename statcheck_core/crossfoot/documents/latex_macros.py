@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Iterator, Mapping
 from functools import lru_cache
 
@@ -38,6 +39,8 @@ _CALL = expression(r"\\([A-Za-z@]+)|(?<!\\)%[^\n]*")
 _OPTION = expression(r"\s{0,9}\[([^\[\]\n]{0,200})\]")
 _ARGUMENT = expression(rf"\s{{0,9}}(?:({_GROUP})|(\\[A-Za-z@]+|[^\s{{}}\\]))")
 _NAMES = expression(r"\\([A-Za-z@]+)")
+#: What a definition stands for.
+_NOTHING = ""
 
 
 def define(text: str) -> Definitions:
@@ -77,20 +80,25 @@ def _macros(definitions: Definitions) -> dict[str, Macro]:
     for _ in range(DEEPEST):
         ready = [name for name in calls if name not in ending and calls[name] <= ending.keys()]
         ending.update((name, macros[name]) for name in ready)
-    return ending
+    return {**ending, _NOTHING: Macro(0, None, "")}
 
 
-def expand(source: str, definitions: Definitions) -> Visible:
-    """Return the source with its macros expanded."""
+def expand(source: str, definitions: Definitions, *, comments: bool = True) -> Visible:
+    """Return the source with its macros expanded, and without their definitions.
+
+    ``comments`` says whether a percent sign starts one.
+    """
     if not definitions or "\\" not in source:
         return verbatim(source)
-    return expanded(source, _macros(definitions), _calls)
+    return expanded(source, _macros(definitions), _calls if comments else _calls_in_words)
 
 
-def _calls(text: str, macros: Mapping[str, Macro]) -> Iterator[Call]:
-    """Find the calls outside definitions and comments."""
+def _calls(
+    text: str, macros: Mapping[str, Macro], pattern: re.Pattern[str] = _CALL
+) -> Iterator[Call]:
+    """Find the calls and the definitions, which show nothing, outside comments."""
     position = 0
-    while found := _CALL.search(text, position):
+    while found := pattern.search(text, position):
         position = found.end()
         macro = macros.get(found[1]) if found[1] else None
         if macro:
@@ -98,6 +106,11 @@ def _calls(text: str, macros: Mapping[str, Macro]) -> Iterator[Call]:
             yield Call(found[1], Span(found.start(), position), tuple(spans))
         elif found[1] and (definition := DEFINITION.match(text, found.start())):
             position = definition.end()
+            yield Call(_NOTHING, Span(*definition.span()))
+
+
+def _calls_in_words(text: str, macros: Mapping[str, Macro]) -> Iterator[Call]:
+    return _calls(text, macros, _NAMES)
 
 
 def _arguments(text: str, position: int, macro: Macro) -> tuple[list[Span | None], int]:

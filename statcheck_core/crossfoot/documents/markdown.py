@@ -9,7 +9,7 @@ from __future__ import annotations
 
 import re
 
-from crossfoot.documents.format import Reader
+from crossfoot.documents.format import Definitions, Reader
 from crossfoot.documents.markdown_blocks import Chunk, Opening
 from crossfoot.documents.markdown_chunk import analyse
 from crossfoot.documents.table import Table
@@ -161,4 +161,23 @@ def table(source: str) -> Table:
     return markdown_shown.table(source)
 
 
-READER = Reader(split, show, angle_comments, table=table)
+_DEFINED = expression(r"\\(?:(?:re)?newcommand|providecommand|def(?=\s?\\)|DeclareMathOperator)")
+
+
+def define(text: str) -> Definitions:
+    """Return the macros that a text defines for its formulas."""
+    if "\\" not in text or not _DEFINED.search(text):
+        return ()
+    from crossfoot.documents import latex_macros  # few texts define any
+
+    return latex_macros.define(text)
+
+
+def expand(source: str, definitions: Definitions) -> Visible:
+    """Return a source with its macros expanded."""
+    from crossfoot.documents import latex_macros
+
+    return latex_macros.expand(source, definitions, comments=False)
+
+
+READER = Reader(split, show, angle_comments, define, table=table, expand=expand)

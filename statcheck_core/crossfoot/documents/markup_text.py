@@ -52,7 +52,7 @@ STRUCK = frozenset(("del", "s", "strike"))
 #: Elements that an attribute can hide.
 _CAN_HIDE = words(
     "span div p section aside a i b em strong u small font li ul ol td tr table svg sup sub "
-    "mjx-math mjx-merror nav figure header footer details"
+    "mjx-math mjx-merror figure header footer details"
 )
 _HIDING = expression(
     r"katex-html|MathJax(?:_Preview|_SVG|_CHTML|_Display)?[\s\"']|mjx-chtml|aria-hidden=[\"']?true"

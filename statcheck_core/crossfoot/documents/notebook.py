@@ -152,5 +152,11 @@ def _text(value: object) -> str:
 
 
 READER = Reader(
-    markdown.split, markdown.show, angle_comments, extract=extract, table=markdown.table
+    markdown.split,
+    markdown.show,
+    angle_comments,
+    markdown.define,
+    extract=extract,
+    table=markdown.table,
+    expand=markdown.expand,
 )

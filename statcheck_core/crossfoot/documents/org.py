@@ -9,9 +9,10 @@ from crossfoot.documents.edits import MOST_MARKS, Closings, Edit, Marks, Pairs, 
 from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.mathtext import show_math
-from crossfoot.documents.names import Naming
+from crossfoot.documents.org_names import NAMES
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table
+from crossfoot.documents.tags import named
 from crossfoot.documents.tex_symbols import SYMBOLS
 from crossfoot.documents.visible import OPAQUE, Builder, Visible
 from crossfoot.expressions import expression
@@ -124,9 +125,12 @@ _MARK = Marks(
     r"|\\[(\[])"
     r"|\\(?P<entity>[A-Za-z]{1,30})(?:\{\})?|(?P<script>[\^_]\{(?P<braced>[^{}\n]{1,60})\})"
     r"|\^(?P<raised>[-+]?[A-Za-z0-9]{1,12}|\*{1,3})|(?P<run>(?:src|call)_[^\s{(\[]{1,40}"
-    r"(?:\[[^\]\n]{0,200}\])?(?:\{[^{}\n]{0,500}\}|\([^()\n]{0,500}\)))|(?P<macro>\{\{\{[^{}\n]{1,200}\}\}\})"
+    r"(?:\[[^\]\n]{0,200}\])?(?:\{[^{}\n]{0,500}\}|\([^()\n]{0,500}\)))|(?P<macro>\{\{\{(?:results\([=~]?(?P<result>[^{}()\n]{0,200}?)[=~]?\)|[^{}\n]{1,200})\}\}\})"
     r"|(?P<code>(?<![\w=~])(?P<tick>[=~])(?=\S)[^\n]{1,120}?(?<=\S)(?P=tick)(?![\w=~]))|(?P<mark>[*/_+])",
 )
+
+#: Entities that neither TeX nor HTML calls so.
+_ENTITIES = {"vert": "|", "slash": "/", "under": "_", "EUR": "€"}
 
 
 def show(kind: str, source: str) -> Visible:
@@ -226,8 +230,13 @@ def _handle(pairs: Pairs, found: re.Match[str], notes: list[int]) -> None:
     elif found["math"]:
         edits.append(Edit(*found.span(), _formula(found.string, *found.span())))
     elif found["entity"]:
-        if shown := SYMBOLS.get(found["entity"]):
+        # Org's names are TeX's, or else those of HTML.
+        name = found["entity"]
+        if shown := SYMBOLS.get(name) or _ENTITIES.get(name) or named(name):
             edits.append(Edit(*found.span(), shown))
+    elif found["result"] is not None:
+        edits.append(Edit(found.start(), found.start("result")))
+        edits.append(Edit(found.end("result"), found.end()))
     elif found["script"]:
         _script(edits, found, "braced", found["script"][0])
     elif found["raised"]:
@@ -281,23 +290,4 @@ def comments(text: str) -> tuple[Comment, ...]:
     )
 
 
-def _meaning(found: re.Match[str]) -> tuple[int, str]:
-    """Return the number of arguments of a macro and its body."""
-    body = re.sub(r"\$([1-9])", r"#\1", found["body"].strip())
-    return max(map(int, re.findall(r"#([1-9])", body)), default=0), body
-
-
-_NAMES = Naming(
-    hint="#+",
-    definition=expression(
-        r"^[ \t]*#\+macro:[ \t]+(?P<name>[A-Za-z][\w-]{0,60})[ \t]+(?P<body>[^\n]+)", re.M | re.I
-    ),
-    meaning=_meaning,
-    sign="{{{",
-    call=expression(
-        r"\{\{\{(?P<name>[A-Za-z][\w-]{0,60})"
-        r"(?:\((?P<arguments>(?:[^()\n]|\([^()\n]{0,100}\)){0,300})\))?\}\}\}"
-    ),
-)
-
-READER = Reader(split, show, comments, _NAMES.define, table=table, expand=_NAMES.expand)
+READER = Reader(split, show, comments, NAMES.define, table=table, expand=NAMES.expand)

@@ -9,9 +9,9 @@ from crossfoot.documents.edits import Edit
 from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.mathtext import show_math
-from crossfoot.documents.names import Naming, plain_meaning
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.rst_inline import show_inline
+from crossfoot.documents.rst_names import NAMES
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.visible import Builder, Visible
 from crossfoot.documents.words import words
@@ -29,7 +29,7 @@ _OPTION = expression(r"[ \t]+:[A-Za-z][\w -]{0,40}:(?:[ \t]|$)")
 _ADORNMENT = expression(r"([!-/:-@\[-`{-~])\1{2,}[ \t]*")
 _BULLET = expression(r"[ \t]*([-*+•])[ \t]+(?=(\S))")
 
-_CODE = words(
+_LISTINGS = words(
     "code code-block sourcecode parsed-literal highlight literalinclude prompt ipython "
     "productionlist doctest testcode testoutput jupyter-execute code-cell"
 )
@@ -88,7 +88,7 @@ class _Splitter:
         body = number + 1
         while body < after and _OPTION.match(lines.lines[body]):
             body += 1
-        if name in _CODE:
+        if name in _LISTINGS:
             return lines.add("verbatim", body, after)
         if name in _UNSEEN:
             return after
@@ -283,16 +283,4 @@ def comments(text: str) -> tuple[Comment, ...]:
     return tuple(found)
 
 
-_NAMES = Naming(
-    hint="replace::",
-    definition=expression(
-        r"^[ \t]*\.\.[ \t]+\|(?P<name>[^|\n]{1,60})\|[ \t]+replace::[ \t]*"
-        r"(?P<body>[^\n]*(?:\n[ \t]+\S[^\n]*)*+)",
-        re.M,
-    ),
-    meaning=plain_meaning,
-    sign="|",
-    call=expression(r"(?<!\\)\|(?P<name>[^|\s](?:[^|\n]{0,58}[^|\s])?)\|_{0,2}"),
-)
-
-READER = Reader(split, show, comments, _NAMES.define, table=table, expand=_NAMES.expand)
+READER = Reader(split, show, comments, NAMES.define, table=table, expand=NAMES.expand)

@@ -89,7 +89,7 @@ def _has_p(items: Sequence[Item]) -> bool:
 
 def _is_probability(part: Part) -> bool:
     """Say whether a number can be meant as a probability, if perhaps misprinted."""
-    return part.high <= 1.0 if part.relation in "<≤" else part.high >= 0.0 and part.low <= 1.5
+    return part.high <= 1.0 if part.relation in "<≤" else part.high >= 0.0 and part.low < 1.5
 
 
 def _spelt(text: str, part: Part) -> bool:
