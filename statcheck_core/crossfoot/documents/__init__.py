@@ -109,45 +109,57 @@ def show(language: str, kind: str, source: str, definitions: Definitions = ()) -
     if kind == "table":
         return table(language, source, definitions).visible
     reader = FORMATS[language].reader
-    if "\r" not in source:
-        return reader.show(kind, source, definitions)
-    lines = joined_lines(source)
-    return compose(lines, reader.show(kind, lines.text, definitions))
+    first = _first(reader, source, () if kind == "verbatim" else definitions)
+    if first is None:
+        return reader.show(kind, source)
+    return compose(first, reader.show(kind, first.text))
 
 
 def table(language: str, source: str, definitions: Definitions = ()) -> Table:
     """Return the table that a block of kind ``table`` holds, with its caption and notes."""
-    if "\r" in source:
-        lines = joined_lines(source)
-        found = table(language, lines.text, definitions)
-        return found._replace(visible=compose(lines, found.visible))
     reader = FORMATS[language].reader
+    first = _first(reader, source, definitions)
+    if first is None:
+        return _table(reader, source)
+    found = _table(reader, first.text)
+    return found._replace(visible=compose(first, found.visible))
+
+
+def _first(reader: Reader, source: str, definitions: Definitions) -> Visible | None:
+    """Return a source as a format's own functions want it, unless it is so already.
+
+    Its lines end in a line feed alone, and what the document defines is put in.
+    """
+    lines = joined_lines(source) if "\r" in source else None
+    if not definitions or reader.expand is None:
+        return lines
+    expanded = reader.expand(lines.text if lines else source, definitions)
+    return compose(lines, expanded) if lines else expanded
+
+
+def _table(reader: Reader, source: str) -> Table:
+    """Read a table with the caption and the notes that stand around it."""
     parts = reader.split(source)
     tables = [number for number, part in enumerate(parts) if part.kind == "table"]
     if len(tables) != 1 or len(parts) == 1:
-        return _plain_table(reader, source, definitions)
+        return _plain_table(reader, source)
     number = tables[0]
     inner = parts[number]
     words = [
-        (reader.show(part.kind, part.source, definitions), part.start)
-        for part in parts
-        if part is not inner
+        (reader.show(part.kind, part.source), part.start) for part in parts if part is not inner
     ]
     found = surrounded(
-        words[:number],
-        _plain_table(reader, inner.source, definitions),
-        inner.start,
-        words[number:],
+        words[:number], _plain_table(reader, inner.source), inner.start, words[number:]
     )
     if found.caption is None and is_caption(parts[number + 1].source):
         return found._replace(caption=found.notes[0], notes=found.notes[1:])
     return found
 
 
-def _plain_table(reader: Reader, source: str, definitions: Definitions) -> Table:
+def _plain_table(reader: Reader, source: str) -> Table:
     if reader.table is None:
-        return shown_table(reader.show("table", source, definitions))
-    return reader.table(source, definitions)
+        return shown_table(reader.show("table", source))
+    return reader.table(source)
 
 
 def show_block(document: Document, block: Block) -> Visible:

@@ -4,11 +4,11 @@ from __future__ import annotations
 
 import re
 
-from crossfoot.documents.asciidoc_inline import show_inline
+from crossfoot.documents.asciidoc_inline import show_inline, show_stem
 from crossfoot.documents.edits import Edit
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
-from crossfoot.documents.mathtext import show_math
+from crossfoot.documents.names import Naming, plain_meaning
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.visible import Builder, Visible
@@ -120,16 +120,16 @@ class _Splitter:
         return lines.add("verbatim" if literal else "prose", number, last)
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind == "verbatim":
         return show_printout(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     if source.startswith("++++"):
         start = source.find("\n") + 1
-        show_math(out, source, start, max(start, source.rfind("\n")))
+        show_stem(out, source, start, max(start, source.rfind("\n")))
         return out.build()
     heading = _HEADING.match(source) if kind == "heading" else None
     start = heading.end() if heading else 0
@@ -164,7 +164,7 @@ _BLANK_AFTER = expression(r"\n[ \t]*\n[ \t\n]*$")
 _WIDEST = 50
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table: its cells in order, as many a row as it has columns."""
     head = re.compile(r"^[|!,:]={3,}[ \t]*$", re.M).search(source)
     start = head.end() if head else 0
@@ -249,4 +249,12 @@ def comments(text: str) -> tuple[Comment, ...]:
     return tuple(found)
 
 
-READER = Reader(split, show, comments, table=table)
+_NAMES = Naming(
+    hint=":",
+    definition=expression(r"^:(?P<name>[\w-]{1,60}):[ \t]+(?P<body>[^\n]+)", re.M),
+    meaning=plain_meaning,
+    sign="{",
+    call=expression(r"(?<!\\)\{(?P<name>[\w-]{1,60})\}"),
+)
+
+READER = Reader(split, show, comments, _NAMES.define, table=table, expand=_NAMES.expand)

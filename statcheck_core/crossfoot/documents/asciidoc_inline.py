@@ -8,6 +8,7 @@ from collections.abc import Iterable
 from crossfoot.documents.edits import Edit, Marks, Walk, show_marked
 from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.tags import entity_at
+from crossfoot.documents.typst_math import show_typst_math
 from crossfoot.documents.visible import OPAQUE, Builder
 
 _MARK = Marks(
@@ -42,6 +43,12 @@ _KNOWN = {
 }
 
 
+def show_stem(out: Builder, source: str, start: int, end: int) -> None:
+    """Show a formula: in TeX, or in AsciiMath, whose words and brackets are like Typst's."""
+    is_tex = any(source.find(mark, start, end) >= 0 for mark in "\\{$")
+    (show_math if is_tex else show_typst_math)(out, source, start, end)
+
+
 def show_inline(
     out: Builder, source: str, start: int, end: int, line_edits: Iterable[Edit] = ()
 ) -> None:
@@ -61,7 +68,7 @@ class _Walk(Walk):
         if found["pair"]:
             self.pair(found["pair"], *found.span())
         elif found["macro"]:
-            self.macro(found)
+            return self.macro(found)
         elif found["script"]:
             self.script(found)
         elif found["entity"]:
@@ -98,18 +105,21 @@ class _Walk(Walk):
         else:
             self.around(found, "raised", ("^{" if found["script"] == "^" else "_{", "}"))
 
-    def macro(self, found: re.Match[str]) -> None:
-        """Handle a macro: a formula, a footnote, a link."""
+    def macro(self, found: re.Match[str]) -> int:
+        """Handle a macro and return where to go on: within a footnote or the words of a link."""
         name = found["name"]
         if name in ("stem", "latexmath", "asciimath"):
             out = Builder()
-            show_math(out, self.source, *found.span("body"))
+            show_stem(out, self.source, *found.span("body"))
             self.replace(found, out.build())
         elif name.startswith("footnote"):
             self.around(found, "body", (" (", ")") if found["body"] else ("", ""))
+            return found.start("body")
         elif (
             name in ("link", "xref", "http", "https", "pass", "kbd", "indexterm2") and found["body"]
         ):
             self.around(found, "body")
+            return found.start("body")
         else:
             self.replace(found, OPAQUE)
+        return found.end()

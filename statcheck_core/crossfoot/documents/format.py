@@ -11,7 +11,7 @@ from crossfoot.documents.table import Table
 from crossfoot.documents.visible import Visible
 from crossfoot.model import Block, Problem, Span
 
-#: Pairs of name and meaning that a document's markup defines (LaTeX macros).
+#: Pairs of name and meaning that a document's markup defines (macros, attributes, variables).
 Definitions = tuple[tuple[str, str], ...]
 
 
@@ -64,7 +64,7 @@ class Reader(NamedTuple):
     split
         Text to blocks, in order, without overlap.
     show
-        Kind and source of a block, and the document's definitions, to what a reader sees.
+        Kind and source of a block to what a reader sees.
     comments
         Text to its comments, in order.
     define
@@ -72,16 +72,20 @@ class Reader(NamedTuple):
     extract
         Bytes to text, for formats that are no text at heart; None means the bytes are text.
     table
-        Source of a table block and the document's definitions to the table; where it is None,
-        the rows and cells are those that ``show`` shows.
+        Source of a table block to the table; where it is None, the rows and cells are those that
+        ``show`` shows.
+    expand
+        Source of a block and the document's definitions to the source with what they stand for;
+        None where a format defines nothing. What is shown is the expanded source.
     """
 
     split: Callable[[str], tuple[Block, ...]]
-    show: Callable[[str, str, Definitions], Visible]
+    show: Callable[[str, str], Visible]
     comments: Callable[[str], tuple[Comment, ...]] = no_comments
     define: Callable[[str], Definitions] = no_definitions
     extract: Callable[[bytes], Extracted | Problem] | None = None
-    table: Callable[[str, Definitions], Table] | None = None
+    table: Callable[[str], Table] | None = None
+    expand: Callable[[str, Definitions], Visible] | None = None
 
 
 @cache

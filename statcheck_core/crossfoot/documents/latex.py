@@ -4,14 +4,14 @@ from __future__ import annotations
 
 import re
 
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.latex_macros import DEFINITION, GROUP, GROUP_PATTERN, define, expand
 from crossfoot.documents.latex_tables import read_table
 from crossfoot.documents.mathtext import show_tex
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table
 from crossfoot.documents.tex_symbols import ENVIRONMENT_ARGS, MATH_ENVIRONMENTS
-from crossfoot.documents.visible import Builder, Visible, compose
+from crossfoot.documents.visible import Builder, Visible
 from crossfoot.documents.words import words
 from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
@@ -221,23 +221,20 @@ def _has_rows(source: str) -> bool:
     return any("&" in line and line.rstrip().endswith("\\\\") for line in source.split("\n"))
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
-    """Show a block, its macros expanded."""
+def show(kind: str, source: str) -> Visible:
+    """Show a block."""
     if kind == "verbatim":
         return show_printout(source)
-    expanded = expand(source, definitions)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
-    show_tex(out, expanded.text, 0, len(expanded.text))
-    return compose(expanded, out.build())
+    show_tex(out, source, 0, len(source))
+    return out.build()
 
 
-def table(source: str, definitions: Definitions) -> Table:
-    """Read a table, its macros expanded."""
-    expanded = expand(source, definitions)
-    found = read_table(expanded.text)
-    return found._replace(visible=compose(expanded, found.visible))
+def table(source: str) -> Table:
+    """Read a table."""
+    return read_table(source)
 
 
 def comments(text: str) -> tuple[Comment, ...]:
@@ -254,4 +251,4 @@ def inputs(text: str) -> tuple[str, ...]:
     return tuple(found[1].strip() for found in _INPUT.finditer(text) if found[1])
 
 
-READER = Reader(split, show, comments, define, table=table)
+READER = Reader(split, show, comments, define, table=table, expand=expand)

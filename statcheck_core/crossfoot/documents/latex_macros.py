@@ -1,16 +1,15 @@
-"""The macros a LaTeX document defines, and their expansion with the way back to the call.
-
-Expansion is bounded: a text may not grow beyond a few times its size, whatever the macros say.
-"""
+"""The macros a LaTeX document defines, and their expansion with the way back to the call."""
 
 from __future__ import annotations
 
+import re
+from collections.abc import Iterator, Mapping
 from functools import lru_cache
-from typing import NamedTuple
 
 from crossfoot.documents.format import Definitions
+from crossfoot.documents.macros import DEEPEST, LONGEST, MOST, Call, Macro, expanded, macros_of
 from crossfoot.documents.tex_symbols import COMMANDS
-from crossfoot.documents.visible import Builder, Visible, compose, verbatim
+from crossfoot.documents.visible import Visible, verbatim
 from crossfoot.expressions import expression
 from crossfoot.model import Span
 
@@ -40,24 +39,8 @@ _CALL = expression(r"\\([A-Za-z@]+)|(?<!\\)%[^\n]*")
 _OPTION = expression(r"\s{0,9}\[([^\[\]\n]{0,200})\]")
 _ARGUMENT = expression(rf"\s{{0,9}}(?:({_GROUP})|(\\[A-Za-z@]+|[^\s{{}}\\]))")
 _NAMES = expression(r"\\([A-Za-z@]+)")
-_PARAMETER = expression(r"#([1-9])")
-_MEANING = expression(r"(?:\[(\d)\])?\s{0,9}(?:\[([^\[\]\n]{0,100})\])?\s{0,9}\{([\s\S]*)\}")
-
-#: Most definitions, longest meaning and deepest nesting that are followed.
-_MOST = 1000
-_LONGEST = 2000
-_DEEPEST = 8
-
-#: Most calls that are expanded in one block.
-_MOST_CALLS = 2000
-
-
-class Macro(NamedTuple):
-    """A macro: its number of arguments, the default of an optional first one, its body."""
-
-    arguments: int
-    default: str | None
-    body: str
+#: What a definition stands for.
+_NOTHING = ""
 
 
 def define(text: str) -> Definitions:
@@ -67,7 +50,7 @@ def define(text: str) -> Definitions:
         return ()
     for match in DEFINITION.finditer(text):
         groups = [group for group in match.groups() if group is not None]
-        if len(groups) != 3 or len(groups[2]) > _LONGEST or len(found) >= _MOST:
+        if len(groups) != 3 or len(groups[2]) > LONGEST or len(found) >= MOST:
             continue
         name, arguments, body = groups
         if arguments.startswith("#"):
@@ -90,68 +73,44 @@ def _specified(arguments: str) -> str:
 
 @lru_cache(maxsize=64)
 def _macros(definitions: Definitions) -> dict[str, Macro]:
-    """Return the macros by name."""
-    macros: dict[str, Macro] = {}
-    for name, meaning in definitions:
-        parsed = _MEANING.fullmatch(meaning)
-        if parsed:
-            macros[name] = Macro(int(parsed[1] or 0), parsed[2], parsed[3])
-    return _ending(macros)
-
-
-def _ending(macros: dict[str, Macro]) -> dict[str, Macro]:
     """Return the macros whose expansion comes to an end: none that calls itself in the end."""
+    macros = macros_of(definitions)
     calls = {name: set(_NAMES.findall(macro.body)) & set(macros) for name, macro in macros.items()}
     ending: dict[str, Macro] = {}
-    for _ in range(_DEEPEST):
+    for _ in range(DEEPEST):
         ready = [name for name in calls if name not in ending and calls[name] <= ending.keys()]
         ending.update((name, macros[name]) for name in ready)
-    return ending
+    return {**ending, _NOTHING: Macro(0, None, "")}
 
 
-def expand(source: str, definitions: Definitions) -> Visible:
-    """Return the source with its macros expanded.
+def expand(source: str, definitions: Definitions, *, comments: bool = True) -> Visible:
+    """Return the source with its macros expanded, and without their definitions.
 
-    What an argument contributes stands where it stands in the call; the rest of an expansion
-    stands for the marks of the call between its arguments.
+    ``comments`` says whether a percent sign starts one.
     """
-    shown = verbatim(source)
     if not definitions or "\\" not in source:
-        return shown
-    macros = _macros(definitions)
-    limit = 4_000 + 3 * len(source)
-    for _ in range(_DEEPEST):
-        once = _once(shown.text, macros, limit)
-        if once is None:
-            break
-        shown = compose(shown, once)
-    return shown
+        return verbatim(source)
+    return expanded(source, _macros(definitions), _calls if comments else _calls_in_words)
 
 
-def _once(text: str, macros: dict[str, Macro], limit: int) -> Visible | None:
-    """Expand the calls in ``text`` once; None if there is none, or no room left."""
-    out = Builder()
+def _calls(
+    text: str, macros: Mapping[str, Macro], pattern: re.Pattern[str] = _CALL
+) -> Iterator[Call]:
+    """Find the calls and the definitions, which show nothing, outside comments."""
     position = 0
-    room = limit - len(text)
-    left = _MOST_CALLS
-    while call := _CALL.search(text, position):
-        end = call.end()
-        macro = macros.get(call[1]) if call[1] else None
-        if macro is None:
-            definition = DEFINITION.match(text, call.start()) if call[1] else None
-            out.keep(text, position, definition.end() if definition else end)
-            position = definition.end() if definition else end
-            continue
-        out.keep(text, position, call.start())
-        spans, end = _arguments(text, end, macro)
-        room -= len(macro.body) + 2 * sum(span.end - span.start for span in spans if span)
-        left -= 1
-        if room < 0 or left < 0:
-            return None
-        _substitute(out, text, Span(call.start(), end), macro, spans)
-        position = end
-    out.keep(text, position, len(text))
-    return out.build() if left < _MOST_CALLS else None
+    while found := pattern.search(text, position):
+        position = found.end()
+        macro = macros.get(found[1]) if found[1] else None
+        if macro:
+            spans, position = _arguments(text, position, macro)
+            yield Call(found[1], Span(found.start(), position), tuple(spans))
+        elif found[1] and (definition := DEFINITION.match(text, found.start())):
+            position = definition.end()
+            yield Call(_NOTHING, Span(*definition.span()))
+
+
+def _calls_in_words(text: str, macros: Mapping[str, Macro]) -> Iterator[Call]:
+    return _calls(text, macros, _NAMES)
 
 
 def _arguments(text: str, position: int, macro: Macro) -> tuple[list[Span | None], int]:
@@ -173,31 +132,3 @@ def _arguments(text: str, position: int, macro: Macro) -> tuple[list[Span | None
             spans.append(Span(*found.span(2)))
             position = found.end()
     return spans, position
-
-
-def _substitute(
-    out: Builder, text: str, call: Span, macro: Macro, spans: list[Span | None]
-) -> None:
-    """Write a macro's body with its arguments in place."""
-    parts = _PARAMETER.split(macro.body)  # words, number, words, number … words
-    used = [int(number) - 1 for number in parts[1::2]]
-    present = [number for number in used if number < len(spans) and spans[number]]
-    in_order = present == sorted(set(present))
-    at = call.start
-    for index, words in enumerate(parts[::2]):
-        span = None
-        if index < len(used) and used[index] < len(spans):
-            span = spans[used[index]]
-            if span is None and used[index] == 0:
-                words += macro.default or ""
-        if not in_order:
-            out.put(words, *call)
-            if span:
-                out.put(text[slice(*span)], *call)
-        elif span:
-            out.put(words, at, span.start)
-            out.keep(text, *span)
-            at = span.end
-        else:
-            following = [spans[number] for number in used[index:] if number in present]
-            out.put(words, at, following[0].start if following and following[0] else call.end)

@@ -147,18 +147,37 @@ def _front_matter(text: str, blocks: list[Block]) -> int:
     return closing.end()
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     from crossfoot.documents import markdown_shown  # most blocks are never shown
 
-    return markdown_shown.show(kind, source, definitions)
+    return markdown_shown.show(kind, source)
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table, which may be raw HTML or LaTeX."""
     from crossfoot.documents import markdown_shown
 
-    return markdown_shown.table(source, definitions)
+    return markdown_shown.table(source)
 
 
-READER = Reader(split, show, angle_comments, table=table)
+_DEFINED = expression(r"\\(?:(?:re)?newcommand|providecommand|def(?=\s?\\)|DeclareMathOperator)")
+
+
+def define(text: str) -> Definitions:
+    """Return the macros that a text defines for its formulas."""
+    if "\\" not in text or not _DEFINED.search(text):
+        return ()
+    from crossfoot.documents import latex_macros  # few texts define any
+
+    return latex_macros.define(text)
+
+
+def expand(source: str, definitions: Definitions) -> Visible:
+    """Return a source with its macros expanded."""
+    from crossfoot.documents import latex_macros
+
+    return latex_macros.expand(source, definitions, comments=False)
+
+
+READER = Reader(split, show, angle_comments, define, table=table, expand=expand)

@@ -8,6 +8,7 @@ from crossfoot.documents.drawn_tables import DASHES, DELIMITER, GRID
 from crossfoot.documents.markdown_blocks import Chunk, Opening
 from crossfoot.documents.markdown_lines import (
     ATX,
+    CAPTIONED,
     DEEP,
     DIV,
     ENVIRONMENT,
@@ -19,6 +20,7 @@ from crossfoot.documents.markdown_lines import (
     ITEM,
     LINK,
     NOTE,
+    OPTION,
     PRINTED,
     QUOTE,
     RULE,
@@ -138,7 +140,10 @@ class _Analysis:
         if not fence:
             return 0
         self.flush()
-        kind = "code" if EXECUTED.match(rest, fence.end(1)) else "verbatim"
+        kind = "verbatim"
+        if EXECUTED.match(rest, fence.end(1)):
+            kind = "code"
+            number = self.options(number)
         close = rf"[ \t>]*{fence[1][0]}{{{len(fence[1])},}}[ \t]*$"
         closing = re.compile(close)
         for last in range(number + 1, len(self.lines)):
@@ -149,6 +154,17 @@ class _Analysis:
         after = self.starts[number] + len(self.lines[number]) + 1
         self.opening = Opening(kind, after, after - 1, "^" + close, exclusive=True)
         return len(self.lines)
+
+    def options(self, number: int) -> int:
+        """Add the captions among the options of a chunk that is run; return the last option."""
+        while True:
+            line, start = self.lines[number], self.starts[number]
+            for found in CAPTIONED.finditer(line):
+                inside = found[found.lastindex or 0].rstrip()
+                self.blocks.append(("prose", start + found.start(found.lastindex or 0), inside, 0))
+            if number + 1 == len(self.lines) or not OPTION.match(self.lines[number + 1]):
+                return number
+            number += 1
 
     def commented(self, number: int, rest: str) -> int:
         """Keep the lines of a comment together; one that is not closed here runs on."""

@@ -36,6 +36,11 @@ _TARGET = expression(r"\((?:[^()\\\n]|\\.|\([^()\n]*\))*+\)|\[[^\[\]\n]{0,200}\]
 _ATTRIBUTES = expression(r"\{[^{}\n]{0,200}\}")
 _TARGET_ATTRIBUTES = expression(r"\{(?:[#.][A-Za-z_]|[a-z-]{1,20}=)[^{}\n]{0,200}\}")
 _BRACES = expression(r"\{\{[^{}\n]{0,200}\}\}|\{[#.][A-Za-z_][^{}\n]{0,200}\}")
+#: Changes as an editor marks them: what is put in, or is highlighted, stays.
+_CRITIC = expression(
+    r"\{(?:\+\+(?P<added>[^{}]{1,500})\+\+|==(?P<marked>[^{}]{1,500})==|--[^{}]{1,500}--"
+    r"|>>[^{}]{1,500}<<|~~[^{}]{0,500}?~>(?P<new>[^{}]{0,500})~~)\}"
+)
 _NOTE = expression(r"\[\^[^\s\[\]]{1,60}\]")
 _RUN = expression(r"\{?[A-Za-z]{1,12}\}? ")
 _ROLE = expression(r"\{([a-z:]{1,20})\}$")
@@ -278,10 +283,21 @@ class _Inline:
         return self._edit(mark.start, entity[1], entity[0]) if entity else mark.end
 
     def _braces(self, mark: Mark) -> int:
+        critic = _CRITIC.match(self.source, mark.start, self.end)
+        if critic:
+            return self._edit(mark.start, critic.end(), self._shown(critic))
         braces = _BRACES.match(self.source, mark.start, self.end)
         if braces is None:
             return mark.end
         return self._edit(mark.start, braces.end(), OPAQUE if braces[0][1] == "{" else "")
+
+    def _shown(self, found: re.Match[str]) -> str | Visible:
+        """Show the part of a mark that is shown at all."""
+        if found.lastgroup is None:
+            return ""
+        out = Builder()
+        show_inline(out, self.source, *found.span(found.lastgroup))
+        return out.build()
 
 
 def _marks(source: str, start: int, end: int, edits: Sequence[Edit]) -> Iterator[Mark]:

@@ -9,6 +9,12 @@ from crossfoot.expressions import expression
 QUOTE = expression(r"(?: {0,3}> ?)+")
 #: The start of a chunk that is run: its lines are code, and what they print stands elsewhere.
 EXECUTED = expression(r"\s*\{[A-Za-z]")
+#: An option of such a chunk, and a caption among its options or in its first line.
+OPTION = expression(r"[ \t]*(?:#|//|%%)\|")
+CAPTIONED = expression(
+    r"(?:fig|tbl|lst)[.-]cap[ \t]*[:=][ \t]*(?:\"((?:[^\"\\\n]|\\.){1,2000})\"|'([^'\n]{1,2000})'"
+    r"|(?<=: )([^\s\"'>|!][^\n]*))"
+)
 FENCE = expression(r"[ \t]*(?:(?:[-+*]|\d{1,9}[.)])[ \t]+)?(`{3,}(?=[^`]*$)|~{3,})")
 ATX = expression(r" {0,3}(#{1,6})(?:[ \t]|$)")
 PRINTED = expression(r" {0,3}(#>|## )")

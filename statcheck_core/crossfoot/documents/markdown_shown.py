@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from crossfoot.documents.drawn_tables import read_table
 from crossfoot.documents.edits import Edit
-from crossfoot.documents.format import Definitions
 from crossfoot.documents.markdown_inline import show_inline
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table
@@ -19,12 +18,12 @@ _BULLET = expression(r"[ \t]*([-+*])[ \t]+(?=(\S))")
 _LABEL = expression(r"[ \t]*(?:\[\^[^\s\[\]]{1,60}\]:|:(?!:)|Table:)[ \t]*")
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind in ("verbatim", "code"):
         return show_printout(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     start, end = 0, len(source)
     if kind == "heading":
@@ -39,7 +38,7 @@ def show(kind: str, source: str, definitions: Definitions) -> Visible:
     return out.build()
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table, which may be raw HTML or LaTeX."""
     head = source.lstrip()[:2]
     if head[:1] == "<":
@@ -51,7 +50,7 @@ def table(source: str, definitions: Definitions) -> Table:
     if head[:1] == "\\":
         from crossfoot.documents import latex
 
-        return latex.table(source, definitions)
+        return latex.table(source)
     return read_table(source, show_inline)
 
 

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from crossfoot.documents.markdown_math import formula
 from crossfoot.documents.tags import Tag, attribute_span
-from crossfoot.documents.visible import OPAQUE, Visible
+from crossfoot.documents.visible import OPAQUE, Builder, Visible
 from crossfoot.documents.words import words
 
 #: Tags that Markdown passes on to HTML; others are text that looks like one (``p<b and c>3``).
@@ -22,8 +22,14 @@ APART = words(
 
 
 def image(source: str, tag: Tag) -> Visible | str:
-    """Show an image: the formula in its alternative text, else nothing that can be read."""
+    """Show an image: the formula in its alternative text, or what is said of it there."""
     span = attribute_span(tag, "alt")
-    if span and source[span.start] == source[span.end - 1] == "$" and span.end - span.start > 2:
+    if span is None or span.end <= span.start:
+        return OPAQUE
+    if source[span.start] == source[span.end - 1] == "$" and span.end - span.start > 2:
         return formula(source, span.start + 1, span.end - 1)
-    return OPAQUE
+    out = Builder()
+    out.put(OPAQUE, tag.start, span.start)
+    out.keep(source, *span)
+    out.put(OPAQUE, span.end, tag.end)
+    return out.build()

@@ -65,7 +65,7 @@ class _Splitter:
             self.scanner.position = self.scanner.after(inside) if inside else tag.end
         elif name == "img":
             span = attribute_span(tag, "alt")
-            self.seen = self.seen or bool(span and self.text[span.start] in "$\\")
+            self.seen = self.seen or bool(span and span.start < span.end)
         elif name in dialect.lists:
             self.list(tag)
         elif name in dialect.blocks:
@@ -103,7 +103,8 @@ class _Splitter:
             return
         after = self.scanner.after(inside)
         self.scanner.position = after
-        if tag.name in self.dialect.blocks or tag.name in self.dialect.hidden:
+        amid = tag.name in self.dialect.amid
+        if tag.name in self.dialect.blocks or (tag.name in self.dialect.hidden and not amid):
             self.flush(tag.start, after)
 
     def table(self, tag: Tag) -> None:

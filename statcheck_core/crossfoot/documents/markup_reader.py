@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from crossfoot.documents.format import Definitions, Reader
+from crossfoot.documents.format import Reader
 from crossfoot.documents.markup_blocks import split_markup
 from crossfoot.documents.markup_tables import read_table
 from crossfoot.documents.markup_text import Dialect, show_element
@@ -19,13 +19,13 @@ def markup_reader(dialect: Dialect) -> Reader:
     def split(text: str) -> tuple[Block, ...]:
         return split_markup(text, dialect)
 
-    def show(kind: str, source: str, definitions: Definitions) -> Visible:
+    def show(kind: str, source: str) -> Visible:
         if kind == "table":
             return read_table(source, dialect).visible
         shown = show_element(source, 0, len(source), dialect)
         return compose(shown, show_printout(shown.text)) if kind == "verbatim" else shown
 
-    def table(source: str, definitions: Definitions) -> Table:
+    def table(source: str) -> Table:
         return read_table(source, dialect)
 
     return Reader(split, show, angle_comments, table=table)

@@ -33,6 +33,8 @@ class Dialect(NamedTuple):
         Blocks that do not part a list.
     sections
         Elements whose depth is the level of a heading.
+    amid
+        Hidden elements that may stand amid a line, which they do not part.
     """
 
     blocks: frozenset[str]
@@ -42,6 +44,7 @@ class Dialect(NamedTuple):
     items: frozenset[str]
     within_items: frozenset[str] = frozenset()
     sections: frozenset[str] = frozenset()
+    amid: frozenset[str] = frozenset()
 
 
 STRUCK = frozenset(("del", "s", "strike"))
@@ -49,7 +52,7 @@ STRUCK = frozenset(("del", "s", "strike"))
 #: Elements that an attribute can hide.
 _CAN_HIDE = words(
     "span div p section aside a i b em strong u small font li ul ol td tr table svg sup sub "
-    "mjx-container mjx-math mjx-assistive-mml mjx-merror nav figure header footer details"
+    "mjx-math mjx-merror figure header footer details"
 )
 _HIDING = expression(
     r"katex-html|MathJax(?:_Preview|_SVG|_CHTML|_Display)?[\s\"']|mjx-chtml|aria-hidden=[\"']?true"
@@ -184,14 +187,21 @@ class _Text:
             self.out.add(_tex(self.source, span, raw=False))
 
     def image(self, tag: Tag) -> None:
-        """Show the formula an image stands for; anything else has no text."""
+        """Show the formula an image stands for, or what is said of it, apart from the text."""
         span = attribute_span(tag, "alt")
-        text = self.source[slice(*span)] if span else ""
-        if span and text.startswith(("$", "\\(", "\\[")):
+        if span and is_formula(self.source, span):
             self.out.add(_tex(self.source, span, raw=False))
         else:
             self.out.put(OPAQUE, tag.start, tag.end)
+            if span and span.start < span.end:
+                put_words(self.out, self.source, Words(*span))
+                self.out.put(OPAQUE, span.end, tag.end)
         self.shown = True
+
+
+def is_formula(source: str, span: Span) -> bool:
+    """Tell whether the alternative text of an image is a formula in TeX."""
+    return source.startswith(("$", "\\(", "\\[", "{\\"), span.start)
 
 
 def put_words(out: Builder, source: str, words: Words) -> None:

@@ -20,6 +20,9 @@ _SURROGATE = expression("[\ud800-\udfff]")
 #: What colours the text that code prints.
 TERMINAL = expression(r"\x1b\[[0-9;]{0,20}[A-Za-z]")
 
+#: What stands in place of an object that shows itself in another form.
+_OBJECT = expression(r"<[\w.]{1,200}[^<>\n]{0,200}>")
+
 #: Most cells that are read.
 _MOST = 20_000
 
@@ -126,9 +129,11 @@ def _output(output: object) -> Iterator[Part]:
         ("verbatim", output.get("text")),
         ("verbatim", forms.get("text/plain")),
         ("markdown", forms.get("text/markdown")),
+        ("markdown", forms.get("text/latex")),
         ("markdown", forms.get("text/html")),
     ):
-        if text := _text(value):
+        text = _text(value)
+        if text and not _OBJECT.fullmatch(text):
             yield Part(kind, text, value)
             return
 
@@ -147,5 +152,11 @@ def _text(value: object) -> str:
 
 
 READER = Reader(
-    markdown.split, markdown.show, angle_comments, extract=extract, table=markdown.table
+    markdown.split,
+    markdown.show,
+    angle_comments,
+    markdown.define,
+    extract=extract,
+    table=markdown.table,
+    expand=markdown.expand,
 )

@@ -6,11 +6,13 @@ import re
 
 from crossfoot.documents.drawn_tables import read_table
 from crossfoot.documents.edits import MOST_MARKS, Closings, Edit, Marks, Pairs, apply_edits
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.mathtext import show_math
+from crossfoot.documents.org_names import NAMES
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table
+from crossfoot.documents.tags import named
 from crossfoot.documents.tex_symbols import SYMBOLS
 from crossfoot.documents.visible import OPAQUE, Builder, Visible
 from crossfoot.expressions import expression
@@ -123,17 +125,20 @@ _MARK = Marks(
     r"|\\[(\[])"
     r"|\\(?P<entity>[A-Za-z]{1,30})(?:\{\})?|(?P<script>[\^_]\{(?P<braced>[^{}\n]{1,60})\})"
     r"|\^(?P<raised>[-+]?[A-Za-z0-9]{1,12}|\*{1,3})|(?P<run>(?:src|call)_[^\s{(\[]{1,40}"
-    r"(?:\[[^\]\n]{0,200}\])?(?:\{[^{}\n]{0,500}\}|\([^()\n]{0,500}\)))|(?P<macro>\{\{\{[^{}\n]{1,200}\}\}\})"
+    r"(?:\[[^\]\n]{0,200}\])?(?:\{[^{}\n]{0,500}\}|\([^()\n]{0,500}\)))|(?P<macro>\{\{\{(?:results\([=~]?(?P<result>[^{}()\n]{0,200}?)[=~]?\)|[^{}\n]{1,200})\}\}\})"
     r"|(?P<code>(?<![\w=~])(?P<tick>[=~])(?=\S)[^\n]{1,120}?(?<=\S)(?P=tick)(?![\w=~]))|(?P<mark>[*/_+])",
 )
 
+#: Entities that neither TeX nor HTML calls so.
+_ENTITIES = {"vert": "|", "slash": "/", "under": "_", "EUR": "€"}
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind == "verbatim":
         return _show_verbatim(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     start, end = 0, len(source)
     edits: list[Edit] = []
@@ -173,7 +178,7 @@ def _show_verbatim(source: str) -> Visible:
     return out.build()
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table; its first rule ends the header, the others say nothing."""
     lines = source.split("\n")
     rules = [number for number, line in enumerate(lines) if _RULE.fullmatch(line)]
@@ -225,8 +230,13 @@ def _handle(pairs: Pairs, found: re.Match[str], notes: list[int]) -> None:
     elif found["math"]:
         edits.append(Edit(*found.span(), _formula(found.string, *found.span())))
     elif found["entity"]:
-        if shown := SYMBOLS.get(found["entity"]):
+        # Org's names are TeX's, or else those of HTML.
+        name = found["entity"]
+        if shown := SYMBOLS.get(name) or _ENTITIES.get(name) or named(name):
             edits.append(Edit(*found.span(), shown))
+    elif found["result"] is not None:
+        edits.append(Edit(found.start(), found.start("result")))
+        edits.append(Edit(found.end("result"), found.end()))
     elif found["script"]:
         _script(edits, found, "braced", found["script"][0])
     elif found["raised"]:
@@ -280,4 +290,4 @@ def comments(text: str) -> tuple[Comment, ...]:
     )
 
 
-READER = Reader(split, show, comments, table=table)
+READER = Reader(split, show, comments, NAMES.define, table=table, expand=NAMES.expand)

@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 
 from crossfoot.documents.captions import together
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.visible import Visible, verbatim
 from crossfoot.expressions import expression
@@ -79,7 +79,7 @@ def _kind(part: str) -> str:
     return "prose"
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show the source as it stands, a printout without comment marks."""
     return show_printout(source) if kind == "verbatim" else verbatim(source)
 

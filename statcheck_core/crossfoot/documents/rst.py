@@ -6,11 +6,12 @@ import re
 
 from crossfoot.documents.drawn_tables import DASHES, GRID, read_table
 from crossfoot.documents.edits import Edit
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.rst_inline import show_inline
+from crossfoot.documents.rst_names import NAMES
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.visible import Builder, Visible
 from crossfoot.documents.words import words
@@ -28,7 +29,7 @@ _OPTION = expression(r"[ \t]+:[A-Za-z][\w -]{0,40}:(?:[ \t]|$)")
 _ADORNMENT = expression(r"([!-/:-@\[-`{-~])\1{2,}[ \t]*")
 _BULLET = expression(r"[ \t]*([-*+•])[ \t]+(?=(\S))")
 
-_CODE = words(
+_LISTINGS = words(
     "code code-block sourcecode parsed-literal highlight literalinclude prompt ipython "
     "productionlist doctest testcode testoutput jupyter-execute code-cell"
 )
@@ -87,7 +88,7 @@ class _Splitter:
         body = number + 1
         while body < after and _OPTION.match(lines.lines[body]):
             body += 1
-        if name in _CODE:
+        if name in _LISTINGS:
             return lines.add("verbatim", body, after)
         if name in _UNSEEN:
             return after
@@ -148,12 +149,12 @@ class _Splitter:
         return last
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind == "verbatim":
         return show_printout(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     start, end = 0, len(source)
     if kind == "heading":
@@ -201,7 +202,7 @@ _CELL = expression(r"[ \t]*-(?:[ \t]|$)")
 _FIELD = expression(r'[ \t]*("(?:[^"]|"")*"|[^,]*)[ \t]*(?:,|$)')
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table."""
     directive = _DIRECTIVE.match(source)
     if not directive:
@@ -282,4 +283,4 @@ def comments(text: str) -> tuple[Comment, ...]:
     return tuple(found)
 
 
-READER = Reader(split, show, comments, table=table)
+READER = Reader(split, show, comments, NAMES.define, table=table, expand=NAMES.expand)

@@ -74,11 +74,11 @@ def entity_at(text: str, start: int, end: int) -> tuple[str, int] | None:
         if not 0 < number < 0x110000 or 0xD800 <= number < 0xE000:
             return "\ufffd", found.end()
         return chr(number), found.end()
-    shown = _named(found[3]) if found[4] or found[3] in _BARE else None
+    shown = named(found[3]) if found[4] or found[3] in _BARE else None
     return (shown, found.end()) if shown else None
 
 
-def _named(name: str) -> str | None:
+def named(name: str) -> str | None:
     """Return what a named character reference shows."""
     from html.entities import html5  # a large table: only for documents that name characters
 

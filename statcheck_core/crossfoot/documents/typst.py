@@ -5,11 +5,12 @@ from __future__ import annotations
 import re
 
 from crossfoot.documents.edits import Edit
-from crossfoot.documents.format import Comment, Definitions, Reader
+from crossfoot.documents.format import Comment, Reader
 from crossfoot.documents.lines import Lines
 from crossfoot.documents.printout import show_printout
 from crossfoot.documents.table import Table, TableBuilder
 from crossfoot.documents.typst_inline import show_inline
+from crossfoot.documents.typst_names import NAMES
 from crossfoot.documents.visible import Builder, Visible
 from crossfoot.expressions import expression
 from crossfoot.model import Block, Span
@@ -147,12 +148,12 @@ def _closing(text: str, start: int, soonest: int) -> int | None:
     return soonest if depth == 0 else None
 
 
-def show(kind: str, source: str, definitions: Definitions) -> Visible:
+def show(kind: str, source: str) -> Visible:
     """Show a block."""
     if kind == "verbatim":
         return show_printout(source)
     if kind == "table":
-        return table(source, definitions).visible
+        return table(source).visible
     out = Builder()
     heading = _HEADING.match(source) if kind == "heading" else None
     start = heading.end() if heading else 0
@@ -185,7 +186,7 @@ _CELL = expression(
 _WIDEST = 50
 
 
-def table(source: str, definitions: Definitions) -> Table:
+def table(source: str) -> Table:
     """Read a table: its cells in order, as many a row as it has columns."""
     count = _COUNT.search(source)
     columns = 1
@@ -256,4 +257,4 @@ def comments(text: str) -> tuple[Comment, ...]:
     )
 
 
-READER = Reader(split, show, comments, table=table)
+READER = Reader(split, show, comments, NAMES.define, table=table, expand=NAMES.expand)

@@ -85,7 +85,7 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
     if keys == ("df",) and len(pieces) == 2:
         if _THOUSANDS.fullmatch(inner):
             pieces = [(inner, 0)]
-        elif pieces[0][0].strip() == "1":  # t(1, 58): the df of its F
+        elif pieces[0][0].strip() == "1" and "/" not in inner:  # t(1, 58): the df of its F
             pieces = pieces[1:]
     if match["more"]:
         pieces.append((match["more"], match.start("more") - start))

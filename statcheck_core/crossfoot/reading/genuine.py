@@ -141,7 +141,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
             return False
         if not (counted or near(_RELATED, items, text) or _is_listed(items, test, text)):
             return False
-        if _is_lowered(test, text) and not has_p:
+        if (_is_lowered(test, text) or _is_index(test)) and not has_p:
             return False
         return _spelt(text, value) and (has_p or counted) and (possible or "df" in quantities)
     if anchor == "z":
@@ -180,6 +180,11 @@ def _is_lowered(test: Item, text: str) -> bool:
     """Say whether the df of a test are lowered, as the indices of a sequence are."""
     first = next((part for part in test.parts if part.quantity in {"df", "df1"}), None)
     return first is not None and text[test.start : first.start].rstrip().endswith("_{")
+
+
+def _is_index(test: Item) -> bool:
+    """Say whether the df of a test are so few that they may be an argument, a lag, an index."""
+    return any(part.quantity == "df" and part.high < _FEWEST for part in test.parts)
 
 
 def _is_listed(items: Sequence[Item], test: Item, text: str) -> bool:

@@ -224,6 +224,8 @@ def _may_lead(items: Sequence[Item], gaps: Sequence[float], start: int, anchor: 
     item = items[start - 1]
     if gaps[start - 1] >= (_NEAR if item.head in _TRAILS else APART):
         return False
+    if item.head == "p" and item.parts[0].low > 1.0:
+        return False  # the number of a page, a prime, a part
     taken = {_key(items[i]) for i in range(start, anchor.last + 1)}
     return _key(item) not in taken
 

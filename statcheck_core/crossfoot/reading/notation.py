@@ -285,7 +285,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "r",
-        r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
+        r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\(?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
         r"|(?:Pearson[rR]|Spearmanr|Kendalltau)Result\((?:statistic|correlation)"
         r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?=\s(?:was|is|of|=|between|with|for)\s))",
         False,
@@ -318,7 +318,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        r"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}?)?(?![\w²]|'\w)|p(?=_\{\w{1,12}\})",
+        r"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}?)?(?![\w²]|'\w)|[pP](?=_\{[^\W\d][^{}\n]{0,24}\})",
         False,
         "pP",
         "F(2, 57) = 3.90, p = .026",

@@ -281,7 +281,12 @@ def _index_of_p(index: str) -> tuple[str, ...]:
 _INDICES_OF_P = (
     (expression(r"^(?:GG|HF|[Gg]reenhouse|[Hh]uynh)"), ("adjusted-df",)),
     (expression(r"perm|boot|rand|exact|mc\b|sim", re.IGNORECASE), ("resampled",)),
-    (expression(r"^(?:trend|inter|value|overall|diff|model|group|time|val|obs|[a-z]?)$"), ()),
+    (
+        expression(
+            r"^(?:trend|inter(?:action)?|value|overall|diff|model|group|time|val|obs|[a-z]?)$"
+        ),
+        (),
+    ),
 )
 
 

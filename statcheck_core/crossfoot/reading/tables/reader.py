@@ -15,11 +15,12 @@ from crossfoot.reading.tables.anova import anova, bare
 from crossfoot.reading.tables.coefficients import coefficients
 from crossfoot.reading.tables.columns import columns_of, roles_in, writes_comma
 from crossfoot.reading.tables.comparisons import comparisons
+from crossfoot.reading.tables.contents import content_of
 from crossfoot.reading.tables.correlations import correlations
 from crossfoot.reading.tables.grid import Box, Panel, panels_of
 from crossfoot.reading.tables.keyvalue import key_values
 from crossfoot.reading.tables.legend import Legend
-from crossfoot.reading.tables.making import Column, Found, Sheet
+from crossfoot.reading.tables.making import Column, Found, Sheet, reading
 from crossfoot.reading.tables.results import results
 from crossfoot.reading.tables.rows import label_of
 from crossfoot.reading.tables.sidebyside import side_by_side
@@ -95,7 +96,7 @@ def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, 
         )  # fmt: skip
         known = _recognised(sheet)
         found += known.claims
-        found += _written_out(panel, known.rows, stretches, prose, folded)
+        found += _written_out(sheet, known.rows, stretches, prose)
     notes = [
         c
         for start, end in stretches
@@ -182,14 +183,11 @@ def _title(folded: str, table: Table) -> str:
 
 
 def _written_out(
-    panel: Panel,
-    read: frozenset[int],
-    stretches: Iterable[tuple[int, int]],
-    prose: Prose,
-    folded: str,
+    sheet: Sheet, read: frozenset[int], stretches: Iterable[tuple[int, int]], prose: Prose
 ) -> list[Claim]:
     """Read the rows whose cells hold whole results, as far as nothing else has read them."""
     notes = set(stretches)
+    panel, folded = sheet.panel, sheet.folded
     claims: list[Claim] = []
     left = [row for index, row in enumerate(panel.rows) if index not in read]
     for row in (*panel.heads, *left):
@@ -199,8 +197,33 @@ def _written_out(
             continue
         start, end = filled[0].start, filled[-1].end
         if _STATED.search(folded, start, end):
-            claims += [_in_cell(claim, panel, filled) for claim in prose(start, end)]
+            own = [_in_cell(claim, panel, filled) for claim in prose(start, end)]
+            claims += [_completed(own[0], sheet, filled)] if len(own) == 1 else own
     return claims
+
+
+#: What the row of a test may print in a column of its own.
+_BESIDE = ("p", "eta2_partial", "eta2", "omega2")
+
+
+def _completed(claim: Claim, sheet: Sheet, row: Sequence[Box]) -> Claim:
+    """Add to the only result of a row what its other columns print of it."""
+    for quantity in _BESIDE:
+        columns = [c.number for c in sheet.columns if c.heading.roles == (quantity,)]
+        boxes = [box for box in row if [box.column] == columns]
+        content = content_of(boxes[0].text, boxes[0].start) if boxes else None
+        if (
+            content is None
+            or len(content.numbers) != 1
+            or any(r.quantity == quantity for r in claim.readings)
+        ):
+            continue
+        found = reading(sheet, content.numbers[0], quantity)
+        if found is not None and found.low <= 1.0:
+            readings = tuple(sorted((*claim.readings, found), key=lambda r: r.span))
+            span = claim.span._replace(end=max(claim.span.end, found.span.end))
+            claim = claim._replace(readings=readings, span=span)
+    return claim
 
 
 def _in_cell(claim: Claim, panel: Panel, row: Sequence[Box]) -> Claim:

@@ -99,7 +99,7 @@ def _with_symbols(sheet: Sheet) -> tuple[Column, ...]:
     """Name columns by their cells, where each holds a test: ``F(2, 57) = 4.47``."""
     columns = list(sheet.columns)
     for place, column in enumerate(columns):
-        if column.heading.roles or not column.box.text:
+        if column.heading.roles not in {(), ("statistic",)} or not column.box.text:
             continue
         texts = [row[column.number].text for row in sheet.panel.rows[:60]]
         contents = [content_of(text) for text in texts if text]
