@@ -59,7 +59,7 @@ class TestWordsThatReachFurther:
         told = f"All tests were one-tailed.\n\n{test}\n"
         hinted = f"A directional hypothesis guided the design.\n\n{test}\n"
         assert contexts(told) == [("one-sided",)]
-        assert contexts(hinted) == [()]
+        assert contexts(hinted) == [("either-sided",)]
 
     def test_a_result_that_says_otherwise_is_believed(self) -> None:
         result = "Plots differed, *t*(58) = 2.05, *p* = .045 (two-tailed)."
@@ -118,7 +118,7 @@ class TestWordsThatReachFurther:
         # Neither where nothing is adjusted, nor in another section.
         plain = printout.format("Results are on the log scale")
         assert identities(f"{plain}\n{quoted}") == ["p-from-z", "p-from-z"]
-        assert identities(f"{told}\n# Another study\n\n{quoted}") == ["p-from-z"]
+        assert contexts(f"{told}\n# Another study\n\n{quoted}") == [("adjusted-p",), ()]
 
 
 class TestRemarks:

@@ -2,13 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable, Iterator, Sequence
+from collections.abc import Iterator, Sequence
 from typing import TYPE_CHECKING
 
 from crossfoot import documents
-from crossfoot.model import Audited, Block, Claim, Document, Placed, Report
+from crossfoot.model import Claim, Document, Placed, Report
 from crossfoot.reading import read_block
-from crossfoot.reading.contexts import above, is_methods, spreading, titled
+from crossfoot.scope import Held, Scope, Whole, in_scope
 from crossfoot.settings import DEFAULTS, Settings
 
 if TYPE_CHECKING:
@@ -67,123 +67,35 @@ def _opened(path: str, text: str, language: str) -> Document:
     return documents.open_document(path, text.encode("utf-8", "replace"), language)
 
 
-#: What holds for a printout and for the prose that retells it.
-_RETOLD = frozenset({"adjusted-p"})
-
-#: A note below a printout is no longer than this.
-_LONGEST_NOTE = 240
-
-
-class _Scope:
-    """The contexts that earlier paragraphs and remarks state for what follows them."""
-
-    def __init__(self, assumed: Sequence[Assume]) -> None:
-        self.document: frozenset[str] = frozenset()
-        self.section: frozenset[str] = frozenset()
-        #: What the last printout of the section says of its p values, and so of their retelling.
-        self.printed: frozenset[str] = frozenset()
-        self.alpha: float | None = None
-        self.section_alpha: float | None = None
-        self.methods = False
-        self._level = 0
-        self._waiting = list(assumed)
-
-    def heading(self, block: Block) -> None:
-        self.section = frozenset()
-        self.printed = frozenset()
-        self.section_alpha = None
-        if block.level <= self._level or not self.methods:
-            self._level = block.level
-            self.methods = is_methods(block.source)
-
-    def reach(self, end: int) -> None:
-        """Take up the remarks that stand before ``end``."""
-        while self._waiting and self._waiting[0].span.start < end:
-            remark = self._waiting.pop(0)
-            if remark.context is not None:
-                self.section |= {remark.context}
-            else:
-                self.section_alpha = remark.alpha
-
-    def spread(self, contexts: frozenset[str], alpha: float | None) -> None:
-        if self.methods:
-            self.document |= contexts
-        else:
-            self.section |= contexts
-        if alpha is not None:
-            self.alpha = alpha
-
-    def apply(self, claim: Claim, noted: frozenset[str]) -> Claim:
-        alpha = claim.alpha or self.section_alpha or self.alpha
-        inherited = self.document or self.section or self.printed or noted
-        if inherited:
-            retold = self.printed if not _several_df(claim) else frozenset()
-            inherited = (self.document | self.section | retold | noted) - _opposed(claim.context)
-        if not inherited and alpha == claim.alpha:
-            return claim
-        return claim._replace(context=tuple(sorted({*claim.context, *inherited})), alpha=alpha)
-
-
-def _several_df(claim: Claim) -> bool:
-    """Say whether a test is of several degrees of freedom at once, so that it is no comparison."""
-    return any(reading.quantity == "df1" and reading.low > 1 for reading in claim.readings)
-
-
-def _opposed(context: Iterable[str]) -> set[str]:
-    """Return what a claim's own words rule out of what earlier paragraphs say."""
-    sides = {"one-sided": "two-sided", "two-sided": "one-sided"}
-    return {sides[key] for key in context if key in sides}
-
-
 def _audited(document: Document, assumed: Sequence[Assume], settings: Settings) -> Iterator[Placed]:
-    scope = _Scope(assumed)
-    number = 0
-    audit: Callable[[Claim, float], Audited] | None = None
-    language, definitions, level = document.language, document.definitions, settings.alpha
+    """Yield the claims of a document, audited in the contexts that hold where they stand.
+
+    All blocks are read before any claim is audited, since methods may be told last.
+    """
+    scope = Scope(document, assumed)
+    language, definitions = document.language, document.definitions
+    found: list[tuple[int, Sequence[Claim], Held]] = []
     for index, block in enumerate(document.blocks):
         kind, start, source, _ = block
-        if assumed:
-            scope.reach(start)
-        if kind == "heading":
-            scope.heading(block)
+        scope.enter(block)
         reading = read_block(language, kind, source, definitions)
         if reading.claims:
-            audit = audit or _auditor()
-            noted = _beside(document, index)
-            for claim in reading.claims:
-                number += 1
-                yield Placed(f"c{number}", start, audit(scope.apply(claim, noted), level))
-            if kind == "verbatim":
-                scope.printed = frozenset(
-                    _RETOLD.intersection(*(c.context for c in reading.claims))
-                )
-        elif reading.cues.contexts or reading.cues.alpha:
-            said = titled(source) if kind == "heading" else spreading(source)
-            scope.spread(said, reading.cues.alpha)
+            found.append((start, reading.claims, scope.held(index)))
+        scope.leave(block, reading)
+    if found:
+        yield from _in_scope(found, scope.whole(), settings.alpha)
 
 
-def _auditor() -> Callable[[Claim, float], Audited]:
-    """Import what audits, with the first claim: a document without a result pays for nothing."""
+def _in_scope(
+    found: Sequence[tuple[int, Sequence[Claim], Held]], whole: Whole, level: float
+) -> Iterator[Placed]:
+    # What audits is imported with the first claim: a document without a result pays for nothing.
     from crossfoot.audit import audit_claim
 
-    return audit_claim
-
-
-def _beside(document: Document, index: int) -> frozenset[str]:
-    """Return what the paragraphs right above and below a table or printout say of it."""
-    found = _note_below(document, index)
-    if document.blocks[index].kind in {"table", "verbatim"} and index > 0:
-        before = document.blocks[index - 1]
-        if before.kind in {"prose", "heading"}:
-            found |= above(before.source)
-    return found
-
-
-def _note_below(document: Document, index: int) -> frozenset[str]:
-    """Return what a line below a printout says of it: how its p values are adjusted."""
-    if index + 1 == len(document.blocks):
-        return frozenset()
-    following = document.blocks[index + 1].source
-    if len(following) > _LONGEST_NOTE or "djust" not in following:
-        return frozenset()
-    return spreading(following) & {"adjusted-p"}
+    number = 0
+    for start, claims, held in found:
+        for claim in claims:
+            number += 1
+            claim = in_scope(claim, held, whole)
+            elsewhere = whole.spoken.difference(claim.context)
+            yield Placed(f"c{number}", start, audit_claim(claim, level, elsewhere))

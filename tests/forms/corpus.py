@@ -7,7 +7,9 @@ An entry is a line of JSON with the keys
 ``claims``
     A list of claims, each a list of readings: ``quantity``, ``relation``, ``literal`` in ASCII
     (point for the decimal mark, leading zero, percent as a fraction), ``printed`` where that
-    differs, ``term`` in tables. Empty for a look-alike, which holds no result.
+    differs, ``term`` in tables. Empty for a look-alike, which holds no result; null for a text
+    that is true throughout and of which only that is labelled: nothing is to be found in it, not
+    even a doubt.
 ``consistent``
     Whether all that is printed can be true. If not, ``wrong`` says which reading was planted:
     ``claim``, ``quantity``, ``true`` and how far it is off (``gross``, ``subtle``, ``swap``).
@@ -71,6 +73,7 @@ class Entry(NamedTuple):
     consistent: bool
     wrong: int | None
     planted: Wanted | None
+    labelled: bool = True
 
     @property
     def language(self) -> str:
@@ -78,7 +81,7 @@ class Entry(NamedTuple):
 
     @property
     def holds_nothing(self) -> bool:
-        return not self.claims
+        return self.labelled and not self.claims
 
 
 @cache
@@ -92,7 +95,7 @@ def entries() -> tuple[Entry, ...]:
 
 
 def _entry(file: str, row: dict[str, Any]) -> Entry:
-    claims = _claims(row["claims"])
+    claims = _claims(row["claims"] or [])
     return Entry(
         id=row["id"],
         file=file,
@@ -100,11 +103,12 @@ def _entry(file: str, row: dict[str, Any]) -> Entry:
         text=row["text"],
         name=row.get("notation") or row["lookalike"],
         claims=claims,
-        also=_claims(row.get("also", [[] for _ in row["claims"]])),
+        also=_claims(row.get("also", [[] for _ in claims])),
         context=frozenset(row.get("context", ())),
         consistent=row["consistent"],
         wrong=row["wrong"]["claim"] if "wrong" in row else None,
         planted=_planted(claims, row["wrong"]) if "wrong" in row else None,
+        labelled=row["claims"] is not None,
     )
 
 

@@ -28,7 +28,8 @@ class Outcome(NamedTuple):
     extra
         Claims read that no human reader takes, intercepts aside.
     alarms
-        Conflicts and reversals about numbers that can all be true.
+        Conflicts and reversals about numbers that can all be true, and doubts too where the text
+        leaves none.
     caught
         For a planted error: the severity of the strongest finding about its claim, or "".
     unseen
@@ -70,6 +71,7 @@ def outcome(entry: Entry) -> Outcome:
     found = matches(entry, claims)
     used = {match.claim for match in found}
     left = [c for i, c in enumerate(claims) if i not in used and not _INTERCEPT.match(c.text)]
+    left = left if entry.labelled else []
     wrong = None if entry.wrong is None else found[entry.wrong].claim
     context = {name for index in used if index is not None for name in claims[index].context}
     return Outcome(
@@ -83,17 +85,18 @@ def outcome(entry: Entry) -> Outcome:
 
 
 def _alarms(entry: Entry, placed: Sequence[Placed], wrong: int | None) -> Iterable[str]:
-    """Name the loud findings about claims that the planted error, if any, does not touch.
+    """Name the findings about claims that the planted error, if any, does not touch.
 
     Where a planted error's claim was not read, nothing is known about the others.
     """
     if not entry.consistent and wrong is None:
         return
+    heard = _LOUD if entry.labelled else _HEARD
     for index, item in enumerate(placed):
         if index == wrong or _touched(entry, item.audited.claim):
             continue
         for finding in item.audited.findings:
-            if finding.severity in _LOUD:
+            if finding.severity in heard:
                 yield f"{finding.identity}: {finding.message}"
 
 

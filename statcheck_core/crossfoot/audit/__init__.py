@@ -21,7 +21,9 @@ if TYPE_CHECKING:
 
 
 @remembered
-def audit_claim(claim: Claim, alpha: float = 0.05) -> Audited:
+def audit_claim(
+    claim: Claim, alpha: float = 0.05, elsewhere: frozenset[str] = frozenset()
+) -> Audited:
     """Return what became of every identity that concerns a claim.
 
     Parameters
@@ -30,18 +32,21 @@ def audit_claim(claim: Claim, alpha: float = 0.05) -> Audited:
         What is printed.
     alpha
         The significance level that a reversal is judged by, unless the claim states its own.
+    elsewhere
+        Contexts of which the document speaks, though not for this claim: what one of them would
+        explain is no more than a doubt.
 
     Notes
     -----
     The result depends on nothing else and is remembered; also for the claim at another place,
     to which it moves with each character that is typed before it.
     """
-    return _judged(_nowhere(claim), alpha)._replace(claim=claim)
+    return _judged(_nowhere(claim), alpha, elsewhere)._replace(claim=claim)
 
 
 @remembered
-def _judged(claim: Claim, alpha: float) -> Audited:
-    return judge(claim, alpha)
+def _judged(claim: Claim, alpha: float, elsewhere: frozenset[str]) -> Audited:
+    return judge(claim, alpha, elsewhere)
 
 
 def _nowhere(claim: Claim) -> Claim:

@@ -7,13 +7,14 @@ they are recognised where the text is silent. An explained disagreement is a dou
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Collection, Sequence
 from typing import NamedTuple
 
 from crossfoot.audit.case import Case, make_case
 from crossfoot.audit.faults import Fault, boxed, implied
 from crossfoot.audit.narrow import Step, chosen, evaluate, narrow
 from crossfoot.laws import ONE_SIDED
+from crossfoot.laws.assumptions import CONTEXTS
 from crossfoot.laws.interval import EVERYTHING, Interval, meet
 
 #: The most comparisons that a multiplied p is taken to be corrected for. Ten times is not among
@@ -28,7 +29,22 @@ _SINGLE = Interval(1.0, 1.0)
 _HALVED = (
     "The printed p fits a one-sided test {}; the text does not say that the test is one-sided."
 )
+_CORRECTED = "the document speaks of such corrections"
 _UNSIGNED = ("F", "F_change", "chi2")
+
+
+#: What explains much where a document speaks of it, though not beside the claim; in this order.
+_ELSEWHERE = (
+    "adjusted-p",
+    "resampled",
+    "robust",
+    "weighted",
+    "instrumental",
+    "mixed",
+    "survey",
+    "imputed",
+    "no-intercept",
+)
 
 
 class Explanation(NamedTuple):
@@ -41,18 +57,23 @@ class Explanation(NamedTuple):
     factor
         How many times the two-sided, uncorrected p the printed one is; None where it is no
         multiple of it.
+    told
+        Whether the document tells it, so that nothing is left to ask.
     """
 
     text: str
     factor: float | None
+    told: bool = False
 
 
-def explanations(case: Case, faults: Sequence[Fault]) -> list[Explanation | None]:
+def explanations(
+    case: Case, faults: Sequence[Fault], elsewhere: Collection[str] = ()
+) -> list[Explanation | None]:
     """Return for each fault what would explain it, if something does.
 
     Once p is explained by itself, what else rests on it is judged by the p so explained.
     """
-    found = [_explained(case, fault) for fault in faults]
+    found = [_explained(case, fault, elsewhere) for fault in faults]
     known = [explanation for explanation in found if explanation and explanation.factor]
     return [
         explanation or next((k for k in known if _fits_factor(case, fault, k)), None)
@@ -60,7 +81,11 @@ def explanations(case: Case, faults: Sequence[Fault]) -> list[Explanation | None
     ]
 
 
-def _explained(case: Case, fault: Fault) -> Explanation | None:
+def _explained(case: Case, fault: Fault, elsewhere: Collection[str]) -> Explanation | None:
+    return _by_itself(case, fault, elsewhere) or _by_elsewhere(case, fault, elsewhere)
+
+
+def _by_itself(case: Case, fault: Fault, elsewhere: Collection[str]) -> Explanation | None:
     step = _test(case, fault)
     if step is None:
         halved = Explanation(_HALVED.format("in the direction found"), 0.5)
@@ -69,9 +94,37 @@ def _explained(case: Case, fault: Fault) -> Explanation | None:
     return (
         _one_sided(case, fault)
         or _two_sided(case, fault)
-        or _multiplied(case, fault, step)
-        or _lowered(case, step)
+        or _multiplied(case, fault, step, "adjusted-p" in elsewhere)
+        or _lowered(case, step, "scaled-df" in elsewhere)
     )
+
+
+def _by_elsewhere(case: Case, fault: Fault, elsewhere: Collection[str]) -> Explanation | None:
+    """Say which context, of which the document speaks elsewhere, would make a fault none."""
+    for context in _ELSEWHERE:
+        if context in elsewhere and _vanishes(case, fault, context):
+            said = CONTEXTS[context]
+            said = said[0].lower() + said[1:-1]
+            text = (
+                f"Elsewhere the document says: {said}; that would explain it if it holds here, too."
+            )
+            return Explanation(text, None)
+    return None
+
+
+def _vanishes(case: Case, fault: Fault, context: str) -> bool:
+    """Say whether the readings of a fault agree in a context; a p is only made larger by some."""
+    step = _test(case, fault)
+    if context == "adjusted-p" and step is not None:
+        printed, recomputed = case.box[step.target], evaluate(step, case.box)
+        single = step.form.takes[0] not in _UNSIGNED or case.box[step.inputs[1]] == _SINGLE
+        if not single or printed.low <= recomputed.high:
+            return False
+    told = tuple(sorted({*case.shape.context, context}))
+    other = make_case(case.claim, case.shape._replace(context=told))
+    plan = other.plan
+    mask = plan.strict | plan.doubtful if fault.unstated else plan.strict
+    return narrow(plan.steps, boxed(other, fault.cells), mask).failed is None
 
 
 def _test(case: Case, fault: Fault) -> Step | None:
@@ -142,9 +195,10 @@ def factors(printed: Interval, recomputed: Interval) -> list[int]:
     ]
 
 
-def _multiplied(case: Case, fault: Fault, step: Step) -> Explanation | None:
+def _multiplied(case: Case, fault: Fault, step: Step, told: bool) -> Explanation | None:
     printed = case.box[step.target]
-    if not 0 < printed.low <= printed.high <= printed.low * (1 + PRECISE):
+    precise = 0 < printed.low <= printed.high <= printed.low * (1 + PRECISE)
+    if not (precise or (told and printed.low > 0)):
         return None
     if step.form.takes[0] in _UNSIGNED and case.box[step.inputs[1]] != _SINGLE:
         return None
@@ -154,17 +208,18 @@ def _multiplied(case: Case, fault: Fault, step: Step) -> Explanation | None:
         return None
     return Explanation(
         f"The printed p is {found[0]} times as large, as a correction for {found[0]} comparisons "
-        "would make it; the text mentions none.",
+        f"would make it; {_CORRECTED if told else 'the text mentions none'}.",
         float(found[0]),
+        told,
     )
 
 
-def _lowered(case: Case, step: Step) -> Explanation | None:
+def _lowered(case: Case, step: Step, told: bool) -> Explanation | None:
     """Recognise p of degrees of freedom that are lowered, though printed without that.
 
     The factor of Greenhouse and Geisser lies between 1/df1 and 1.
     """
-    if step.form.takes[0] != "F" or "repeated-measures" not in case.shape.context:
+    if step.form.takes[0] != "F" or not (told or "repeated-measures" in case.shape.context):
         return None
     df1, df2 = (case.box[cell] for cell in step.inputs[1:])
     if not 1 < df1.low == df1.high:
@@ -176,8 +231,10 @@ def _lowered(case: Case, step: Step) -> Explanation | None:
         return None
     return Explanation(
         "The printed p fits degrees of freedom that are lowered for unequal variances of the "
-        "differences between measurements; the text does not say that they are.",
+        "differences between measurements; "
+        + ("the document speaks of that." if told else "the text does not say that they are."),
         None,
+        told,
     )
 
 

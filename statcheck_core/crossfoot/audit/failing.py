@@ -13,7 +13,9 @@ from crossfoot.laws.interval import EVERYTHING
 from crossfoot.model import Check, Finding
 
 
-def failures(case: Case, level: float) -> tuple[tuple[Check, ...], list[Finding]]:
+def failures(
+    case: Case, level: float, elsewhere: frozenset[str] = frozenset()
+) -> tuple[tuple[Check, ...], list[Finding]]:
     """Return what became of every identity on a claim in which something fails, and the findings.
 
     Parameters
@@ -22,12 +24,15 @@ def failures(case: Case, level: float) -> tuple[tuple[Check, ...], list[Finding]
         The claim.
     level
         The significance level that a reversal is judged by.
+    elsewhere
+        Contexts of which the document speaks elsewhere.
     """
     faults = _faults(case)
-    reasons = explanations(case, faults)
+    reasons = explanations(case, faults, elsewhere)
     found = [
         finding_of(case, fault, reason, changes, level)
         for fault, reason, changes in zip(faults, reasons, _remedies(case, faults), strict=True)
+        if reason is None or not reason.told
     ]
     return _checks(case, faults, reasons), found
 
@@ -85,5 +90,7 @@ def _checks(
     for fault, reason in reversed(list(zip(faults, reasons, strict=True))):
         slug = fault.identity.slug
         text = reason_of(fault, reason)
-        checks[slug] = Check(slug, "doubt" if text else "conflict", text)
+        told = reason is not None and reason.told
+        outcome = "not-applicable" if told else "doubt" if text else "conflict"
+        checks[slug] = Check(slug, outcome, text)
     return tuple(checks[slug] for slug in IDENTITIES if slug in checks)

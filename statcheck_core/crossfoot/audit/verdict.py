@@ -13,7 +13,7 @@ from crossfoot.model import SEVERITIES, Audited, Claim, Finding
 _LONGEST_ROW = 60
 
 
-def judge(claim: Claim, alpha: float) -> Audited:
+def judge(claim: Claim, alpha: float, elsewhere: frozenset[str] = frozenset()) -> Audited:
     """Return what became of every identity that concerns a claim.
 
     Parameters
@@ -22,6 +22,8 @@ def judge(claim: Claim, alpha: float) -> Audited:
         What is printed.
     alpha
         The significance level that a reversal is judged by, unless the claim states its own.
+    elsewhere
+        Contexts of which the document speaks elsewhere.
     """
     level = claim.alpha if claim.alpha is not None else alpha
     case, agreeing = _as_stated(claim)
@@ -29,7 +31,7 @@ def judge(claim: Claim, alpha: float) -> Audited:
         return Audited(claim, agreed(case, agreeing), _in_row(claim, notes(claim)))
     from crossfoot.audit.failing import failures  # most claims agree
 
-    checks, found = failures(case, level)
+    checks, found = failures(case, level, elsewhere)
     order = sorted([*found, *notes(claim)], key=lambda f: SEVERITIES.index(f.severity))
     return Audited(claim, checks, _in_row(claim, order))
 
@@ -46,11 +48,11 @@ def _as_stated(claim: Claim) -> tuple[Case, int | None]:
     """Return the claim as its text says it was tested, and the steps that spoke if all agree.
 
     Where the text says one-sided the effect may lie on either side. F and χ² have one tail
-    anyway, so that their usual p is as good.
+    anyway, so that their usual p is as good; and so it is where the text may speak of another test.
     """
     shape = shape_of(claim)
     cases = [make_case(claim, shape)]
-    if "one-sided" in claim.context:
+    if "one-sided" in claim.context or "either-sided" in claim.context:
         sided = [make_case(claim, shape._replace(side=side)) for side in (1, 2)]
         cases = cases + sided if _tests(cases[0]) or not _tests(sided[0]) else sided
     for case in cases:

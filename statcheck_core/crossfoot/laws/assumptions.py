@@ -9,6 +9,7 @@ from typing import NamedTuple
 CONTEXTS: Mapping[str, str] = {
     "one-sided": "The text says that the test or the interval is one-sided.",
     "two-sided": "The text says that the test is two-sided.",
+    "either-sided": "The text speaks of one-sided tests, and does not say that this is one.",
     "robust": "Standard errors are robust to unequal variances or to clusters.",
     "weighted": "The fit weights its cases.",
     "instrumental": "The fit uses instruments, as two-stage least squares does.",
@@ -31,6 +32,8 @@ CONTEXTS: Mapping[str, str] = {
     "by-item": "The analysis takes the means of items.",
     "imputed": "Missing values are imputed and the results pooled.",
     "rank-correlation": "The correlation is one of ranks.",
+    "own-distribution": "The statistic has a distribution of its own, whatever its letter.",
+    "partialled": "Other variables are held constant.",
     "resampled": "p values or intervals come from permutations or the bootstrap.",
     "corrected-statistic": "The statistic, or its p value alone, carries a correction.",
     "variance-ratio": "F compares two variances, so that its p takes both tails.",
@@ -109,7 +112,7 @@ _ASSUMPTIONS = (
     _assumption(
         "overall",
         "F tests all slopes of the model together, and R² is of the same model.",
-        "assumption-test",
+        "assumption-test other-null",
     ),
     _assumption(
         "classical-errors",
@@ -129,15 +132,21 @@ _ASSUMPTIONS = (
         "two-sided",
     ),
     _assumption(
+        "two-sided-interval",
+        "The test is two-sided, as the interval is.",
+        "one-sided either-sided",
+        "two-sided",
+    ),
+    _assumption(
         "directed",
         "The test is one-sided.",
         "two-sided",
-        "one-sided",
+        "one-sided either-sided",
     ),
     _assumption(
         "reference-distribution",
         "The p value is the tail area of the distribution that the statistic is named after.",
-        "resampled",
+        "resampled own-distribution",
     ),
     _assumption(
         "upper-tail",
@@ -153,6 +162,11 @@ _ASSUMPTIONS = (
         "product-moment",
         "The correlation is Pearson's.",
         "rank-correlation",
+    ),
+    _assumption(
+        "two-variables",
+        "The correlation is of two variables, with no other held constant.",
+        "partialled",
     ),
     _assumption(
         "uncorrected-statistic",
@@ -263,6 +277,11 @@ _ASSUMPTIONS = (
         "limits-of-estimate",
         "The interval is that of the estimate that is tested.",
         "ratio-scale generalised",
+    ),
+    _assumption(
+        "residual-df",
+        "The degrees of freedom are those of the residuals, and not of clusters.",
+        "robust",
     ),
     _assumption(
         "error-of-coefficient",

@@ -162,6 +162,8 @@ _CASES = "no-missing-cases intercept"
 _SLOPES = "counted-predictors"
 _ROWS = f"{_CASES} {_SLOPES}"
 _PAIRS = "no-missing-cases"
+_RESIDUAL = "residual-df"
+_ALONE_TWO = "two-variables"
 _PAIRED = "correlation"
 
 N_FROM_DF = identity(
@@ -178,11 +180,18 @@ N_FROM_DF = identity(
         form("df2", "df2 = n − df1 − 1", "n df1", _other_df, assumed=_CASES, kinds=MODEL),
         form("k", "k = df1", "df1", _same, assumed=_SLOPES, kinds=MODEL),
         form("df1", "df1 = k", "k", _same, assumed=_SLOPES, kinds=MODEL),
-        form("n", "n = df + 2", "df", _n_of_pairs, assumed=_PAIRS, kinds=_PAIRED),
-        form("df", "df = n − 2", "n", _df_of_pairs, assumed=_PAIRS, kinds=_PAIRED),
-        form("n", "n = df + k + 1", "df k", _n, assumed=_ROWS, kinds=COEFFICIENT),
-        form("df", "df = n − k − 1", "n k", _other_df, assumed=_ROWS, kinds=COEFFICIENT),
-        form("k", "k = n − df − 1", "n df", _other_df, assumed=_ROWS, kinds=COEFFICIENT),
+        form("n", "n = df + 2", "df", _n_of_pairs, needs=_ALONE_TWO, assumed=_PAIRS, kinds=_PAIRED),
+        form(
+            "df", "df = n − 2", "n", _df_of_pairs, needs=_ALONE_TWO, assumed=_PAIRS, kinds=_PAIRED
+        ),
+        *(
+            form(gives, formula, takes, value, needs=_RESIDUAL, assumed=_ROWS, kinds=COEFFICIENT)
+            for gives, formula, takes, value in (
+                ("n", "n = df + k + 1", "df k", _n),
+                ("df", "df = n − k − 1", "n k", _other_df),
+                ("k", "k = n − df − 1", "n df", _other_df),
+            )
+        ),
     ),
     needs="least-squares overall unadjusted-df independent-cases",
     assumption="F is the overall F of a fit with an intercept to all of the n cases. Fewer cases "

@@ -117,7 +117,7 @@ CI_AGAINST_P = identity(
             beside="odds_ratio",
         ),
     ),
-    needs="two-sided unadjusted-p t-limits zero-null",
+    needs="two-sided-interval unadjusted-p t-limits zero-null",
     assumption="p is of the two-sided test of what the interval is an interval of, and both rest "
     "on the same distribution.",
     source="NIST/SEMATECH e-Handbook of Statistical Methods, section 7.1.4",

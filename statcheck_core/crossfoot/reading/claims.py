@@ -7,7 +7,7 @@ from collections.abc import Sequence
 
 from crossfoot.expressions import expression
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.contexts import alpha_of, contexts_of, cues_in
+from crossfoot.reading.contexts import alpha_of, concerning, contexts_of, cues_in
 from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import SCANNER_FLAGS, Item, Part
 from crossfoot.reading.sentences import same_sentence, sentence_around
@@ -48,7 +48,7 @@ def claims_of(groups: Sequence[Group], folded: str, visible: str) -> list[Claim]
         if (settled := settle(group, folded)) is not None
     ]
     claims = [_claim(group, folded, visible) for group in kept]
-    return _overall(claims, folded)
+    return _sided(_overall(claims, folded), kept, folded)
 
 
 def _claim(group: Group, folded: str, visible: str) -> Claim:
@@ -72,6 +72,8 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
         contexts.add("joint")
     if any(part.quantity in {"df", "df1", "df2"} and part.low != part.high for part in unique):
         contexts.add("adjusted-df")
+    if "either-sided" in contexts:  # unless the result itself says on which
+        contexts -= {"one-sided"} - stated
     if "adjusted-p" in contexts - stated and _several_df(unique):
         # "…, F(2, 57) = 7.41, p = .001. Tukey's test …": corrections concern what follows.
         contexts -= {"adjusted-p"} - cues_in(sentence).contexts
@@ -86,7 +88,7 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
         text=_plain(visible[first:last]),
         span=Span(first, last),
         readings=tuple(_reading(part, visible) for part in unique),
-        context=tuple(sorted(contexts)),
+        context=tuple(sorted(concerning(kind, frozenset(contexts)))),
         alpha=alpha_of(sentence, folded),
     )
 
@@ -178,6 +180,21 @@ def _overall(claims: list[Claim], text: str) -> list[Claim]:
             ):
                 claim = claim._replace(kind="effect")
         settled.append(claim)
+    return settled
+
+
+def _sided(claims: list[Claim], groups: Sequence[Group], text: str) -> list[Claim]:
+    """Leave open which of several tests a sentence calls one-sided, unless a p itself says so."""
+    told = [number for number, claim in enumerate(claims) if "one-sided" in claim.context]
+    if not told or len(claims) < 2:
+        return claims
+    settled = list(claims)
+    for number in told:
+        neighbours = claims[max(0, number - 1) : number] + claims[number + 1 : number + 2]
+        stated = any("one-sided" in item.flags for item in groups[number].items)
+        if not stated and any(same_sentence(text, claims[number].span, n.span) for n in neighbours):
+            context = {*claims[number].context, "either-sided"} - {"one-sided"}
+            settled[number] = claims[number]._replace(context=tuple(sorted(context)))
     return settled
 
 

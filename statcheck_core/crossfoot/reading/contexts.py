@@ -3,12 +3,15 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from functools import lru_cache
 from operator import itemgetter
 from typing import NamedTuple
 
-from crossfoot.reading.cues import CUES
+from crossfoot.expressions import expression
+from crossfoot.model import Claim
+from crossfoot.reading.cues import ALL_TESTS, CUES
+from crossfoot.reading.sentences import sentence_around
 
 # Patterns are compiled when first used: most documents need none of them, and start-up counts.
 _CITATION = r"[A-Z][\w'’-]{1,30}[^()]{0,60}?\b(?:19|20)\d\d[a-z]?\s?[,;:]"
@@ -22,15 +25,22 @@ _ALPHA = (
     r"|p\s?[<≤]\s?(?P<below>0?[.,]\d{1,4})\s(?:(?:was|were|is|are)\s)?(?:considered|deemed|taken|regarded|treated|as|defined|indicat)\w*"
     r"[^.]{0,40}signific"
 )
+_WORD_OF_LEVEL = expression(r"level|\bset\b|signific", re.IGNORECASE)
+#: A significance level that no word calls one is smaller than this.
+_LARGEST = 0.1001
 #: What a heading says for its section, and a paragraph for the table below it.
 _OF_MODELS = frozenset({"generalised", "other-null", "resampled", "variance-ratio"})
 #: A paragraph no longer than this may be a caption, though nothing marks it as one.
 _LONGEST_LINE = 200
 _WORD_OF_ALPHA = ("alpha", "α", "significan")
+_OF_ALL = (
+    ALL_TESTS + r"|adjustment|(?:standard errors|models|estimates|analyses|comparisons|contrasts"
+    r"|probabilities|intervals|they) (?:were|are|have been|use)"
+)
 #: Words of a heading under which a paragraph speaks for the whole document.
 _METHODS = (
     "method", "analys", "statist", "approach", "design", "procedure", "material", "model",
-    "estimat", "data",
+    "estimat", "data", "strateg", "specific", "econometr", "méthod", "métod", "metod", "auswert",
 )  # fmt: skip
 
 
@@ -76,13 +86,22 @@ def contexts_of(sentence: str, block: str, lead: str) -> frozenset[str]:
     """
     found = cues_in(block).contexts
     if found & _NEAR:
-        found = (found - _NEAR) | (found & cues_in(sentence).contexts)
+        near = found & cues_in(sentence).contexts
+        elsewhere = found - near
+        found = (found - _NEAR) | near
+        if "one-sided" in elsewhere:  # this test may be meant, and may not
+            found |= {"either-sided"}
     if ("(19" in lead or "(20" in lead) and re.search(_REPORTED, lead[-120:]):
         found |= {"quoted"}
     opened = lead.rfind("(")
     if opened > lead.rfind(")") and re.search(_CITATION, lead[max(opened, len(lead) - 160) :]):
         found |= {"quoted"}
     return found
+
+
+def concerning(kind: str, contexts: frozenset[str]) -> frozenset[str]:
+    """Return those of some contexts that matter to a kind of claim."""
+    return contexts if kind == "correlation" else contexts - {"partialled"}
 
 
 def alpha_of(sentence: str, block: str) -> float | None:
@@ -100,13 +119,28 @@ def spreading(text: str) -> frozenset[str]:
     """Return the contexts that a paragraph without a result states for those that follow."""
     contexts = cues_in(text).contexts & _SPREADS
     low = text.lower() if contexts else ""
-    return frozenset(
+    found = {
         cue.context
         for cue in CUES
         if cue.spreads
         and cue.context in contexts
         and (not cue.general or re.search(cue.general, low))
-    )
+    }
+    # A test that is one-sided, if not all: which, the results may not say again.
+    return frozenset(found | ({"either-sided"} if "one-sided" in contexts - found else set()))
+
+
+def aside(text: str, claims: Sequence[Claim]) -> frozenset[str]:
+    """Return the contexts that sentences between the results of a paragraph state for all tests."""
+    if not cues_in(text).contexts & _SPREADS:
+        return frozenset()
+    pieces, done = [], 0
+    for claim in claims:
+        first, last = sentence_around(text, *claim.span)
+        pieces.append(text[done:first])
+        done = max(done, last)
+    rest = "".join((*pieces, text[done:]))
+    return spreading(rest) if re.search(_OF_ALL, rest.lower()) else frozenset()
 
 
 def titled(text: str) -> frozenset[str]:
@@ -131,7 +165,9 @@ def _alpha(text: str, low: str) -> float | None:
         return None
     literal = (match["level"] or match["below"]).replace(",", ".").strip()
     level = float(literal.rstrip("% ")) / 100 if literal.endswith("%") else float(literal)
-    return level if 0 < level < 0.5 else None
+    # Larger ones are reliabilities and parameters, unless words say what they are.
+    usual = _LARGEST if _WORD_OF_LEVEL.search(match.group()) is None else 0.5
+    return level if 0 < level < usual else None
 
 
 #: Stems are looked up by the first letters of their first word, since looking for each of them in

@@ -38,7 +38,15 @@ def _stems(words: str) -> tuple[str, ...]:
     return tuple(words.split("; "))
 
 
-_ALL_TESTS = (
+#: "one-sided" in Romance languages, of tests: operations are unilateral, too.
+_LATERAL = (
+    r"(?:test|contrast|prueba|hip[oó]t|prova|probabil|significa|valor)\w{{0,12}}\W{{1,3}}"
+    r"(?:\w{{1,16}}\W{{1,3}}){{0,2}}{0}lat|{0}lat[eé]ra\w{{0,6}}\W{{1,3}}(?:\w{{1,16}}\W{{1,3}})?"
+    r"(?:test|p\b|signif|t\b)"
+    r"|\(\s?{0}lat[eé]ra|[;,] {0}lat[eé]ra"
+)
+#: What says of a statement that it is one of all tests.
+ALL_TESTS = (
     r"\ball\b|throughout|\btests? (?:were|are)\b|p[- ]?values? (?:were|are|have been)"
     r"|\balle\b|\btous\b|\btodos\b|\btutti\b"
 )
@@ -54,13 +62,28 @@ CUES: tuple[Cue, ...] = (
         ),
         near=True,
         spreads=True,
-        general=_ALL_TESTS,
+        general=ALL_TESTS,
+        # Winds are directional, and operations unilateral.
+        confirm=r"(?:one|1)[- ]{1,2}(?:sided|tailed)|einseitig|eenzijdig|ensid|片側|单侧|單側"
+        r"|directional(?:ly)? (?:hypoth|test|predict|expect|alternat|t\b|p\b)"
+        rf"|{_LATERAL.format('uni')}",
     ),
     Cue(
         "one-sided",
         _stems("alternative hypothesis"),
         near=True,
         confirm=r"alternative hypothesis:[^\n]* is (?:greater|less) than",
+    ),
+    Cue(
+        "either-sided",
+        _stems(
+            "tost; equivalence; noninferiority; non-inferiority; superiority; mixture; halved; "
+            "chi-bar; boundary"
+        ),
+        spreads=True,
+        confirm=r"\btost\b|equivalence (?:test|bound|margin|limit|was|held)|for equivalence"
+        r"|non-?inferiority|superiority test|mixture of|p[- ]values? (?:was|were|is|are) halved"
+        r"|halved p|halved the p|chi-bar|(?:on|at|of) the boundary",
     ),
     Cue(
         "two-sided",
@@ -70,7 +93,9 @@ CUES: tuple[Cue, ...] = (
         ),
         near=True,
         spreads=True,
-        general=_ALL_TESTS,
+        general=ALL_TESTS,
+        confirm=r"(?:two|2)[- ](?:sided|tailed)|zweiseitig|tweezijdig|tvåsidig|tosid|両側|双侧|雙側"
+        rf"|{_LATERAL.format('bi')}",
     ),
     Cue(
         "robust",
@@ -165,10 +190,22 @@ CUES: tuple[Cue, ...] = (
             "bonferroni; holm; tukey; scheff; šid; sidak; benjamini; fdr; false discovery; "
             "dunnett; games-howell; hochberg; corrected for; adjusted for multiple; "
             "adjusted p; corrected p; multiple comparison; family-wise; familywise; "
-            "post hoc; post-hoc; multiplicity"
+            "post hoc; post-hoc; multiplicity; single-step; step-down; stepdown; westfall; simes; "
+            "hommel; newman-keuls; fwe; tfce; mvt"
         ),
         spreads=True,
-        general=_ALL_TESTS + r"|adjust\w*\s?[=:]|p\.adjust|p[- ]values? adjust|adjustment",
+        general=ALL_TESTS + r"|adjust\w*\s?[=:]|p\.adjust|p[- ]values? adjust|adjustment"
+        r"|(?:comparisons|contrasts|probabilities) (?:were|are)\b",
+    ),
+    Cue(
+        "adjusted-p",
+        _stems("adjustment; adjusted; corrected; correction; multiplied"),
+        # of a comparison, by whatever method, and not for a covariate
+        confirm=r"(?:contrast|compari|pairwise|emmean|p[- ]?value|probabilit|threshold)[^.]{0,80}"
+        r"(?:adjust|correct)(?:ed|ion|ment)s?\b(?! for| r\b| r²)"
+        r"|(?:adjust|correct)(?:ed|ion|ment)\b(?! for)[^.]{0,40}"
+        r"(?:contrast|compari|pairwise|p[- ]?value)"
+        r"|\w{1,20} adjustment gave|multiplied by (?:\d|two|three|four|five|six|ten|the number)",
     ),
     Cue(
         "pseudo-r2",
@@ -223,18 +260,51 @@ CUES: tuple[Cue, ...] = (
         "repeated-measures",
         _stems(
             "repeated measure; repeated-measure; within-subject; within subject; "
-            "within-participant; paired; split-plot; split plot; crossover"
+            "within-participant; within participant; within-person; within person; "
+            "within-individual; rmcorr; paired; split-plot; split plot; crossover"
         ),
     ),
     Cue("imputed", ("imputation", "imputed"), spreads=True),
     Cue("rank-correlation", ("spearman", "kendall", "rank correlation", "rank-order"), near=True),
     Cue(
+        "partialled",
+        _stems(
+            "partial r; partial corr; partial-corr; semipartial; semi-partial; partialled; "
+            "partialling; partialed; partialing; part corr; controlling; controlled; "
+            "adjusting for; adjusted for; after adjustment; holding; held constant; covariate"
+        ),
+        spreads=True,
+        confirm=r"partial|part corr|controll(?:ing|ed) for|adjust(?:ing|ed|ment) for"
+        r"|holding \w+|held constant|covariate",
+    ),
+    Cue(
         "resampled",
         _stems(
-            "bootstrap; permutation; resampl; monte carlo; randomization test; "
-            "randomisation test; fisher's exact; exact test; exact p; exact binomial; bca"
+            "bootstrap; resampl; monte carlo; fisher's exact; exact test; exact p; "
+            "exact binomial; bca"
         ),
-        spreads=False,
+    ),
+    Cue(
+        "resampled",
+        _stems(
+            "permut; permanova; adonis; anosim; mantel; mrpp; rda; dbrda; db-rda; redundancy; "
+            "canonical corresp; randomization test; randomisation test; randomization p; "
+            "randomisation p"
+        ),
+        spreads=True,
+        general=ALL_TESTS + r"|p[- ]values? (?:from|by|based)|assessed|obtained|tested",
+        confirm=r"\bpermut|permanova|adonis|anosim|\bmantel\b(?![- –]haenszel)|mrpp"
+        r"|\b(?:db-?)?rda\b|redundancy anal|canonical corresp|randomi[sz]ation (?:test|p)",
+    ),
+    Cue(
+        "own-distribution",
+        _stems(
+            "kolmogorov; smirnov; k-s z; k–s z; ks z; dickey; adf; phillips-perron; "
+            "phillips–perron; unit root; unit-root; kpss; bounds test; bounds-test; cointegr; "
+            "johansen; studentised range; studentized range; lilliefors; fmax; f-max; hartley; "
+            "supf; sup-f; quandt; andrews"
+        ),
+        near=True,
     ),
     Cue(
         "corrected-statistic",

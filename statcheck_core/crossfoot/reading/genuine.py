@@ -23,7 +23,7 @@ from crossfoot.reading.lookalikes import (
 )
 
 _STATISTICAL = expression(
-    r"anova|regress|effect|interact|signific|varian|model|test|differ|predict|explain|estimat"
+    r"anova|regress|effect|interact|signific|varian|model|test|differ|predict|explain|estimat|associat"
     r"|analys|correlat|coefficient|quadrat",
     re.IGNORECASE,
 )
@@ -40,6 +40,11 @@ _RELATED = expression(
 #: A parameter that goes on where p ends: `t = 0.25, p = 0.001, z = 3.5`.
 _OTHER_LETTER = expression(r"[,;]\s?(?![nNdgrRMVW]\b)[a-zA-Z]\s?=\s?[\d.]")
 _OTHER_TEST = expression(r"\bF\s?[(\[_]")
+_WORD = expression(r"[^\W\d_]{3,}")
+#: Words that may stand between a test and its p where nothing tells that they belong together.
+_FEW = 2
+#: How far such words are looked for.
+_BESIDE = 200
 _DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
 _LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
@@ -91,6 +96,27 @@ def _has_p(items: Sequence[Item]) -> bool:
 _MOST = 1.4
 
 
+def _supports(items: Sequence[Item], test: Item, text: str) -> bool:
+    """Say whether a p stands by a test: no further than two words, or where words tell of tests."""
+    p = next((item for item in items if item.head == "p"), None)
+    if p is None or not _is_probability(p.parts[0]):
+        return False
+    first, second = (p, test) if p.start < test.start else (test, p)
+    return _side(first, second, text) or near(_STATISTICAL, items, text, _BESIDE)
+
+
+def _together(items: Sequence[Item], text: str) -> bool:
+    """Say whether all items stand side by side, or words tell of tests."""
+    return all(_side(first, second, text) for first, second in pairwise(items)) or near(
+        _STATISTICAL, items, text, _BESIDE
+    )
+
+
+def _side(first: Item, second: Item, text: str) -> bool:
+    """Say whether no more than a few words stand between two items."""
+    return len(_WORD.findall(text, first.end, second.start)) <= _FEW
+
+
 def _is_probability(part: Part) -> bool:
     """Say whether a number can be meant as a probability, if perhaps misprinted."""
     return part.high <= 1.0 if part.relation in "<≤" else part.high >= 0.0 and part.low <= _MOST
@@ -103,7 +129,7 @@ def _spelt(text: str, part: Part) -> bool:
 def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str) -> bool:
     test = next(item for item in items if item.head == anchor)
     value = next(part for part in test.parts if part.quantity in {"F", "F_change"})
-    has_p = _has_p(items)
+    has_p = _supports(items, test, text)
     if {"by-subject", "by-item"} & set(test.flags) and value.relation == "=":
         return has_p
     support = has_p or bool(quantities & _SUPPORT)
@@ -128,7 +154,7 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
 def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str) -> bool:
     test = next(item for item in items if item.head == anchor)
     value = next(part for part in test.parts if part.quantity == anchor)
-    has_p = _has_p(items)
+    has_p = _supports(items, test, text)
     if "by-name" in test.flags and not has_p:
         return False
     if anchor == "r":
@@ -145,7 +171,8 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
             return False
         return _spelt(text, value) and (has_p or counted) and (possible or "df" in quantities)
     if anchor == "z":
-        return has_p or bool(quantities & {"b", "beta", "se", "odds_ratio"})
+        of_estimate = quantities & {"b", "beta", "se", "odds_ratio"}
+        return has_p or (bool(of_estimate) and _together(items, text))
     flat = any(part.quantity == "df" and text[part.start - 1].isalpha() for part in test.parts)
     by_unit = {"by-subject", "by-item"} & set(test.flags)
     if (flat or by_unit or text[test.start] == "T") and not has_p:
@@ -154,7 +181,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
         told = near(_STATISTICAL, items, text)
         return has_p or told or (_spelt(text, value) and not _is_lowered(test, text))
     if anchor == "t" and quantities & {"b", "beta", "se"}:
-        return True
+        return _together(items, text)
     return has_p and _follows_or_told(items, test, value, text)
 
 
@@ -202,8 +229,10 @@ def _side_by_side(items: Sequence[Item], text: str) -> bool:
 def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> bool:
     if not any(_spelt(text, part) for item in items for part in item.parts):
         return False
-    if quantities & {"t", "z"} or {"p", "se"} <= quantities:
+    if {"p", "se"} <= quantities:
         return True
+    if quantities & {"t", "z"}:
+        return _together(items, text)
     if quantities & {"se", "ci_low"}:
         return not is_drawn(items, text)
     if any("dealt" in item.flags for item in items):

@@ -78,6 +78,15 @@ _LINK = frozenset(
 _OPENING = frozenset({"note", "adjusted", "adj", "multiple", "total", "overall", "partial"})
 
 
+#: What is said between a number and an F that tests another thing than the number measures.
+_OTHER_TEST = expression(
+    r"\btests?\s(?:for|of|that|against|whether|on)\s(?!(?:the\s)?(?:overall|whole|full|model|fit|regression"
+    r"|signific|all\b|R\b|null))"
+    r"|\b(?!The|This|Overall|Omnibus|Global|Fisher|Model|Regression|Full)[A-Z][a-z]{2,}(?:[-–][A-Z][a-z]+)?(?:['’]s)?\s(?:F[\s-])?tests?\b"
+    r"|\b[Ll]ack[\s-]of[\s-]fit|\b(?:RESET|Wald|[Jj]oint\sF|[Pp]artial\sF)\b",
+)
+
+
 class Group(NamedTuple):
     """Items of one claim, in printed order; ``anchor`` is the test's quantity, or None."""
 
@@ -95,6 +104,8 @@ def gap(text: str, first: Item, second: Item) -> float:
         return 0.25 if between.strip(" ,") else 0.1
     if not between.strip(" ;\n"):
         return 0.6
+    if second.head == "F" and _OTHER_TEST.search(between) is not None:
+        return APART
     words = [word for word in _WORD.findall(between) if word.lower() not in _LINK]
     bullets = len(BULLET.findall(between))
     strength = 0.1 + min(len(words), 6) + 2.5 * between.count(";")
@@ -194,6 +205,9 @@ def _joins(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor, index:
             head in _COEFFICIENT and own <= {"t", "z"} and widest < _gap_to_test(items, gaps, index)
         )
     if head in {"t", "z", "chi2"}:
+        between = [items[i].head for i in range(anchor.last + 1, index)]
+        if between.count("se") > 1:
+            return False  # of another estimate, which is not read
         return bool(own & _COEFFICIENT) and not own & {"t", "z", "chi2"} and widest <= 8.0
     if head in _COEFFICIENT:
         return head not in heads and own <= _COEFFICIENT | {"t", "z"} and widest <= 1.5

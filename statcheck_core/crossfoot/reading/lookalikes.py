@@ -20,6 +20,23 @@ _SUPPOSED = expression(
     r"|\b(?:cut-?off|threshold|criterion|critical)\w*(?:\s\w+){0,2})"
     r"\s(?:an?\s|the\s)?(?:cut-?off\s)?\|?$"
 )
+#: "Suppose a referee is told that F(2, 30) = 3.32 …": a sentence that makes its numbers up.
+_MADE_UP = expression(
+    r"(?:^|[.!?:;(\n]\s{0,4})(?:[Ss]uppose|[Ii]magine|[Hh]ypothetically|[Cc]onsider\sa(?:n|\shypothetical)?\s|[Ss]ay,)"
+    r"[^.!?]{0,140}$"
+    r"|(?:^|\n\s{0,4})(?:Exercise|Problem|Question|Quiz|Task)\s\d{1,3}\b[^\n]{0,120}$"
+)
+#: Quotation marks right before a test, and words that say what is shown is a form to follow.
+_QUOTED = expression(r"[\"“„«‘']\s?$")
+_FORM = expression(
+    r"\b(?:[Ww]rite|[Rr]eport(?:ed\sas)?|[Ff]ormat|[Ss]tyle|[Gg]uideline|for\sexample|e\.g\.|such\sas"
+    r"|[Ss]tring|[Pp]attern|[Tt]emplate|look\slike|looks\slike|as\sfollows)\b"
+)
+#: "t = 2.228 leaves .025 in each tail"
+_OF_DISTRIBUTION = expression(
+    r"\b(?:each|either|upper|lower|one|right|left)\stail\b|tail\sarea|\bleaves\s(?:p\s?=|0?\.0|\d%)"
+    r"|\btabulated\b|\btables?\sof\s(?:the\s)?[tF]\b"
+)
 #: "A value of t = 2.0 was used as cut-off."
 _USED = expression(r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion)\b")
 _CLASSIFIER = expression(
@@ -51,7 +68,14 @@ def in_call(text: str, start: int) -> bool:
 def is_supposed(item: Item, text: str) -> bool:
     """Say whether a test is supposed, asked for, or a bound that others are held to."""
     before = _SUPPOSED.search(text, max(0, item.start - 36), item.start)
-    return before is not None or _USED.match(text, item.end) is not None
+    if before is not None or _USED.match(text, item.end) is not None:
+        return True
+    first = max(0, item.start - 160)
+    if _MADE_UP.search(text, first, item.start) is not None:
+        return True
+    if _QUOTED.search(text, max(0, item.start - 2), item.start) is not None:
+        return _FORM.search(text, first, item.start) is not None
+    return _OF_DISTRIBUTION.search(text, item.end, item.end + 60) is not None
 
 
 def is_of_classifier(items: Sequence[Item], text: str) -> bool:

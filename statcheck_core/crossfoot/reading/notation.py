@@ -257,7 +257,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "b",
-        rf"(?:[bB]{_SUB}?\d?(?![\w²^.])|(?i:(?:regression\s)?coef(?:f?\.|f|ficients?)?(?!\sof\s(?:determination|variation|correlation))|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
+        rf"(?:(?<![A-Za-z]-)[bB]{_SUB}?\d?(?![\w²^.])|(?i:(?:regression\s)?coef(?:f?\.|f|ficients?)?(?!\sof\s(?:determination|variation|correlation))|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
         True,
         "bBrRcCpPeEsSihl",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",

@@ -26,6 +26,9 @@ _INSIDE = expression(
     r"_\{?\s?(?:(?P<adjusted>[aA]dj\.?|a|[aA]djusted|korr|corr|c)(?![A-Za-z])|(?P<changed>change|inc|Δ)"
     r"|(?P<pseudo>[A-Za-z]{1,12}))\s?\}?"
 )
+#: The same for an index c that stands for "conditional".
+_OF_MIXED = expression(r"_\{?\s?(?P<pseudo>[A-Za-z]{1,12})")
+_MARGINAL = expression(r"[Rr]\s?(?:²|\^\{?2\}?|2)?\s?_?\{?\s?(?:m|marg)(?![a-z])")
 _GREW = expression(
     r"\s(?:significantly\s)?(?:increased|rose|improved|grew)\s(?:significantly\s)?(?=by\s)"
 )
@@ -51,6 +54,8 @@ _APART = frozenset(",;:=")
 _REACH = 26
 
 
+#: How far from a conditional R² the marginal one stands, in characters.
+_BESIDE = 60
 #: Within so many characters behind the name a word about it starts.
 _LEAD = 5
 
@@ -68,6 +73,8 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
         before = _BEFORE.search(folded, max(0, start - _REACH), start)
     after = _AFTER.match(folded, end) if worded else None
     inside = _INSIDE.search(name.match.group())
+    if inside is not None and _is_conditional(inside, folded, start):
+        inside = _OF_MIXED.search(name.match.group())
     said = {
         key
         for match in (before, after, inside)
@@ -109,6 +116,13 @@ def of_two_models(text: Text, start: int, end: int) -> Iterator[Item]:
             if part is not None and part.high <= 1.0:
                 flags = ("grown",) if group == "second" else ()
                 yield Item(quantity, (part,), *match.span(group), flags)
+
+
+def _is_conditional(inside: re.Match[str], folded: str, start: int) -> bool:
+    """Say whether the c of R²_c is that of a conditional R²: a marginal one, R²_m, stands near."""
+    if inside["adjusted"] != "c":
+        return False
+    return _MARGINAL.search(folded, max(0, start - _BESIDE), start + _BESIDE) is not None
 
 
 def _is_count(literal: str, low: float) -> bool:

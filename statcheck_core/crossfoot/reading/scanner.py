@@ -83,7 +83,7 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
         if name.match.start() < done:
             continue
         item = _READERS.get(name.notation.quantity, _read_plain)(text, name)
-        if item is None:
+        if item is None or _is_place(text, item):
             continue
         if item.head in _ONCE_FOR_ALL and _is_for_all(text, item):
             item = item._replace(flags=(*item.flags, "all"))
@@ -93,6 +93,17 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
             for other in _further_values(text, item):
                 yield other
                 done, listed = other.end, True
+
+
+def _is_place(text: Text, item: Item) -> bool:
+    """Say whether a letter is where or when something is, and no test: ``at z = 1.42``."""
+    before = text.folded[max(0, item.start - 4) : item.start].lower()
+    return (
+        item.head in {"t", "z"}
+        and before.endswith("at ")
+        and not before[:-3].isalpha()
+        and len(item.parts) == 1
+    )
 
 
 def _is_for_all(text: Text, item: Item) -> bool:

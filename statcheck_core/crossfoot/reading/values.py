@@ -18,7 +18,7 @@ AND = r"(?:and|und|et|y|e|en|och|og|ja|&|和|と|및)"
 COUNT = r"\d{1,3}(?:[, ]\d{3})+(?!\d)|\d+(?:[.,]\d+)?"
 
 _SIGN = (
-    r"(?:=\s?[<>≤≥](?![<>=])|<\s?=|>\s?=|=\s?<|<{1,3}(?![/<!])|>{1,3}|[=≤≥≈¼]"
+    r"(?:=\s?[<>≤≥](?![<>=])|<\s?=|>\s?=|=\s?<|<{1,3}(?![/<!]|-\s)|>{1,3}|[=≤≥≈¼]"
     r"|&lt;|&gt;|(?:is|was|were)?\s?(?:less|lower|smaller|greater|larger|higher|more)\sthan|below|under|above)"
 )
 _RELATION = expression(
@@ -71,6 +71,10 @@ _MAY_BE_WORKED = frozenset(
 )
 
 
+#: A word this short before a sign is the name of the number behind it.
+_LONGEST_NAME = 2
+
+
 def value_after(
     text: Text, at: int, quantity: str, name: Name, *, bare: bool = False
 ) -> Part | None:
@@ -108,10 +112,19 @@ def _after_words(text: Text, at: int, quantity: str) -> Part | None:
     match = _WHAT.match(folded, at)
     if match is None:
         return None
-    value = _RELATION.match(folded, match.end()) or _WORDS.match(folded, match.end())
+    signed = _RELATION.match(folded, match.end())
+    if signed is not None and _ends_in_name(match.group()):
+        return None
+    value = signed or _WORDS.match(folded, match.end())
     return (
         number_at(text, value.end(), quantity, _relation(value["sign"] or "=")) if value else None
     )
+
+
+def _ends_in_name(words: str) -> bool:
+    """Say whether the last of some words may be the name of what follows: ``… and set p = .05``."""
+    last = words.split()[-1]
+    return len(last) <= _LONGEST_NAME or last.isupper() or not last.isalpha()
 
 
 def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
