@@ -42,7 +42,7 @@ _PAIR = expression(
     rf"\s*+(?:(?:[=:]|{VERB_UNSPACED}|(?:was|were|are|of)\s)\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
 )
 _PAIR_BEFORE = expression(
-    rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
+    rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>+-])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
     r"(?P<b>\d+(?:[.,]\d+)?)\s?\)?\s?$"
 )
 _ONE_BEFORE = expression(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")

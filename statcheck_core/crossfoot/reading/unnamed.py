@@ -15,7 +15,8 @@ from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number
 
 _ERROR = (
-    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.)))"
+    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.))"
+    r"(?:_\{?\w{1,4}\}?)?)"
 )
 #: A standard error or an interval that opens a bracket or goes on a list.
 _SPREAD = expression(
