@@ -53,6 +53,10 @@ _F_BEFORE = expression(r"(?<![A-Za-z])F(?![A-Za-z])")
 _REACH = 24
 
 
+#: `F(dose) = 5.2` is the test of an effect, `F(x)` a function.
+_SHORTEST_EFFECT = 4
+
+
 class Degrees(NamedTuple):
     """Degrees of freedom after a name.
 
@@ -95,7 +99,8 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
         total = _TOTAL.fullmatch(piece)
         argument = total or _ARGUMENT.fullmatch(piece)
         if argument is None:  # `t(INCOME) = …` names a predictor; `F(x, y)` is a function
-            return Degrees((), match.end(), possible=not two and not piece.isalpha())
+            named = piece.isalpha() and len(piece) >= _SHORTEST_EFFECT
+            return Degrees((), match.end(), possible=named if two else not piece.isalpha())
         if total is None and number >= len(keys):
             return refused
         quantity = "n" if total else keys[number]
