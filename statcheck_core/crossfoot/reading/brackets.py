@@ -42,7 +42,7 @@ _PAIR = expression(
     rf"\s*+(?:(?:[=:]|{VERB_UNSPACED}|(?:was|were|are|of)\s)\s*+)?(?:[(\[]\s*+)?(?P<a>{COUNT})\s*+(?:,|;|/|{AND})\s*+(?P<b>{COUNT})(?![\d%]|[.,]\d)"
 )
 _PAIR_BEFORE = expression(
-    rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
+    rf"(?<![\d.,])(?<![=<>]\s)(?<![=<>+-])(?P<a>\d+(?:[.,]\d+)?)\s?(?:,|;|/|{AND})\s?"
     r"(?P<b>\d+(?:[.,]\d+)?)\s?\)?\s?$"
 )
 _ONE_BEFORE = expression(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")
@@ -51,6 +51,10 @@ _ONE_DECIMAL = expression(r"\s?[=:]?\s?\d+,\d+(?!\d)")
 _F_BEFORE = expression(r"(?<![A-Za-z])F(?![A-Za-z])")
 #: How far before "degrees of freedom" their numbers may stand, in characters.
 _REACH = 24
+
+
+#: `F(dose) = 5.2` is the test of an effect, `F(x)` a function.
+_SHORTEST_EFFECT = 4
 
 
 class Degrees(NamedTuple):
@@ -95,7 +99,8 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
         total = _TOTAL.fullmatch(piece)
         argument = total or _ARGUMENT.fullmatch(piece)
         if argument is None:  # `t(INCOME) = …` names a predictor; `F(x, y)` is a function
-            return Degrees((), match.end(), possible=not two and not piece.isalpha())
+            named = piece.isalpha() and len(piece) >= _SHORTEST_EFFECT
+            return Degrees((), match.end(), possible=named if two else not piece.isalpha())
         if total is None and number >= len(keys):
             return refused
         quantity = "n" if total else keys[number]

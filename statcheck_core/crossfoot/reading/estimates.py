@@ -9,8 +9,8 @@ from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
 
 _LIMITS = expression(
-    r"\s*+(?:(?:[=:,]|of|was|from|for\s(?:the\s)?\w{1,12})\s*+)?(?:[:=]\s*+)?(?:(?:\(|\[|from\s)\s*+)?"
-    rf"(?P<low>{NUMERAL})\s*+(?:,|;|to|and|-|bis|à|a|tot|til|till|y|\.\.|\|)\s*+(?P<high>{NUMERAL})"
+    r"\s*+(?:(?:[=:,;]|of|was|from|for\s(?:the\s)?\w{1,12})\s*+)?(?:[:=]\s*+)?(?:(?:\(|\[|(?:(?:ranging|spanning)\s)?from\s|between\s|spanning\s)\s*+)?(?:(?:LL|lower(?:\slimit)?)\s?[=:]?\s?)?"
+    rf"(?P<low>{NUMERAL})\s*+(?:,|;|to|and|-|bis|à|a|tot|til|till|y|\.\.|\|)\s*+(?:(?:UL|upper(?:\slimit)?)\s?[=:]?\s?)?(?P<high>{NUMERAL})"
     r"\s?[\])]?"
 )
 _LIMITS_BELOW = expression(rf":\s*\n\s*(?P<low>{NUMERAL})\s+(?P<high>{NUMERAL})\s*(?:\n|$)")
@@ -23,7 +23,7 @@ _PLUS_MINUS = expression(
 _AND_ERROR = expression(rf"\s?(?:\(\s?±?|±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\)?")
 # A number in brackets behind a coefficient, and what tests that coefficient behind it.
 _BRACKETED = expression(
-    rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ]\b|Wald\s[zt]\b|9\d\s?%))"
+    rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ](?![A-Za-z])|Wald\s[zt]\b|9\d\s?%))"
 )
 _ENCLOSING = expression(
     rf"\s?\[\s?(?P<low>{NUMERAL})\s?(?:,|;|-|to)\s?(?P<high>{NUMERAL})\s?\](?!\s?(?:HDI|CrI|credible))"

@@ -39,7 +39,7 @@ _RELATED = expression(
 )
 #: A parameter that goes on where p ends: `t = 0.25, p = 0.001, z = 3.5`.
 _OTHER_LETTER = expression(r"[,;]\s?(?![nNdgrRMVW]\b)[a-zA-Z]\s?=\s?[\d.]")
-_OTHER_TEST = expression(r"\bF\s?[(\[_]")
+_OTHER_TEST = expression(r"\bF(?:[\s-](?:value|ratio|statistic))?\s?(?:[(\[_=₀-₉]|\d)")
 _WORD = expression(r"[^\W\d_]{3,}")
 #: Words that may stand between a test and its p where nothing tells that they belong together.
 _FEW = 2
@@ -48,6 +48,10 @@ _BESIDE = 200
 _DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
 _LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
+#: … or a word that says as much, on one line or the next.
+_LISTED_NEXT = expression(
+    r"(?!\s*\n\s*[\n*•-])[\s,;()\[\]–-]{0,4}(?:(?:at|with)\s(?:an?\s|the\s)?)?[\s,;()\[\]]{0,2}"
+)
 _SHARES = frozenset({"R2", "R2_adj", "R2_change"})
 _SUPPORT = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omega2"})
 #: Fewer degrees of freedom than this are more often the indices of a matrix.
@@ -241,7 +245,7 @@ def _is_coefficient(items: Sequence[Item], quantities: set[str], text: str) -> b
     for first, second in pairwise(items):
         if second.head == "p" and first.parts[-1].relation == "=":
             between = text[first.end : second.start]
-            if "\n" not in between and _LIST_MARKS.fullmatch(between):
+            if _LISTED_NEXT.fullmatch(between):
                 return _has_p(items)
     return False
 

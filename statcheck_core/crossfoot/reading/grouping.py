@@ -44,12 +44,16 @@ _NEAR = 3.0
 #: A gap this strong never lies inside a claim.
 APART = 9.0
 
+#: A gap no stronger than that of a semicolon goes on one list.
+_LISTED = 0.6
+
 #: More items than this between two tests are none of either's, but for the nearest.
 _CROWD = 40
 
 _WORD = expression(r"[^\W\d_]{2,}")
 _LINK = frozenset(
     {
+        "at",
         "with",
         "and",
         "adjusted",
@@ -194,7 +198,7 @@ def _joins(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor, index:
     head = items[index].head
     own = {items[i].head for i in range(anchor.first, anchor.last + 1)}
     widest = max(gaps[anchor.last : index], default=0.0)
-    if head == "odds_ratio" and head not in heads and widest <= 0.5:
+    if head == "odds_ratio" and head not in heads and widest <= _LISTED:
         return not own & {"F", "F_change", "r"}  # b, its test, its p, and the ratio
     if "p" in {items[i].head for i in range(anchor.last, index)}:
         if head in {"t", "z"} and own <= _COEFFICIENT and widest <= 0.5:

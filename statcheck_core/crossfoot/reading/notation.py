@@ -43,7 +43,7 @@ class Notation(NamedTuple):
 NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "F_change",
-        r"(?:Δ\s?F|delta[\s-]F|F[\s-]?(?i:inc|change)|F\s?_?\{?(?:change|inc|Δ)\}?|F\s?for\s(?:the\s)?change(?:\sin\sR(?:²|\^\{?2\}?|2))?)"
+        r"(?:(?:Δ\s?|delta[\s-])F(?:[\s-]?(?:value|ratio|stat(?:istic)?|test))?|F[\s-]?(?i:inc|change)|F\s?_?\{?(?:change|inc|Δ)\}?|F\s?for\s(?:the\s)?change(?:\sin\sR(?:²|\^\{?2\}?|2))?)"
         r"(?![a-z])",
         False,
         "ΔFdp",
@@ -86,8 +86,8 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "R2_change",
-        rf"(?:(?:Δ|delta[\s-]?)\s?_?\{{?\s?[Rr]{_SQUARED}\}}?|[Rr]{_SQUARED}(?:\s?_\{{)?[\s-]?(?:change|inc(?:rement)?(?![a-z])|Δ)\}}?"
-        rf"|R[\s-]?(?i:squared?|sq)[\s-](?i:change)|(?:change|increase|increment)\sin\s[Rr]{_SQUARED})",
+        rf"(?:(?:Δ|delta[\s-]?)\s?_?\{{?\s?[Rr](?:{_SQUARED}|[\s-](?i:squared?))\}}?|[Rr]{_SQUARED}(?:\s?_\{{)?[\s-]?(?:change|inc(?:rement)?(?![a-z])|Δ)\}}?"
+        rf"|R[\s-]?(?i:squared?|sq)[\s-](?i:change)|(?:change|increase|increment)\sin\s[Rr](?:{_SQUARED}|[\s-](?i:squared?)))",
         False,
         "ΔdRrci",
         "ΔR² = .07, ΔF(1, 96) = 9.58, p = .003",
@@ -257,7 +257,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "b",
-        rf"(?:(?<![A-Za-z]-)[bB]{_SUB}?\d?(?![\w²^.])|(?i:(?:regression\s)?coef(?:f?\.|f|ficients?)?(?!\sof\s(?:determination|variation|correlation))|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
+        rf"(?:(?<![A-Za-z]-)[bB]\u0302?{_SUB}?\d?(?![\w²^.\u0302])|(?i:(?:regression\s)?coef(?:f?\.|f|ficients?)?(?!\sof\s(?:determination|variation|correlation))|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
         True,
         "bBrRcCpPeEsSihl",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
@@ -297,8 +297,8 @@ NOTATIONS: tuple[Notation, ...] = (
         rf"(?:(?:T[Tt]est(?:_\w{{3,4}})?Result\(statistic|[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))"
         rf"|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?t"
         r")(?![a-z])"
-        r"|t(?:s|'s)?(?![\w²-]|'\w)|t(?:[12]|_\{[12]\})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}\s?=))",
-        False,
+        r"|t(?:s|'s)?(?![\w²-]|'\w)|t(?:[12]|_\{[12]\})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}(?:\.\d{1,3})?\s?=))",
+        True,
         "tTv",
         "t(47) = 2.20, p = .033",
     ),

@@ -25,8 +25,8 @@ from crossfoot.reading.values import AND, count_at, known_number, number_at, val
 _RATIO = expression(
     rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$"
 )
-_NEXT_VALUE = expression(rf"\s?(?:,\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
-_P_LIST = expression(rf"\s?,?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
+_NEXT_VALUE = expression(rf"\s?(?:[,;]\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
+_P_LIST = expression(rf"\s?[,;]?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
 _DEALT = expression(
     r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b"
     r"|(?<!\w)[pP]\s?=\s?0?[.,]\d{1,5},\s(?:and\s)?0?[.,]\d)"
@@ -273,11 +273,16 @@ def _read_p(text: Text, name: Name) -> Item | None:
     value = value_after(text, end, "p", name, bare=text.folded[start - 1 : start] in " (,;")
     if value is None:
         return None
-    exact = _EXACT_BEHIND.match(text.folded, value.end) if value.relation != "=" else None
+    end = value.end
+    sided = _SIDED.match(text.folded, end)
+    if sided is not None:
+        end = sided.end()
+        flags = (*flags, "one-sided" if sided["one"].lower() in {"one", "1"} else "two-sided")
+    exact = _EXACT_BEHIND.match(text.folded, end) if value.relation != "=" else None
     value = (exact and number_at(text, exact.end(), "p", "=")) or value  # p < .05 (p = .026)
     if printed.lower() in {"ps", "p's"} or _ALL.search(text.folded, max(0, start - 7), start):
         flags = (*flags, "plural")
-    return Item("p", (value,), start, value.end, flags)
+    return Item("p", (value,), start, max(end, value.end), flags)
 
 
 def _index_of_p(index: str) -> tuple[str, ...]:

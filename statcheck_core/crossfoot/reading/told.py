@@ -77,7 +77,7 @@ _REVERSED = expression(
 )
 _TURNED = {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}
 _WORD_IN_BRACKETS = expression(r"\(\s?[^\W\d]")
-_ADJUSTED = expression(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)\s?\)")
+_ADJUSTED = expression(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)(?=\s?[,;)])")
 _INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
 # The p-value for F(2, 57) = 3.90 is .026
 _P_FOR = expression(

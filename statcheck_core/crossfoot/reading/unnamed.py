@@ -12,20 +12,21 @@ from collections.abc import Iterator
 from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.numerals import NUMERAL
-from crossfoot.reading.values import known_number
+from crossfoot.reading.values import AND, known_number
 
 _ERROR = (
-    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.)))"
+    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.))"
+    r"(?:_\{?\w{1,4}\}?)?)"
 )
 #: A standard error or an interval that opens a bracket or goes on a list.
 _SPREAD = expression(
     rf"\s?[,(;\[]\s?(?:with\s(?:an?\s)?)?(?:(?P<error>{_ERROR})(?![A-Za-z])(?:\sof)?\s?[=:]?\s?(?P<se>{NUMERAL})"
-    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:C[IL]|[cC]onfidence)|(?<=\()t\s?=\s?-?\d)"
+    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:C[IL]|[cC]onfidence)|(?<=\()[tz](?:[\s-](?:ratio|value|stat(?:istic|\.)?))?\s?=?\s?-?\d)"
 )
 #: The number before it, with what it counts in.
 _WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
 _NUMBER = expression(rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?:{_WORD}){{0,5}}$")
-_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "CL", "onfidence", "(t")
+_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "CL", "onfidence", "(t", "(z")
 #: An estimate that is said to be one, or a change by so much.
 _ESTIMATED = expression(
     r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|change|gain|loss|rise|drop|fall|decline"
@@ -33,6 +34,7 @@ _ESTIMATED = expression(
     r"|\bby\s|\bassociated\swith\s|\b(?:add|cost|sav|gain|lost|los|cut)(?:ed|e?s|t|ing)?\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
     re.IGNORECASE,
 )
+_GOES_ON = expression(rf"[^()\[\]]{{0,40}}[)\]]\s?(?:,\s?)?(?:{AND}\s|,\s)(?:{AND}\s)?(?:by\s)?")
 #: A ratio is no coefficient, and the spread of a mean no test of it.
 _OTHERWISE = expression(
     r"ratio|odds|hazard|\brisk\b|-fold|\btimes\b|\b(?:mean|average|median)\b(?!\s(?:difference|change|effect))"
@@ -62,8 +64,11 @@ def _candidates(text: Text, start: int, end: int) -> Iterator[Item]:
         for match in _BRACKETED.finditer(folded, start, end):
             error = known_number(text, match, "se" if match["se"] else "error", "se")
             yield from _item(known_number(text, match, "b", "b"), error)
+        earlier = -1  # where the spread of the estimate before ends
         for match in _SPREAD.finditer(folded, start, end):
-            yield from _told_before(text, match, start)
+            for item in _told_before(text, match, start, earlier):
+                yield item
+                earlier = match.end()
     if folded.find("±", start, end) >= 0 or folded.find("+/-", start, end) >= 0:
         for match in _WITH_TEST.finditer(folded, start, end):
             pair = known_number(text, match, "b", "b"), known_number(text, match, "se", "se")
@@ -74,8 +79,11 @@ def _candidates(text: Text, start: int, end: int) -> Iterator[Item]:
 _REACH, _LEAD = 60, 110
 
 
-def _told_before(text: Text, spread: re.Match[str], start: int) -> Iterator[Item]:
-    """Yield the estimate whose standard error or interval has been met."""
+def _told_before(text: Text, spread: re.Match[str], start: int, earlier: int) -> Iterator[Item]:
+    """Yield the estimate whose standard error or interval has been met.
+
+    ``earlier`` is where the one before ends: what it is may be told once for several.
+    """
     folded, at = text.folded, spread.start()
     match = _NUMBER.search(folded, max(start, at - _REACH), at)
     if match is None:
@@ -83,7 +91,9 @@ def _told_before(text: Text, spread: re.Match[str], start: int) -> Iterator[Item
     first = match.start("b")
     lead = folded[max(0, first - _LEAD) : first]
     told = _ESTIMATED.search(lead)
-    if told is None or _OTHERWISE.search(told.group()):
+    if (told is None or _OTHERWISE.search(told.group())) and not (
+        0 <= earlier <= first and _GOES_ON.fullmatch(folded, earlier, first)
+    ):
         return
     error = known_number(text, spread, "se", "se") if spread["se"] else None
     flags = () if error is not None or folded[spread.end() - 1].isdigit() else ("if-enclosed",)

@@ -45,7 +45,7 @@ _NOT_SIGNIFICANT = expression(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
 _FOR_WHAT = (" for ", " of ", " on ", " between ", " in ", ") ")
 _WHAT = expression(
     r"(?:\)(?=\s)|\s(?:for|of|on|between|in)(?:\s[^\s\d.,;:()=<>][^\s.,;:()=<>]{0,30}(?:\s\d(?=\s))?){1,7}?)"
-    r"(?=\s?[=<>≤≥]|\s(?:was|is|were|equal(?:s|led))\s)"
+    r"(?:(?<!\s[A-Za-zα-ωΔ])(?<![²}])(?=\s?[=<>≤≥])|(?=\s(?:was|is|were|equal(?:s|led))\s))"
 )
 _UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
