@@ -57,7 +57,7 @@ def reading(
     quantity: str, relation: str, literal: str, term: str | None = None, place: int = 0
 ) -> Reading:
     """Return a reading as the reading layer makes it."""
-    folded = literal.replace("−", "-")
+    folded = literal.replace("−", "-").translate(str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789"))
     numeral = parse(folded, decimal_comma="," in literal, whole=QUANTITIES[quantity].whole)
     assert numeral is not None, literal
     low, high = bounds(relation, numeral)

@@ -19,6 +19,7 @@ CLAIMS = {
     "percent": "overall-model: R2=45.8% F(3,96)=8.51 p<.001",
     "adjusted for plain": "overall-model: R2=.185 F(3,96)=8.51 p<.001",
     "degrees of freedom swapped": "overall-model: F(57,2)=7.41 p=.001 R2=.21",
+    "degrees of freedom below the line": "effect: F(₂,₅₇)=7.41 p=.002",
     "chain": "overall-model: R2_adj=.025 F(3,196)=3.37 p=.020",
     "chain through counts": "overall-model: n=142 R2=.433 R2_adj=.413 F=34.061",
     "missing cases": "overall-model: R2=.21 F(3,96)=8.51 n=106",

@@ -34,6 +34,10 @@ def quoted(builder):
         ("Yields rose, p = «.05».", "Yields rose, p = «.05»."),
         ("It rained. Yields rose, p = «.05». Then it froze.", "Yields rose, p = «.05»."),
         ("Yields (see Fig. 2) rose, p = «.05»; so it was.", None),
+        (
+            "It was so. The fit (R² = .36, adj. R² = «.33») held.",
+            "The fit (R² = .36, adj. R² = «.33») held.",
+        ),
         ("First block.\n\nYields\nrose, p = «.05».\n\nLast block.", "Yields rose, p = «.05»."),
         ("p = .05 and again\np = «.05», p = .05.", "p = .05 and again p = «.05», p = .05."),
         # A row of a printout is quoted alone.

@@ -27,6 +27,9 @@ _EXPONENT = expression(r"([eE]|\s?[×x·]\s?10\^?\{?)([-−–+]?)(\d{1,3})(\}?)
 _MARKS = ".,·"
 _MINUS = "-−–"
 
+_ON_THE_LINE = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
+_BELOW = str.maketrans("0123456789", "₀₁₂₃₄₅₆₇₈₉")
+
 #: Longer literals are no numerals that anybody has typed.
 _LONGEST = 40
 
@@ -55,6 +58,8 @@ class Numeral(NamedTuple):
     bare
         Whether its neighbours write numbers below one without a zero before the mark, where the
         numeral itself does not show.
+    lowered
+        Whether the digits are printed below the line, as in ``F₂,₅₇``.
     """
 
     sign: str
@@ -66,6 +71,7 @@ class Numeral(NamedTuple):
     group: str
     half: float
     bare: bool = False
+    lowered: bool = False
 
     @property
     def size(self) -> float:
@@ -96,7 +102,8 @@ class Numeral(NamedTuple):
             parts = [whole[:head], *(whole[i : i + 3] for i in range(head, len(whole), 3))]
             whole = self.group.join(parts)
         fraction = f"{self.mark or '.'}{self.fraction}" if self.fraction else ""
-        return f"{self.sign}{whole}{fraction}{self.tail}"
+        text = f"{self.sign}{whole}{fraction}{self.tail}"
+        return text.translate(_BELOW) if self.lowered else text
 
     def interval(self, relation: str, least: float = -math.inf) -> Interval:
         """Return the values that it stands for after ``relation``, none below ``least``."""
@@ -109,9 +116,15 @@ class Numeral(NamedTuple):
         return Interval(max(least, at - margin), at + margin)
 
 
+def on_the_line(literal: str) -> str:
+    """Return a literal with digits that are printed below the line as usual ones."""
+    return literal.translate(_ON_THE_LINE)
+
+
 def numeral(reading: Reading) -> Numeral | None:
     """Take the literal of a reading apart; None where it is not a plain numeral."""
-    literal = reading.literal.strip()
+    printed = reading.literal.strip()
+    literal = on_the_line(printed)
     match = _SHAPE.match(literal)
     if match is None or len(literal) > _LONGEST:
         return None
@@ -121,7 +134,7 @@ def numeral(reading: Reading) -> Numeral | None:
     for whole, mark, fraction, group in _splits(stripped):
         found = _powered(Numeral(sign, whole, mark, fraction, tail, 0, group, 0.5), reading)
         if found is not None:
-            return found
+            return found._replace(lowered=literal != printed)
     return None
 
 

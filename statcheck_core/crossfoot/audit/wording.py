@@ -10,7 +10,7 @@ import math
 import sys
 from collections.abc import Sequence
 
-from crossfoot.audit.literals import Numeral, numeral
+from crossfoot.audit.literals import Numeral, numeral, on_the_line
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import symbol
 from crossfoot.model import Reading
@@ -208,9 +208,9 @@ def is_word(reading: Reading) -> bool:
 
 
 def literal_of(reading: Reading) -> str:
-    """Return a literal as it is printed, with the percent sign that stands apart from it."""
+    """Return a literal on the line, with the percent sign that stands apart from it."""
     found = numeral(reading)
-    return reading.literal + ("" if found is None or found.tail else _percent(found))
+    return on_the_line(reading.literal) + ("" if found is None or found.tail else _percent(found))
 
 
 def phrase(readings: Sequence[Reading]) -> str:
@@ -226,7 +226,7 @@ def phrase(readings: Sequence[Reading]) -> str:
         keys = [(df, reading.term) for df in _STATISTICS.get(reading.quantity, ())]
         if keys and all(key in by_key for key in keys) and held.isdisjoint(keys):
             held.update(keys)
-            inside = ", ".join(by_key[key].literal for key in keys)
+            inside = ", ".join(literal_of(by_key[key]) for key in keys)
             term = f" ({reading.term})" if reading.term else ""
             head = f"{symbol(reading.quantity)}({inside}){term}"
             heads[place] = f"{head} {reading.relation} {literal_of(reading)}"
@@ -241,7 +241,7 @@ def phrase(readings: Sequence[Reading]) -> str:
     ]
     if not whole:
         return listed(words)
-    freedom = f"{listed([reading.literal for reading in rest])} degrees of freedom"
+    freedom = f"{listed([literal_of(reading) for reading in rest])} degrees of freedom"
     return f"{listed(words)} with {freedom}" if words else freedom
 
 

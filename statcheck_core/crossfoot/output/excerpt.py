@@ -6,14 +6,16 @@ the source, backwards; the words are never searched.
 
 from __future__ import annotations
 
+import re
 from bisect import bisect_right
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Iterable, Iterator
 
 from crossfoot.documents.table import CELL
 from crossfoot.documents.visible import OPAQUE, Visible, verbatim
 from crossfoot.expressions import expression
 from crossfoot.model import Block, Document, Placed, Span
 from crossfoot.output.safe import one_line, safe
+from crossfoot.reading.sentences import ABBREVIATION
 
 #: Stand before and after the reading; ``safe`` leaves none in a document's own words.
 MARK, UNMARK = "\ufdd0", "\ufdd1"
@@ -23,6 +25,9 @@ _BEFORE, _AFTER = 160, 120
 
 #: Rows of a table shown for one reading, at most.
 _MOST_ROWS = 6
+
+#: No abbreviation is longer.
+_ABBREVIATED = 12
 
 #: A word this long is no word, and may be cut.
 _LONG_WORD = 30
@@ -131,7 +136,7 @@ def _before(text: str, start: int, prose: bool, clean: Callable[[str], str]) -> 
     """Return what to show before an index: from the start of its sentence, item or line."""
     reach = max(0, start - _BEFORE)
     if prose:
-        begins = [found.end() for found in _END.finditer(text, reach, start)]
+        begins = [found.end() for found in _ends(text, reach, start)]
     else:
         begins = [found for found in [text.rfind("\n", reach, start) + 1] if found]
     if begins or not reach:
@@ -146,8 +151,7 @@ def _after(text: str, end: int, prose: bool, clean: Callable[[str], str]) -> str
     """Return what to show after an index: up to the end of its sentence, item or line."""
     reach = min(len(text), end + _AFTER)
     if prose:
-        found = _END.search(text, end, reach)
-        stop = found.end() if found else -1
+        stop = next((found.end() for found in _ends(text, end, reach)), -1)
     else:
         stop = text.find("\n", end, reach)
     if stop >= 0 or reach == len(text):
@@ -155,6 +159,13 @@ def _after(text: str, end: int, prose: bool, clean: Callable[[str], str]) -> str
     part = clean(text[end:reach])
     rest, _, tail = part.rpartition(" ")
     return f"{rest if len(tail) < _LONG_WORD else part} …"
+
+
+def _ends(text: str, start: int, end: int) -> Iterator[re.Match[str]]:
+    """Yield where sentences and items end in ``text[start:end]``."""
+    for found in _END.finditer(text, start, end):
+        if ABBREVIATION.search(text, max(0, found.start() - _ABBREVIATED), found.end()) is None:
+            yield found
 
 
 def _clean(text: str) -> str:
