@@ -9,7 +9,14 @@ from crossfoot.reading.notation import NOTATIONS, Notation
 from crossfoot.scan import claims_of
 
 #: Scanner's words for what the neighbours settle, and what they become in the examples.
-SETTLED = {"b-se": "se", "ci": "ci_low", "β": "beta", "ms-error": "ms", "chi2-of": "chi2"}
+SETTLED = {
+    "b-se": "se",
+    "ci": "ci_low",
+    "β": "beta",
+    "ms-error": "ms",
+    "chi2-of": "chi2",
+    "statistic": "t",
+}
 
 
 @pytest.mark.parametrize("notation", NOTATIONS, ids=lambda n: f"{n.quantity}: {n.example[:40]}")

@@ -23,6 +23,7 @@ _WORDS = (
     "bservations", " obs", "95 %", "95%", " SE ", "s.e. ", "dard error", "t-ratio ", "Sig.",
     "mong ", "ample of", " df", "d.f.", "elitysaste", "ariânc", "libert", "liberd", "):", "]:",
     ") of ", " p of ", " equal to ", ") was ", ") is ", "值", "値", "自由度", "':", '":',
+    "estimates:",
 )  # fmt: skip
 _ANY_WORD = any_of(_WORDS)
 _MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")
@@ -78,7 +79,7 @@ def read_block(
         visible, folded = found.visible, fold(found.visible.text)
         claims = table_claims(found, _prose(folded, visible.text))
     else:
-        visible = squeezed(show(language, kind, source, definitions))
+        visible = unwrapped(squeezed(show(language, kind, source, definitions)))
         folded = fold(visible.text)
         claims = tuple(_printed(visible, folded) if aligned else _claims(folded, visible.text))
     return BlockReading(tuple(_placed(claim, visible) for claim in claims), cues_in(folded))
@@ -183,6 +184,29 @@ def squeezed(visible: Visible) -> Visible:
         for char in _INK.finditer(text, *run.span()):
             out.keep(text, *char.span())
         done = run.end()
+    out.keep(text, done, len(text))
+    return compose(visible, out.build())
+
+
+#: A number that a program prints as the call which makes it: `np.float64(2.31)`.
+_WRAPPED = expression(
+    r"(?:\bnp\.[a-z]{3,7}\d{0,3}|\barray)\(\[{0,2}(-?\d{1,20}(?:\.\d{0,20})?(?:e[-+]\d{1,3})?)\]{0,2}\)"
+)
+
+
+def unwrapped(visible: Visible) -> Visible:
+    """Take numbers out of the calls that make them."""
+    text = visible.text
+    if "np." not in text and "array(" not in text:
+        return visible
+    out = Builder()
+    done = 0
+    for call in _WRAPPED.finditer(text):
+        out.keep(text, done, call.start())
+        out.keep(text, *call.span(1))
+        done = call.end()
+    if not done:
+        return visible
     out.keep(text, done, len(text))
     return compose(visible, out.build())
 

@@ -124,6 +124,8 @@ def _kind(anchor: str | None, quantities: set[str], sentence: str) -> str:
         anchor in {"t", "z"} and "se" in quantities
     ):
         return "coefficient"
+    if anchor == "t" and "r" in quantities:
+        return "correlation"
     return {
         "t": "mean-comparison",
         "z": "mean-comparison",

@@ -39,6 +39,8 @@ _RELATED = expression(
 )
 #: A parameter that goes on where p ends: `t = 0.25, p = 0.001, z = 3.5`.
 _OTHER_LETTER = expression(r"[,;]\s?(?![nNdgrRMVW]\b)[a-zA-Z]\s?=\s?[\d.]")
+#: A time before F, in the trace of a computation: `t = 0.05  F = 12.11  p = 0.99`.
+_TRACED = expression(r"(?<!\w)t\s?=\s?\d{1,8}(?:\.\d{1,8})?[,;]?\s{1,4}$")
 _OTHER_TEST = expression(r"\bF(?:[\s-](?:value|ratio|statistic))?\s?(?:[(\[_=₀-₉]|\d)")
 _WORD = expression(r"[^\W\d_]{3,}")
 #: Words that may stand between a test and its p where nothing tells that they belong together.
@@ -139,7 +141,8 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
     support = has_p or bool(quantities & _SUPPORT)
     if "df2" not in quantities:
         if value.relation == "=":
-            return support and not is_of_classifier(items, text)
+            traced = _TRACED.search(text, max(0, test.start - 24), test.start) is not None
+            return support and not traced and not is_of_classifier(items, text)
         # `F < 1` alone says little, and yet what it says of an effect.
         plural = "plural" in test.flags
         bound = plural or near(_EFFECT, items, text) or near(_OTHER_TEST, items, text)

@@ -198,6 +198,8 @@ def _joins(items: Sequence[Item], gaps: Sequence[float], anchor: _Anchor, index:
     head = items[index].head
     own = {items[i].head for i in range(anchor.first, anchor.last + 1)}
     widest = max(gaps[anchor.last : index], default=0.0)
+    if "estimated" in items[index].flags:
+        return own == {"t"}
     if head == "odds_ratio" and head not in heads and widest <= _LISTED:
         return not own & {"F", "F_change", "r"}  # b, its test, its p, and the ratio
     if "p" in {items[i].head for i in range(anchor.last, index)}:

@@ -46,7 +46,9 @@ class Item(NamedTuple):
         test by a name that means much else), ``perhaps-se`` (its last number may be an SE),
         ``if-ratio`` and ``if-enclosed`` (an estimate only if its test or its interval tells so),
         ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order),
-        ``grown`` (an R² told beside that of a smaller model).
+        ``grown`` (an R² told beside that of a smaller model), ``estimated`` (what the
+        test before it is of), ``wald`` (an F that does not follow from R²), ``letter`` (a p that
+        counts predictors).
     """
 
     head: str
@@ -71,5 +73,8 @@ SCANNER_FLAGS = frozenset(
         "all",
         "dealt",
         "grown",
+        "estimated",
+        "wald",
+        "letter",
     }
 )

@@ -54,7 +54,7 @@ NOTATIONS: tuple[Notation, ...] = (
         r"(?:(?i:sig\.(?:\s?F)?(?:\s?change)?(?:\s?\(2-tailed\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation)(?=\s?[=<])"
         r"|associated\sprobability(?:\svalue)?)"
         r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
-        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|Pr(?=\s?=\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
+        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P(?:r(?:ob)?)?\s?\(\s?\|[TtZz]\|\s?>=?\s?\|?[tz]\|?\s?\)|Pr(?=\s?=\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
         True,
         "sSPpa",
         "Prob > F = 0.0312, F(2, 57) = 3.69",
@@ -63,15 +63,15 @@ NOTATIONS: tuple[Notation, ...] = (
         "F",
         rf"(?:[Ff]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})(?:\sgave)?"
         rf"(?:\svs\.\sconstant\smodel)?|(?:{VALUE_BEFORE}|estad[ií]stico)\s(?:de\s|di\s)?F(?![\w(])"
-        r"|F\s?Statistic|(?:F_oneway|Levene)Result\(statistic)",
+        r"|F\s?Statistic|Wald\s(?:test|F)(?=\s?:\s?\d{1,9}(?:\.\d{1,9})?\son\s\d{1,5}\sand))",
         True,
-        "Ffve",
+        "FfveW",
         "The F-value of 4.22 with 2 and 42 degrees of freedom gave a p-value of 0.021",
     ),
     Notation(
         "p",
-        rf"(?:[pP](?:s|'s)?[\s-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc)(?![a-z])"
-        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.)",
+        rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc)(?![a-z])"
+        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|Prob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
         True,
         "pPv",
         "F(2, 57) = 3.90, p-value: .026",
@@ -142,7 +142,7 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "chi2",
         rf"(?:Δ\s?)?(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq\.?|deux|quadrat[o]?|cuadrado|kwadraat|kvadrat|två|2)(?![\d.])"
-        rf"|khi²|(?i:chi)\s?{_SQUARED}|X-squared|(?:Kruskal|Power_divergence|Chi2Contingency|Friedmanchisquare|Bartlett|Fligner)Result\(statistic|χ)(?!\s?/\s?df)",
+        rf"|khi²|(?i:chi)\s?{_SQUARED}|[XK]-squared|χ)(?!\s?/\s?df)",
         True,
         "ΔχXcCkKjqQPFB",
         "χ²(1, N = 120) = 8.47, p = .004",
@@ -150,9 +150,9 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "chi2-of",
         r"(?:[HQ](?=\s?=\s?\d{1,4}[.,]\d+\s?[,;(]\s?d\.?f|\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
-        r"|(?:LRT?|[dD]eviance(?:\s(?:dropped|fell|decreased|declined|was\sreduced)(?=\sby\s))?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|卡方值?)(?=\s?[=(]|\s(?:was|of|by)\s))",
+        r"|(?:LRT?|[dD]eviance(?:\s(?:dropped|fell|decreased|declined|was\sreduced)(?=\sby\s))?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|LM|BP|卡方值?)(?=\s{0,14}[=(]|\s(?:was|of|by)\s))",
         False,
-        "HQGLlSsWw卡dD",
+        "HQGLlSsWwB卡dD",
         "The Kruskal–Wallis test was significant, H(2) = 9.21, p = .010",
     ),
     Notation(
@@ -198,7 +198,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "se",
-        rf"(?:(?i:(?:robust\s)?(?:std\.?|standard)\s(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.|{ERROR_NAMES}|E[EPST](?=\s?=)|(?:SE|se)(?:\s?_\{{?\w{{1,4}}\}}?|\s[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
+        rf"(?:(?i:(?:robust\s)?(?:std[._]?|standard)\s?(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.|{ERROR_NAMES}|E[EPST](?=\s?=)|(?:SE|se)(?:\s?_\{{?\w{{1,4}}\}}?|\s[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
         True,
         "rsSReEk标標표",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
@@ -209,6 +209,13 @@ NOTATIONS: tuple[Notation, ...] = (
         True,
         "aOoeE",
         "OR = 1.84, 95% CI [1.20, 2.82], p = .005",
+    ),
+    Notation(
+        "d",
+        r"P(?:r(?:ob)?)?\s?\(\s?[TFZ]\s?[<>]\s?[tfz]\s?\)",
+        False,
+        "P",
+        "t = 2.12, Pr(T < t) = 0.98, df = 58, Pr(|T| > |t|) = 0.0383",
     ),
     Notation(
         "d",
@@ -277,6 +284,13 @@ NOTATIONS: tuple[Notation, ...] = (
         "N = 58. R = .643, R² = .414, F(2, 55) = 19.40",
     ),
     Notation(
+        "k",
+        r"k(?=\s?=\s?\d{1,2}(?![\d.,]?\d|%))",
+        False,
+        "k",
+        "R² = .31, adjusted R² = .29, n = 84, k = 3, F = 12.09, p < .001",
+    ),
+    Notation(
         "R",
         r"(?i:multiple\s(?:correlation\s)?(?:coefficient\s)?)?R(?![\w²^.\u0304-])",
         False,
@@ -286,21 +300,28 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "r",
         r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\(?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
-        r"|(?:Pearson[rR]|Spearmanr|Kendalltau)Result\((?:statistic|correlation)"
-        r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?=\s(?:was|is|of|=|between|with|for)\s))",
+        r"|[rR][_-]?value(?=\s?[=:])|cor(?=\s*\n\s*-?0?\.\d)|(?:rho|tau)(?=\s*\n\s*-?0?\.\d)"
+        r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?:\sof\s\w{1,20}\sand\s\w{1,20}(?=\s=\s))?(?=\s(?:was|is|of|=|between|with|for)\s))",
         False,
         "rPpcCSKρ",
         "r(98) = .41, p < .001",
     ),
     Notation(
         "t",
-        rf"(?:(?:T[Tt]est(?:_\w{{3,4}})?Result\(statistic|[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))"
+        rf"(?:(?:[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))"
         rf"|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?t"
         r")(?![a-z])"
         r"|t(?:s|'s)?(?![\w²-]|'\w)|t(?:[12]|_\{[12]\})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}(?:\.\d{1,3})?\s?=))",
         True,
         "tTv",
         "t(47) = 2.20, p = .033",
+    ),
+    Notation(
+        "statistic",
+        r"(?:[tT]est[\s_-])?[sS]tatistic(?![a-z])|correlation(?==)",
+        True,
+        "sStTc",
+        "TtestResult(statistic=2.31, pvalue=0.0245, df=58.0)",
     ),
     Notation(
         "z",

@@ -64,6 +64,8 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
     """Read an R² of any kind; words and indices around the name say which."""
     folded = text.folded
     start, end = name.match.span()
+    if folded[start - 1 : start] == "*" and folded[start - 2 : start - 1].isalnum():
+        return None  # "Obs*R-squared", a statistic
     worded = any(map(str.isalpha, folded[end : end + _LEAD]))
     both = _BOTH.match(folded, end) if worded and name.notation.quantity == "R2" else None
     if both is not None and (parts := _two(text, both.end(), name)):

@@ -15,6 +15,7 @@ from crossfoot.reading.estimates import (
     read_interval,
 )
 from crossfoot.reading.items import Item, Part, Text
+from crossfoot.reading.nameless import read_statistic
 from crossfoot.reading.names import Name, names
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import of_two_models, read_r_squared
@@ -38,6 +39,7 @@ _FOR_ALL_BEHIND = expression(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
 )
 _EXACT_BEHIND = expression(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
+_COUNTED = expression(r"\s(?:[a-z]{2,14}\s){0,2}(?:predictor|regressor|covariate|variable|feature)")
 _ALL = expression(r"(?:both|all|each)\s$")
 _SIDED = expression(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
 _ADJUSTED_NAME = expression(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
@@ -191,6 +193,8 @@ def _read_f(text: Text, name: Name) -> Item | None:
         *_F_FLAGS.get(printed, ()),
         *(("lower",) if printed == "f" or _WORD_BELOW.match(printed) else ()),
     )
+    if printed.startswith("Wald"):
+        flags = (*flags, "wald")
     return Item(quantity, parts, start, end, flags)
 
 
@@ -224,6 +228,8 @@ def _read_one_df(text: Text, name: Name) -> Item | None:
     """t, r and χ²: one degree of freedom, for χ² perhaps with N."""
     printed, head = name.match.group(), name.notation.quantity
     quantity = "chi2" if head == "chi2-of" else head
+    if printed in _BELOW:
+        return _read_below(text, name)
     keys = ("df", "n") if quantity == "chi2" else ("df",)
     degrees = degrees_after(text, name.match.end(), keys)
     if quantity == "chi2" and (inside := _INDEX.search(printed)) is not None:
@@ -244,6 +250,22 @@ def _read_one_df(text: Text, name: Name) -> Item | None:
         flags = ("by-name",)
     limits, end = enclosing(text, value) if quantity == "r" else ((), value.end)
     return Item(quantity, (*degrees.parts, value, *limits), name.match.start(), end, flags)
+
+
+#: Names of correlations that stand over their number.
+_BELOW = frozenset({"cor", "rho", "tau"})
+_TO_NEXT_LINE = expression(r"[ \t]*+\n\s*+")
+
+
+def _read_below(text: Text, name: Name) -> Item | None:
+    """Read a correlation that is printed on the line below its name, as an estimate is."""
+    start, end = name.match.span()
+    gap = _TO_NEXT_LINE.match(text.folded, end)
+    value = number_at(text, gap.end(), "r", "=") if gap is not None else None
+    if value is None:
+        return None
+    flags = ("estimated",) if name.match.group() == "cor" else ("estimated", "rank-correlation")
+    return Item("r", (value,), start, value.end, flags)
 
 
 def _read_p(text: Text, name: Name) -> Item | None:
@@ -270,9 +292,15 @@ def _read_p(text: Text, name: Name) -> Item | None:
         end = bracket.end()
     if "tailed" in printed:
         flags = (*flags, "one-sided" if "one" in printed else "two-sided")
+    area = _AREA.match(text.folded, end)
+    if area is not None:
+        return _read_area(text, area, start)
     value = value_after(text, end, "p", name, bare=text.folded[start - 1 : start] in " (,;")
     if value is None:
         return None
+    if value.low > 1 and _COUNTED.match(text.folded, value.end):
+        counted = value._replace(quantity="k")  # p = 3 predictors
+        return Item("k", (counted,), start, value.end, ("letter",))
     end = value.end
     sided = _SIDED.match(text.folded, end)
     if sided is not None:
@@ -283,6 +311,27 @@ def _read_p(text: Text, name: Name) -> Item | None:
     if printed.lower() in {"ps", "p's"} or _ALL.search(text.folded, max(0, start - 7), start):
         flags = (*flags, "plural")
     return Item("p", (value,), start, max(end, value.end), flags)
+
+
+#: The tail area that p is, written out: ``P(F(2, 57) > 4.21) = 0.0197``.
+_AREA = expression(
+    r"\s?=\s?P\((?P<test>F|t|Chi-square|z)(?:\((?P<a>\d{1,7})(?:,\s?(?P<b>\d{1,9}))?\))?\s?>\s?[-\d.]{1,20}\)"
+    rf"\s?=\s?(?P<p>{NUMERAL})"
+)
+
+
+def _read_area(text: Text, match: re.Match[str], start: int) -> Item | None:
+    """Read a p that stands behind its tail area, with the degrees of freedom of the latter."""
+    names = ("df1", "df2") if match["test"] == "F" else ("df",)
+    degrees = [
+        count_at(text, match[group], match.start(group), name)
+        for name, group in zip(names, ("a", "b"), strict=False)
+        if match[group]
+    ]
+    value = known_number(text, match, "p", "p")
+    if value is None:
+        return None
+    return Item("p", (value, *filter(None, degrees)), start, match.end())
 
 
 def _index_of_p(index: str) -> tuple[str, ...]:
@@ -313,6 +362,21 @@ def _read_error_mean_square(text: Text, name: Name) -> Item | None:
     return Item("ms", (value._replace(term="error"),), name.match.start(), value.end)
 
 
+#: Behind the number of predictors: their name, or the next of a list.
+_OF_PREDICTORS = expression(
+    r"\s(?:[a-z]{2,14}\s){0,2}(?:predictor|regressor|slope|covariate|explanatory|independent)"
+    r"|\s?(?:[,;.)\]\n]|$)|\s(?:and|with)\s"
+)
+
+
+def _read_predictors(text: Text, name: Name) -> Item | None:
+    """Read the number of predictors, unless what follows says that k counts other things."""
+    value = value_after(text, name.match.end(), "k", name)
+    if value is None or value.relation != "=" or not _OF_PREDICTORS.match(text.folded, value.end):
+        return None
+    return Item("k", (value,), name.match.start(), value.end)
+
+
 _READERS: dict[str, Callable[[Text, Name], Item | None]] = {
     "F": _read_f,
     "F_change": _read_f,
@@ -327,4 +391,6 @@ _READERS: dict[str, Callable[[Text, Name], Item | None]] = {
     "ci": read_interval,
     "b-se": read_estimate_with_error,
     "ms-error": _read_error_mean_square,
+    "statistic": read_statistic,
+    "k": _read_predictors,
 }

@@ -28,6 +28,10 @@ _LEFT_OVER = frozenset({"n", "df", "df-pair"})
 #: A residual standard deviation is read beside one of these.
 _ANOTHER_NUMBER = expression(rf"[A-Za-z]\s(?:=\s)?(?P<number>{NUMERAL})\s?[%×x]?\s?[(\[,]\s?$")
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
+#: Beside one of these k counts predictors.
+_WITH_K = frozenset({"R2", "R2_adj"})
+#: What a Wald F says nothing of.
+_OF_FIT = frozenset({"R2", "R2_adj", "R", "s"})
 
 
 def shared(groups: Sequence[Group], text: str) -> Iterable[Group]:
@@ -171,10 +175,16 @@ def settle(group: Group, text: str) -> Group | None:
     items = _one_sample_size(items, text)
     if not {item.head for item in items} & _WITH_S:
         items = [item for item in items if item.head != "s"]
+    if not {item.head for item in items} & _WITH_K:
+        if any("letter" in item.flags for item in items):
+            return None  # the sizes of what is simulated
+        items = [item for item in items if item.head != "k"]
     items = [item for item in items if not _doubled(item, items)]
     items = _own_p(items, group.anchor)
     if group.anchor in {"F", "F_change"}:
         items = _df_of_f(items)
+        if any("wald" in item.flags for item in items):
+            items = [item for item in items if item.head not in _OF_FIT]
     if group.anchor in _COEFFICIENT:
         items = [item for item in items if not _of_a_single_slope(item)]
         items = _on_one_scale(items, text)

@@ -8,6 +8,7 @@ from collections.abc import Iterator
 from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
+from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import AND, known_number, not_significant
 from crossfoot.reading.words import ADJUSTED, VERB, VERB_UNSPACED
 
@@ -83,6 +84,11 @@ _INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]
 _P_FOR = expression(
     rf"[pP][\s-]?value\s(?:for|of|associated\swith|corresponding\sto|that\sbelongs\sto)\s[^;!?]{{3,60}}?\s(?:{VERB})\s(?P<p>0?[.,]\d+)(?![\d%])"
 )
+# RESET = 2.30, df1 = 2, df2 = 55: a test by its name, whose two df make it an F
+_BY_NAME = expression(
+    r"(?:^|\n)[ \t]{0,20}(?P<name>(?!F)[A-Z][\w'-]{1,20}(?:\s[A-Za-z-]{1,16}){0,2})"
+    rf"\s=\s(?P<F>{NUMERAL}),\s(?=df1\s=)"
+)
 _SAMPLE = expression(
     r"(?:[Aa]mong|[Ss]ample\sof|[Tt]otal\sof|[Ii]n\sall)\s(?:the\s)?"
     r"(?P<n>\d{1,3}(?:,\d{3})+|\d{2,7})\s(?!of\b)(?=[a-z]{3})"
@@ -110,6 +116,11 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
             part = known_number(text, match, "p", "p")
             if part is not None:
                 yield Item("p", (part,), *match.span("p"))
+    if folded.find(", df1 =", start, end) >= 0:
+        for match in _BY_NAME.finditer(folded, start, end):
+            part = known_number(text, match, "F", "F")
+            if part is not None:
+                yield Item("F", (part,), match.start("name"), match.end("F"))
     words = any(
         folded.find(stem, start, end) >= 0 for stem in ("mong ", "ample of", "otal of", "n all ")
     )

@@ -22,7 +22,7 @@ _SIGN = (
     r"|&lt;|&gt;|(?:is|was|were)?\s?(?:less|lower|smaller|greater|larger|higher|more)\sthan|below|under|above)"
 )
 _RELATION = expression(
-    rf"[\s*]*+(?:\(\s*+)?(?P<sign>{_SIGN})[\s*]*+(?:np\.float64\()?(?=[-+]?\s?[.,·]?\d|n\.?\s?s|NS|N\.S)"
+    rf"[\s*]*+(?:\(\s*+)?(?P<sign>{_SIGN})[\s*]*+(?=[-+]?\s?[.,·]?\d|n\.?\s?s|NS|N\.S)"
 )
 # "<", ">" and "=" as some journals' fonts come out of a PDF.
 _DAMAGED = expression(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")

@@ -6,24 +6,27 @@ import re
 from collections.abc import Sequence
 
 from crossfoot.reading.aligned.lines import (
+    MARKS,
     NOTE,
     Line,
     Token,
     Word,
+    fields_in,
     headish,
     is_value,
     parted,
     starts_panel,
     tokens_of,
+    values_of,
     words_of,
 )
 from crossfoot.reading.aligned.placing import Columns, Row, placed, with_marks
-from crossfoot.reading.tables.headings import NOTHING
+from crossfoot.reading.tables.headings import NOTHING, parse
 
-#: What two spaces or a tab part.
-_FIELD = re.compile(r"\S+(?: \S+)*")
 #: The types of columns, as some data frames print them.
-_TYPES = re.compile(r"\s*(?:<[a-z]{2,6}>\s*)+")
+_TYPES = re.compile(r"\s*\*?\s*(?:<[a-z]{2,6}>\s*)+")
+#: What else tables of tests and models print.
+_BESIDE = re.compile(r"(?:npar|AICc?|BIC|logLik|deviance|[nN]\d|group\d|estimate\d)", re.IGNORECASE)
 _CATEGORY = re.compile(r"[A-Za-z_][\w.]{0,40}=[\w.]{1,20}")
 #: A relation that is not in brackets.
 _STATED = re.compile(r"=(?![^()]*\))")
@@ -31,24 +34,40 @@ _STATED = re.compile(r"=(?![^()]*\))")
 _WEAK = frozenset({"label", "n", "mean", "sd", "r", "R"})
 
 
-def headings_in(text: str, line: Line) -> Columns | None:
-    """Return the columns that a line names, or None where it is no line of headings."""
+def headings_in(text: str, line: Line, below: Sequence[Line] = ()) -> Columns | None:
+    """Return the columns that a line names, or None where it is no line of headings.
+
+    Parameters
+    ----------
+    text, line
+        The text, and the line that may name columns.
+    below
+        The lines after it, which tell how many columns there are.
+    """
     if not headish(line.text):
         return None
     words = words_of(text, line.start, line.end)
     if not 2 <= len(words) <= 40:
         return None
     tokens = tokens_of(text, words)
+    tokens = _fields(line, tokens, text, below) or tokens
     known = [t for t in tokens if t.heading.roles and t.heading.roles[0] not in _WEAK]
-    others = [t for t in tokens if not t.heading.roles]
+    others = [t for t in tokens if not t.heading.roles and not _BESIDE.fullmatch(t.text)]
     if len({t.heading.roles for t in known}) < 2 or len(others) > len(known) + 1:
         return None
     # The first may say of which category the coefficients are: "grade=2".
     first = tokens[0] if _CATEGORY.fullmatch(tokens[0].text) else None
     if any(is_value(t.text) or not (t is first or set("=;{}").isdisjoint(t.text)) for t in others):
         return None
+    named = any(
+        label and not is_value(label[0].text)
+        for label, _ in (parted(text, row) for row in below[:3] if not row.rule)
+    )
     start_of_heads = next(
-        i for i, t in enumerate(tokens) if t.heading.roles and t.heading.roles != ("label",)
+        i
+        for i, t in enumerate(tokens)
+        if t.heading.roles not in {(), ("label",)}
+        and not (i == 0 and named and t.heading.roles == ("statistic",))
     )
     heads: list[Token] = []
     spans: list[tuple[int, int]] = []
@@ -64,12 +83,42 @@ def headings_in(text: str, line: Line) -> Columns | None:
     return Columns(tuple(tokens[:start_of_heads]), tuple(heads), tuple(spans))
 
 
+def _fields(line: Line, tokens: Sequence[Token], text: str, below: Sequence[Line]) -> list[Token]:
+    """Return the headings that wide gaps part, if a row below has as many values.
+
+    There are none where names parted at each space fit the words of a row.
+    """
+    found = list(fields_in(line.text))
+    if len(found) == len(tokens) or len(found) < 3:
+        return []
+    body = [row for row in below[:4] if not (row.rule or row.blank or _TYPES.fullmatch(row.text))]
+    counts = [
+        len([w for w in words_of(text, row.start, row.end) if not MARKS.fullmatch(w.text)])
+        for row in body
+    ]
+    if any(count - len(tokens) in {0, 1} for count in counts):
+        return []
+    rows = [parted(text, row) for row in body]
+    counts = [len(with_marks(text, values)) + bool(label) for label, values in rows if values]
+    if not counts or len(found) != max(counts):
+        return []
+    return [
+        Token(
+            field.group(),
+            line.start + field.start(),
+            line.start + field.end(),
+            parse(field.group()),
+        )
+        for field in found
+    ]
+
+
 def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
     """Return the columns of a matrix whose columns are numbered, or named as its rows are."""
     line = lines[number]
     fields = [
         Token(found.group(), line.start + found.start(), line.start + found.end(), NOTHING)
-        for found in _FIELD.finditer(line.text)
+        for found in fields_in(line.text)
     ]
     if not 2 <= len(fields) <= 40 or _STATED.search(line.text):
         return None
@@ -87,7 +136,8 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
             continue
         if len(values) > len(fields):
             return None
-        names.add(text[label[0].start : label[-1].end].lower())
+        name = text[label[0].start : label[-1].end].lower()
+        names |= {name, name.split("  ")[0]}
         rows += 1
     counts = [field.text.strip("().") for field in fields]
     numbered = [count for count in counts if count.isdigit()]
@@ -129,6 +179,8 @@ def rows_below(
             number += 1
             continue
         label, values = parted(text, line)
+        if not values and columns.heads and not columns.heads[-1].heading.roles:
+            label, values = _with_words_behind(text, line, columns)
         if NOTE.match(line.text) or _is_sentence(label, values):
             break
         if raw and blanks and len(values) < 2 and _indent(line) > _indent(lines[raw[0][0]]) + 8:
@@ -155,6 +207,26 @@ def rows_below(
         columns, [len(with_marks(text, values)) for _, _, values in raw if values]
     )
     return placed(text, lines, raw, columns, first), columns, end
+
+
+def _with_words_behind(text: str, line: Line, columns: Columns) -> tuple[list[Word], list[Word]]:
+    """Return label and values of a row whose last columns hold words: the name of a method."""
+    words = values_of(text, words_of(text, line.start, line.end))
+    wanted = len(columns.heads)
+    while wanted and not columns.heads[wanted - 1].heading.roles:
+        wanted -= 1
+    last = len(words)
+    while last and not is_value(words[last - 1].text):
+        last -= 1
+    first = last
+    while first and is_value(words[first - 1].text):
+        first -= 1
+    if last - first == wanted + 1 and words[first].text.isdigit():
+        first += 1  # the number of the row
+    if last - first != wanted or wanted < 2 or last == len(words):
+        return words, []
+    behind = Word(text[words[last].start : words[-1].end], words[last].start, words[-1].end)
+    return words[:first], [*words[first:last], behind]
 
 
 def _indent(line: Line) -> int:
@@ -192,7 +264,8 @@ def _with_whole_intervals(columns: Columns) -> Columns:
 
 def _is_sentence(label: Sequence[Word], values: Sequence[Word]) -> bool:
     """Say whether a line tells numbers one after the other, each under its own name."""
-    if (label and label[-1].text[-1] in ":=") or (values and values[0].text[0] == "="):
+    ends = label[-1].text if label else ""
+    if (ends[-1:] in {":", "="} and ends != "==") or (values and values[0].text[0] == "="):
         return True
     return any("." in word.text and is_value(word.text.rstrip(",;")) for word in label)
 

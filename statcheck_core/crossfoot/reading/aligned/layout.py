@@ -15,10 +15,11 @@ from crossfoot.reading.aligned.lines import (
     Line,
     Token,
     Word,
+    fields_in,
     headish,
     lines_of,
 )
-from crossfoot.reading.aligned.placing import Columns
+from crossfoot.reading.aligned.placing import Columns, Row
 from crossfoot.reading.aligned.wrapped import with_panels
 from crossfoot.reading.fold import fold
 
@@ -31,8 +32,6 @@ _HOPE = re.compile(
 )
 
 
-#: What two spaces part.
-_FIELD = re.compile(r"\S+(?: \S+)*")
 _RELATED = re.compile(r"[=<>≤≥≈]|\bp-value\b")
 _CASES = re.compile(r"\(?\b[Nn]\s?=\s?[\d,]+\)?")
 
@@ -139,7 +138,7 @@ class _Finder:
             elif not line.text.strip(" -+|") and number < len(self.lines):
                 continue
             else:
-                if len(run) >= 3:
+                if len({self.text[slice(*pair.label)] for pair in run}) >= 3:
                     self.side_block(run)
                 run = []
 
@@ -165,7 +164,9 @@ class _Finder:
             header = (listing.header,) if listing.header[1:] else ()
             self.take(listing.first, listing.last, self.table(header, rows, after=listing.last + 1))
             return listing.last + 1
-        columns = headed.headings_in(self.text, self.lines[number])
+        columns = headed.headings_in(
+            self.text, self.lines[number], self.lines[number + 1 : number + 5]
+        )
         if columns is None and self.wide[number]:
             columns = headed.matrix_in(self.text, self.lines, number)
         if columns is None:
@@ -176,6 +177,13 @@ class _Finder:
         rows_found, columns, end = with_panels(self.text, self.lines, rows_found, columns, end)
         heads = self.headers(number, columns)
         rows = [(_place(row.label), *(_place(cell) for cell in row.cells)) for row in rows_found]
+        cut = _second_labels(self.text, self.lines, rows_found)
+        if cut is not None:
+            heads = [(head[0], None, *head[1:]) for head in heads]
+            rows = [
+                (*_parted_at(self.text, self.lines[found.line], found.label, cut), *row[1:])
+                for found, row in zip(rows_found, rows, strict=True)
+            ]
         first = number - len(heads) + 1
         self.take(first, end - 1, self.table(heads, rows, after=end))
         return end
@@ -194,7 +202,7 @@ class _Finder:
             return [own]
         fields = [
             (above.start + found.start(), above.start + found.end())
-            for found in _FIELD.finditer(above.text)
+            for found in fields_in(above.text)
         ]
         upper: list[tuple[int, int] | None] = [None]
         for head in columns.heads:
@@ -217,9 +225,11 @@ class _Finder:
                 run.append(found)
                 continue
             count = len([pair for item in run for pair in item])
-            if 0 < count < 3:
+            labels = [self.text[slice(*pair.label)] for item in run for pair in item]
+            enough = count >= 3 or (count == 2 and pairs.tells_test(labels))
+            if count > 0 and not enough:
                 waiting.append((first, number - 1, run))
-            if count >= 3:
+            if enough:
                 for begin, end, item in waiting:
                     run = [*item, *run]
                     for passed in range(begin, end + 1):
@@ -278,6 +288,34 @@ class _Finder:
 
 def _place(word: Word | Token | None) -> tuple[int, int] | None:
     return (word.start, word.end) if word is not None else None
+
+
+def _second_labels(text: str, lines: Sequence[Line], rows: Sequence[Row]) -> int | None:
+    """Return where a second column of labels starts, if some rows have two labels, wide apart."""
+    starts: list[int] = []
+    for row in rows:
+        if row.label is not None:
+            gap = text[row.label.start : row.label.end].find("  ")
+            if gap > 0:
+                second = text[row.label.start + gap : row.label.end].lstrip()
+                starts.append(row.label.end - len(second) - lines[row.line].start)
+    if len(starts) < 2 or len(set(starts)) > 1:
+        return None
+    return starts[0]
+
+
+def _parted_at(
+    text: str, line: Line, label: Word | None, cut: int
+) -> tuple[tuple[int, int] | None, tuple[int, int] | None]:
+    """Return the two labels of a row, of which either may be missing."""
+    if label is None:
+        return None, None
+    if label.start - line.start >= cut:
+        return None, _place(label)
+    first = text[label.start : min(label.end, line.start + cut)].rstrip()
+    end = label.start + len(first)
+    rest = (line.start + cut, label.end) if label.end > line.start + cut else None
+    return (label.start, end), rest
 
 
 def _is_wide(line: Line) -> bool:

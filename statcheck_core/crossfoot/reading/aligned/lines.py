@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
 from typing import NamedTuple
 
 from crossfoot.reading.numerals import NUMERAL
@@ -14,14 +14,14 @@ _INK = re.compile(r"\S+")
 #: Words that a line of headings has; two of them make it worth a closer look.
 _HEADISH = re.compile(
     r"(?i:\bdf\d?\b|\bdof\b|ddof|\bsum|\bmean[\s_]?sq|\bsq(?:uares?)?\b|\bcoeff?(?:icient)?s?\b|\bestimates?\b|std|standard|\berr(?:or)?\b|r-?sq"
-    r"|value|\bsig\b|\bprob\b|pr\s?\(?>|p>|p-unc|\bbeta\b|\bss\b|\bms\b|\bse\b|conf\.|\bci\b|chi|\bfg\b|\bgl\b|ddl|\bexp\(|stat\b|\bobservations)"
+    r"|value|\bsig\b|\bprob\b|pr\s?\(?>|p>|p-unc|\bbeta\b|\bss\b|\bms\b|\bse\b|conf\.|\bci\b|chi|\bfg\b|\bgl\b|ddl|\bexp\(|stat(?:istic)?\b|\bobservations)"
     r"|\b[FtTzZpPbBRr]\b|β|η|R\^?2|R²|[%\]]"
 )
 RULE = re.compile(r"[-=_+*~─━═|:. ]*(?:[-=_*~─━═]{3}|-\+-)[-=_+*~─━═|:. ]*")
 _ATOM = re.compile(rf"(?:[<>≤≥=]\s?)?{NUMERAL}[a-e]?(?: ?(?:\*{{1,4}}|†|\+))?|\*{{1,4}}")
 _DF_TAIL = re.compile(r" ?\(df\s?=\s?\d+(?:[;,]\s?\d+)?\)$")
 #: A long number may end with its decimal point.
-_POINT = re.compile(r"(?<=\d{4})\.$")
+_POINT = re.compile(r"(?<=\d{3})\.$")
 #: What stands between the numbers of one value.
 _BETWEEN = re.compile(r"[()\[\],;]| (?:to|–) |(?<=\d) (?=[-.\d])")
 #: Words that stand in columns of numbers.
@@ -119,6 +119,17 @@ def words_of(text: str, start: int, end: int) -> list[Word]:
     ]
 
 
+#: What two spaces or a tab part.
+_FIELD = re.compile(r"\S+(?: \S+)*")
+#: A bar between columns.
+_BAR = re.compile(r"(?:^|(?<=\s))[|│](?=\s|$)")
+
+
+def fields_in(line: str) -> Iterator[re.Match[str]]:
+    """Yield what wide gaps or bars part."""
+    return _FIELD.finditer(_BAR.sub(" ", line))
+
+
 def headish(line: str) -> bool:
     """Say whether a line may hold headings."""
     if len(line) > 400 or not line.strip():
@@ -136,7 +147,7 @@ def tokens_of(text: str, words: Sequence[Word]) -> list[Token]:
         best = number
         heading = headings.NOTHING
         for last in range(min(number + 5, len(words)) - 1, number - 1, -1):
-            if last > number and _wide(words, number, last):
+            if last > number and (_wide(words, number, last) or _apart(words, last)):
                 continue
             phrase = " ".join(word.text for word in words[number : last + 1])
             found = headings.parse(phrase)
@@ -147,6 +158,16 @@ def tokens_of(text: str, words: Sequence[Word]) -> list[Token]:
         tokens.append(Token(text[first.start : end], first.start, end, heading))
         number = best + 1
     return tokens
+
+
+#: Roles beside which a column called ``statistic`` may stand: it is no statistic of theirs.
+_OWN = frozenset({"r", "s", "se", "b", "R2", "R2_adj"})
+
+
+def _apart(words: Sequence[Word], last: int) -> bool:
+    """Say whether a last word heads a column of its own: ``cor statistic``."""
+    before = headings.parse(words[last - 1].text).roles
+    return words[last].text == "statistic" and bool(before) and before[0] in _OWN
 
 
 def _wide(words: Sequence[Word], first: int, last: int) -> bool:

@@ -49,7 +49,7 @@ def separated(lines: Sequence[Line], number: int) -> Listing | None:
         last = number
         for index in range(number + 1, len(lines)):
             below = lines[index]
-            if below.rule:
+            if below.rule or (mark == "\t" and mark in below.text and below.blank):
                 continue
             cells = _cells(below, mark)
             alone = mark == "\t" and not cells and len(below.text) <= 60

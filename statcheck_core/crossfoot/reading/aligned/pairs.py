@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import re
+from collections.abc import Sequence
 from typing import NamedTuple
 
 from crossfoot.reading.aligned.lines import Line, is_value
@@ -11,6 +12,8 @@ from crossfoot.reading.tables import headings
 from crossfoot.reading.tables.fits import FIT
 
 _ROLES = FIT | {"p"}
+#: What is told of one test in a few lines.
+_OF_TEST = frozenset({"t", "z", "chi2", "F", "df", "df1", "df2", "statistic"})
 #: ``R-squared     =  0.3244`` at the end of a line, apart from what stands before it.
 _SIDE = re.compile(
     rf"(?:^|(?<=\s\s))(?P<label>F\(\s{{0,9}}\d{{1,7}}(?:\.\d+)?,\s{{0,9}}\d{{1,9}}(?:\.\d+)?\)"
@@ -50,6 +53,21 @@ def _known(label: str) -> bool:
     return bool(roles) and roles[0] in _ROLES
 
 
+def tells_test(texts: Sequence[str]) -> bool:
+    """Say whether a few labels are those of one test, which prose without colons does not tell."""
+    roles = {role for text in texts for role in headings.parse(text.strip(" :")).roles[:1]}
+    return (
+        ":" not in "".join(texts)
+        and "p" in roles
+        and bool(roles & (_OF_TEST - {"df", "df1", "df2"}))
+    )
+
+
+def _tells_of_test(label: str) -> bool:
+    roles = headings.parse(label).roles
+    return bool(roles) and roles[0] in _OF_TEST
+
+
 def in_fields(line: Line, number: int) -> list[Pair] | None:
     """Return the pairs of a line that holds nothing but labels and values, wide apart.
 
@@ -67,8 +85,15 @@ def in_fields(line: Line, number: int) -> list[Pair] | None:
         return None
     if any(is_value(label) for label in labels) or any(text.endswith(",") for text in texts):
         return None
-    if not any(_known(label.strip(" :")) for label in labels):
-        return [] if colons else None
+    known = [
+        value
+        for label, value in zip(labels, values, strict=True)
+        if _known(label.strip(" :")) or (not colons and _tells_of_test(label))
+    ]
+    if not known:
+        return []
+    if not all(is_value(value.replace(" ", "")) for value in known):
+        return None  # a statement: "F-statistic: 13.7 on 2 and 57 DF"
     start = line.start
     return [
         Pair(number, (start + a[0], start + a[1]), (start + b[0], start + b[1]))

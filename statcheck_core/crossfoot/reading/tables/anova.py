@@ -31,6 +31,7 @@ _QUANTITIES = {
     "df1": "df1",
     "df2": "df2",
     "F": "F",
+    "statistic": "F",
     "p": "p",
     "eta2": "eta2",
     "eta2_partial": "eta2_partial",

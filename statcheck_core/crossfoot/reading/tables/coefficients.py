@@ -3,13 +3,13 @@
 from __future__ import annotations
 
 import itertools
-import re
 from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import fits
 from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
 from crossfoot.reading.tables.contents import NONE, Content, Number, content_of, fitting, in_order
+from crossfoot.reading.tables.estimated import told_apart
 from crossfoot.reading.tables.making import (
     Column,
     Found,
@@ -22,6 +22,7 @@ from crossfoot.reading.tables.making import (
 )
 from crossfoot.reading.tables.meanings import Line, plausible, settled
 from crossfoot.reading.tables.rows import is_intercept
+from crossfoot.reading.tables.tested import with_own_p
 
 _ESTIMATES = frozenset({"b", "β", "beta", "odds_ratio", "ratio"})
 _BESIDE = frozenset(
@@ -32,14 +33,11 @@ _AS = {"wald": "chi2", "statistic": "t", "ratio": "b"}
 #: What holds of the estimates of a column of ratios.
 _OF_RATIOS = ("ratio-scale", "other-null")
 _OTHERS = frozenset({"p_adjusted", "df2", "df"})
-_HYPOTHESES = re.compile(r"test\sfor\sconstraints|linear\shypothes", re.IGNORECASE)
 
 
 def coefficients(sheet: Sheet) -> Found | None:
     """Return the claims of a table of coefficients, or None where it is none."""
-    if _HYPOTHESES.search(sheet.words):
-        return None  # t may test other values than zero
-    groups = side_by_side(sheet.columns, _ESTIMATES | _BESIDE | _OTHERS)
+    groups = side_by_side(with_own_p(sheet.columns), _ESTIMATES | _BESIDE | _OTHERS)
     groups = [group for group in groups if _is_model(sheet, group)]
     if not groups:
         return None
@@ -49,7 +47,7 @@ def coefficients(sheet: Sheet) -> Found | None:
     if len(groups) == 1:
         names = [""]
     for group, name in zip(groups, names, strict=True):
-        lines = settled(sheet, _lines(sheet, group))
+        lines = settled(sheet, told_apart(sheet, _lines(sheet, group)))
         if not plausible(lines):
             continue
         steps = fits.steps_in(sheet)
@@ -179,7 +177,7 @@ def _claim(sheet: Sheet, line: Line, name: str) -> Claim | None:
     given = tuple({(g.quantity, g.span): g for g in line.given}.values())
     return claim(
         sheet,
-        "coefficient",
+        "correlation" if "r" in cells else "coefficient",
         row or "coefficient",
         cells.values(),
         line.boxes,

@@ -11,6 +11,7 @@ from crossfoot.reading.tables.grid import EMPTY, Box, Panel
 from crossfoot.reading.tables.headings import NOTHING, Heading
 from crossfoot.reading.tables.making import Column
 from crossfoot.reading.tables.rows import label_of
+from crossfoot.reading.tables.tested import named_beside
 
 #: Quantities that may follow the name of what they are of.
 _NAMED = frozenset({"F", "t", "p", "df", "b", "β", "beta", "se", "z", "r", "ms", "ss", "chi2"})
@@ -39,6 +40,7 @@ def columns_of(panel: Panel) -> tuple[Column, ...]:
             columns[index] = column._replace(heading=NOTHING._replace(roles=("label",)))
         elif index and column.heading.roles == ("label",) and _are_figures(panel, index):
             columns[index] = column._replace(heading=NOTHING)
+    columns = named_beside(columns, [not _are_words(panel, c.number) for c in columns])
     return tuple(_split_intervals(panel, _with_names(columns)))
 
 

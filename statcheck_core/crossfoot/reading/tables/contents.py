@@ -18,7 +18,7 @@ _BLANK = re.compile(
 )
 _TOKEN = re.compile(
     r"(?P<marks>\*+|[†‡]+|\^\{[*†‡+]{1,6}\}|(?<=\d)\s?\+$)"
-    r"|(?P<space>\s+|(?<=\d{4})\.$)"
+    r"|(?P<space>\s+|(?<=\d{3})\.$)"
     r"|(?P<note>\^\{[a-zA-Z0-9,]{1,5}\})"
     r"|(?P<relation><\s?=|>\s?=|[<>=≤≥≈])"
     rf"|(?P<number>{NUMERAL})"

@@ -224,7 +224,7 @@ def model_claims(
     for model in models:
         for part in parted(model, whose):
             roles = {entry.role for entry in part.entries}
-            if not _tells(roles, with_coefficients):
+            if not (_tells(roles, with_coefficients) or _tells_beside(roles, sheet.words)):
                 continue
             change = bool(roles & CHANGE)
             given = (before._replace(term="reduced"),) if change and before is not None else ()
@@ -251,3 +251,11 @@ def _tells(roles: set[str], with_coefficients: bool) -> bool:
     if not roles & _STRONG or len(roles) < 2:
         return False
     return with_coefficients or bool(roles & (_STRONG - {"R2"})) or bool(roles & {"R", "p"})
+
+
+_ANALYSIS = re.compile(r"sum\sof\ssq|corrected\stotal|mean\ssq|analysis\sof\svar", re.IGNORECASE)
+
+
+def _tells_beside(roles: set[str], words: str) -> bool:
+    """Say whether R² and the residual error stand with an analysis of variance."""
+    return {"R2", "s"} <= roles and _ANALYSIS.search(words) is not None

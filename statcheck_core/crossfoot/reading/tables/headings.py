@@ -74,7 +74,10 @@ _OF_MODEL = re.compile(
 _ESTIMATES = frozenset({"odds_ratio", "ratio", "b", "β", "beta"})
 #: An F whose p is found by permutation.
 _PSEUDO = re.compile(r"pseudo[\s-]?F|F\.?[\s-]?model", re.IGNORECASE)
-_SIDED = re.compile(r"\s?[(\[](?P<side>one|two|1|2)[-\s]?(?:tailed|sided)[)\]]$", re.IGNORECASE)
+_SIDED = re.compile(
+    r",?\s?(?:[(\[]|(?<=[\s)]))(?P<side>one|two|1|2)[-\s]?(?:tail|side)d?(?:ed)?[)\]]?$",
+    re.IGNORECASE,
+)
 
 #: Pairs that one cell may hold; the second stands in brackets or after a comma.
 _PAIRS = frozenset(
@@ -92,6 +95,17 @@ _PAIRS = frozenset(
     }
 )  # fmt: skip
 _CI_ROLES = ("ci_low", "ci_high")
+_TESTS = frozenset({"F", "t", "z", "chi2"})
+_WORD = re.compile(r"[A-Za-z]{2}")
+#: The tail area that is p, as an expression: "P(T<=t)", "Pr(|T| > |t|)".
+_TAIL = re.compile(
+    r"P(?:r(?:ob)?)?\s?\(\s?(?:[TFZ]\s?<=\s?[tfz]|\|[TZ]\|\s?>=?\s?\|[tz]\|)\s?\)"
+    r"|[pP](?:r(?:ob)?)?\.?\s?\(?\s?>=?\s?\|?(?:[tzFW]|[cC]hi-?[sS]?q?2?)\|?\s?\)?"
+)
+#: A p that names its test with its degrees of freedom: "Prob. F(2,43)".
+_OF_TEST = re.compile(
+    r"P(?:r(?:ob)?)?\.?\s(?P<test>F|t|[cC]hi-?[sS]quared?)\s?\((?P<a>\d{1,7})(?:,\s?(?P<b>\d{1,9}))?\)"
+)
 
 
 @lru_cache(maxsize=4096)
@@ -109,6 +123,11 @@ def parse(text: str) -> Heading:
         found = parse(text[: sided.start()])
         side = "one-sided" if sided["side"].lower() in {"one", "1"} else "two-sided"
         return found._replace(contexts=(*found.contexts, side)) if found.roles else NOTHING
+    if _TAIL.fullmatch(text):
+        return Heading(("p",))
+    if (of := _OF_TEST.fullmatch(text)) is not None:
+        groups = ("a", "b") if of["b"] else ("a",)
+        return Heading(("p",), df=tuple(Number(of[g], *of.span(g)) for g in groups))
     return _named(text) or _interval(text) or _with_df(text) or _composed(text) or _trimmed(text)
 
 
@@ -151,6 +170,12 @@ def _interval(text: str) -> Heading | None:
     if word is None:
         return None
     rest = text[: word.start()] + " " * (word.end() - word.start()) + text[word.end() :]
+    quantile, others = _cut(_QUANTILE, rest)
+    if quantile is not None:  # "CI[2.5%]"
+        if others.strip(" ,;:/-–()[]%"):
+            return None
+        limit = "ci_high" if "97" in quantile[1] else "ci_low"
+        return Heading((limit,), Number("95", *quantile.span(1)))
     level, rest = _cut(_LEVEL, rest)
     of, rest = _cut(_OF, rest)
     low, rest = _cut(_LOW, rest)
@@ -214,6 +239,10 @@ def _paired(first: str, second: str, offset: int) -> Heading | None:
     if role in {"F", "t", "chi2"} and df_pair:
         return base._replace(roles=(role, "df"))
     inner = parse(second.strip())
+    if role == "p" and inner.roles and inner.roles[0] in _TESTS:
+        return base  # "p-value (F)"
+    if role == "n" and not inner.roles and _WORD.search(second):
+        return base  # "Observations (or Sum Wgts)"
     if inner.roles == _CI_ROLES:
         level = inner.level
         if level is not None:

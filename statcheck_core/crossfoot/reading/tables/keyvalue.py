@@ -29,7 +29,7 @@ def key_values(sheet: Sheet) -> Found | None:
     read: set[int] = set()
     boxes: list[Box] = []
     for number, row in enumerate((*panel.heads, *panel.rows), start=-len(panel.heads)):
-        for head, box in _pairs(row):
+        for head, box in pairs_in(row):
             heading = headings.parse_label(head.text)
             if not heading.roles or heading.roles[0] not in _ROLES:
                 continue
@@ -64,7 +64,7 @@ def _apart(
     return Found(tuple(claims), frozenset(read)) if claims else None
 
 
-def _pairs(row: Sequence[Box]) -> list[tuple[Box, Box]]:
+def pairs_in(row: Sequence[Box]) -> list[tuple[Box, Box]]:
     """Return the labels of a row, each with the value beside it."""
     pairs: list[tuple[Box, Box]] = []
     for head, box in itertools.pairwise(row):

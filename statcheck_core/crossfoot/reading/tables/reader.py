@@ -25,6 +25,7 @@ from crossfoot.reading.tables.results import results
 from crossfoot.reading.tables.rows import label_of
 from crossfoot.reading.tables.sidebyside import side_by_side
 from crossfoot.reading.tables.summaries import summaries
+from crossfoot.reading.tables.testvalues import test_values
 from crossfoot.reading.tables.together import joined
 
 #: Reads a stretch of the visible text as prose; places count in the whole text.
@@ -38,6 +39,7 @@ _RECOGNISERS: tuple[Callable[[Sheet], Found | None], ...] = (
     summaries,
     side_by_side,
     key_values,
+    test_values,
     results,
     bare,
 )

@@ -19,6 +19,7 @@ from crossfoot.reading.tables.making import (
     reading,
 )
 from crossfoot.reading.tables.rows import kind_of
+from crossfoot.reading.tables.tested import by_statistic, each_test
 
 _KINDS = {
     "F": "effect",
@@ -35,24 +36,41 @@ _NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2",
 
 def results(sheet: Sheet) -> Found | None:
     """Return the claims of a table of tests, a row each, or None where it is none."""
-    sheet = sheet._replace(columns=_of_the_test(_with_symbols(sheet)))
-    roles = roles_in(sheet.columns)
-    known = _ROLES | _LIMITS if _are_of_differences(sheet) else _ROLES
-    if roles & _NEVER or not roles & set(_KINDS):
-        return None
+    sheet = sheet._replace(columns=_with_symbols(sheet))
     claims: list[Claim] = []
     rows: set[int] = set()
-    for group in side_by_side(sheet.columns, known):
+    for part, own in by_statistic(sheet):
+        found = _tests(part._replace(columns=_of_the_test(part.columns)), own)
+        claims += found.claims
+        rows |= found.rows
+    return Found(tuple(claims), frozenset(rows)) if claims else None
+
+
+def _tests(sheet: Sheet, rows: frozenset[int]) -> Found:
+    """Return the claims of those rows of a table of tests that tell of one kind of test."""
+    roles = roles_in(sheet.columns)
+    refused = roles & _NEVER
+    if refused == {"rss"} and {"F", "p"} <= roles:
+        refused = set()  # what each term adds, beside what remains without it
+    if refused or not roles & set(_KINDS):
+        return Found(())
+    claims: list[Claim] = []
+    read: set[int] = set()
+    wanted = _ROLES | _LIMITS if _are_of_differences(sheet) else _ROLES
+    several = [] if "r" in roles else each_test(sheet.columns)
+    groups = side_by_side(sheet.columns, wanted) if len(several) < 2 else several
+    for group in groups:
+        group = [column for column in group if column.heading.roles]
         own = {role for column in group for role in column.heading.roles}
-        tests = [key for key in _KINDS if key in own]
+        tests = [key for key in _KINDS if key in own and not (key == "t" and "r" in own)]
         if len(tests) == 1 and _supported(sheet, tests[0], own, group):
             kept = [
                 c for c in group if tests[0] in {"t", "z", "r"} or not _LIMITS & {*c.heading.roles}
             ]
-            found = _rows(sheet, kept, tests[0])
+            found = _rows(sheet, kept, tests[0], rows)
             claims += found.claims
-            rows |= found.rows
-    return Found(tuple(claims), frozenset(rows)) if claims else None
+            read |= found.rows
+    return Found(tuple(claims), frozenset(read))
 
 
 def _are_of_differences(sheet: Sheet) -> bool:
@@ -69,8 +87,11 @@ _CRITERIA = re.compile(r"AICc?|BIC|log-?\s?lik(?:elihood)?|-2\s?LL|deviance", re
 
 def _of_the_test(columns: Sequence[Column]) -> tuple[Column, ...]:
     """Take the df of a comparison of models for that of its test, and not that of each model."""
-    changes = any(column.heading.roles == ("df_change",) for column in columns)
-    criteria = [c.number for c in columns if _CRITERIA.fullmatch(c.box.text.strip())]
+    roles = {column.heading.roles for column in columns}
+    changes = ("df_change",) in roles
+    criteria = [
+        c.number for c in columns if _CRITERIA.fullmatch(c.box.text.strip()) and ("F",) not in roles
+    ]
     kept = []
     for column in columns:
         heading = column.heading
@@ -118,7 +139,7 @@ def _supported(sheet: Sheet, test: str, roles: set[str], columns: Sequence[Colum
         c.heading.df or _holds_tests(sheet, c) for c in columns
     )
     if test in {"z", "r"}:
-        return "p" in roles and (test == "z" or degrees or "n" in roles)
+        return "p" in roles and (test == "z" or degrees or bool(roles & {"n", "t", "statistic"}))
     return degrees and (bool(roles & {"p", *_EFFECT_SIZES}) or test == "F")
 
 
@@ -152,13 +173,15 @@ def _are_probabilities(sheet: Sheet, columns: Sequence[Column]) -> bool:
 _P = re.compile(r"[01]?[.,]\d{2,}(?:[eE]-\d{1,3})?|\d(?:[.,]\d+)?[eE]-\d{1,3}|0|1")
 
 
-def _rows(sheet: Sheet, columns: Sequence[Column], test: str) -> Found:
+def _rows(sheet: Sheet, columns: Sequence[Column], test: str, wanted: frozenset[int]) -> Found:
     labels = labels_of(sheet.panel, sheet.columns)
     has_p = any(column.heading.roles == ("p",) for column in columns)
     claims: list[Claim] = []
     rows: set[int] = set()
     waiting: list[int] = []
     for index, row in enumerate(sheet.panel.rows):
+        if index not in wanted:
+            continue
         words = [row[c.number] for c in labels if row[c.number].text]
         label = name_of(row, labels)
         cells: dict[str, Reading] = {}
@@ -271,7 +294,7 @@ def _read(
         found = reading(sheet, number, name)
         if found is not None:
             cells.setdefault(name, found)
-    if numbers and roles[:1] == (test,):
+    if numbers and (roles[:1] == (test,) or roles == ("t",)):
         for found in head_df(sheet, column, names):
             cells.setdefault(found.quantity, found)
     mark, default = marked(sheet, content, beside_p=has_p)

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Mapping
+from collections.abc import Iterable, Mapping
 
 from crossfoot.reading.tables.vocabulary import ROLES
 
@@ -22,9 +22,22 @@ def _key(text: str) -> str:
     return _POINT.sub("·", text).translate(_DROPPED)
 
 
+#: Tests by their symbols, and what may follow a symbol where it is named in words.
+_STEMS = {"F": "f", "t": "t", "z": "z", "chi2": "χ2 chi2 chisq chisquare x2", "r": "r", "p": "p"}
+_BEHIND = "value values val vals wert"
+_BEHIND_TEST = "stat stats statistic statistics ratio test"
+
+
+def _named_in_words() -> Iterable[tuple[str, str]]:
+    """Yield names such as ``t value``, ``F stat`` and ``z ratio`` with their roles."""
+    for role, stems in _STEMS.items():
+        behind = _BEHIND if role in {"p", "r"} else f"{_BEHIND} {_BEHIND_TEST}"
+        yield from ((stem + word, role) for stem in stems.split() for word in behind.split())
+
+
 def _keys() -> tuple[Mapping[str, str], Mapping[str, str]]:
     symbols: dict[str, str] = {}
-    words: dict[str, str] = {}
+    words: dict[str, str] = dict(_named_in_words())
     for declared in ROLES:
         for symbol in declared.symbols.split():
             symbols.setdefault(_key(symbol), declared.role)

@@ -62,7 +62,7 @@ ROLES: tuple[Role, ...] = (
         " errordf residualdf dfdenominator denomdf dendof residualdegreesoffreedom"
         " errordegreesoffreedom nennerdf dofresiduals",
     ),
-    Role("df_change", "", "Δdf deltadf chidf chisqdf dfchange changeindf dfdifference diffdf"),
+    Role("df_change", "", "Δdf deltadf chidf dfchange changeindf dfdifference diffdf"),
     Role("df_residual", "", "resdf residdf dfresid residualdf(model)"),
     Role("rss", "RSS SSR SSE ssr", "residsumofsquares residualss"),
     Role(
@@ -80,7 +80,7 @@ ROLES: tuple[Role, ...] = (
         " sig(2tailed) sig(twotailed) punc prob(fstatistic) pwert signifikanz valeurp valeurdep"
         " valorp valordep valorep pwaarde pvärde p值 pexact sigf signifof signifofp asympsig"
         " asympsig(2sided) p(2tailed) p(twotailed) p(twosided) p(2sided) puncorr fp sigoft"
-        " pofoverallmodel",
+        " pofoverallmodel asymptoticsignificance asymptoticsig exactsig exactsignificance",
     ),
     Role(
         "p_adjusted",
@@ -113,7 +113,7 @@ ROLES: tuple[Role, ...] = (
         " estimatedcoefficient slope regressionskoeffizient koeffizient koeffizienten schätzer"
         " schätzung coeficiente coefficiente coëfficiënt estimateb bestimate coefficientb"
         " coefficientestimate unstandardized unstandardised bunstandardized bweight 系数 回归系数"
-        " emmean lsmean emmeans lsmeans dy/dx ey/ex dy/ex ey/dx marginaleffect"
+        " loghr logor emmean lsmean emmeans lsmeans dy/dx ey/ex dy/ex ey/dx marginaleffect"
         " estimation estimación stima estimativa 계수 unstd",
     ),
     Role("β", "β ß", "beta"),
@@ -136,6 +136,7 @@ ROLES: tuple[Role, ...] = (
         " errorestándarb errorestandard erropadrão errorestandar"
         " errorestándard errorest standaardfout"
         " medelfel 标准误 标准误差 seestimate seofb seest sterror asymptoticstderr 표준오차"
+        " se(coef) robustse(coef) loghrse"
         " unstandardizedcoefficientsstderror unstandardizedcoefficientsse secoef secoeff",
     ),
     Role(
@@ -164,7 +165,7 @@ ROLES: tuple[Role, ...] = (
         " kruskalwallisχ2 gstatistic likelihoodratioχ2 lrtχ2"
         " χ2 chi2 chisquare chisquared chisq lrchisq lrχ2 lrchi2 χ2value chisquarevalue pearsonχ2",
     ),
-    Role("r", "r", "pearsonr pearsonsr correlation correlationcoefficient"),
+    Role("r", "r", "pearsonr pearsonsr correlation correlationcoefficient cor"),
     Role(
         "ci_low",
         "LL LB LCI LCB LCL LLCI CILL",
@@ -263,7 +264,7 @@ ROLES: tuple[Role, ...] = (
         " metric item contrast quelle varianzquelle fuente parameters explanatoryvariable"
         " explanatoryvariables variationsource modelterm 变量 变异来源 来源 block",
     ),
-    Role("statistic", "", "statistic"),
+    Role("statistic", "", "statistic teststatistic"),
     Role("mean", "M", "mean means m"),
     Role("sd", "SD", "sd stddev standarddeviation stdev"),
 )
