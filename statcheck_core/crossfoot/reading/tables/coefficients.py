@@ -8,7 +8,15 @@ from collections.abc import Sequence
 from crossfoot.model import Claim, Reading
 from crossfoot.reading.tables import fits
 from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
-from crossfoot.reading.tables.contents import NONE, Content, Number, content_of, fitting, in_order
+from crossfoot.reading.tables.contents import (
+    NONE,
+    Content,
+    Number,
+    content_of,
+    fitting,
+    in_order,
+    limits,
+)
 from crossfoot.reading.tables.estimated import told_apart
 from crossfoot.reading.tables.making import (
     Column,
@@ -140,7 +148,9 @@ def _read(
     """Read a cell; return a number in brackets that the heading says nothing of."""
     roles = column.heading.roles
     numbers = content.numbers
-    if "ci_low" in roles and "ci_high" in roles and len(numbers) >= 2:
+    if roles == ("ci_low", "ci_high"):
+        numbers = limits(numbers, sheet.comma)
+    elif "ci_low" in roles and "ci_high" in roles and len(numbers) >= 2:
         numbers = (*numbers[:-2], *in_order(numbers[-2:], sheet.comma))
     if numbers and not fitting(roles, content):
         return None

@@ -262,6 +262,16 @@ def part(
     return Part(quantity, number.relation, number.start, number.end, low, high, term)
 
 
+def limits(numbers: tuple[Number, ...], comma: bool) -> tuple[Number, ...]:
+    """Return the two limits in a cell below a heading of limits alone; nothing where it holds more.
+
+    A number before the brackets is the estimate, of a column whose numbers end close to them.
+    """
+    enclosed = tuple(number for number in numbers if number.bracket)
+    both = enclosed if len(enclosed) == 2 and numbers[-2:] == enclosed else numbers
+    return in_order(both, comma) if len(both) == 2 else ()
+
+
 def in_order(numbers: tuple[Number, ...], comma: bool) -> tuple[Number, ...]:
     """Return two limits so that the first is the lower one.
 

@@ -7,7 +7,7 @@ from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
-from crossfoot.reading.tables.contents import NONE, content_of, in_order, is_blank
+from crossfoot.reading.tables.contents import NONE, content_of, is_blank, limits
 from crossfoot.reading.tables.making import (
     Column,
     Found,
@@ -278,8 +278,8 @@ def _read(
         roles = ("df1", "df2")
     if len(roles) == 2 and roles[1] == "df" and len(numbers) == 3:
         roles = (roles[0], "df1", "df2")
-    if roles == ("ci_low", "ci_high") and len(numbers) == 2:
-        numbers = in_order(numbers, sheet.comma)
+    if roles == ("ci_low", "ci_high"):
+        numbers = limits(numbers, sheet.comma)
     elif sum(not number.bracket for number in numbers) > len(roles):
         numbers = ()  # which of them is meant is not known
     for role, number in zip(roles, numbers, strict=False):
