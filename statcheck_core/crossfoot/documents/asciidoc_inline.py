@@ -10,6 +10,7 @@ from crossfoot.documents.mathtext import show_math
 from crossfoot.documents.tags import entity_at
 from crossfoot.documents.typst_math import show_typst_math
 from crossfoot.documents.visible import OPAQUE, Builder
+from crossfoot.expressions import expression
 
 _MARK = Marks(
     "\\+slafpkbmixhcn<{[^~*_`#& ",
@@ -23,6 +24,7 @@ _MARK = Marks(
     re.M,
 )
 
+_ATTRIBUTE = expression(r"\{([a-zA-Z0-9][\w-]{0,40})\}")
 _KNOWN = {
     "nbsp": " ",
     "lt": "<",
@@ -104,6 +106,10 @@ class _Walk(Walk):
             self.around(found, "raised")
         else:
             self.around(found, "raised", ("^{" if found["script"] == "^" else "_{", "}"))
+            base = found.start("raised")
+            for name in _ATTRIBUTE.finditer(found["raised"]):
+                shown = _KNOWN.get(name[1], OPAQUE)
+                self.edits.append(Edit(base + name.start(), base + name.end(), shown))
 
     def macro(self, found: re.Match[str]) -> int:
         """Handle a macro and return where to go on: within a footnote or the words of a link."""

@@ -23,6 +23,7 @@ from crossfoot.documents.markdown_lines import (
     OPTION,
     PRINTED,
     QUOTE,
+    RAW,
     RULE,
     SETEXT,
     TABLES,
@@ -64,6 +65,7 @@ class _Analysis:
         self.last = -1
         self.quoted = False  # whether that paragraph is quoted
         self.code: tuple[int, int] | None = None
+        self.skipped = -1  # the line that ends raw markup
 
     def run(self) -> Chunk:
         """Return what the chunk holds."""
@@ -82,7 +84,7 @@ class _Analysis:
         quote = QUOTE.match(line) if ">" in line[:5] else None
         at = quote.end() if quote else 0
         rest = line[at:]
-        if not rest or rest.isspace():
+        if not rest or rest.isspace() or number == self.skipped:
             self.flush()
             return number + 1
         if self.first >= 0 and quote and not self.quoted:
@@ -148,6 +150,9 @@ class _Analysis:
         closing = re.compile(close)
         for last in range(number + 1, len(self.lines)):
             if closing.match(self.lines[last]):
+                if RAW.match(rest, fence.end(1)):
+                    self.skipped = last
+                    return number + 1
                 if last > number + 1:
                     self.add(kind, number + 1, last)
                 return last + 1

@@ -39,7 +39,7 @@ _BRACES = expression(r"\{\{[^{}\n]{0,200}\}\}|\{[#.][A-Za-z_][^{}\n]{0,200}\}")
 #: Changes as an editor marks them: what is put in, or is highlighted, stays.
 _CRITIC = expression(
     r"\{(?:\+\+(?P<added>[^{}]{1,500})\+\+|==(?P<marked>[^{}]{1,500})==|--[^{}]{1,500}--"
-    r"|>>[^{}]{1,500}<<|~~[^{}]{0,500}?~>(?P<new>[^{}]{0,500})~~)\}"
+    r"|>>[^{}]{1,500}<<|~~(?:[^{}~]|~(?!>)){0,500}+~>(?P<new>(?:[^{}~]|~(?!~\})){0,500}+)~~)\}"
 )
 _NOTE = expression(r"\[\^[^\s\[\]]{1,60}\]")
 _RUN = expression(r"\{?[A-Za-z]{1,12}\}? ")

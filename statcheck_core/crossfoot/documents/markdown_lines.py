@@ -9,6 +9,8 @@ from crossfoot.expressions import expression
 QUOTE = expression(r"(?: {0,3}> ?)+")
 #: The start of a chunk that is run: its lines are code, and what they print stands elsewhere.
 EXECUTED = expression(r"\s*\{[A-Za-z]")
+#: The start of markup that is passed on as it stands.
+RAW = expression(r"\s*\{=(?:html|latex|tex)")
 #: An option of such a chunk, and a caption among its options or in its first line.
 OPTION = expression(r"[ \t]*(?:#|//|%%)\|")
 CAPTIONED = expression(

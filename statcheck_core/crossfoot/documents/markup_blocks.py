@@ -10,7 +10,9 @@ from crossfoot.documents.tags import Tag, attribute_span
 from crossfoot.expressions import expression
 from crossfoot.model import Block
 
-_MORE_ROWS = expression(r"\s*<tr[\s>]", re.I)
+_ROWS, _CELLS = expression(r"\s*<tr[\s>]", re.I), expression(r"\s*<t[dh][\s>]", re.I)
+#: What goes on a table that stands without its element, after a row or a cell.
+_MORE = {"tr": _ROWS, "td": _CELLS, "th": _CELLS}
 _VERBATIM = frozenset(("pre", "code-block", "preformat", "listing", "xmp"))
 
 #: Deepest nesting of sections that counts.
@@ -55,7 +57,7 @@ class _Splitter:
             self.hide(tag)
         elif name == "table" and not tag.closing:
             self.table(tag)
-        elif name == "tr" and not tag.closing:
+        elif name in _MORE and not tag.closing:
             self.fragment(tag)
         elif name in _VERBATIM and not tag.closing:
             self.verbatim(tag)
@@ -118,7 +120,7 @@ class _Splitter:
         self.scanner.position = after
 
     def fragment(self, tag: Tag) -> None:
-        """Handle rows that stand without their table."""
+        """Handle rows that stand without their table, or cells without their row."""
         self.flush(tag.start, tag.end)
         after = tag.start
         row: Tag | None = tag
@@ -128,7 +130,7 @@ class _Splitter:
                 break
             after = self.scanner.after(inside)
             row = None
-            if _MORE_ROWS.match(self.text, after):
+            if _MORE[tag.name].match(self.text, after):
                 row = self._next_tag(after)
         if after > tag.start:
             self.add("table", tag.start, after)

@@ -124,7 +124,7 @@ _HIDDEN_ONE = (
     "label ref eqref pageref autoref cref Cref nameref vref hspace vspace includegraphics input "
     "include bibliography bibliographystyle usepackage documentclass pagestyle thispagestyle "
     "phantom hphantom vphantom tag sout st xout cancel deleted cmidrule cline vskip index "
-    "glsreset hypersetup graphicspath pagenumbering marginpar todo color cellcolor rowcolor "
+    "glsreset hypersetup graphicspath pagenumbering todo color cellcolor rowcolor "
     "arraycolsep linespread hyphenation footnotemark orcidlink RequirePackage "
     "sisetup captionsetup lstset theoremstyle geometry selectlanguage addbibresource "
     " nocite needspace stepcounter refstepcounter usetikzlibrary "
@@ -160,6 +160,10 @@ COMMANDS: dict[str, Args] = {
     "footnote": (Arg(" (", ")", math=False),),
     "footnotetext": (Arg(" (", ")", math=False),),
     "thanks": (Arg(" (", ")", math=False),),
+    **dict.fromkeys(
+        words("marginpar marginnote sidenote endnote tablefootnote pdfcomment"),
+        (Arg(" (", ")", math=False),),
+    ),
     "SI": (Arg(after=" "), Arg()),
     "qty": (Arg(after=" "), Arg()),
     "SIrange": (Arg(after="–"), Arg(after=" "), Arg()),

@@ -7,7 +7,7 @@ from crossfoot.expressions import expression
 
 #: What means something in TeX; the text between is plain.
 TOKEN = expression(
-    r"[\\{}$&~^_%`-](?:(?<=\\)(?:verb\*?(?P<quote>[^\w\s*])(?P<code>[^\n]{0,300}?)(?P=quote)"
+    r"[\\{}$&~^_%`-](?:(?<=\\)(?:(?:verb\*?|lstinline(?:\[[^\[\]\n]{0,200}\])?)(?P<quote>[^\w\s*{\[])(?P<code>[^\n]{0,300}?)(?P=quote)"
     r"|(?P<name>[A-Za-z@]+)\*?|(?P<sign>[\s\S])|\Z)"
     r"|(?<=\$)\$?|(?<=[{}&~^_%])|(?<=-)(?P<dash>-{1,2})(?!-)|(?<=`)(?P<run>[^`\n]{1,200}`))"
 )

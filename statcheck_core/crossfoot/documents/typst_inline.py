@@ -8,6 +8,7 @@ from collections.abc import Iterable
 from crossfoot.documents.edits import Edit, Marks, Walk, show_marked
 from crossfoot.documents.typst_math import show_typst_math
 from crossfoot.documents.visible import OPAQUE, Builder
+from crossfoot.expressions import expression
 
 _MARK = Marks(
     "\\/`$#[]*_~-<@",
@@ -21,6 +22,10 @@ _MARK = Marks(
 
 #: Functions with what stands around their content.
 _AROUND = {"super": ("^{", "}"), "sub": ("_{", "}"), "footnote": (" (", ")")}
+
+#: Functions that show a number, and the number they show.
+_NUMBERS = frozenset(("num", "qty"))
+_NUMBER = expression(r"\(\s{0,9}\"?([-−]?[\d.,]{1,30}(?:e[-−]?\d{1,3})?)(?=\"?\s{0,9}[,)])")
 
 
 def show_inline(
@@ -65,8 +70,17 @@ class _Walk(Walk):
     def function(self, found: re.Match[str]) -> None:
         """Handle a function: its content is shown, its value is unknown."""
         name = found["name"]
+        number = (
+            _NUMBER.match(self.source, found.start("args"))
+            if name in _NUMBERS and found["args"]
+            else None
+        )
+        if number:
+            self.edits.append(Edit(found.start(), number.start(1)))
+            self.edits.append(Edit(number.end(1), found.end()))
+            return
         if not found["open"]:
-            self.replace(found, OPAQUE)
+            self.replace(found, " " if name in ("h", "v") and found["args"] else OPAQUE)
             return
         before, close = _AROUND.get(name, ("", ""))
         stars = re.compile(r"[*†‡\\]{1,9}\]").match(self.source, found.end(), self.end)

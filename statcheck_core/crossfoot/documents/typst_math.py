@@ -12,7 +12,7 @@ from crossfoot.expressions import expression
 _TOKEN = expression(
     r'"(?P<text>[^"\\]*(?:\\.[^"\\]*)*)"|(?P<name>[A-Za-z]{2,}(?:\.[a-z]{1,20}){0,3})'
     r"|(?P<number>\d+(?:\.\d+)?)|(?P<sign><=|>=|!=|->|=>|~=|\\\s|\.\.\.)|\\(?P<escape>\S)"
-    r"|(?P<run>\#[A-Za-z][\w.-]*)|(?P<char>[()^_&])|(?P<letter>\S)"
+    r"|(?P<gap>\#h\([^()]{0,30}\))|(?P<run>\#[A-Za-z][\w.-]*)|(?P<char>[()^_&])|(?P<letter>\S)"
 )
 
 _SIGNS = {"<=": "≤", ">=": "≥", "!=": "≠", "->": "→", "=>": "⇒", "~=": "≈", "...": "…"}
@@ -57,7 +57,8 @@ _NAMES = {
 _FUNCTIONS = {
     **dict.fromkeys(
         words(
-            "upright italic bold cal bb frak mono sans serif op text lr hat tilde display inline"
+            "upright italic bold cal bb frak mono sans serif op text lr hat tilde display inline "
+            "num qty"
         ),
         ("", ""),
     ),
@@ -102,6 +103,9 @@ class _Setter:
             self.out.keep(self.source, *found.span("text"))
         elif found["sign"]:
             self.out.put(_SIGNS.get(found["sign"], "\n"), at, after)
+        elif found["gap"]:
+            self.out.put(" ", at, after)
+            return after
         elif found["run"]:
             self.out.put(OPAQUE, at, after)
         else:

@@ -159,14 +159,21 @@ def compose(first: Visible, second: Visible) -> Visible:
 def _span(first: Visible, bounds: list[int], piece: Piece) -> Span:
     """Return the source span of a piece that stands for a stretch, or a point, of ``first.text``.
 
-    A point within a stretch that is shown as a whole stands for all of that stretch.
+    A point within a stretch that is shown as a whole stands for all of that stretch, as does one
+    between two parts of it.
     """
     if piece.start == piece.end:
         number = bisect_right(bounds, piece.start) - 1
-        if 0 <= number < len(first.pieces) and bounds[number] < piece.start:
+        if 0 <= number < len(first.pieces):
             around = first.pieces[number]
-            if bounds[number + 1] - around.shown != around.end - around.start:
+            if bounds[number] == piece.start:
+                whole = number > 0 and around.start < first.pieces[number - 1].end
+            else:
+                whole = bounds[number + 1] - around.shown != around.end - around.start
+            if whole:
                 return Span(around.start, around.end)
+        elif first.pieces:
+            return Span(first.pieces[-1].end, first.pieces[-1].end)
     return place(first, piece.start, piece.end)
 
 
@@ -186,6 +193,17 @@ def _pass_on(out: Builder, first: Visible, bounds: list[int], start: int, text: 
             out.put(part, piece.start, piece.end)
         at = upto
         number += 1
+
+
+def trimmed(visible: Visible) -> Visible:
+    """Leave out white space at either end."""
+    text = visible.text
+    start, end = len(text) - len(text.lstrip()), len(text.rstrip())
+    if end - start == len(text):
+        return visible
+    out = Builder()
+    out.keep(text, start, end)
+    return compose(visible, out.build())
 
 
 #: A space between the digits of one number is kept as it is.

@@ -6,26 +6,31 @@ import re
 from typing import NamedTuple
 
 from crossfoot.expressions import expression
-from crossfoot.reading.items import Item, Part, Text
+from crossfoot.reading.items import AS_GOOD_AS, INFINITE, Item, Part, Text
 from crossfoot.reading.names import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
 from crossfoot.reading.words import VERB_UNSPACED
 
 BRACKETS = expression(
     r"\s?(?:_?\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
-    r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?:\s?[,;]?\s?_\{(?P<more>[^{}\n]{1,12})\})?"
+    r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?P<more>(?:\s?[,;]?\s?_\{[^{}\n]{1,12}\}){1,3})?"
     r"|_\{\(\}\s?(?P<slipped>[^()\[\]{}\n]{1,40})\)"  # the bracket alone was lowered
     r"|\^\{\s?(?P<raised>\d{1,4})\s?\}_\{\s?(?P<beneath>\d{1,6})\s?\}"
     r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
 )
+#: A label between a name and its degrees of freedom: `F_{group}(2, 48)`, `F^{GG}(1.6, 36)`.
+_LABEL = expression(r"\s?[_^]\{\s?(?P<label>[^\W\d_][^{}\n=<>]{0,30})\}(?=\s?[(\[])")
+_ADJUSTED = expression(r"GG|HF|[Gg]reenhouse|[Hh]uynh")
+_NO_TEST = expression(r"(?:[ck]rit|tab|max|theor|α|[XYZ](?:,|$))", re.IGNORECASE)
 _FLAT_PAIR = expression(
     r"\s?_?(?P<a>\d{1,4}(?:\.\d+)?)\s?[,;/]\s?(?P<b>\d{1,6}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])"
 )
 _FLAT_ONE = expression(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
 _THOUSANDS = expression(r"\d{1,3}(?:,\d{3})+")
 _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
-_DF = r"(?:d\.?f\.?[nd]?|dof)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
+_DF = r"(?:d\.?f\.?[nd]?|dof|ν)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
 _ARGUMENT = expression(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
+_COUNT = expression(r"\d+(?:\.\d+)?")
 _TOTAL = expression(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
 #: What separates arguments, each with a character without which it can't stand there.
 _SEPARATORS = tuple(
@@ -61,12 +66,14 @@ class Degrees(NamedTuple):
     """Degrees of freedom after a name.
 
     ``parts`` is empty where the text prints none there; ``end`` is where they end; ``possible``
-    is False where brackets hold something that can't be any, so that the name is no test.
+    is False where brackets hold something that can't be any, so that the name is no test;
+    ``flags`` are those of the item that has them.
     """
 
     parts: tuple[Part, ...]
     end: int
     possible: bool = True
+    flags: tuple[str, ...] = ()
 
 
 def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
@@ -74,6 +81,17 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
 
     ``keys`` names them: two for F, one for t and r, one and perhaps the sample size for χ².
     """
+    label = _LABEL.match(text.folded, at)
+    if label is None:
+        return _unlabelled(text, at, keys)
+    degrees = _unlabelled(text, label.end(), keys)
+    if not degrees.parts or _NO_TEST.match(label["label"]):
+        return degrees._replace(parts=(), possible=False)
+    flags = ("adjusted-df",) if _ADJUSTED.match(label["label"]) else ("labelled",)
+    return degrees._replace(flags=(*degrees.flags, *flags))
+
+
+def _unlabelled(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
     two = "df2" in keys
     match = BRACKETS.match(text.folded, at)
     if match is None:
@@ -91,11 +109,19 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
             pieces = [(inner, 0)]
         elif pieces[0][0].strip() == "1" and "/" not in inner:  # t(1, 58): the df of its F
             pieces = pieces[1:]
-    if match["more"]:
-        pieces.append((match["more"], match.start("more") - start))
+    if match["more"]:  # lowered one by one: `F_{1,}_{56}`
+        stop = match.end("more")
+        pieces = [(n[0], n.start() - start) for n in _COUNT.finditer(text.folded, start, stop)]
     refused = Degrees((), match.end(), possible=False)
     parts: list[Part] = []
+    flags: tuple[str, ...] = ()
     for number, (piece, offset) in enumerate(pieces):
+        if piece.strip() in INFINITE and keys[number:] == keys[-1:] and keys[-1] != "n":
+            begin = start + offset + len(piece) - len(piece.lstrip())
+            stop = begin + len(piece.strip())
+            parts.append(Part(keys[number], "=", begin, stop, AS_GOOD_AS, AS_GOOD_AS))
+            flags = ("limiting-df",)
+            continue
         total = _TOTAL.fullmatch(piece)
         argument = total or _ARGUMENT.fullmatch(piece)
         if argument is None:  # `t(INCOME) = …` names a predictor; `F(x, y)` is a function
@@ -112,7 +138,7 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
         parts.append(part)
     if two and len(parts) < 2 and group != "round":
         return refused
-    return Degrees(tuple(parts), match.end())
+    return Degrees(tuple(parts), match.end(), flags=flags)
 
 
 def pair_behind(text: Text, end: int) -> tuple[tuple[Part, ...], int]:

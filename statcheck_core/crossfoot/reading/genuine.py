@@ -149,7 +149,7 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
         exact = any(p.quantity == "p" and p.relation == "=" for i in items for p in i.parts)
         return (plural or not exact) and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
-    if support or "lower" in test.flags or error.high < _FEWEST:
+    if support or {"lower", "labelled"} & set(test.flags) or error.high < _FEWEST:
         return support
     if not _spelt(text, value) or _is_lowered(test, text):  # an index, if words do not tell
         return (value.relation != "=" and near(_STATISTICAL, items, text)) or (
@@ -162,7 +162,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     test = next(item for item in items if item.head == anchor)
     value = next(part for part in test.parts if part.quantity == anchor)
     has_p = _supports(items, test, text)
-    if "by-name" in test.flags and not has_p:
+    if {"by-name", "labelled"} & set(test.flags) and not has_p:
         return False
     if anchor == "r":
         has_p = has_p and _p_isnear(items, test, text)
@@ -225,7 +225,13 @@ def _is_listed(items: Sequence[Item], test: Item, text: str) -> bool:
     """Say whether marks of a list stand between a test and its p."""
     p = next((item for item in items if item.head == "p"), test)
     between = text[min(p.end, test.end) : max(p.start, test.start)]
+    if ";" in between and (words := set(_PLAIN_WORD.findall(between))) and not words & _LINKS:
+        return False  # another clause
     return not set(",;()").isdisjoint(between)
+
+
+_PLAIN_WORD = expression(r"[^\W\d_]{3,}")
+_LINKS = frozenset({"tailed", "sided", "with", "and", "adjusted", "corrected", "exact"})
 
 
 def _side_by_side(items: Sequence[Item], text: str) -> bool:

@@ -43,7 +43,8 @@ class Item(NamedTuple):
         Contexts that the name itself states, or scanner's words: ``plural`` (one name for several
         tests), ``listed`` (one of several numbers of one name), ``percent`` (told as explained
         variance), ``told`` (a sample size in words), ``lower`` (a lower-case f), ``by-name`` (a
-        test by a name that means much else), ``perhaps-se`` (its last number may be an SE),
+        test by a name that means much else), ``labelled`` (a letter with a label of its own),
+        ``perhaps-se`` (its last number may be an SE),
         ``if-ratio`` and ``if-enclosed`` (an estimate only if its test or its interval tells so),
         ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order),
         ``grown`` (an R² told beside that of a smaller model), ``estimated`` (what the
@@ -58,6 +59,11 @@ class Item(NamedTuple):
     flags: tuple[str, ...] = ()
 
 
+#: Degrees of freedom without end: the reference distribution is the limit of t or F.
+INFINITE = frozenset({"Inf", "inf", "∞"})
+#: As good as these: tail areas differ from those of the limit by less than they are known.
+AS_GOOD_AS = 1e12
+
 #: Flags that speak to the scanner and are no contexts of a claim.
 SCANNER_FLAGS = frozenset(
     {
@@ -67,6 +73,7 @@ SCANNER_FLAGS = frozenset(
         "told",
         "lower",
         "by-name",
+        "labelled",
         "perhaps-se",
         "if-ratio",
         "if-enclosed",

@@ -183,9 +183,9 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "df",
-        rf"(?:Δ\s?)?{DEGREES}(?![a-z12])",
+        rf"(?:Δ\s?)?{DEGREES}(?![a-z12])|ν(?=\s?=\s?\d{{1,4}}(?![\d.]|\s?[^\W\d]))",
         True,
-        "ΔdgFfv自자D",
+        "ΔdgFfv自자Dν",
         "t = -1.926; df = 21.4; P = 0.068",
     ),
     Notation(
@@ -299,7 +299,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "r",
-        r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\(?\d|[₀-₉]|\d{1,4}\s?=)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
+        r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\(?\d|[₀-₉]|\d{1,4}\s?=|_\{[^{}\n]{1,14}\}\s?\(\d)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
         r"|[rR][_-]?value(?=\s?[=:])|cor(?=\s*\n\s*-?0?\.\d)|(?:rho|tau)(?=\s*\n\s*-?0?\.\d)"
         r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?:\sof\s\w{1,20}\sand\s\w{1,20}(?=\s=\s))?(?=\s(?:was|is|of|=|between|with|for)\s))",
         False,

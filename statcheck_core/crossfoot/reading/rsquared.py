@@ -47,6 +47,8 @@ _BOTH = expression(
     rf"\s?(?:/|\(|,|and)\s?{ADJUSTED}[\s-]?(?:[Rr]\s?(?:²|\^\{{?2\}}?|2))?\s?\)?(?=\s?(?:=|:|of|was))",
     re.IGNORECASE,
 )
+#: The adjusted one without its letter behind the other: `R² = 61.4%, adj. 60.2%`.
+_ALSO = expression(rf"\s?[,;]\s?{ADJUSTED}(?![a-z])\.?\s?[:=]?\s?(?=\d?\d?[.,]\d)", re.IGNORECASE)
 _SECOND = expression(rf"\s?(?:/|\(|,|and)\s?(?P<number>{NUMERAL})")
 #: After one of these and a space no word about the name stands before it.
 _APART = frozenset(",;:=")
@@ -103,6 +105,9 @@ def read_r_squared(text: Text, name: Name) -> Item | None:
     if value is None or _is_count(folded[value.start : value.end], value.low):
         return None
     start = before.start() if before is not None else start
+    also = _ALSO.match(folded, value.end) if quantity == "R2" else None
+    if also is not None and (second := number_at(text, also.end(), "R2_adj", "=")) is not None:
+        return Item("R2", (value, second), start, second.end)
     flags = ("pseudo-r2",) if "pseudo" in said else ()
     return Item(quantity, (value,), start, value.end, flags)
 

@@ -190,6 +190,7 @@ def _read_f(text: Text, name: Name) -> Item | None:
         parts = (*parts, *behind)
     flags = (
         *units,
+        *degrees.flags,
         *_F_FLAGS.get(printed, ()),
         *(("lower",) if printed == "f" or _WORD_BELOW.match(printed) else ()),
     )
@@ -248,6 +249,7 @@ def _read_one_df(text: Text, name: Name) -> Item | None:
         flags = ("rank-correlation",)
     if head == "chi2-of":
         flags = ("by-name",)
+    flags = (*flags, *degrees.flags)
     limits, end = enclosing(text, value) if quantity == "r" else ((), value.end)
     return Item(quantity, (*degrees.parts, value, *limits), name.match.start(), end, flags)
 

@@ -6,6 +6,7 @@ import re
 from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading, Span
+from crossfoot.reading.items import AS_GOOD_AS, INFINITE
 from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
 from crossfoot.reading.tables.contents import NONE, content_of, is_blank, limits
 from crossfoot.reading.tables.making import (
@@ -257,7 +258,7 @@ def _read(
     *,
     has_p: bool,
 ) -> None:
-    if text in _INFINITE and column.heading.roles == ("df2" if test == "F" else "df",):
+    if text in INFINITE and column.heading.roles == ("df2" if test == "F" else "df",):
         cells.setdefault(column.heading.roles[0], _infinite(sheet, column.heading.roles[0], start))
         contexts.append("limiting-df")
         return
@@ -304,16 +305,10 @@ def _read(
     contexts += column.heading.contexts
 
 
-#: Degrees of freedom without end: the reference distribution is the limit of t or F.
-_INFINITE = frozenset({"Inf", "inf", "∞"})
-#: As good as these: tail areas differ from those of the limit by less than they are known.
-_AS_GOOD_AS = 1e12
-
-
 def _infinite(sheet: Sheet, quantity: str, start: int) -> Reading:
-    end = start + len(next(word for word in _INFINITE if sheet.folded.startswith(word, start)))
+    end = start + len(next(word for word in INFINITE if sheet.folded.startswith(word, start)))
     literal = sheet.shown[start:end]
-    return Reading(quantity, "=", literal, _AS_GOOD_AS, _AS_GOOD_AS, Span(start, end))
+    return Reading(quantity, "=", literal, AS_GOOD_AS, AS_GOOD_AS, Span(start, end))
 
 
 def _glued(literal: str) -> tuple[str, str] | None:
