@@ -474,6 +474,7 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     "r-from-slope": (
         _one("one predictor", "overall-model", slope),
         _one("several predictors", "overall-model", several_slopes),
+        _one("row of the only predictor", "coefficient", slope),
         _one("pairs", "correlation", slope),
     ),
     "ci-from-se": (

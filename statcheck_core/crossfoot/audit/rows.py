@@ -23,6 +23,8 @@ _ROWS = frozenset({"error", "total"})
 _OF_EFFECT = ("F", "p", "df1", "eta2", "eta2_partial", "omega2")
 #: What may follow from a row though it is not printed there.
 _BETWEEN = frozenset({"ms"})
+#: The degrees of freedom of all effects together, where a row of their own is not printed.
+_ALL_EFFECTS = Cell("df1", "model")
 #: Identities of a whole model; they hold in an analysis of one effect, if its total is printed.
 _OF_MODEL = frozenset({"f-from-r2", "r2-adjusted", "n-from-df", "r2-from-multiple-r", "f2-from-r2"})
 #: Identities that speak of an analysis as a whole and not of each effect.
@@ -108,16 +110,21 @@ def _once(
 ) -> Bound:
     """Bind what speaks of the whole fit: to the model's row, or to the only effect."""
     whole: str | None = None if effects == [None] else "model"
+    totals = {Cell("ss", "total"), Cell("df", "total")}
+    between = _BETWEEN
+    if {Cell("F", "model"), *totals} <= printed and Cell("ss", "model") not in printed:
+        between |= {"R2"}  # through which the sums of squares tell the F that a note gives
     if whole and whole not in effects:
-        names = {n: c for n, c in _shared("").items() if c in printed or c.quantity in _BETWEEN}
+        names = {n: c for n, c in _shared("").items() if c in printed or c.quantity in between}
+        if _counts(printed):
+            names["df1"] = _ALL_EFFECTS
     else:
         names = _named(identity, whole, printed) | {
-            n: c for n, c in _shared(None).items() if c in printed or c.quantity in _BETWEEN
+            n: c for n, c in _shared(None).items() if c in printed or c.quantity in between
         }
     names = {name: names[name] for name in names_of(identity) if name in names}
     if identity.slug not in _OF_MODEL:
         return [(identity, names)]
-    totals = {Cell("ss", "total"), Cell("df", "total")}
     if printed.isdisjoint(totals) or not ({"F", "df1"} & names.keys()):
         return []
     return [(_of_analysis(identity), names)]
@@ -132,6 +139,11 @@ def _of_analysis(identity: Identity) -> Identity:
 
 def _form_of_analysis(form: Form) -> Form:
     return form._replace(kinds=(*form.kinds, ANOVA)) if "overall-model" in form.kinds else form
+
+
+def _counts(printed: frozenset[Cell]) -> bool:
+    """Say whether n can be held against the total of several effects, whose sum no row prints."""
+    return {Cell("n"), Cell("df", "total"), Cell("df2")} <= printed
 
 
 def _degrees(effect: str | None) -> Cell:
@@ -168,6 +180,8 @@ def _sums(slug: str, effects: Sequence[str | None], printed: frozenset[Cell]) ->
             sums.append((model, parts))
     else:
         sums.append((total, [*parts, error]))
+        if not squares and effects != [None] and _counts(printed):
+            yield sum_of_parts(slug, 2), {"total": total, "part1": _ALL_EFFECTS, "part2": error}
     for whole, summands in sums:
         if whole in printed and printed.issuperset(summands) and len(summands) > 1:
             names = {f"part{i}": cell for i, cell in enumerate(summands, start=1)}

@@ -85,6 +85,13 @@ _NAMED = expression(
 _FLOAT = expression(r"\\(begin|end)\{(?:sideways|wrap|threepart)?table\*?\}")
 _REACH = 2000
 _LONGEST_CAPTION = 900
+_LONGEST_LEAD = 200
+_SENTENCE_ENDS = frozenset(".!?;,。")
+#: What a title before a table says that its cells need: how many cases there are, what they hold.
+_LEAD = expression(
+    r"(?<![\w.])[Nn]\s?=\s?\d|correlation|regression|anova|analys[ie]s\sof\svariance|odds|hazard|mean\ssquares",
+    re.IGNORECASE,
+)
 _LONGEST_NOTE = 1500
 _MOST_NOTES = 3
 
@@ -140,7 +147,7 @@ def _caption(before: list[Block], text: str) -> int | None:
     last = before[-1]
     if len(last.source) > _LONGEST_CAPTION:
         return None
-    if is_caption(last.source) or _named(last, text) is not None:
+    if is_caption(last.source) or _named(last, text) is not None or _leads(last):
         before.pop()
         start = _named(last, text)
         return last.start if start is None else start
@@ -150,6 +157,18 @@ def _caption(before: list[Block], text: str) -> int | None:
             del before[-2:]
             return title.start
     return None
+
+
+def _leads(block: Block) -> bool:
+    """Say whether a paragraph before a table is its title: one line that is no sentence."""
+    words = block.source.strip()
+    return (
+        block.kind == "prose"
+        and len(words) <= _LONGEST_LEAD
+        and "\n" not in words
+        and words[-1:] not in _SENTENCE_ENDS
+        and _LEAD.search(_bare(words)) is not None
+    )
 
 
 def _named(block: Block, text: str) -> int | None:

@@ -38,6 +38,7 @@ CONTEXTS: Mapping[str, str] = {
     "corrected-statistic": "The statistic, or its p value alone, carries a correction.",
     "variance-ratio": "F compares two variances, so that its p takes both tails.",
     "ratio-scale": "The text speaks of a ratio or an area, whose null value is not zero.",
+    "only-predictor": "The table shows no other predictor of the model.",
     "other-null": "The tests are against another value than zero.",
     "partial-sums": "Each sum of squares is what its effect adds to all others (type II or III), "
     "so that they need not add up.",
@@ -232,6 +233,11 @@ _ASSUMPTIONS = (
     _assumption(
         "nested-models",
         "The smaller model is the larger one without some predictors, fitted to the same cases.",
+    ),
+    _assumption(
+        "only-predictor",
+        "R² is that of a model with this predictor alone.",
+        stated_by="only-predictor",
     ),
     _assumption(
         "symmetric-limits",

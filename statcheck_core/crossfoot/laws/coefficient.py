@@ -159,6 +159,23 @@ R_FROM_SLOPE = identity(
         form("r", "r = ±√R², df1 = 1", "R2 df1", _root_alone, kinds=_SLOPE_KINDS, mirrored=True),
         form("R2", "R² = β², df1 = 1", "beta df1", _square_alone, kinds=_SLOPE_KINDS),
         form("beta", "β = ±√R², df1 = 1", "R2 df1", _root_alone, kinds=_SLOPE_KINDS, mirrored=True),
+        form(
+            "R2",
+            "R² = β², one predictor",
+            "beta df1",
+            _square_alone,
+            kinds=COEFFICIENT,
+            assumed="only-predictor",
+        ),
+        form(
+            "beta",
+            "β = ±√R², one predictor",
+            "R2 df1",
+            _root_alone,
+            kinds=COEFFICIENT,
+            assumed="only-predictor",
+            mirrored=True,
+        ),
         form("R2", "R² = r²", "r", square, kinds="correlation"),
         form("r", "r = ±√R²", "R2", root, kinds="correlation", mirrored=True),
     ),
@@ -167,7 +184,7 @@ R_FROM_SLOPE = identity(
     source="Draper and Smith 1998, Applied Regression Analysis, 3rd edition, chapter 1",
     explanation="With one predictor the standardised slope is the correlation, and R² its square. "
     "Where they differ, one is misprinted or the model has more predictors.",
-    kinds=f"{_SLOPE_KINDS} correlation",
+    kinds=f"{_SLOPE_KINDS} {COEFFICIENT} correlation",
 )
 
 IDENTITIES = (T_FROM_B_SE, F_FROM_T, SIGNS, R_FROM_SLOPE)

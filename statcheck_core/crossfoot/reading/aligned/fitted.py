@@ -62,7 +62,7 @@ def models_around(
                 first -= 2  # an empty line between two predictors
                 continue
         above, numbers = _parted(text, line)
-        if not numbers or len(above) > 8:
+        if not numbers or len(above) > 8 or _are_titles(line):
             break
         first -= 1
     while first < number and (lines[first].rule or lines[first].blank):
@@ -80,6 +80,16 @@ def models_around(
         ]
         parted[0] = ([], titles)
     return Bare(first, last, _columns(text, lines, parted))
+
+
+def _are_titles(line: Line) -> bool:
+    """Say whether a line names columns, though it ends in a number: ``Model 1   Model 2``."""
+    fields = _FIELD.findall(line.text)
+    return (
+        len(fields) > 1
+        and line.text[:2].isspace()
+        and all(field[0].isalpha() and not is_value(field) for field in fields)
+    )
 
 
 def _with_titles(text: str, lines: Sequence[Line], first: int, free: Sequence[bool]) -> int:

@@ -123,7 +123,8 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
     if not 2 <= len(fields) <= 40 or _STATED.search(line.text):
         return None
     names: set[str] = set()
-    rows = 0
+    rows = most = 0
+    margin = 0  # where the names of rows end
     for below in lines[number + 1 : number + 42]:
         if below.rule:
             continue
@@ -139,6 +140,8 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
         name = text[label[0].start : label[-1].end].lower()
         names |= {name, name.split("  ")[0]}
         rows += 1
+        most = max(most, len(values))
+        margin = max(margin, label[-1].end - below.start)
     counts = [field.text.strip("().") for field in fields]
     numbered = [count for count in counts if count.isdigit()]
     named = [field for field in fields if field.text.lower() in names]
@@ -147,7 +150,9 @@ def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
         or len(named) > 1
     ):
         return None
-    first = 1 if fields[0].text.lower() not in names and not counts[0].isdigit() else 0
+    headed = fields[0].start - line.start >= margin and most == len(fields)
+    known = fields[0].text.lower() in names or counts[0].isdigit() or headed
+    first = 0 if known else 1
     spans = tuple((token.start - line.start, token.end - line.start) for token in fields[first:])
     return Columns(tuple(fields[:first]), tuple(fields[first:]), spans)
 

@@ -325,7 +325,9 @@ def _is_wide(line: Line) -> bool:
 
 def _completes(line: Line) -> bool:
     """Say whether a line can be the upper half of headings: words and no numbers."""
-    return not any(char.isdigit() for char in line.text) and "  " in line.text.strip()
+    words = line.text.strip()
+    alone = line.text[:1].isspace() and " " not in words  # one word, over one heading
+    return not any(char.isdigit() for char in words) and ("  " in words or alone)
 
 
 def _over(field: tuple[int, int], head: Token, above: Line, below: Line) -> bool:

@@ -23,7 +23,9 @@ _DF_TAIL = re.compile(r" ?\(df\s?=\s?\d+(?:[;,]\s?\d+)?\)$")
 #: A long number may end with its decimal point.
 _POINT = re.compile(r"(?<=\d{3})\.$")
 #: What stands between the numbers of one value.
-_BETWEEN = re.compile(r"[()\[\],;]| (?:to|–) |(?<=\d) (?=[-.\d])")
+_BETWEEN = re.compile(r"[()\[\];]|(?<=\d),| (?:to|–) |(?<=\d) (?=[-.\d])")
+#: An estimate with both its limits, parted at decimal commas too.
+_MOST_PARTS = 6
 #: Words that stand in columns of numbers.
 _EMPTY = frozenset(
     [
@@ -187,7 +189,7 @@ def is_value(word: str) -> bool:
     bare = _POINT.sub("", _DF_TAIL.sub("", word).lstrip("<>≤≥= "))
     parts = [part.strip() for part in _BETWEEN.split(bare)]
     numbers = [part for part in parts if part]
-    return 0 < len(numbers) <= 4 and all(_ATOM.fullmatch(part) for part in numbers)
+    return 0 < len(numbers) <= _MOST_PARTS and all(_ATOM.fullmatch(part) for part in numbers)
 
 
 def values_of(text: str, words: Sequence[Word]) -> list[Word]:

@@ -181,7 +181,10 @@ def _read(
 
 def _claim(sheet: Sheet, line: Line, name: str) -> Claim | None:
     cells = line.cells
-    if len(cells) < 2 or set(cells) <= {"p", "stars", "df2"}:
+    if set(cells) <= {"p", "stars", "df2"}:
+        return None
+    # Where others have marks, none is what is printed of a coefficient.
+    if len(cells) < 2 and not (sheet.legend.marks and cells.keys() <= {"b", "beta"}):
         return None
     row = ", ".join(part for part in (line.label, name) if part)
     given = tuple({(g.quantity, g.span): g for g in line.given}.values())

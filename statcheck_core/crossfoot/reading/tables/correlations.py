@@ -42,7 +42,7 @@ def correlations(sheet: Sheet) -> Found | None:
     kinds, contexts = _kinds(sheet, labels)
     names = _names(sheet, labels, kinds)
     columns = _matched(sheet, names)
-    if said:
+    if said or _counts_from_two(names):
         columns = _with_first(sheet, columns, names)
     if len(columns) < 2 or not _is_matrix(sheet, columns, names, kinds, said):
         columns = _crossed(sheet, labels, names, kinds) if said else []
@@ -182,6 +182,12 @@ def _matched(sheet: Sheet, names: list[str]) -> list[tuple[Column, str]]:
         elif text.lower() in exact:
             found.append((column, exact[text.lower()]))
     return found
+
+
+def _counts_from_two(names: list[str]) -> bool:
+    """Say whether rows are numbered from 2, so that the first variable has none of its own."""
+    numbers = [m["number"] for name in names if (m := _NUMBERED.fullmatch(name)) and m["name"]]
+    return len(numbers) > 1 and numbers == [str(n) for n in range(2, len(numbers) + 2)]
 
 
 def _with_first(

@@ -79,6 +79,35 @@ def panels_of(table: Table, folded: str) -> tuple[Panel, ...]:
     return tuple(panels)
 
 
+#: Quantities of which each row of a table of tests or sources of variation prints some.
+_ACROSS = frozenset({"ss", "ms", "df", "df1", "df2", "F", "t", "p", "b", "se"})
+
+
+def transposed(panel: Panel) -> Panel | None:
+    """Return a panel whose rows are quantities with rows and columns exchanged, or None.
+
+    Each of its columns is what other tables print as a row: a source of variation, a coefficient.
+    """
+    if len(panel.heads) != 1 or not 2 <= panel.width <= 40 or not 3 <= len(panel.rows) <= 12:
+        return None
+    labels = [headings.parse_label(row[0].text).roles for row in panel.rows]
+    named = [roles[0] for roles in labels if roles and roles[0] in _ACROSS]
+    if len(named) < max(3, len(labels) - 1) or len(set(named)) != len(named):
+        return None
+    if not {"ss", "ms"} & set(named) and not {"b", "se"} <= set(named):
+        return None
+    if any(headings.parse(box.text).roles for box in panel.heads[0][1:]):
+        return None
+    turned = [
+        tuple(
+            box._replace(row=column, column=row, columns=1) if box.text else EMPTY
+            for row, box in enumerate(boxes)
+        )
+        for column, boxes in enumerate(zip(panel.heads[0], *panel.rows, strict=True))
+    ]
+    return Panel((turned[0],), tuple(turned[1:]))
+
+
 def _matrix(table: Table, folded: str) -> list[tuple[Box, ...]]:
     """Return the cells in rows and columns; what spans several stands in each."""
     cells = table.cells

@@ -17,7 +17,7 @@ from crossfoot.reading.tables.columns import columns_of, roles_in, writes_comma
 from crossfoot.reading.tables.comparisons import comparisons
 from crossfoot.reading.tables.contents import content_of
 from crossfoot.reading.tables.correlations import correlations
-from crossfoot.reading.tables.grid import Box, Panel, panels_of
+from crossfoot.reading.tables.grid import Box, Panel, panels_of, transposed
 from crossfoot.reading.tables.keyvalue import key_values
 from crossfoot.reading.tables.legend import Legend
 from crossfoot.reading.tables.making import Column, Found, Sheet, reading
@@ -81,7 +81,7 @@ def table_claims(table: Table, prose: Prose, *, lead: str = "") -> tuple[Claim, 
         Words before the table that speak of it, where they are no part of it.
     """
     folded = fold(table.visible.text)
-    panels = panels_of(table, folded)
+    panels = tuple(transposed(panel) or panel for panel in panels_of(table, folded))
     stretches = _stretches(table, panels)
     legend = legends.legend_of(folded, stretches)
     words = " ".join([lead, *(folded[start:end] for start, end in stretches)])

@@ -8,7 +8,7 @@ from collections.abc import Sequence
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.items import AS_GOOD_AS, INFINITE
 from crossfoot.reading.tables.columns import labels_of, name_of, roles_in, side_by_side
-from crossfoot.reading.tables.contents import NONE, content_of, is_blank, limits
+from crossfoot.reading.tables.contents import NONE, content_of, limits
 from crossfoot.reading.tables.making import (
     Column,
     Found,
@@ -20,6 +20,7 @@ from crossfoot.reading.tables.making import (
     reading,
 )
 from crossfoot.reading.tables.rows import kind_of
+from crossfoot.reading.tables.supported import EFFECT_SIZES, supported
 from crossfoot.reading.tables.tested import by_statistic, each_test
 
 _KINDS = {
@@ -29,8 +30,7 @@ _KINDS = {
     "r": "correlation",
     "z": "mean-comparison",
 }
-_EFFECT_SIZES = frozenset({"eta2", "eta2_partial", "omega2"})
-_ROLES = frozenset({*_KINDS, "df", "df1", "df2", "p", "n", *_EFFECT_SIZES})
+_ROLES = frozenset({*_KINDS, "df", "df1", "df2", "p", "n", *EFFECT_SIZES})
 _LIMITS = frozenset({"ci_low", "ci_high"})
 _NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2", "se"})
 
@@ -64,7 +64,7 @@ def _tests(sheet: Sheet, rows: frozenset[int]) -> Found:
         group = [column for column in group if column.heading.roles]
         own = {role for column in group for role in column.heading.roles}
         tests = [key for key in _KINDS if key in own and not (key == "t" and "r" in own)]
-        if len(tests) == 1 and _supported(sheet, tests[0], own, group):
+        if len(tests) == 1 and supported(sheet, tests[0], own, group):
             kept = [
                 c for c in group if tests[0] in {"t", "z", "r"} or not _LIMITS & {*c.heading.roles}
             ]
@@ -75,11 +75,17 @@ def _tests(sheet: Sheet, rows: frozenset[int]) -> Found:
 
 
 def _are_of_differences(sheet: Sheet) -> bool:
-    """Say whether an interval is that of what is tested, and not of a group's mean."""
+    """Say whether an interval is that of what is tested: no group's mean, no effect size."""
+    limits = [c for c in sheet.columns if "ci_low" in c.heading.roles]
+    if len(limits) != 1 or _SIZE.search(sheet.columns[limits[0].number - 1].text):
+        return False
     means = [c for c in sheet.columns if c.heading.roles in {("mean",), ("sd",)}]
     return not means or _DIFFERENCE.search(sheet.words) is not None
 
 
+_SIZE = re.compile(
+    r"\b(?:cohen|hedges|glass|effect\ssize|smd|es)\b|\b[dgrVφ]\b|η|ω|ε|\bd_", re.IGNORECASE
+)
 #: Said of the mean of differences.
 _DIFFERENCE = re.compile(r"\bdiff(?:erences?|\.)?\b|\bpair(?:s|ed)?\b", re.IGNORECASE)
 #: Headings of what tells how well each of several models fits.
@@ -98,6 +104,8 @@ def _of_the_test(columns: Sequence[Column]) -> tuple[Column, ...]:
         heading = column.heading
         if heading.roles == ("df_change",):
             heading = heading._replace(roles=("df",))
+        elif heading.roles == ("wald",):
+            heading = heading._replace(roles=("chi2",))
         elif heading.roles == ("df",) and (changes or column.number < max(criteria, default=0)):
             heading = heading._replace(roles=())
         kept.append(column._replace(heading=heading))
@@ -130,48 +138,6 @@ def _with_symbols(sheet: Sheet) -> tuple[Column, ...]:
             heading = column.heading._replace(roles=(_SYMBOLS[symbol],))
             columns[place] = column._replace(heading=heading)
     return tuple(columns)
-
-
-def _supported(sheet: Sheet, test: str, roles: set[str], columns: Sequence[Column]) -> bool:
-    """Say whether headings make a test: a letter alone is none."""
-    if test not in {"r", "n"} and "p" in roles and _are_probabilities(sheet, columns):
-        return True
-    degrees = bool(roles & {"df", "df1", "df2"}) or any(
-        c.heading.df or _holds_tests(sheet, c) for c in columns
-    )
-    if test in {"z", "r"}:
-        return "p" in roles and (test == "z" or degrees or bool(roles & {"n", "t", "statistic"}))
-    return degrees and (bool(roles & {"p", *_EFFECT_SIZES}) or test == "F")
-
-
-def _holds_tests(sheet: Sheet, column: Column) -> bool:
-    """Say whether the first cell of a column tells degrees of freedom beside its number."""
-    first = next(
-        (row[column.number].text for row in sheet.panel.rows if row[column.number].text), ""
-    )
-    content = content_of(first)
-    return content is not None and bool(content.df)
-
-
-def _are_probabilities(sheet: Sheet, columns: Sequence[Column]) -> bool:
-    """Say whether the numbers under p are printed as p values are: below 1, to two places."""
-    places = [c.number for c in columns if c.heading.roles == ("p",)]
-    found = [
-        content_of(row[place].text)
-        for row in sheet.panel.rows[:60]
-        for place in places
-        if not is_blank(row[place].text)
-    ]
-    return bool(found) and all(
-        content is not None
-        and len(content.numbers) == 1
-        and (content.numbers[0].insignificant or _P.fullmatch(content.numbers[0].literal))
-        for content in found
-    )
-
-
-#: A p value as it is usually printed.
-_P = re.compile(r"[01]?[.,]\d{2,}(?:[eE]-\d{1,3})?|\d(?:[.,]\d+)?[eE]-\d{1,3}|0|1")
 
 
 def _rows(sheet: Sheet, columns: Sequence[Column], test: str, wanted: frozenset[int]) -> Found:

@@ -16,7 +16,6 @@ from crossfoot.reading.tables.making import Column, Found, Sheet, claim, marked,
 
 _ESTIMATES = frozenset({"b", "β", "beta"})
 _RATIO = re.compile(r"\bodds\sratios?|\bOR\b|exponentiated", re.IGNORECASE)
-_OTHER_RATIO = re.compile(r"hazard|incidence[\s-]rate|relative\srisk|risk\sratio", re.IGNORECASE)
 _STANDARD = re.compile(
     r"(?<!un)(?<!un-)standardi[sz]ed\s(?:coefficients?|betas?|β|estimates?|regression)",
     re.IGNORECASE,
@@ -39,7 +38,7 @@ class Estimate(NamedTuple):
 def side_by_side(sheet: Sheet) -> Found | None:
     """Return the claims of models in columns, or None where there are none."""
     labels = labels_of(sheet.panel, sheet.columns)
-    if not labels or _OTHER_RATIO.search(sheet.words):
+    if not labels:
         return None
     models = _models(sheet, {column.number for column in labels})
     if not models:
@@ -222,8 +221,8 @@ def _claim(
     readings += _enclosed(sheet, estimate, kind, quantity)
     if mark is not None and kind != "se?":
         readings.append(mark)
-    if len(readings) < 2:
-        return None
+    if len(readings) < 2 and not (estimate.content.marks is None and sheet.legend.marks):
+        return None  # where others have marks, none is what is printed of it
     label = ", ".join(part for part in (estimate.label, name) if part)
     context = ["default-stars"] if default else []
     return claim(sheet, "coefficient", label, readings, estimate.boxes, row=label, contexts=context)

@@ -116,7 +116,7 @@ ROLES: tuple[Role, ...] = (
         " loghr logor emmean lsmean emmeans lsmeans dy/dx ey/ex dy/ex ey/dx marginaleffect"
         " estimation estimación stima estimativa 계수 unstd",
     ),
-    Role("β", "β ß", "beta"),
+    Role("β", "β ß β̂ β^", "beta"),
     Role(
         "beta",
         "",
