@@ -6,7 +6,7 @@ from collections.abc import Iterable, Sequence
 from typing import NamedTuple
 
 from crossfoot.model import Claim, Reading, Span
-from crossfoot.reading.contexts import cues_in
+from crossfoot.reading.contexts import concerning, cues_in
 from crossfoot.reading.tables import contents, legend
 from crossfoot.reading.tables.contents import Content, Number
 from crossfoot.reading.tables.grid import Box, Panel
@@ -188,7 +188,7 @@ def claim(
         text=_text(sheet, boxes),
         span=Span(own[0].start, max(span.end for span in own)),
         readings=tuple(ordered),
-        context=tuple(sorted(found_contexts)),
+        context=tuple(sorted(concerning(kind, frozenset(found_contexts)))),
         alpha=sheet.legend.alpha,
         given=tuple(given),
         row=row,
