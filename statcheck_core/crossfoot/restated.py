@@ -6,6 +6,7 @@ may be measured more than once; what is found here is a doubt.
 
 from __future__ import annotations
 
+import re
 from collections import defaultdict
 from collections.abc import Iterator, Mapping, Sequence
 from functools import lru_cache
@@ -24,6 +25,13 @@ _TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
 _DIGITS, _SHARED = 5, 2
 #: A number that more results than this print tells none from the others.
 _CROWD = 8
+#: Where a result takes more cases than so many samples, what is counted is another thing.
+_MOST = 3
+#: Words by which one of two results leaves out some cases.
+_WITHOUT = expression(
+    r"\b(?:without|exclu\w{1,8}|omit\w{0,5}|dropp\w{1,4}|remov\w{1,4}|subset|restrict\w{1,5}|sensitivity)\b",
+    re.IGNORECASE,
+)
 #: What p is of differs under these.
 _OTHER_P = frozenset({"adjusted-p", "one-sided", "resampled", "robust"})
 _MANTISSA = expression(r"[\d.,·]+")
@@ -101,11 +109,19 @@ def _restated(
     for one, two, key in differing:
         if {one, two} <= agreed or not _comparable(mentions[one], mentions[two], key):
             continue
+        if key in _COMMON and any(_leaves_out(document, mentions[i]) for i in (one, two)):
+            continue
         odd = min((one, two), key=lambda i: (i in agreed, len(mentions[i].numbers), -i))
         found = _finding(mentions[odd], mentions[one + two - odd], key)
         if found is not None and (odd, key) not in doubted:
             doubted.add((odd, key))
             yield odd, Check("restatement", "doubt", found.message), found
+
+
+def _leaves_out(document: Document, mention: _Mention) -> bool:
+    """Say whether words before a result tell that some cases are left out of it."""
+    start = mention.placed.base + mention.placed.audited.claim.span.start
+    return _WITHOUT.search(document.text, max(0, start - 160), start) is not None
 
 
 def _pairs(mentions: Sequence[_Mention]) -> Iterator[tuple[int, int]]:
@@ -195,7 +211,9 @@ def _sampled(document: Document, placed: Sequence[Placed]) -> Iterator[tuple[int
         (number, Check("sample-flow", "doubt"), _outgrown(item, numbers, key, total, span))
         for number, item in enumerate(placed)
         for key, numbers in _counted(item)
-        if numbers[key].low + (numbers["df1"].low if "df1" in numbers else 1.0) > total
+        if total
+        < numbers[key].low + (numbers["df1"].low if "df1" in numbers else 1.0)
+        < _MOST * total
     ]
     words = document.text.lower() if found else ""
     if not any(word in words for word in _SEVERAL):

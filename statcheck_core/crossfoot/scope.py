@@ -153,6 +153,8 @@ def in_scope(claim: Claim, held: Held, whole: Whole) -> Claim:
         contexts |= held.printed
     if contexts:
         contexts = concerning(claim.kind, contexts - _opposed(claim.context))
+        if claim.kind == "anova-table" and not _has_several_effects(claim):
+            contexts -= {"partial-sums"}  # what one effect adds is what it has
     if not contexts and alpha == claim.alpha:
         return claim
     return claim._replace(context=tuple(sorted({*claim.context, *contexts})), alpha=alpha)
@@ -168,6 +170,12 @@ def _loosened(contexts: frozenset[str]) -> frozenset[str]:
 def _several_df(claim: Claim) -> bool:
     """Say whether a test is of several degrees of freedom at once, so that it is no comparison."""
     return any(reading.quantity == "df1" and reading.low > 1 for reading in claim.readings)
+
+
+def _has_several_effects(claim: Claim) -> bool:
+    """Say whether a table tells its effects apart by their names."""
+    terms = {reading.term for reading in claim.readings if reading.quantity == "ss"}
+    return bool(terms - {None, "model", "error", "total"})
 
 
 def _opposed(context: Iterable[str]) -> frozenset[str]:

@@ -32,6 +32,7 @@ CONTEXTS: Mapping[str, str] = {
     "by-item": "The analysis takes the means of items.",
     "imputed": "Missing values are imputed and the results pooled.",
     "rank-correlation": "The correlation is one of ranks.",
+    "normal-limits": "The limits are taken from the normal distribution.",
     "own-distribution": "The statistic has a distribution of its own, whatever its letter.",
     "partialled": "Other variables are held constant.",
     "resampled": "p values or intervals come from permutations or the bootstrap.",
@@ -247,7 +248,7 @@ _ASSUMPTIONS = (
     _assumption(
         "t-limits",
         "The limits are taken from the t distribution rather than from the normal one.",
-        "resampled generalised mixed survey instrumental imputed",
+        "resampled generalised mixed survey instrumental imputed normal-limits",
     ),
     _assumption(
         "wald-limits",

@@ -175,9 +175,14 @@ N_FROM_DF = identity(
         form("n", "n ≥ df1 + df2", "df1 df2", _bound_on_n, kinds=MODEL),
         form("df1", "df1 ≤ n − df2", "n df2", _bound_on_df, kinds=MODEL),
         form("df2", "df2 ≤ n − df1", "n df1", _bound_on_df, kinds=MODEL),
-        form("n", "n = df1 + df2 + 1", "df1 df2", _n, assumed=_CASES, kinds=MODEL),
-        form("df1", "df1 = n − df2 − 1", "n df2", _other_df, assumed=_CASES, kinds=MODEL),
-        form("df2", "df2 = n − df1 − 1", "n df1", _other_df, assumed=_CASES, kinds=MODEL),
+        *(
+            form(gives, formula, takes, value, needs=_RESIDUAL, assumed=_CASES, kinds=MODEL)
+            for gives, formula, takes, value in (
+                ("n", "n = df1 + df2 + 1", "df1 df2", _n),
+                ("df1", "df1 = n − df2 − 1", "n df2", _other_df),
+                ("df2", "df2 = n − df1 − 1", "n df1", _other_df),
+            )
+        ),
         form("k", "k = df1", "df1", _same, assumed=_SLOPES, kinds=MODEL),
         form("df1", "df1 = k", "k", _same, assumed=_SLOPES, kinds=MODEL),
         form("n", "n = df + 2", "df", _n_of_pairs, needs=_ALONE_TWO, assumed=_PAIRS, kinds=_PAIRED),

@@ -25,6 +25,8 @@ _ALPHA = (
     r"|p\s?[<≤]\s?(?P<below>0?[.,]\d{1,4})\s(?:(?:was|were|is|are)\s)?(?:considered|deemed|taken|regarded|treated|as|defined|indicat)\w*"
     r"[^.]{0,40}signific"
 )
+#: Contexts that matter to claims of one kind alone.
+_CONCERN = {"partialled": "correlation", "partial-sums": "anova-table"}
 _WORD_OF_LEVEL = expression(r"level|\bset\b|signific", re.IGNORECASE)
 #: A significance level that no word calls one is smaller than this.
 _LARGEST = 0.1001
@@ -101,7 +103,7 @@ def contexts_of(sentence: str, block: str, lead: str) -> frozenset[str]:
 
 def concerning(kind: str, contexts: frozenset[str]) -> frozenset[str]:
     """Return those of some contexts that matter to a kind of claim."""
-    return contexts if kind == "correlation" else contexts - {"partialled"}
+    return contexts - {context for context, of in _CONCERN.items() if kind != of}
 
 
 def alpha_of(sentence: str, block: str) -> float | None:

@@ -102,14 +102,17 @@ CUES: tuple[Cue, ...] = (
         _stems(
             "robust; hc0; hc1; hc2; hc3; hc4; clustered; cluster-; sandwich; huber; newey; "
             "driscoll; heteroskedasticity-consistent; heteroscedasticity-consistent; white-; "
-            "white standard; white's; hac; eicker"
+            "white standard; white's; hac; eicker; robuste; robusti; robustos; robustas; robuust; "
+            "robusta; 稳健; 頑健"
         ),
         spreads=True,
         confirm=r"robust (?:standard |std\.? )?(?:errors?|s\.?e|variance|f\b|inference|regression"
         r"|estimat|fit|linear)|(?:sk|sc)edastic\w*[- ](?:robust|consistent)|\bhc[0-4]\b"
         r"|cluster(?:ed|-robust)|cluster\w* (?:at|by|on)\b|sandwich"
         r"|huber|newey|driscoll|eicker|\bhac\b|white(?:'s)?[- ](?:correct|standard|robust|heterosk)"
-        r"|\|\s+robust\b|robust\s*\n",
+        r"|\|\s+robust\b|robust\s*\n|稳健|頑健"
+        r"|robuste[nr]? standardfehler|erreurs?[- ]types? robustes"
+        r"|err(?:eurs|ores|os|ori)(?: [\w-]{1,10})? robust|robuuste standaardf|robusta standardfel",
     ),
     Cue(
         "weighted",
@@ -131,13 +134,21 @@ CUES: tuple[Cue, ...] = (
             "linear mixed; multilevel; hierarchical linear; random intercept; "
             "random-intercept; random slope; random-slope; random effect; random-effect; "
             "lmer; lmert; lmm; generalized estimating; generalised estimating; satterthwaite; "
-            "kenward"
+            "kenward; gemischte; modèle mixte; modèle linéaire mixte; modèles mixtes; "
+            "effets mixtes; effets aléatoires; "
+            "modelo mixto; modelos mixtos; efectos mixtos; efectos aleatorios; "
+            "modelo misto; efeitos mistos; efeitos aleatórios; modello misto; modelli misti; "
+            "effetti casuali; mehrebenen; zufällige effekte; 混合效应; 混合効果; 混合模型"
         ),
         spreads=True,
         confirm=r"(?<!\w)(?:lmm|lmer\w*"
         r"|(?:mixed|random)[- ](?:effects?|model|linear|intercepts?|slopes?)"
         r"|linear mixed|multilevel|hierarchical linear"
-        r"|generali[sz]ed estimating|satterthwaite|kenward)",
+        r"|generali[sz]ed estimating|satterthwaite|kenward"
+        r"|gemischte[snr]? (?:lineare[snr]? )?modell"
+        r"|(?:effets|efectos|efeitos|effetti) (?:mixt|mist|aléa|alea|casual)"
+        r"|mod[eè]l[eoli]{1,2}s?(?: linéaires?| lineales?| lineare?s?)? mi[sx]t"
+        r"|mehrebenen|zufällige effekte|混合)",
     ),
     Cue(
         "survey",
@@ -191,7 +202,11 @@ CUES: tuple[Cue, ...] = (
             "dunnett; games-howell; hochberg; corrected for; adjusted for multiple; "
             "adjusted p; corrected p; multiple comparison; family-wise; familywise; "
             "post hoc; post-hoc; multiplicity; single-step; step-down; stepdown; westfall; simes; "
-            "hommel; newman-keuls; fwe; tfce; mvt"
+            "hommel; newman-keuls; fwe; tfce; mvt; mehrfach; multiple vergleich; "
+            "multiplen vergleich; "
+            "comparaisons multiples; comparaciones múltiples; comparaciones multiples; "
+            "comparações múltiplas; confronti multipli; meervoudige; flera jämförelser; "
+            "multiple sammenlig; 多重比较; 多重比較; 多重檢定"
         ),
         spreads=True,
         general=ALL_TESTS + r"|adjust\w*\s?[=:]|p\.adjust|p[- ]values? adjust|adjustment"
@@ -257,6 +272,19 @@ CUES: tuple[Cue, ...] = (
         r"|fold\b|\ba?(?:hr|rr|irr|shr|or)s?\s?[=:(]|\bau(?:ro)?c\b|\broc\b|exp\(",
     ),
     Cue(
+        "partial-sums",
+        _stems("type ii; type iii; type-ii; type-iii; type 2 s; type 3 s; type 2 a; type 3 a"),
+        spreads=True,
+        confirm=r"type[ -](?:iii?|[23])[ -](?:sum|ss|anova|analysis|test|f)|\btype[ -](?:iii?)\b",
+    ),
+    Cue(
+        "normal-limits",
+        _stems("normal-theory; normal theory; normal approx; wald; 1.96; z-based; asymptotic"),
+        near=True,
+        confirm=r"normal[- ](?:theory|approx)|wald (?:interval|ci\b|limits|confidence|95)"
+        r"|1\.96\s?(?:×|x|\*|se\b|times)|±\s?1\.96|z-based|asymptotic (?:interval|ci\b|confid|95)",
+    ),
+    Cue(
         "repeated-measures",
         _stems(
             "repeated measure; repeated-measure; within-subject; within subject; "
@@ -264,7 +292,11 @@ CUES: tuple[Cue, ...] = (
             "within-individual; rmcorr; paired; split-plot; split plot; crossover"
         ),
     ),
-    Cue("imputed", ("imputation", "imputed"), spreads=True),
+    Cue(
+        "imputed",
+        ("imputation", "imputed", "imputiert", "imputé", "imputado", "imputaç", "imputación"),
+        spreads=True,
+    ),
     Cue("rank-correlation", ("spearman", "kendall", "rank correlation", "rank-order"), near=True),
     Cue(
         "partialled",
@@ -302,7 +334,7 @@ CUES: tuple[Cue, ...] = (
             "kolmogorov; smirnov; k-s z; k–s z; ks z; dickey; adf; phillips-perron; "
             "phillips–perron; unit root; unit-root; kpss; bounds test; bounds-test; cointegr; "
             "johansen; studentised range; studentized range; lilliefors; fmax; f-max; hartley; "
-            "supf; sup-f; quandt; andrews"
+            "supf; sup-f; quandt; andrews; rayleigh; kuiper; mean vector; ajne"
         ),
         near=True,
     ),

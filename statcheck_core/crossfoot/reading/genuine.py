@@ -17,6 +17,7 @@ from crossfoot.reading.lookalikes import (
     is_drawn,
     is_logged,
     is_of_classifier,
+    is_of_functions,
     is_power,
     is_supposed,
     near,
@@ -118,6 +119,11 @@ def _together(items: Sequence[Item], text: str) -> bool:
     )
 
 
+def _is_told(items: Sequence[Item], text: str) -> bool:
+    """Say whether words of statistics stand around a group."""
+    return near(_STATISTICAL, items, text, _BESIDE)
+
+
 def _side(first: Item, second: Item, text: str) -> bool:
     """Say whether no more than a few words stand between two items."""
     return len(_WORD.findall(text, first.end, second.start)) <= _FEW
@@ -142,7 +148,8 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
     if "df2" not in quantities:
         if value.relation == "=":
             traced = _TRACED.search(text, max(0, test.start - 24), test.start) is not None
-            return support and not traced and not is_of_classifier(items, text)
+            told = quantities & _SUPPORT or _is_told(items, text) or _side_by_side(items, text)
+            return support and bool(told) and not traced and not is_of_classifier(items, text)
         # `F < 1` alone says little, and yet what it says of an effect.
         plural = "plural" in test.flags
         bound = plural or near(_EFFECT, items, text) or near(_OTHER_TEST, items, text)
@@ -185,8 +192,10 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
     if (flat or by_unit or text[test.start] == "T") and not has_p:
         return False
     if "df" in quantities:
-        told = near(_STATISTICAL, items, text)
-        return has_p or told or (_spelt(text, value) and not _is_lowered(test, text))
+        if has_p or near(_STATISTICAL, items, text):
+            return True
+        spelt = _spelt(text, value) and not _is_lowered(test, text)
+        return spelt and not is_of_functions(items, text)
     if anchor == "t" and quantities & {"b", "beta", "se"}:
         return _together(items, text)
     return has_p and _follows_or_told(items, test, value, text)

@@ -37,6 +37,8 @@ _OF_DISTRIBUTION = expression(
     r"\b(?:each|either|upper|lower|one|right|left)\stail\b|tail\sarea|\bleaves\s(?:p\s?=|0?\.0|\d%)"
     r"|\btabulated\b|\btables?\sof\s(?:the\s)?[tF]\b"
 )
+#: "a(n) = 2n, t(4) = 7.5": values of functions
+_FUNCTIONS = expression(r"\b[abcghkvxyABC]\((?:\d{1,2}|[a-z])\)\s?=")
 #: "A value of t = 2.0 was used as cut-off."
 _USED = expression(r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion)\b")
 _CLASSIFIER = expression(
@@ -81,6 +83,11 @@ def is_supposed(item: Item, text: str) -> bool:
 def is_of_classifier(items: Sequence[Item], text: str) -> bool:
     """Say whether words speak of a classifier, whose F, p and r are other things."""
     return near(_CLASSIFIER, items, text)
+
+
+def is_of_functions(items: Sequence[Item], text: str) -> bool:
+    """Say whether values of functions are told."""
+    return near(_FUNCTIONS, items, text, 60)
 
 
 def is_logged(items: Sequence[Item], text: str) -> bool:

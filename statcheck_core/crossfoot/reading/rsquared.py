@@ -14,7 +14,7 @@ from crossfoot.reading.words import ADJUSTED, CHANGED, PSEUDO
 
 _BEFORE = expression(
     rf"(?:(?P<adjusted>{ADJUSTED})|(?P<pseudo>{PSEUDO})|(?P<changed>{CHANGED})"
-    r"|(?P<partial>(?:semi-?)?partial))[\s-]?\(?$",
+    r"|(?P<partial>(?:semi-?)?partial|mean|average|median|averaged))[\s-]?\(?$",
     re.IGNORECASE,
 )
 _AFTER = expression(

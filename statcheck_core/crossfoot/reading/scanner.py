@@ -38,6 +38,10 @@ _FOR_ALL_BEFORE = expression(r"(?<!\w)(?:both|all|each)(?:\s[a-z]+){0,2}\s$", re
 _FOR_ALL_BEHIND = expression(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
 )
+#: "p = 0.04 of default": the probability of something else than a test's result
+_OF_SOMETHING = expression(
+    r"\sof\s(?!(?:the|this|that|an?|all|both|each|F|t|r|z)\b|interact|effect|slope|differ|trend|test)[a-z]{3}"
+)
 _EXACT_BEHIND = expression(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
 _COUNTED = expression(r"\s(?:[a-z]{2,14}\s){0,2}(?:predictor|regressor|covariate|variable|feature)")
 _ALL = expression(r"(?:both|all|each)\s$")
@@ -298,7 +302,7 @@ def _read_p(text: Text, name: Name) -> Item | None:
     if area is not None:
         return _read_area(text, area, start)
     value = value_after(text, end, "p", name, bare=text.folded[start - 1 : start] in " (,;")
-    if value is None:
+    if value is None or _OF_SOMETHING.match(text.folded, value.end):
         return None
     if value.low > 1 and _COUNTED.match(text.folded, value.end):
         counted = value._replace(quantity="k")  # p = 3 predictors

@@ -273,6 +273,8 @@ def _without_interval_of_another(items: list[Item], text: str) -> list[Item]:
         return items
     kept = []
     for number, item in enumerate(items):
+        if item.head == "ci" and _is_of_beta(item, items):
+            continue
         if item.head == "ci" and number:
             between = text[items[number - 1].end : item.start]
             found = _ANOTHER_NUMBER.search(between)
@@ -281,6 +283,19 @@ def _without_interval_of_another(items: list[Item], text: str) -> list[Item]:
                 continue
         kept.append(item)
     return kept
+
+
+def _is_of_beta(interval: Item, items: Sequence[Item]) -> bool:
+    """Say whether an interval lies around β, where b is printed as well, and not around b."""
+    parts = {part.quantity: part for item in items for part in item.parts}
+    if not {"b", "beta"} <= parts.keys():
+        return False
+    low, high = (p for p in interval.parts if p.quantity in {"ci_low", "ci_high"})
+
+    def fits(estimate: Part) -> bool:
+        return low.low + high.low <= 2 * estimate.high and 2 * estimate.low <= low.high + high.high
+
+    return fits(parts["beta"]) and not fits(parts["b"])
 
 
 def _doubled(item: Item, items: Sequence[Item]) -> bool:

@@ -57,7 +57,7 @@ _VARIANCE = (
     "rozptyl",
     "дисперс",
 )
-_LISTED_BEFORE = expression(rf"(?P<share>\d+(?:[.,]\d+)?\s?%)\s(?:{AND}|,)\s$")
+_LISTED_BEFORE = expression(rf"(?P<share>\d+(?:[.,]\d+)?\s?%)(?:\s{AND}|\s?,(?:\s{AND})?)\s$")
 _FURTHER = expression(
     r"(?:additional|further|another|extra|incremental|more|zusätzlich\w*|weitere)\s?(?:an?\s)?$",
     re.IGNORECASE,
@@ -149,12 +149,14 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
         if adjusted is not None:
             yield Item("R2_adj", (adjusted,), adjusted.start, adjusted.end)
     flags: tuple[str, ...] = ("percent",)
-    earlier = _LISTED_BEFORE.search(text.folded, max(start, first - 16), first)
-    if earlier is not None:
+    at = first
+    while (earlier := _LISTED_BEFORE.search(text.folded, max(start, at - 20), at)) is not None:
         other = _share(text, quantity, *earlier.span("share"))
-        if other is not None:
-            flags = ("percent", "listed")
-            yield Item(quantity, (other,), other.start, other.end, flags)
+        if other is None:
+            break
+        flags = ("percent", "listed")
+        yield Item(quantity, (other,), other.start, other.end, flags)
+        at = other.start
     yield Item(quantity, (part,), min(first, match.start()), max(last, match.end()), flags)
 
 

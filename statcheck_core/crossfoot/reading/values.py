@@ -49,7 +49,7 @@ _WHAT = expression(
 )
 _UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
-    r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=(.'-]|\s?[=<>(])"
+    r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=('-]|\.(?!\s|$)|\s?[=<>(])"
 )
 _GLUED = expression(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.

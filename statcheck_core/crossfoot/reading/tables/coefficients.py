@@ -36,6 +36,7 @@ _ESTIMATES = frozenset({"b", "β", "beta", "odds_ratio", "ratio"})
 _BESIDE = frozenset(
     {"se", "t", "z", "wald", "statistic", "p", "ci_low", "ci_high", "vif", "tolerance"}
 )
+_LIMITS = frozenset({"ci_low", "ci_high"})
 #: What a role is as a quantity, where its name differs.
 _AS = {"wald": "chi2", "statistic": "t", "ratio": "b"}
 #: What holds of the estimates of a column of ratios.
@@ -56,6 +57,7 @@ def coefficients(sheet: Sheet) -> Found | None:
         names = [""]
     for group, name in zip(groups, names, strict=True):
         lines = settled(sheet, told_apart(sheet, _lines(sheet, group)))
+        lines = _without_limits_of_beta(lines)
         if not plausible(lines):
             continue
         steps = fits.steps_in(sheet)
@@ -127,6 +129,27 @@ def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
             boxes = (*words, *(row[c.number] for c in columns))
             lines.append(Line(index, label, cells, boxes, tuple(given), tuple(contexts), enclosed))
     return lines
+
+
+def _without_limits_of_beta(lines: list[Line]) -> list[Line]:
+    """Drop the limits where those of most rows are of β, though b is printed as well."""
+    of_beta = sum(_centred(line, "beta") and not _centred(line, "b") for line in lines)
+    if not of_beta or 2 * of_beta <= sum("ci_low" in line.cells for line in lines):
+        return lines
+    return [
+        line._replace(cells={key: cell for key, cell in line.cells.items() if key not in _LIMITS})
+        if "b" in line.cells
+        else line
+        for line in lines
+    ]
+
+
+def _centred(line: Line, quantity: str) -> bool:
+    """Say whether an estimate can lie midway between the limits of its row."""
+    found, low, high = (line.cells.get(key) for key in (quantity, "ci_low", "ci_high"))
+    if found is None or low is None or high is None:
+        return False
+    return low.low + high.low <= 2 * found.high and 2 * found.low <= low.high + high.high
 
 
 def _limits_of_ratio(roles: Sequence[str]) -> bool:

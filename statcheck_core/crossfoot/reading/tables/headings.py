@@ -219,6 +219,8 @@ def _composed(text: str) -> Heading | None:
         return _paired(match["base"], match["inner"], offset)
     for mark in ("/", ",", ";", "±"):
         first, found, second = text.partition(mark)
+        if mark == "/" and role_of(second.strip()) == "df" and role_of(first.strip()) == "chi2":
+            return None  # χ²/df, a ratio that tells how well a model fits
         if found and second.strip():
             offset = len(first) + 1 + len(second) - len(second.lstrip())
             return _paired(first, second.strip(), offset)

@@ -95,7 +95,8 @@ _CRITERIA = re.compile(r"AICc?|BIC|log-?\s?lik(?:elihood)?|-2\s?LL|deviance", re
 def _of_the_test(columns: Sequence[Column]) -> tuple[Column, ...]:
     """Take the df of a comparison of models for that of its test, and not that of each model."""
     roles = {column.heading.roles for column in columns}
-    changes = ("df_change",) in roles
+    tests = sum(1 for column in columns if set(column.heading.roles) & set(_KINDS))
+    changes = tests < 2 and ("df_change",) in roles
     criteria = [
         c.number for c in columns if _CRITERIA.fullmatch(c.box.text.strip()) and ("F",) not in roles
     ]
