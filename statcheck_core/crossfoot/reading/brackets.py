@@ -19,7 +19,9 @@ BRACKETS = expression(
     r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
 )
 #: A label between a name and its degrees of freedom: `F_{group}(2, 48)`, `F^{GG}(1.6, 36)`.
-_LABEL = expression(r"\s?[_^]\{\s?(?P<label>[^\W\d_][^{}\n=<>]{0,30})\}(?=\s?[(\[])")
+_LABEL = expression(
+    r"\s?(?:[_^]\{\s?(?P<label>[^\W\d_][^{}\n=<>]{0,30})\}|_(?P<bare>[A-Za-z]{2,12}))(?=\s?[(\[]\s?\d)"
+)
 _ADJUSTED = expression(r"GG|HF|[Gg]reenhouse|[Hh]uynh")
 _NO_TEST = expression(r"(?:[ck]rit|tab|max|theor|α|[XYZ](?:,|$))", re.IGNORECASE)
 _FLAT_PAIR = expression(
@@ -85,9 +87,10 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
     if label is None:
         return _unlabelled(text, at, keys)
     degrees = _unlabelled(text, label.end(), keys)
-    if not degrees.parts or _NO_TEST.match(label["label"]):
+    words = label["label"] or label["bare"]
+    if not degrees.parts or _NO_TEST.match(words):
         return degrees._replace(parts=(), possible=False)
-    flags = ("adjusted-df",) if _ADJUSTED.match(label["label"]) else ("labelled",)
+    flags = ("adjusted-df",) if _ADJUSTED.match(words) else ("labelled",)
     return degrees._replace(flags=(*degrees.flags, *flags))
 
 

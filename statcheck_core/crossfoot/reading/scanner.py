@@ -196,14 +196,13 @@ def _read_f(text: Text, name: Name) -> Item | None:
         *units,
         *degrees.flags,
         *_F_FLAGS.get(printed, ()),
-        *(("lower",) if printed == "f" or _WORD_BELOW.match(printed) else ()),
+        *(("lower",) if printed == "f" else ()),
     )
     if printed.startswith("Wald"):
         flags = (*flags, "wald")
     return Item(quantity, parts, start, end, flags)
 
 
-_WORD_BELOW = expression(r"F_\{?[A-Za-z]{2}")
 _F_FLAGS = {"Fs": ("plural",), "F's": ("plural",)}
 _BY_UNIT = expression(r"[Ft]_?\{?(?P<unit>[12₁₂])\}?$")
 
