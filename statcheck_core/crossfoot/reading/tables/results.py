@@ -76,8 +76,11 @@ def _tests(sheet: Sheet, rows: frozenset[int]) -> Found:
 
 def _are_of_differences(sheet: Sheet) -> bool:
     """Say whether an interval is that of what is tested: no group's mean, no effect size."""
-    limits = [c for c in sheet.columns if "ci_low" in c.heading.roles]
-    if len(limits) != 1 or _SIZE.search(sheet.columns[limits[0].number - 1].text):
+    places = [c.number for c in sheet.columns if "ci_low" in c.heading.roles]
+    if len(places) != 1:
+        return False
+    before = sheet.columns[places[0] - 1]
+    if before.heading.roles != ("r",) and _SIZE.search(before.text):
         return False
     means = [c for c in sheet.columns if c.heading.roles in {("mean",), ("sd",)}]
     return not means or _DIFFERENCE.search(sheet.words) is not None
