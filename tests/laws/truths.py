@@ -393,6 +393,11 @@ def stars(rng):
     return {"p": p, "p_stars": p}
 
 
+def adjusted_p(rng):
+    p = share(rng)
+    return {"p": p, "p_adjusted": p + (1 - p) * share(rng)}
+
+
 def collinear(rng):
     tolerance = share(rng)
     return {"tolerance": tolerance, "vif": 1 / tolerance}
@@ -503,6 +508,7 @@ SCENARIOS: dict[str, tuple[Scenario, ...]] = {
     "r2-change": (_one("step", "model-change", change),),
     "general-linear-test": (_one("nested", "model-change", nested),),
     "stars": (_one("row", "coefficient", stars),),
+    "adjusted-p": (_one("row", "coefficient", adjusted_p),),
     "tolerance-vif": (_one("row", "coefficient", collinear),),
     "odds-ratio": (
         _one("whole row", "coefficient", ratio),

@@ -12,7 +12,7 @@ from collections.abc import Iterator, Mapping, Sequence
 from functools import lru_cache
 
 from crossfoot.audit.binding import Binder, Bound, Cell, bind_prose, names_of
-from crossfoot.audit.wording import MARKS, REDUCED, are_marks
+from crossfoot.audit.wording import ADJUSTED, MARKS, REDUCED, are_marks
 from crossfoot.laws import sum_of_parts
 from crossfoot.laws.identity import Form, Identity
 
@@ -23,6 +23,8 @@ _ROWS = frozenset({"error", "total"})
 _OF_EFFECT = ("F", "p", "df1", "eta2", "eta2_partial", "omega2")
 #: What may follow from a row though it is not printed there.
 _BETWEEN = frozenset({"ms"})
+#: Terms of readings that only an identity made for them may take.
+_OF_OTHERS = frozenset({REDUCED, ADJUSTED})
 #: The degrees of freedom of all effects together, where a row of their own is not printed.
 _ALL_EFFECTS = Cell("df1", "model")
 #: Identities of a whole model; they hold in an analysis of one effect, if its total is printed.
@@ -226,8 +228,11 @@ def bind_beside_marks(
     """Bind as in prose, but for marks beside p and for the step before."""
     if identity.slug == "stars":
         return [(identity, pair) for pair in _pairs(cells)]
+    if identity.slug == "adjusted-p":
+        pair = {"p": Cell("p"), "p_adjusted": Cell("p", ADJUSTED)}
+        return [(identity, pair)] if set(pair.values()) <= set(cells) else []
     both = Cell("p") in cells
-    own = [c for c in cells if c.term != REDUCED and not (both and are_marks(*c))]
+    own = [c for c in cells if c.term not in _OF_OTHERS and not (both and are_marks(*c))]
     if Cell("chi2") in own and "chi2" not in names_of(identity):
         # The df beside a Wald test are those of χ², not those of the error.
         own = [cell for cell in own if cell.quantity != "df"]

@@ -22,6 +22,8 @@ PLAIN = Numeral("", "0", ".", "", "", 0, "", 0.5)
 MARKS = "stars"
 #: The term of what is printed of the smaller of two nested models.
 REDUCED = "reduced"
+#: The term of a p that is adjusted for the number of tests, where p itself is printed too.
+ADJUSTED = "adjusted"
 
 _STATISTICS = {
     "F": ("df1", "df2"),

@@ -39,6 +39,7 @@ CONTEXTS: Mapping[str, str] = {
     "corrected-statistic": "The statistic, or its p value alone, carries a correction.",
     "variance-ratio": "F compares two variances, so that its p takes both tails.",
     "ratio-scale": "The text speaks of a ratio or an area, whose null value is not zero.",
+    "named-adjustment": "The table names the adjustment of p for the number of tests.",
     "only-predictor": "The table shows no other predictor of the model.",
     "other-null": "The tests are against another value than zero.",
     "partial-sums": "Each sum of squares is what its effect adds to all others (type II or III), "
@@ -234,6 +235,11 @@ _ASSUMPTIONS = (
     _assumption(
         "nested-models",
         "The smaller model is the larger one without some predictors, fitted to the same cases.",
+    ),
+    _assumption(
+        "no-smaller-p",
+        "The adjustment of p is one for the number of tests.",
+        stated_by="named-adjustment",
     ),
     _assumption(
         "only-predictor",

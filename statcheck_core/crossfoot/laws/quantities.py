@@ -159,6 +159,7 @@ _FORMAL = (
     Formal("R2_full", "R2", "R² full", "R² of the larger model"),
     Formal("R2_reduced", "R2", "R² reduced", "R² of the smaller model"),
     Formal("p_stars", "p", "p by its marks", "the p values that the marks stand for by the legend"),
+    Formal("p_adjusted", "p", "adjusted p", "p after an adjustment for the number of tests"),
     Formal("total", "ss", "total", "the total of a column, of sums of squares or of df"),
 )
 

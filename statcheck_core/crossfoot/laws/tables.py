@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from crossfoot.laws.arithmetic import reciprocal
+from crossfoot.laws.arithmetic import at_least, at_most, reciprocal
 from crossfoot.laws.declare import COEFFICIENT, form, identity
 from crossfoot.laws.interval import Interval
 
@@ -47,4 +47,23 @@ TOLERANCE_VIF = identity(
     kinds=COEFFICIENT,
 )
 
-IDENTITIES = (STARS, TOLERANCE_VIF)
+ADJUSTED_P = identity(
+    "adjusted-p",
+    "p value adjusted for the number of tests",
+    "adjusted p ≥ p",
+    "p p_adjusted",
+    (
+        form("p_adjusted", "adjusted p ≥ p", "p", at_least, assumed="no-smaller-p"),
+        form("p", "p ≤ adjusted p", "p_adjusted", at_most, assumed="no-smaller-p"),
+    ),
+    needs="",
+    assumption="The adjustment is for the number of tests, and no such adjustment makes a p value "
+    "smaller.",
+    source="Holm 1979, Scandinavian Journal of Statistics 6, 65–70",
+    explanation="Corrections for several tests, from Bonferroni's to the false discovery rate's, "
+    "leave a p value as it is or make it larger. Where the adjusted p is the smaller one, the two "
+    "have changed places or one is misprinted.",
+    kinds=f"{COEFFICIENT} correlation effect mean-comparison frequency",
+)
+
+IDENTITIES = (STARS, ADJUSTED_P, TOLERANCE_VIF)

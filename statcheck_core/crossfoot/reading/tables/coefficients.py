@@ -22,6 +22,7 @@ from crossfoot.reading.tables.making import (
     Column,
     Found,
     Sheet,
+    add_adjusted,
     claim,
     head_df,
     level,
@@ -183,7 +184,10 @@ def _read(
         quantity = _AS.get(role, role)
         if quantity == "chi2" and number.literal.startswith("-"):
             quantity = "z"
-        if quantity == "p_adjusted" or (quantity == "df" and not of_test):
+        if quantity == "df" and not of_test:
+            continue
+        if quantity == "p_adjusted":
+            add_adjusted(sheet, column, number, cells, contexts, has_p=has_p)
             continue
         found = reading(sheet, number, quantity)
         if found is not None:

@@ -35,8 +35,11 @@ def columns_of(panel: Panel) -> tuple[Column, ...]:
         same = columns[index].box is columns[index - 1].box and columns[index].heading.roles
         if same and all(is_blank(row[index].text) for row in panel.rows[:_SAMPLE]):
             columns[index] = columns[index]._replace(heading=NOTHING)  # spanned, but empty
+    letters = {column.text for column in columns}
     for index, column in enumerate(columns):
-        if column.heading.roles == ("statistic",) and _are_words(panel, index):
+        if column.text == "B" and letters & {"A", "C"}:
+            columns[index] = column._replace(heading=NOTHING)  # groups A and B
+        elif column.heading.roles == ("statistic",) and _are_words(panel, index):
             columns[index] = column._replace(heading=NOTHING._replace(roles=("label",)))
         elif index and column.heading.roles == ("label",) and _are_figures(panel, index):
             columns[index] = column._replace(heading=NOTHING)

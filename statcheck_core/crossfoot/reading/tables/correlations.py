@@ -25,6 +25,11 @@ _OTHERWISE = re.compile(
     r"partial|controlling|above\sthe\sdiagonal|below\sthe\sdiagonal|upper\striangle|covarianc|disattenuat|loadings",
     re.IGNORECASE,
 )
+_DESCRIPTION = re.compile(
+    r"(?:cronbach'?s?\s)?(?:α|alpha)|range|min(?:imum)?|max(?:imum)?|skew(?:ness)?|kurtosis|median"
+    r"|variance|AVE|CR|reliability",
+    re.IGNORECASE,
+)
 _ONE = re.compile(r"1(?:[.,]0{2,})?")
 _COEFFICIENT = re.compile(
     r"(?:pearson|spearman|kendall)\b.{0,30}|.{0,20}\bcorrelation(?:\scoefficient)?|r|r_\{?s\}?|rho|ρ|τ",
@@ -151,6 +156,14 @@ def _p_below(
     return found
 
 
+def _describes(label: str) -> bool:
+    """Say whether a row describes the variables instead of correlating one."""
+    roles = headings.parse_label(label).roles
+    return roles[:1] in {("mean",), ("sd",), ("n",), ("se",)} or (
+        _DESCRIPTION.fullmatch(label) is not None
+    )
+
+
 def _names(sheet: Sheet, labels: list[Column], kinds: list[str]) -> list[str]:
     """Return the names of the rows; none for those of p and n."""
     names: list[str] = []
@@ -159,6 +172,8 @@ def _names(sheet: Sheet, labels: list[Column], kinds: list[str]) -> list[str]:
         if kinds:
             own = kinds[index] == "r"
             words = [word for word in words if not _COEFFICIENT.fullmatch(word)] if own else []
+        elif index and words and _describes(" ".join(words)):
+            words = []
         names.append(label_of(" ".join(words)))
     return names
 
@@ -225,7 +240,11 @@ def _is_matrix(
     said: bool,
 ) -> bool:
     """Say whether the cells of the columns can be correlations, with a triangle left empty."""
-    rows = [row for n, row in enumerate(sheet.panel.rows) if not kinds or kinds[n] == "r"]
+    rows = [
+        row
+        for n, row in enumerate(sheet.panel.rows)
+        if (kinds[n] == "r" if kinds else names[n] or not row[0].text)
+    ]
     cells = [row[c.number].text for row in rows for c, _ in columns]
     numbers = [
         text for text in cells if (content := content_of(text)) is not None and content.numbers

@@ -16,9 +16,23 @@ from crossfoot.reading.tables.steps import CHANGE, Entry, Model, parted, whose_t
 
 #: Roles that speak of a model and of nothing else.
 FIT = frozenset(
-    {"R", "R2", "R2_adj", "R2_change", "F", "F_change", "p_change", "s", "n", "df1", "df2"}
+    {
+        "R",
+        "R2",
+        "R2_adj",
+        "R2_change",
+        "F",
+        "F_change",
+        "F_model",
+        "p_change",
+        "s",
+        "n",
+        "df1",
+        "df2",
+    }
 )
-_STRONG = frozenset({"R2", "R2_adj", "R2_change", "F", "F_change"})
+_STRONG = frozenset({"R2", "R2_adj", "R2_change", "F", "F_change", "F_model"})
+_TESTS = frozenset({"F", "F_change", "F_model"})
 _SHARES = frozenset({"R2", "R2_adj", "R2_change", "R"})
 
 
@@ -94,12 +108,10 @@ def entries_of(
         return []
     found: list[Entry] = []
     numbers = content.numbers
-    if len(numbers) > len(heading.roles) and not (
-        heading.roles[0] in {"F", "F_change"} and len(numbers) == 3
-    ):
+    if len(numbers) > len(heading.roles) and not (heading.roles[0] in _TESTS and len(numbers) == 3):
         numbers = content.plain if len(content.plain) <= len(heading.roles) else ()
     for role, number in zip(heading.roles, numbers, strict=False):
-        quantity = {"p_change": "p"}.get(role, role)
+        quantity = {"p_change": "p", "F_model": "F"}.get(role, role)
         read = reading(sheet, number, quantity, percent=heading.percent)
         if read is not None and _possible(role, read):
             found.append(Entry(role, read, box))
@@ -108,7 +120,7 @@ def entries_of(
     if p is not None:
         found.append(Entry("p", p, box))
     mark, default = marked(sheet, content)
-    if mark is not None and heading.roles[0] in {"F", "F_change", "R2", "R2_adj", "R2_change"}:
+    if mark is not None and heading.roles[0] in {*_TESTS, "R2", "R2_adj", "R2_change"}:
         change = heading.roles[0] in CHANGE
         found.append(Entry("p_change" if change else "p", mark, box))
         contexts += ["default-stars"] if default else []
@@ -129,13 +141,13 @@ def _degrees(sheet: Sheet, heading: Heading, head: Box, content: Content, box: B
     """Return the degrees of freedom that stand in the cell, or in its heading."""
     role = heading.roles[0]
     numbers: tuple[Number, ...] = content.df
-    if not numbers and role in {"F", "F_change"} and len(content.enclosed) == 2:
+    if not numbers and role in _TESTS and len(content.enclosed) == 2:
         numbers = content.enclosed
     if not numbers and content.numbers and heading.df:
         numbers = tuple(
             n._replace(start=n.start + head.start, end=n.end + head.start) for n in heading.df
         )
-    names = ("df1", "df2") if role in {"F", "F_change"} else ("df2",) if role == "s" else ()
+    names = ("df1", "df2") if role in _TESTS else ("df2",) if role == "s" else ()
     if role == "s":
         numbers = numbers[:1]
     return [

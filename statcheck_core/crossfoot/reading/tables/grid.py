@@ -168,7 +168,8 @@ def _holds_data(row: tuple[Box, ...]) -> bool:
     filled = [box for box in row if not is_blank(box.text)]
     if _counts_columns([box.text for box in filled]):
         return False
-    return any(is_number(box.text) for box in filled if box.column > 0) and not _names(filled)
+    beside = [box for box in filled if box.column > 0]
+    return any(is_number(box.text) for box in beside) and not _names(beside)
 
 
 def _may_be_head(row: tuple[Box, ...], follows: bool) -> bool:

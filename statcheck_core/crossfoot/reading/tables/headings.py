@@ -232,6 +232,8 @@ def _paired(first: str, second: str, offset: int) -> Heading | None:
     halves = [role_of(half.strip()) for half in second.split(",")]
     if base.roles == ("F",) and halves == ["df1", "df2"]:
         return base._replace(roles=("F", "df"))
+    if base.roles == ("F_change",) and halves == ["df1", "df2"]:
+        return base  # a cell has them in brackets
     if len(base.roles) != 1:
         return None
     role = base.roles[0]

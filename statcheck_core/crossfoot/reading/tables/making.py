@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Iterable, Sequence
 from typing import NamedTuple
 
@@ -15,6 +16,8 @@ from crossfoot.reading.tables.legend import Legend
 
 #: The term of a p that marks of significance stand for.
 MARKS = "stars"
+#: The term of a p that is adjusted for the number of tests.
+ADJUSTED = "adjusted"
 #: Longest text of a claim.
 _LONGEST = 300
 _COUNTS = frozenset({"df", "df1", "df2"})
@@ -135,6 +138,34 @@ def marked(
     value = legend.DEFAULT[mark]
     literal = f"{value:g}"
     return Reading("p", "<", literal, float("-inf"), value, Span(start, end), MARKS), True
+
+
+#: Adjustments that are made of the p values themselves, and make none smaller.
+_ADJUSTMENT = re.compile(r"bonf|holm|hochberg|hommel|benjamini|\bB-?H\b|[sš]id[aá]k", re.IGNORECASE)
+#: Where this is said, p may be adjusted for covariates instead.
+_COVARIATES = re.compile(
+    r"crude|unadjusted|adjust(?:ed|ing)\sfor|covariate|multivari", re.IGNORECASE
+)
+
+
+def add_adjusted(
+    sheet: Sheet,
+    column: Column,
+    number: Number,
+    cells: dict[str, Reading],
+    contexts: list[str],
+    *,
+    has_p: bool,
+) -> None:
+    """Add a p that is adjusted for the number of tests, where p itself stands beside it."""
+    named = _ADJUSTMENT.search(column.text) or _ADJUSTMENT.search(sheet.words)
+    ratios = any({"odds_ratio", "ratio"} & {*c.heading.roles} for c in sheet.columns)
+    if not has_p or (not named and (ratios or _COVARIATES.search(sheet.words))):
+        return
+    found = reading(sheet, number, "p", term=ADJUSTED)
+    if found is not None:
+        cells.setdefault("p_adjusted", found)
+        contexts += ["named-adjustment"] if named else []
 
 
 def marks_term(term: str | None) -> str:

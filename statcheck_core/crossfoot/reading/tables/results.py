@@ -13,6 +13,7 @@ from crossfoot.reading.tables.making import (
     Column,
     Found,
     Sheet,
+    add_adjusted,
     claim,
     head_df,
     level,
@@ -30,7 +31,9 @@ _KINDS = {
     "r": "correlation",
     "z": "mean-comparison",
 }
-_ROLES = frozenset({*_KINDS, "df", "df1", "df2", "p", "n", *EFFECT_SIZES})
+_ROLES = frozenset(
+    {*_KINDS, "df", "df1", "df2", "p", "n", "phi", "cramers_v", "p_adjusted", *EFFECT_SIZES}
+)
 _LIMITS = frozenset({"ci_low", "ci_high"})
 _NEVER = frozenset({"b", "β", "beta", "odds_ratio", "rss", "df_residual", "R2", "se"})
 
@@ -256,6 +259,9 @@ def _read(
     for role, number in zip(roles, numbers, strict=False):
         quantity = one if role == "df" or (role == "df1" and test != "F") else role
         if quantity not in _ROLES | _LIMITS:
+            continue
+        if quantity == "p_adjusted":
+            add_adjusted(sheet, column, number, cells, contexts, has_p=has_p)
             continue
         found = reading(sheet, number, quantity)
         if found is not None:

@@ -36,7 +36,7 @@ def whose_test(models: Sequence[Model]) -> str:
     Its rows tell it where their numbers fit one of the two and not the other.
     """
     told = set()
-    for model in models:
+    for model in map(_with_own, models):
         found = {entry.role: entry.reading for entry in model.entries}
         F, df1, df2 = (found.get(role) for role in ("F", "df1", "df2"))
         whole, change = found.get("R2"), found.get("R2_change")
@@ -67,6 +67,7 @@ def parted(model: Model, whose: str) -> list[Model]:
     whose
         From :func:`whose_test`, where F may be either's.
     """
+    model = _with_own(model)
     roles = {entry.role for entry in model.entries}
     if "F" not in roles or not roles & CHANGE:
         return [model]
@@ -87,6 +88,18 @@ def parted(model: Model, whose: str) -> list[Model]:
         ]
     shared = [entry for entry in own if entry.role == "R2"]
     return [model._replace(entries=tuple(own)), model._replace(entries=(*shared, *change))]
+
+
+def _with_own(model: Model) -> Model:
+    """Tell the F of the model by its name; another F beside ΔR² is then that of the change."""
+    roles = {entry.role for entry in model.entries}
+    if "F_model" not in roles:
+        return model
+    changed = roles & CHANGE and "F_change" not in roles
+    entries = [_of_change(entry) if changed else entry for entry in model.entries]
+    return model._replace(
+        entries=tuple(e._replace(role="F") if e.role == "F_model" else e for e in entries)
+    )
 
 
 def _of_change(entry: Entry) -> Entry:

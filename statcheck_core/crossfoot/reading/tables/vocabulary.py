@@ -84,11 +84,18 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "p_adjusted",
+        "",
+        "padj adjp adjustedp padjusted pbonf pbonferroni ptukey pholm pfdr pbh phochberg pscheffe"
+        " pvaluehs adjpvalue adjustedpvalue correctedp pcorr pcorrected sigb psidak pdunnett"
+        " p(bonferroni) p(holm) p(adj) p(adjusted) p(corrected) p(tukey) p(fdr) p(bh) p(sidak)"
+        " bonferronip holmp tukeyp fdrp bonferronicorrectedp holmcorrectedp bonferroniadjustedp"
+        " holmadjustedp fdrcorrectedp fdradjustedp bhadjustedp pvalue(adjusted) pvalueadjusted",
+    ),
+    # Of corrected degrees of freedom, or of another kind: nothing follows for them from p.
+    Role(
+        "p_other",
         "q",
-        "padj adjp adjustedp padjusted pbonf pbonferroni ptukey pholm pfdr"
-        " pvaluehs adjpvalue adjustedpvalue correctedp pcorr pcorrected qvalue sigb psidak pgg phf"
-        " pggepsilon"
-        " pr(>f[gg]) pr(>f[hf]) p[gg] p[hf]",
+        "pgg phf pggepsilon pr(>f[gg]) pr(>f[hf]) p[gg] p[hf] qvalue",
     ),
     Role(
         "p_one",
@@ -101,6 +108,15 @@ ROLES: tuple[Role, ...] = (
         "",
         "ηp2 η2p partialeta2 partialetasquared partialη2 partetasq partialetasq np2 pes η2partial"
         " etap2 eta2p eta2(partial) η2(partial) petasquared <u+03b7>2p parη2 η2part parteta2",
+    ),
+    Role("phi", "φ ϕ", "phi phicoefficient"),
+    Role("cramers_v", "V", "cramérsv cramersv cramérv cramerv"),
+    # The F of the whole model, where another F stands beside it.
+    Role(
+        "F_model",
+        "",
+        "overallf modelf fullmodelf finalmodelf finalf fofmodel f(model) f(full) f(overall)"
+        " f(fullmodel) f(finalmodel) ffull ffinal ftotal foverall totalf fforthemodel fformodel",
     ),
     Role("omega2", "ω2", "ω2 omega2 omegasquared omegasq"),
     Role(
@@ -160,9 +176,10 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "chi2",
-        "χ2 X2 H Q G",
+        "χ2 X2 H Q G Δχ2 χ2diff G2",
         "kruskalwallis kruskalwallish hstatistic hstat htest hvalue cochranq cochransq friedmanχ2"
         " kruskalwallisχ2 gstatistic likelihoodratioχ2 lrtχ2"
+        " Δχ2 changeinχ2 χ2change χ2difference likelihoodratio lrstatistic"
         " χ2 chi2 chisquare chisquared chisq lrchisq lrχ2 lrchi2 χ2value chisquarevalue pearsonχ2",
     ),
     Role("r", "r", "pearsonr pearsonsr correlation correlationcoefficient cor"),
