@@ -41,7 +41,8 @@ def audit_claim(
     The result depends on nothing else and is remembered; also for the claim at another place,
     to which it moves with each character that is typed before it.
     """
-    return _judged(_nowhere(claim), alpha, elsewhere)._replace(claim=claim)
+    audited = _judged(_nowhere(claim), alpha, elsewhere)
+    return audited._replace(claim=_placed(audited.claim, claim))
 
 
 @remembered
@@ -59,6 +60,17 @@ def _nowhere(claim: Claim) -> Claim:
 
 
 _NO_PLACE = Span(0, 0)
+
+
+def _placed(judged: Claim, claim: Claim) -> Claim:
+    """Return a claim as it was judged, which may be by another reading of its numerals."""
+    pairs = list(zip(judged.readings, claim.readings, strict=True))
+    if all(there.low == here.low and there.high == here.high for there, here in pairs):
+        return claim
+    return claim._replace(
+        readings=tuple([here._replace(low=there.low, high=there.high) for there, here in pairs]),
+        context=judged.context,
+    )
 
 
 def __getattr__(name: str) -> Any:

@@ -30,7 +30,12 @@ def judge(claim: Claim, alpha: float, elsewhere: frozenset[str] = frozenset()) -
     if agreeing is not None:
         return Audited(claim, agreed(case, agreeing), _in_row(claim, notes(claim)))
     from crossfoot.audit.failing import failures  # most claims agree
+    from crossfoot.audit.twofold import otherwise
 
+    for other in otherwise(claim):
+        case_of_other, agreeing = _as_stated(other)
+        if agreeing is not None:
+            return Audited(other, agreed(case_of_other, agreeing), _in_row(other, notes(other)))
     checks, found = failures(case, level, elsewhere)
     order = sorted([*found, *notes(claim)], key=lambda f: SEVERITIES.index(f.severity))
     return Audited(claim, checks, _in_row(claim, order))

@@ -108,7 +108,7 @@ _SHOWN = (
     "symbf symit symrm operatorname mathop mathrel mathbin mathord mathclose mathopen textit "
     "textbf textrm textsf texttt textsc textsl textup textmd textnormal emph underline uline "
     "uwave hat widehat tilde widetilde vec dot ddot check acute grave breve mathring "
-    "mbox makebox hbox fbox framebox num tablenum sym ensuremath url path nolinkurl "
+    "mbox makebox hbox fbox framebox num tablenum sym ensuremath url path nolinkurl np numprint "
     "enquote added hl ul smash mathstrut underbrace overbrace title author caption "
     "subcaption part chapter section subsection subsubsection paragraph subparagraph "
     "thead makecell shortstack text textnormal textquote uppercase lowercase MakeUppercase "

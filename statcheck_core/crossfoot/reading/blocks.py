@@ -12,6 +12,7 @@ from crossfoot.memo import remembered
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.contexts import Cues, cues_in
 from crossfoot.reading.cues import CUES
+from crossfoot.reading.damage import is_damaged, mended, rejoined
 from crossfoot.reading.fold import fold
 
 #: Nothing is read in a block without one of these: a relation, or a word or markup that stands
@@ -22,7 +23,7 @@ _WORDS = (
     "Wert", "waarde", "värde", "verdi", "værdi", "설명력", "方差", "分散", "变异", "MSE", "RSE",
     "bservations", " obs", "95 %", "95%", " SE ", "s.e. ", "dard error", "t-ratio ", "Sig.",
     "mong ", "ample of", " df", "d.f.", "elitysaste", "ariânc", "libert", "liberd", "):", "]:",
-    ") of ", " p of ", " equal to ", ") was ", ") is ", "值", "値", "自由度", "':", '":',
+    ") of ", " p of ", " equal to ", ") was ", ") is ", "值", "値", "自由度", "p: 0", "p: .", "p: ,", "':", '":',
     "estimates:",
 )  # fmt: skip
 _ANY_WORD = any_of(_WORDS)
@@ -79,8 +80,10 @@ def read_block(
         visible, folded = found.visible, fold(found.visible.text)
         claims = table_claims(found, _prose(folded, visible.text))
     else:
-        visible = unwrapped(squeezed(show(language, kind, source, definitions)))
+        visible = rejoined(unwrapped(squeezed(show(language, kind, source, definitions))))
         folded = fold(visible.text)
+        if is_damaged(folded):
+            folded = mended(folded)
         claims = tuple(_printed(visible, folded) if aligned else _claims(folded, visible.text))
     return BlockReading(tuple(_placed(claim, visible) for claim in claims), cues_in(folded))
 
@@ -135,8 +138,10 @@ def _may_hold(source: str, kind: str, aligned: bool) -> bool:
         return False
     if kind == "table" or (aligned and _may_be_aligned(source)):
         return True
-    return any(mark in source for mark in (*_SIGNS, *_WORDS, *_MARKUP)) or (
-        ")" in source and _BARE.search(source) is not None
+    return (
+        any(mark in source for mark in (*_SIGNS, *_WORDS, *_MARKUP))
+        or (")" in source and _BARE.search(source) is not None)
+        or is_damaged(source)
     )
 
 

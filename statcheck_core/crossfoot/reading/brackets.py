@@ -9,14 +9,14 @@ from crossfoot.expressions import expression
 from crossfoot.reading.items import AS_GOOD_AS, INFINITE, Item, Part, Text
 from crossfoot.reading.names import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
-from crossfoot.reading.words import VERB_UNSPACED
+from crossfoot.reading.words import DEGREES, VERB_UNSPACED
 
 BRACKETS = expression(
     r"\s?(?:_?\(\s?(?P<round>[^()\[\]]{1,48}?)\s?\)|\[\s?(?P<square>[^()\[\]\n]{1,48}?)\s?\]"
     r"|_\{\s?[(\[]?(?P<lowered>[^(){}\n]{1,40}?)[)\]]?\s?\}(?P<more>(?:\s?[,;]?\s?_\{[^{}\n]{1,12}\}){1,3})?"
     r"|_\{\(\}\s?(?P<slipped>[^()\[\]{}\n]{1,40})\)"  # the bracket alone was lowered
     r"|\^\{\s?(?P<raised>\d{1,4})\s?\}_\{\s?(?P<beneath>\d{1,6})\s?\}"
-    r"|(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+))"
+    r"|\(?(?P<sub>[₀-₉]+(?:[,.;\s]{1,2}[₀-₉]+)*+)\)?)"
 )
 #: A label between a name and its degrees of freedom: `F_{group}(2, 48)`, `F^{GG}(1.6, 36)`.
 _LABEL = expression(
@@ -29,8 +29,14 @@ _FLAT_PAIR = expression(
 )
 _FLAT_ONE = expression(r"_?(?P<a>\d{1,4}(?:\.\d+)?)(?=\s{0,3}[=<>≤≥≈])")
 _THOUSANDS = expression(r"\d{1,3}(?:,\d{3})+")
+# One df before a decimal comma: `t(38,4)`, after Welch. A 1 before it is the df1 of an F.
+_DASHED = expression(r"(\d{1,3})\s?-\s?(\d{1,6})")
+_FRACTIONAL = expression(r"(?!1,)\d{1,4},\d{1,3}")
 _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
-_DF = r"(?:d\.?f\.?[nd]?|dof|ν)\s?_?\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
+_DF = (
+    rf"(?:d\.?f\.?[nd]?|ν|{DEGREES})\s?_?"
+    r"\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
+)
 _ARGUMENT = expression(rf"\s?(?:{_DF})?(?P<number>{COUNT})\s?(?:{_DF})?\s?")
 _COUNT = expression(r"\d+(?:\.\d+)?")
 _TOTAL = expression(rf"\s?[Nn]\s?=\s?(?P<number>{COUNT})\s?")
@@ -55,6 +61,7 @@ _PAIR_BEFORE = expression(
 _ONE_BEFORE = expression(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")
 _TRAILING_PAIR = expression(rf"\*{{0,4}}\s?\((?P<a>{COUNT})\s?[,;]\s?(?P<b>{COUNT})\)")
 _ONE_DECIMAL = expression(r"\s?[=:]?\s?\d+,\d+(?!\d)")
+_TURKISH = expression(r"[ıİşŞğĞ]")
 _F_BEFORE = expression(r"(?<![A-Za-z])F(?![A-Za-z])")
 #: How far before "degrees of freedom" their numbers may stand, in characters.
 _REACH = 24
@@ -104,11 +111,16 @@ def _unlabelled(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
         return Degrees(pair, match.end(), possible=bool(pair))
     last = match.lastgroup or ""
     group = "lowered" if last == "more" else last
-    inner = match[group].translate(_SUBSCRIPTS) if group == "sub" else match[group]
+    inner = match[group].translate(_SUBSCRIPTS)
     start = match.start(group)
-    pieces = _pieces(inner.rstrip(" ,;"))
+    dashed = _DASHED.fullmatch(inner) if two else None
+    pieces = (
+        [(dashed[1], 0), (dashed[2], dashed.start(2))]
+        if dashed is not None
+        else _pieces(inner.rstrip(" ,;"))
+    )
     if keys == ("df",) and len(pieces) == 2:
-        if _THOUSANDS.fullmatch(inner):
+        if _THOUSANDS.fullmatch(inner) or _FRACTIONAL.fullmatch(inner):
             pieces = [(inner, 0)]
         elif pieces[0][0].strip() == "1" and "/" not in inner:  # t(1, 58): the df of its F
             pieces = pieces[1:]
@@ -154,6 +166,8 @@ def pair_behind(text: Text, end: int) -> tuple[tuple[Part, ...], int]:
 def read_degrees(text: Text, name: Name) -> Item | None:
     """Read ``df = 3, 71``, ``3 and 44 degrees of freedom``, ``df = 12`` or ``47 df``."""
     folded, start, end = text.folded, name.match.start(), name.match.end()
+    if name.match.group() == "sd" and not _means_degrees(folded, start, end):
+        return None
     match = None if _is_decimal(text, start, end) else _PAIR.match(folded, end)
     match = match or _PAIR_BEFORE.search(folded, max(0, start - _REACH), start)
     if match is not None:
@@ -167,6 +181,13 @@ def read_degrees(text: Text, name: Name) -> Item | None:
     match = _ONE_BEFORE.search(folded, max(0, start - _REACH // 2), start)
     part = count_at(text, match["a"], match.start("a"), "df") if match is not None else None
     return Item("df", (part,), part.start, end) if part is not None else None
+
+
+def _means_degrees(folded: str, start: int, end: int) -> bool:
+    """Say whether ``sd`` is Turkish: elsewhere it is a standard deviation, which comes alone."""
+    if _PAIR.match(folded, end) is not None:
+        return _F_BEFORE.search(folded, max(0, start - 40), start) is not None
+    return _TURKISH.search(folded) is not None
 
 
 def _is_decimal(text: Text, start: int, end: int) -> bool:

@@ -7,15 +7,16 @@ from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import known_number, number_at, value_after
+from crossfoot.reading.words import TO
 
 _LIMITS = expression(
-    r"\s*+(?:(?:[=:,;]|of|was|from|for\s(?:the\s)?\w{1,12})\s*+)?(?:[:=]\s*+)?(?:(?:\(|\[|(?:(?:ranging|spanning)\s)?from\s|between\s|spanning\s)\s*+)?(?:(?:LL|lower(?:\slimit)?)\s?[=:]?\s?)?"
-    rf"(?P<low>{NUMERAL})\s*+(?:,|;|to|and|-|bis|à|a|tot|til|till|y|\.\.|\|)\s*+(?:(?:UL|upper(?:\slimit)?)\s?[=:]?\s?)?(?P<high>{NUMERAL})"
+    r"\s*+(?:(?:[=:,;为は]|of|was|from|for\s(?:the\s)?\w{1,12})\s*+)?(?:[:=]\s*+)?(?:(?:\(|\[|(?:(?:ranging|spanning)\s)?from\s|(?:von|zwischen|between|de|da|entre|van|från|fra|od|от|spanning)\s)\s*+)?(?:(?:LL|lower(?:\slimit)?)\s?[=:]?\s?)?"
+    rf"(?P<low>{NUMERAL})\s*+(?:,|;|-|{TO}|\.\.|\|)\s*+(?:(?:UL|upper(?:\slimit)?)\s?[=:]?\s?)?(?P<high>{NUMERAL})"
     r"\s?[\])]?"
 )
 _LIMITS_BELOW = expression(rf":\s*\n\s*(?P<low>{NUMERAL})\s+(?P<high>{NUMERAL})\s*(?:\n|$)")
 _LIMITS_BEFORE = expression(
-    rf"[(\[]\s?(?P<low>{NUMERAL})\s?(?:,|;|to|-|bis|à|a)\s?(?P<high>{NUMERAL})\s?[,;]\s?$"
+    rf"[(\[]\s?(?P<low>{NUMERAL})\s?(?:,|;|-|{TO})\s?(?P<high>{NUMERAL})\s?[,;]\s?$"
 )
 _PLUS_MINUS = expression(
     rf"\s?(?:±|\+/-|\+-)\s?(?P<number>{NUMERAL})\s?\(?(?:SE|s\.e\.|S\.E\.|SEM|standard error)"
@@ -26,7 +27,7 @@ _BRACKETED = expression(
     rf"\s?(?:\(|±)\s?(?P<number>{NUMERAL})\s?\)?(?=\s?[,;]\s?(?:[tTzZ](?![A-Za-z])|Wald\s[zt]\b|9\d\s?%))"
 )
 _ENCLOSING = expression(
-    rf"\s?\[\s?(?P<low>{NUMERAL})\s?(?:,|;|-|to)\s?(?P<high>{NUMERAL})\s?\](?!\s?(?:HDI|CrI|credible))"
+    rf"\s?\[\s?(?P<low>{NUMERAL})\s?(?:,|;|-|{TO})\s?(?P<high>{NUMERAL})\s?\](?!\s?(?:HDI|CrI|credible))"
 )
 
 

@@ -15,6 +15,7 @@ from crossfoot.reading.items import Item, Part
 from crossfoot.reading.lookalikes import (
     in_call,
     is_drawn,
+    is_function,
     is_logged,
     is_of_classifier,
     is_of_functions,
@@ -58,7 +59,9 @@ _LISTED_NEXT = expression(
 _SHARES = frozenset({"R2", "R2_adj", "R2_change"})
 _SUPPORT = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omega2"})
 #: Fewer degrees of freedom than this are more often the indices of a matrix.
-_FEWEST = 3.0
+_FEWEST = 4.0
+#: And fewer than this may be the arguments of a function.
+_FEW = 20.0
 
 
 def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
@@ -156,6 +159,8 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
         exact = any(p.quantity == "p" and p.relation == "=" for i in items for p in i.parts)
         return (plural or not exact) and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
+    if error.high < _FEW and is_function(items, text):
+        return False
     if support or {"lower", "labelled"} & set(test.flags) or error.high < _FEWEST:
         return support
     if not _spelt(text, value) or _is_lowered(test, text):  # an index, if words do not tell
@@ -198,7 +203,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
         return spelt and not is_of_functions(items, text)
     if anchor == "t" and quantities & {"b", "beta", "se"}:
         return _together(items, text)
-    return has_p and _follows_or_told(items, test, value, text)
+    return has_p and _follows_or_told(items, test, value, text) and not is_function(items, text)
 
 
 def _p_isnear(items: Sequence[Item], test: Item, text: str) -> bool:

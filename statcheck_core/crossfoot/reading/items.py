@@ -44,8 +44,9 @@ class Item(NamedTuple):
         tests), ``listed`` (one of several numbers of one name), ``percent`` (told as explained
         variance), ``told`` (a sample size in words), ``lower`` (a lower-case f), ``by-name`` (a
         test by a name that means much else), ``labelled`` (a letter with a label of its own),
-        ``perhaps-se`` (its last number may be an SE),
-        ``if-ratio`` and ``if-enclosed`` (an estimate only if its test or its interval tells so),
+        ``perhaps-se`` (its last number may be an SE), ``nameless`` (an estimate told in words,
+        which may hide its sign), ``if-ratio`` and ``if-enclosed`` (an estimate only if its test
+        or its interval tells so),
         ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order),
         ``grown`` (an R² told beside that of a smaller model), ``estimated`` (what the
         test before it is of), ``wald`` (an F that does not follow from R²), ``letter`` (a p that
@@ -77,6 +78,7 @@ SCANNER_FLAGS = frozenset(
         "perhaps-se",
         "if-ratio",
         "if-enclosed",
+        "nameless",
         "all",
         "dealt",
         "grown",

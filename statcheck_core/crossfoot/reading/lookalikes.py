@@ -12,7 +12,8 @@ from crossfoot.reading.items import Item
 _CALL = expression(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
 #: "If t(28) = 2.05 were found …", "would need r = .41 to …", "beyond the cut-off χ²(4) = 18.47"
 _SUPPOSED = expression(
-    r"(?:\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what)"
+    r"(?:\b(?:[Ll]et|[Ss]ei(?:en)?|[Ss]oi(?:t|ent)|[Ss]ean?|[Ss]ejam?|[Ss]ia(?:no)?|[Ll]åt|[Ll]aat|[Nn]iech|[Oo]lkoon)"
+    r"|\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what)"
     r"|\b(?:would|must|should|to)\s(?:need|reach|exceed|detect|have|be|obtain|find)"
     r"|\b(?:point|percentile|quantile|distribution)(?:\s(?:of|is|was))?|\bwould\sbe\s\w+\s(?:for|at|with|if)"
     r"|\b[Aa]ssum(?:e|ing)|\b[Hh]ypothetical(?:ly)?,?|\b[Ee]\.g\.,?"
@@ -41,6 +42,11 @@ _OF_DISTRIBUTION = expression(
 _FUNCTIONS = expression(r"\b[abcghkvxyABC]\((?:\d{1,2}|[a-z])\)\s?=")
 #: "A value of t = 2.0 was used as cut-off."
 _USED = expression(r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion)\b")
+#: F as a function of two numbers: `F(x, y)`, "the value of the function".
+_FUNCTION = expression(
+    r"(?<![A-Za-z])F\(\s?[a-z]\s?,\s?[a-z]\s?\)|\b(?:of|der|de|della|da|av)\s(?:the\s|la\s)?"
+    r"(?:[Ff]unction|Funktion|fonction|función|funzione|função)\s(?:at|an|en|nel|no|i)\b|函数值|関数値"
+)
 _CLASSIFIER = expression(
     r"precision|recall|F-?(?:measure|score)|classif|accuracy|\bf1\b(?!\s?\()|epoch|\bloss\b",
     re.IGNORECASE,
@@ -88,6 +94,11 @@ def is_of_classifier(items: Sequence[Item], text: str) -> bool:
 def is_of_functions(items: Sequence[Item], text: str) -> bool:
     """Say whether values of functions are told."""
     return near(_FUNCTIONS, items, text, 60)
+
+
+def is_function(items: Sequence[Item], text: str) -> bool:
+    """Say whether F is a function of two numbers."""
+    return near(_FUNCTION, items, text)
 
 
 def is_logged(items: Sequence[Item], text: str) -> bool:

@@ -9,9 +9,22 @@ from __future__ import annotations
 
 from typing import NamedTuple
 
-from crossfoot.reading.words import DEGREES, ERROR_NAMES, PARTIAL, VALUE, VALUE_BEFORE
+from crossfoot.reading.words import (
+    COEFFICIENT,
+    COMPUTED,
+    DEGREES,
+    DETERMINATION,
+    ERROR_NAMES,
+    INTERVAL,
+    PARTIAL,
+    SQUARE,
+    VALUE,
+    VALUE_BEFORE,
+)
 
 _SQUARED = r"(?:\s?²|\s?\^\s?(?:\{\s?2\s?\}|2)|2(?![\d.,]?\d))"
+#: A character of a script that writes no space between a name and the next word.
+_SCRIPT = "(?=[\u3040-\u30ff\u4e00-\u9fff\uac00-\ud7a3])"
 _SUB = r"(?:\s?_\{[^{}\n]{1,14}\}|_[a-zA-Z]{1,6}|[₀-₉]{1,2})"
 
 
@@ -51,7 +64,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        r"(?:(?i:sig\.(?:\s?F)?(?:\s?change)?(?:\s?\(2-tailed\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation)(?=\s?[=<])"
+        r"(?:(?i:(?:asympto?\w*\.?\s)?sig\.(?:\s(?:asint[oó]tica|exacta|asymp\.))?(?:\s?F)?(?:\s?change)?(?:\s?\((?:2|zwei|two|bi|à\s2|a\s2)[^()\n]{2,18}\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation|cación|cância|cativité|catività|cantie)(?:\s?\((?:2|zwei|two|bi|à\s2|a\s2)[^()\n]{2,18}\))?(?=\s?[=<])"
         r"|associated\sprobability(?:\svalue)?)"
         r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
         r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P(?:r(?:ob)?)?\s?\(\s?\|[TtZz]\|\s?>=?\s?\|?[tz]\|?\s?\)|Pr(?=\s?=\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
@@ -61,11 +74,11 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        rf"(?:[Ff]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})(?:\sgave)?"
-        rf"(?:\svs\.\sconstant\smodel)?|(?:{VALUE_BEFORE}|estad[ií]stico)\s(?:de\s|di\s)?F(?![\w(])"
+        rf"(?:[Ff]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z])|{COMPUTED})|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})(?:\sgave)?"
+        rf"(?:\svs\.\sconstant\smodel)?|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?F(?![\w(])"
         r"|F\s?Statistic|Wald\s(?:test|F)(?=\s?:\s?\d{1,9}(?:\.\d{1,9})?\son\s\d{1,5}\sand))",
         True,
-        "FfveW",
+        "FfveWEsSP",
         "The F-value of 4.22 with 2 and 42 degrees of freedom gave a p-value of 0.021",
     ),
     Notation(
@@ -78,7 +91,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        r"(?:F(?:s|'s)?(?![\w²-]|'\w)|F(?:[12₁₂]|_\{[12]\})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?=[\d_₀-₉])|f(?=\s?\()"
+        rf"(?:F(?:s|'s)?(?:(?![\w²-]|'\w)|{_SCRIPT})|F(?:[12₁₂]|_\{{[12]\}})(?=\s?(?:\(|<\s?1(?!\.?\d)))|F(?=[\d_₀-₉])|f(?=\s?\()"
         r"|min\s?F'?(?=\s?\())",
         False,
         "Ffm",
@@ -101,18 +114,18 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "R2",
-        rf"(?:(?i:multiple\s|sample\s)?[Rr][\s-](?i:squared?|sq|quadrat|quadro|cuadrad[oa]|carr[ée]|kva?drat|kwadraat)(?![a-z])|(?i:coefficient\sof\sdetermination|Bestimmtheitsmaß)(?!\s?\(?,?\s?(?:(?:betrug|was|war|is|of)\s)?[Rr](?![a-z]))|(?i:multiple\s)?R\s?\u0304?{_SUB}?{_SQUARED}{_SUB}?"
+        rf"(?:(?i:multiple\s|sample\s)?[Rr][\s-](?i:{SQUARE})(?![a-z])|(?i:{DETERMINATION})(?!\s?\(?,?\s?(?:(?:betrug|was|war|is|of)\s)?[Rr](?![a-z]))|(?i:multiple\s)?R\s?\u0304?{_SUB}?{_SQUARED}{_SUB}?"
         rf"|r{_SUB}?{_SQUARED}{_SUB}?)",
         True,
-        "RrmsMcCB",
+        "RrmsMcCBdDfFsSwk決决결",
         "R² = .21, F(3, 96) = 8.74, p < .001",
     ),
     Notation(
         "eta2_partial",
-        rf"(?:{PARTIAL}\s?(?:(?i:eta)|η)[\s-]?(?:squared|sq\.?|square|cuadrado|quadrato|carré|Quadrat|{_SQUARED})"
+        rf"(?:{PARTIAL}\s?(?:(?i:eta)|η)[\s-]?(?:{SQUARE}|{_SQUARED})"
         rf"|p\s?η\s?{_SQUARED}|(?:η|𝜂|Î·|<U\+03B7>|n|\?)(?:\s?_?\{{?p\}}?\s?|ₚ)(?:{_SQUARED}|Â²)"
         rf"|(?:η|𝜂|Î·|<U\+03B7>)\s?(?:{_SQUARED}|Â²)\s*_?\{{?\s?\(?(?:ₚ|p|{PARTIAL})\)?\}}?(?![a-z])"
-        rf"|(?i:eta)[\s-]?(?:{_SQUARED}|squared|sq\.?)\s?\(?{PARTIAL}\)?"
+        rf"|(?i:eta)[\s-]?(?:{_SQUARED}|{SQUARE})\s?\(?{PARTIAL}\)?"
         r"|(?i:eta)_?\{?(?:2|²)_?p\}?(?![a-z])|PES(?![A-Za-z])|np2|n2p|hp2|h2p|g2p|gp2|[ηg]\s?p\s?2|(?<=[;,]\s)[hZ]2(?=\s?=\s?0?\.\d))",
         True,
         "pPη𝜂nÎ<e?EghZ部부偏č",
@@ -120,7 +133,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "eta2",
-        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s_-]?(?:squared?|sq\.?|Quadrat|cuadrado)|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
+        rf"(?:(?:η|𝜂)\s?{_SQUARED}|[eE]ta[\s_-]?{SQUARE}|eta{_SQUARED})(?!\s?_?\{{?[A-Za-z])",
         True,
         "η𝜂eE",
         "F(2, 57) = 3.90, p = .026, η² = .12",
@@ -141,7 +154,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "chi2",
-        rf"(?:Δ\s?)?(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cjq]?u?[hj]i|kh?i)[\s-]?(?i:squared?|sq\.?|deux|quadrat[o]?|cuadrado|kwadraat|kvadrat|två|2)(?![\d.])"
+        rf"(?:Δ\s?)?(?:χ\s?{_SUB}?\s?{_SQUARED}|X{_SQUARED}(?=\s?[(=\[])|(?i:k?[cj]?u?[hj]i|kh?i|qui|chí)[\s-]?(?i:{SQUARE}|2)(?![\d.a-zà-ÿ])"
         rf"|khi²|(?i:chi)\s?{_SQUARED}|[XK]-squared|χ)(?!\s?/\s?df)",
         True,
         "ΔχXcCkKjqQPFB",
@@ -157,13 +170,12 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "ci",
-        r"(?:(?:(?:CI|KI|IC|BI)\s?(?:à\s|al\s|del\s|di\s)?[_({]{0,2}(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?[)}]?|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{0,3}"
-        r"(?:CIs?|CLs?|KI|IC|BI|confidence\s(?:intervals?|limits?)|Konfidenzintervall|intervalle?\sde\sconfiance"
-        r"|intervalo\sde\sconfian[zç]a|intervallo\sdi\sconfidenza|betrouwbaarheidsinterval|konfidensintervall?)"
+        rf"(?:(?:{INTERVAL}\s?(?:à\s|al\s|del\s|di\s|de\s|a\s)?[_({{]{{0,2}}(?P<level_after>[5-9]\d(?:[.,]\d)?)\s?%?[)}}]?"
+        rf"|(?P<level_before>[5-9]\d(?:[.,]\d)?)\s?(?:%|per\s?cent)?[\s-]{{0,3}}{INTERVAL}"
         r"(?:\s(?:for|of|on|around)\s(?:the|this)\s(?:mean\s)?(?:difference|change|slope|estimate|effect|contrast)s?)?)"
         r"(?![a-z])|CI(?=\s?[:=]?\s?[\[(]\s?[-+]?[.\d]|:\s?[-+]?[.\d]))",
         True,
-        "CKIB56789ic",
+        "CKIBPGL56789icbklpт信置신",
         "b = 0.42, SE = 0.11, 95% CI [0.20, 0.64], t(96) = 3.82",
     ),
     Notation(
@@ -185,7 +197,7 @@ NOTATIONS: tuple[Notation, ...] = (
         "df",
         rf"(?:Δ\s?)?{DEGREES}(?![a-z12])|ν(?=\s?=\s?\d{{1,4}}(?![\d.]|\s?[^\W\d]))",
         True,
-        "ΔdgFfv自자Dν",
+        "ΔdgFfvsSbс自자Dν",
         "t = -1.926; df = 21.4; P = 0.068",
     ),
     Notation(
@@ -264,9 +276,9 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "b",
-        rf"(?:(?<![A-Za-z]-)[bB]\u0302?{_SUB}?\d?(?![\w²^.\u0302])|(?i:(?:regression\s)?coef(?:f?\.|f|ficients?)?(?!\sof\s(?:determination|variation|correlation))|(?:point\s)?est(?:\.|imates?)|slope|Steigung|pente|pendiente|pendenza|inclinação|helling|lutning|coeficiente|coefficiente))(?![a-zà-ÿ])",
+        rf"(?:(?<![A-Za-z]-)[bB]\u0302?{_SUB}?\d?(?:(?![\w²^.\u0302])|{_SCRIPT})|(?i:{COEFFICIENT}(?!\s(?:of|de|di)\s(?:d[eé]termin|vari|corr))|(?:point\s)?est(?:\.|imates?)|slope))(?![a-zà-ÿ])",
         True,
-        "bBrRcCpPeEsSihl",
+        "bBrRcCpPeEsSihlIHLKkwкК回迴偏斜傾회기",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(
@@ -278,7 +290,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "n",
-        r"(?:[Nn]{1}(?:obs)?(?:_\{?(?:total|obs)\}?)?(?![\w²^.-]|'\w)|(?i:(?:no\.|number|num\.?)\s?(?:of\s)?obs(?:ervations|\.)?)|(?i:sample\ssize|observations))",
+        rf"(?:[Nn]{{1}}(?:obs)?(?:_\{{?(?:total|obs)\}}?)?(?:(?![\w²^.-]|'\w)|{_SCRIPT})|(?i:(?:no\.|number|num\.?)\s?(?:of\s)?obs(?:ervations|\.)?)|(?i:sample\ssize|observations))",
         False,
         "nNsSoO",
         "N = 58. R = .643, R² = .414, F(2, 55) = 19.40",
@@ -292,14 +304,14 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "R",
-        r"(?i:multiple\s(?:correlation\s)?(?:coefficient\s)?)?R(?![\w²^.\u0304-])",
+        rf"(?i:multiple\s(?:correlation\s)?(?:coefficient\s)?)?R(?:(?![\w²^.\u0304-])|{_SCRIPT})",
         False,
         "RmM",
         "R = .643, R² = .414, F(2, 55) = 19.40",
     ),
     Notation(
         "r",
-        r"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{?(?:s|p|xy|partial)\}?|[ₛs](?=\())?(?![\w²^.-]|'\w)|r(?=_\{?\(?\d|[₀-₉]|\d{1,4}\s?=|_\{[^{}\n]{1,14}\}\s?\(\d)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{?s\}?)?(?![\w²^.-])"
+        rf"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{{?(?:s|p|xy|partial)\}}?|[ₛs](?=\())?(?:(?![\w²^.-]|'\w)|{_SCRIPT})|r(?=_\{{?\(?\d|[₀-₉]|\d{{1,4}}\s?=|_\{{[^{{}}\n]{{1,14}}\}}\s?\(\d)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{{?s\}}?)?(?:(?![\w²^.-])|{_SCRIPT})"
         r"|[rR][_-]?value(?=\s?[=:])|cor(?=\s*\n\s*-?0?\.\d)|(?:rho|tau)(?=\s*\n\s*-?0?\.\d)"
         r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?:\sof\s\w{1,20}\sand\s\w{1,20}(?=\s=\s))?(?=\s(?:was|is|of|=|between|with|for)\s))",
         False,
@@ -308,12 +320,12 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "t",
-        rf"(?:(?:[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z]))"
+        rf"(?:(?:[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z])|{COMPUTED})"
         rf"|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?t"
         r")(?![a-z])"
-        r"|t(?:s|'s)?(?![\w²-]|'\w)|t(?:[12]|_\{[12]\})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{1,4}(?:\.\d{1,3})?\s?=))",
+        rf"|t(?:s|'s)?(?:(?![\w²-]|'\w)|{_SCRIPT})|t(?:[12]|_\{{[12]\}})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{{1,4}}(?:\.\d{{1,3}})?\s?=))",
         True,
-        "tTv",
+        "tTveEsSP",
         "t(47) = 2.20, p = .033",
     ),
     Notation(
@@ -325,7 +337,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "z",
-        r"(?:(?:Wald\s)?[zZ](?:[\s-](?:value|score|statistic))?)(?![\w²-]|'\w)",
+        rf"(?:(?:Wald\s)?[zZ](?:[\s-](?:value|score|statistic))?)(?:(?![\w²-]|'\w)|{_SCRIPT})",
         False,
         "zZW",
         "b = 0.61, SE = 0.22, z = 2.77, p = .006",
@@ -339,7 +351,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        r"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}?)?(?![\w²]|'\w)|[pP](?=_\{[^\W\d][^{}\n]{0,24}\})",
+        rf"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}}?)?(?:(?![\w²]|'\w)|{_SCRIPT})|[pP](?=_\{{[^\W\d][^{{}}\n]{{0,24}}\}})",
         False,
         "pP",
         "F(2, 57) = 3.90, p = .026",

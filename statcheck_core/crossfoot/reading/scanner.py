@@ -22,19 +22,24 @@ from crossfoot.reading.rsquared import of_two_models, read_r_squared
 from crossfoot.reading.told import told
 from crossfoot.reading.unnamed import unnamed
 from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
+from crossfoot.reading.words import ALL, RESPECTIVELY
 
 _RATIO = expression(
     rf"\(?\s?(?P<top>{NUMERAL})\s?\)?\s?/\s?\(?\s?(?P<bottom>{NUMERAL})\s?\)?\s?=\s?$"
 )
-_NEXT_VALUE = expression(rf"\s?(?:[,;]\s?(?:{AND}\s)?|\s{AND}\s)(?=[-+]?[.,·]?\d)")
+_NEXT_VALUE = expression(rf"\s?(?:[,;]\s?(?:{AND}\s)?|\s{AND}\s|[和与と및])(?=[-+]?[.,·]?\d)")
+#: Words between a name and its number that say that several numbers follow in order.
+_IN_ORDER = expression(r"分别|分別|それぞれ|각각")
+#: How far behind a list of tests stand the degrees of freedom that they share, in characters.
+_NEAR = 24
 _P_LIST = expression(rf"\s?[,;]?\s{AND}\s0?[.,]\d{{2,5}}(?![\d%])")
 _DEALT = expression(
-    r"[^.]*?(?:[.]\d[^.]*?)*?(?:respectively|beziehungsweise|bzw|respectivement|(?<!\w)p'?s\b"
+    rf"[^.]*?(?:[.]\d[^.]*?)*?(?:{RESPECTIVELY}|(?<!\w)p'?s\b"
     r"|(?<!\w)[pP]\s?=\s?0?[.,]\d{1,5},\s(?:and\s)?0?[.,]\d)"
 )
 #: What may be printed once for all tests of a sentence.
 _ONCE_FOR_ALL = frozenset({"df-pair", "df", "n"})
-_FOR_ALL_BEFORE = expression(r"(?<!\w)(?:both|all|each)(?:\s[a-z]+){0,2}\s$", re.IGNORECASE)
+_FOR_ALL_BEFORE = expression(rf"(?<!\w){ALL}(?:\s[a-z]+){{0,2}}\s$", re.IGNORECASE)
 _FOR_ALL_BEHIND = expression(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
 )
@@ -44,7 +49,7 @@ _OF_SOMETHING = expression(
 )
 _EXACT_BEHIND = expression(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
 _COUNTED = expression(r"\s(?:[a-z]{2,14}\s){0,2}(?:predictor|regressor|covariate|variable|feature)")
-_ALL = expression(r"(?:both|all|each)\s$")
+_ALL = expression(rf"(?<![^\W\d_]){ALL}\s$|[均都もて]\s?$")
 _SIDED = expression(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
 _ADJUSTED_NAME = expression(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
 _ADJUSTED_BEFORE = expression(
@@ -54,7 +59,8 @@ _ADJUSTED_LABEL = expression(r"Bonf|Holm|Tukey|adj|corr|FDR", re.IGNORECASE)
 # χ with its df beneath and its square above: χ_{1}^{2}
 _INDEX = expression(r"χ_\{?(?P<df>\d{1,3})\}?\s?\^")
 _CRITICAL_BEFORE = expression(
-    r"crit\w*\.?\s(?:values?:?\s)?(?:(?:of|for)\s)?(?:the\s)?$", re.IGNORECASE
+    r"[ck]r[ií]t\w*\.?\s(?:(?:values?|de|del?|valore|di):?\s)?(?:(?:of|for)\s)?(?:the\s)?$",
+    re.IGNORECASE,
 )
 _CRITICAL_BEHIND = expression(r"(?:\s?\([^()]{1,20}\))?[\s_({-]{0,3}crit", re.IGNORECASE)
 _RANK = expression(r"ρ|rho|Spearman|_\{?s|rs$")
@@ -83,7 +89,7 @@ def items_in(folded: str, zones: Sequence[tuple[int, int]]) -> list[Item]:
 
 
 def _named(text: Text, start: int, end: int) -> Iterator[Item]:
-    done = start
+    done, listed_to = start, -_NEAR
     listed = False  # whether several numbers of one test have been read
     for name in names(text.folded, start, end):
         if name.match.start() < done:
@@ -91,14 +97,25 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
         item = _READERS.get(name.notation.quantity, _read_plain)(text, name)
         if item is None or _is_place(text, item):
             continue
-        if item.head in _ONCE_FOR_ALL and _is_for_all(text, item):
+        if item.head in _ONCE_FOR_ALL and (
+            _is_for_all(text, item) or _is_of_list(text, item, listed_to)
+        ):
             item = item._replace(flags=(*item.flags, "all"))
         yield item
         done = item.end
         if "plural" in item.flags or (listed and item.head == "p") or _shares_out(text, item):
             for other in _further_values(text, item):
                 yield other
-                done, listed = other.end, True
+                done, listed_to, listed = other.end, other.end, True
+
+
+def _is_of_list(text: Text, item: Item, listed_to: int) -> bool:
+    """Say whether a pair of df stands right behind a list of tests: ``6.20 and 9.85 (df = 1, 58)``.
+
+    A second pair behind it would be the second test's own.
+    """
+    near = item.head == "df-pair" and item.start - listed_to < _NEAR
+    return near and _NEXT_VALUE.match(text.folded, item.end) is None
 
 
 def _is_place(text: Text, item: Item) -> bool:
@@ -115,7 +132,8 @@ def _is_place(text: Text, item: Item) -> bool:
 def _is_for_all(text: Text, item: Item) -> bool:
     """Say whether words give a count to all tests: ``both N = 96``, ``df = 1, 96 for each``."""
     return bool(
-        _FOR_ALL_BEFORE.search(text.folded, max(0, item.start - 24), item.start)
+        text.folded.find("均", item.start, item.end) >= 0
+        or _FOR_ALL_BEFORE.search(text.folded, max(0, item.start - 24), item.start)
         or _FOR_ALL_BEHIND.match(text.folded, item.end)
     )
 
@@ -129,6 +147,8 @@ def _shares_out(text: Text, item: Item) -> bool:
         or _NEXT_VALUE.match(text.folded, item.end) is None
     ):
         return False
+    if not text.folded.isascii() and _IN_ORDER.search(text.folded, item.start, item.end):
+        return True
     return _DEALT.search(text.folded, item.end, item.end + 160) is not None
 
 
@@ -297,6 +317,8 @@ def _read_p(text: Text, name: Name) -> Item | None:
         end = bracket.end()
     if "tailed" in printed:
         flags = (*flags, "one-sided" if "one" in printed else "two-sided")
+    if text.folded[end : end + 1] == "均":  # P均<0.05
+        flags, end = (*flags, "plural"), end + 1
     area = _AREA.match(text.folded, end)
     if area is not None:
         return _read_area(text, area, start)
@@ -313,7 +335,7 @@ def _read_p(text: Text, name: Name) -> Item | None:
         flags = (*flags, "one-sided" if sided["one"].lower() in {"one", "1"} else "two-sided")
     exact = _EXACT_BEHIND.match(text.folded, end) if value.relation != "=" else None
     value = (exact and number_at(text, exact.end(), "p", "=")) or value  # p < .05 (p = .026)
-    if printed.lower() in {"ps", "p's"} or _ALL.search(text.folded, max(0, start - 7), start):
+    if printed.lower() in {"ps", "p's"} or _is_of_all(text.folded, start):
         flags = (*flags, "plural")
     return Item("p", (value,), start, max(end, value.end), flags)
 
@@ -337,6 +359,12 @@ def _read_area(text: Text, match: re.Match[str], start: int) -> Item | None:
     if value is None:
         return None
     return Item("p", (value, *filter(None, degrees)), start, match.end())
+
+
+def _is_of_all(folded: str, start: int) -> bool:
+    """Say whether a word before p gives it to all tests: ``both p < .05``."""
+    lead = folded[max(0, start - 2) : start].rstrip()
+    return lead[-1:].isalpha() and _ALL.search(folded, max(0, start - 24), start) is not None
 
 
 def _index_of_p(index: str) -> tuple[str, ...]:

@@ -232,7 +232,15 @@ def _without_doubtful_error(item: Item, items: Sequence[Item]) -> Item:
 
 
 def _is_borne_out(item: Item, items: Sequence[Item]) -> bool:
-    """Say whether a number without a name is an estimate: its test or its interval tells."""
+    """Say whether a number without a name is an estimate: its test or its interval tells.
+
+    What "fell by 0.41" has a test on the other side of zero.
+    """
+    if "nameless" in item.flags:
+        estimate = item.parts[0]
+        spoken = [p for i in items for p in i.parts if p.quantity in {"t", "z", "ci_high"}]
+        if any(part.high < 0 < estimate.low for part in spoken):
+            return False
     if "if-ratio" in item.flags:
         tests = [part for other in items for part in other.parts if part.quantity in {"t", "z"}]
         return item.parts[1].low > 0 and any(_is_ratio(test, *item.parts) for test in tests)

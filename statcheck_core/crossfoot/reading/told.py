@@ -10,7 +10,7 @@ from crossfoot.reading import numerals
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import AND, known_number, not_significant
-from crossfoot.reading.words import ADJUSTED, VERB, VERB_UNSPACED
+from crossfoot.reading.words import ADJUSTED, CHANGED_BY, VERB, VERB_UNSPACED
 
 _SHARE = r"\d+(?:[.,]\d+)?\s?(?:%|per\s?cent)"
 _OF = (
@@ -21,7 +21,8 @@ _ADJUSTED_SHARE = (
     rf"|(?P<adjusted_too>{_SHARE})\s?{ADJUSTED})"
 )
 _VARIANCE_WORD = (
-    r"(?:varian|variânc|variation|variabil|Streuung|wariancj|rozptyl|дисперс|方差|变异|分散)"
+    r"(?:varian|variânc|variation|variabil|Streuung|wariancj|rozptyl|дисперс"
+    r"|vaihtelu|zmiennoś|方差|变异|分散)"
 )
 _EXPLAINED = expression(
     # 21% of the variance
@@ -55,6 +56,8 @@ _VARIANCE = (
     "变异",
     "分散",
     "rozptyl",
+    "aihtelu",
+    "miennoś",
     "дисперс",
 )
 _LISTED_BEFORE = expression(rf"(?P<share>\d+(?:[.,]\d+)?\s?%)(?:\s{AND}|\s?,(?:\s{AND})?)\s$")
@@ -73,6 +76,11 @@ _BEYOND = (
 )
 _BEYOND_BEFORE = expression(_BEYOND + r"[^.;()%]{0,90}$", re.IGNORECASE)
 _BEYOND_BEHIND = expression(r"[^.;()%]{0,60}?" + _BEYOND, re.IGNORECASE)
+# The explained variance rose by 6%.
+_GROWN_BY = expression(
+    rf"(?:{CHANGED_BY}|\b(?:increas|rose|grew|improv|gain)\w*\b[^.;:()=\d]{{0,40}}\sby)\s$",
+    re.IGNORECASE,
+)
 _REVERSED = expression(
     r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
@@ -163,6 +171,9 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
 def _kind_of_share(folded: str, start: int, match: re.Match[str]) -> str:
     """Say of which R² a share is, by what stands around it."""
     first, last = match.span()
+    number = match.start("after")
+    if number >= 0 and _GROWN_BY.search(folded, max(start, number - 80), number):
+        return "R2_change"
     if _ADJUSTING.match(folded, last, last + 100):
         return "R2_adj"
     if (

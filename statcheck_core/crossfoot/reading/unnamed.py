@@ -13,6 +13,7 @@ from crossfoot.expressions import expression
 from crossfoot.reading.items import Item, Part, Text
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.values import AND, known_number
+from crossfoot.reading.words import CHANGED_BY, INTERVAL
 
 _ERROR = (
     r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.))"
@@ -21,17 +22,34 @@ _ERROR = (
 #: A standard error or an interval that opens a bracket or goes on a list.
 _SPREAD = expression(
     rf"\s?[,(;\[]\s?(?:with\s(?:an?\s)?)?(?:(?P<error>{_ERROR})(?![A-Za-z])(?:\sof)?\s?[=:]?\s?(?P<se>{NUMERAL})"
-    r"|9\d(?:\.\d)?\s?%?[\s-]?(?:C[IL]|[cC]onfidence)|(?<=\()[tz](?:[\s-](?:ratio|value|stat(?:istic|\.)?))?\s?=?\s?-?\d)"
+    rf"|9\d(?:[.,]\d)?\s?%?[\s-]?{INTERVAL}|{INTERVAL}\s?(?:à\s|al\s|del\s|di\s)?9\d"
+    r"|(?<=\()[tz](?:[\s-](?:ratio|value|stat(?:istic|\.)?))?\s?=?\s?-?\d)"
 )
 #: The number before it, with what it counts in.
 _WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
 _NUMBER = expression(rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?:{_WORD}){{0,5}}$")
-_SPREAD_SIGNS = ("SE", "S.E", "s.e", "s. e", "err", "CI", "CL", "onfidence", "(t", "(z")
+_SPREAD_SIGNS = (
+    "SE",
+    "S.E",
+    "s.e",
+    "s. e",
+    "err",
+    "CI",
+    "CL",
+    "onf",
+    "KI",
+    "IC",
+    "BI",
+    "信",
+    "(t",
+    "(z",
+)
 #: An estimate that is said to be one, or a change by so much.
 _ESTIMATED = expression(
     r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|change|gain|loss|rise|drop|fall|decline"
     r"|increase|decrease|reduction|improvement|advantage|benefit|premium|penalty|gap)s?\b[^.;:()=\d]{0,60}[\s,(]{1,3}"
-    r"|\bby\s|\bassociated\swith\s|\b(?:add|cost|sav|gain|lost|los|cut)(?:ed|e?s|t|ing)?\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
+    rf"|{CHANGED_BY}\s|\b(?:Differenz|Unterschied|différence|diferencia|differenza|diferença|verschil|skillnad|forskel"
+    r"|forskjell)(?:en)?\b[^.;:()=\d]{0,40}\s|\bby\s|\bassociated\swith\s|\b(?:add|cost|sav|gain|lost|los|cut)(?:ed|e?s|t|ing)?\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
     re.IGNORECASE,
 )
 _GOES_ON = expression(rf"[^()\[\]]{{0,40}}[)\]]\s?(?:,\s?)?(?:{AND}\s|,\s)(?:{AND}\s)?(?:by\s)?")
@@ -104,4 +122,4 @@ def _item(estimate: Part | None, error: Part | None, *flags: str) -> Iterator[It
     if estimate is None:
         return
     parts = (estimate,) if error is None else (estimate, error)
-    yield Item("b", parts, estimate.start, parts[-1].end, flags)
+    yield Item("b", parts, estimate.start, parts[-1].end, ("nameless", *flags))

@@ -10,16 +10,16 @@ from crossfoot.reading.fold import HARD_SPACE
 from crossfoot.reading.items import WHOLE, Part, Text
 from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
-from crossfoot.reading.words import VERB, VERB_UNSPACED
+from crossfoot.reading.words import ABOVE, BELOW, COMPUTED, COPULA, OF, VERB, VERB_UNSPACED
 
 #: Words that join two numbers of a list.
-AND = r"(?:and|und|et|y|e|en|och|og|ja|&|和|と|및)"
+AND = r"(?:and|und|sowie|et|y|e|i|a|en|och|og|ja|és|ve|и|&|和|与|と|및)"
 #: A count as printed inside brackets or beside "degrees of freedom".
-COUNT = r"\d{1,3}(?:[, ]\d{3})+(?!\d)|\d+(?:[.,]\d+)?"
+COUNT = rf"\d{{1,3}}(?:[, '{HARD_SPACE}]\d{{3}})+(?!\d)|\d+(?:[.,]\d+)?"
 
 _SIGN = (
     r"(?:=\s?[<>≤≥](?![<>=])|<\s?=|>\s?=|=\s?<|<{1,3}(?![/<!]|-\s)|>{1,3}|[=≤≥≈¼]"
-    r"|&lt;|&gt;|(?:is|was|were)?\s?(?:less|lower|smaller|greater|larger|higher|more)\sthan|below|under|above)"
+    rf"|&lt;|&gt;|(?:{VERB}\s?)?(?:(?P<below>{BELOW})|(?P<above>{ABOVE})))"
 )
 _RELATION = expression(
     rf"[\s*]*+(?:\(\s*+)?(?P<sign>{_SIGN})[\s*]*+(?=[-+]?\s?[.,·]?\d|n\.?\s?s|NS|N\.S)"
@@ -28,7 +28,7 @@ _RELATION = expression(
 _DAMAGED = expression(r"\s?(?P<sign>[boN~∼])\s?(?=0?[.,]\d)")
 _DAMAGE = {"b": "<", "o": "<", "N": ">", "~": "≈", "∼": "≈"}
 _WORDS = expression(
-    rf"\s++{VERB}(?:\s(?:only|about|just|approximately))?\s++(?=[-+]?\s?[.,·]?\d)|['\"]?\s?{VERB_UNSPACED}\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
+    rf"\s++{VERB}(?:\s(?:only|about|just|approximately))?\s++(?=[-+]?\s?[.,·]?\d)|['\"]?\s?(?:の?[値值]|값|统计量|統計量)?{VERB_UNSPACED}\s*+(?P<sign>[<>]?)\s*+(?=[-+]?\s?[.,·]?\d)"
 )
 _BARE = expression(r" (?=[-+]?\d{0,5}[.,]\d++(?![\d.,]?\d|\s?[%=<>]))")
 _SPACES = expression(r"[ ]*+(?:\|[ ]*+)?(?P<sign>[<>]?)[ ]*+(?=[-+]?\s?[.,·]?\d)")
@@ -42,15 +42,15 @@ _OPERATION = expression(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?
 _NUMERAL = expression(NUMERAL)
 _NOT_SIGNIFICANT = expression(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
 #: What a name is of, before its number, or the bracket that closes behind a name.
-_FOR_WHAT = (" for ", " of ", " on ", " between ", " in ", ") ")
 _WHAT = expression(
-    r"(?:\)(?=\s)|\s(?:for|of|on|between|in)(?:\s[^\s\d.,;:()=<>][^\s.,;:()=<>]{0,30}(?:\s\d(?=\s))?){1,7}?)"
-    r"(?:(?<!\s[A-Za-zα-ωΔ])(?<![²}])(?=\s?[=<>≤≥])|(?=\s(?:was|is|were|equal(?:s|led))\s))"
+    rf"(?:\)(?=\s)|\s(?:global\w?|omnibus|overall|{COMPUTED})|\s{OF}(?:\s[^\s\d.,;:()=<>][^\s.,;:()=<>]{{0,30}}(?:\s\d(?=\s))?){{1,7}}?)"
+    rf"(?:(?<!\s[A-Za-zα-ωΔ])(?<![²}}])(?=\s?[=<>≤≥])|(?=\s{COPULA}\s))"
 )
 _UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
     r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=('-]|\.(?!\s|$)|\s?[=<>(])"
 )
+_RATE = expression(r"\s?[A-Za-zµ]{1,4}[23²³]?\s?/\s?[a-zµ]{1,4}[23²³]?(?![\w(])")
 _GLUED = expression(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.
 _GOES_ON = expression(r",\d")
@@ -89,7 +89,7 @@ def value_after(
             return number_at(text, worked.start("value"), quantity, "=")
     match = _RELATION.match(folded, at)
     if match is not None:
-        return number_at(text, match.end(), quantity, _relation(match["sign"]))
+        return number_at(text, match.end(), quantity, _relation(match))
     damaged = _DAMAGED.match(folded, at) if quantity == "p" else None
     if damaged is not None:
         return number_at(text, damaged.end(), quantity, _DAMAGE[damaged["sign"]])
@@ -107,18 +107,19 @@ def value_after(
 def _after_words(text: Text, at: int, quantity: str) -> Part | None:
     """Return the number that words separate from its name: ``R² for the full model was .34``."""
     folded = text.folded
-    if not folded.startswith(_FOR_WHAT, at):
-        return None
-    match = _WHAT.match(folded, at)
+    led = folded[at : at + 1] == ")" or (
+        folded[at : at + 1] == " " and folded[at + 1 : at + 2].isalpha()
+    )
+    match = _WHAT.match(folded, at) if led else None
     if match is None:
         return None
     signed = _RELATION.match(folded, match.end())
-    if signed is not None and _ends_in_name(match.group()):
-        return None
-    value = signed or _WORDS.match(folded, match.end())
-    return (
-        number_at(text, value.end(), quantity, _relation(value["sign"] or "=")) if value else None
-    )
+    if signed is not None:
+        if _ends_in_name(match.group()):
+            return None
+        return number_at(text, signed.end(), quantity, _relation(signed))
+    value = _WORDS.match(folded, match.end())
+    return number_at(text, value.end(), quantity, value["sign"] or "=") if value else None
 
 
 def _ends_in_name(words: str) -> bool:
@@ -144,11 +145,15 @@ def number_at(text: Text, at: int, quantity: str, relation: str) -> Part | None:
         return None
     if quantity in _UNITLESS and _COUNTED.match(folded, end):  # χ² 1 df
         return None
-    if _GLUED.match(folded, end) or (quantity in _UNITLESS and _UNIT.match(folded, end)):
+    if _GLUED.match(folded, end) or (
+        quantity in _UNITLESS and (_UNIT.match(folded, end) or _RATE.match(folded, end))
+    ):
         return None
     # A statistic is seldom in the thousands: beside decimal commas 3.756 is a decimal still.
     pointed = quantity in _UNITLESS and _POINTED.fullmatch(match.group()) is not None
     comma = text.decimal_comma and not pointed
+    if quantity == "n":  # which has no decimals: its mark groups digits, whichever it is
+        comma = "." in match.group()
     numeral = numerals.parse(match.group(), decimal_comma=comma, whole=quantity in WHOLE)
     if numeral is None or (numeral.percent and quantity in _UNITLESS - _SHARES):
         return None
@@ -194,12 +199,11 @@ def _may_stand_bare(folded: str, quantity: str, name: Name) -> bool:
     return quantity == "se" and folded[name.match.start() - 1 : name.match.start()] == "("
 
 
-def _relation(sign: str) -> str:
+def _relation(match: re.Match[str]) -> str:
     """Return the canonical relation for what is printed."""
-    plain = "".join(sign.split())
-    if "than" in plain or plain.isalpha():
-        less = any(word in plain for word in ("less", "lower", "smaller", "below", "under"))
-        return "<" if less else ">"
+    if match["below"] or match["above"]:
+        return "<" if match["below"] else ">"
+    plain = "".join(match["sign"].split())
     if plain in {"&lt;", "&gt;"}:
         return "<" if plain == "&lt;" else ">"
     if plain in {"<=", "≤", "=≤"}:

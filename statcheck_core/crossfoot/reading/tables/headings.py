@@ -39,16 +39,21 @@ NOTHING = Heading(())
 
 _CI = re.compile(
     r"(?<![a-z])(?:c\.?\s?i\.?s?|ki|ic|bi|conf(?:idence|\.)?\s?(?:int(?:erval|\.)?s?|limits?)|konfidenzintervall"
-    r"|intervalo\sde\sconfianza|intervalle\sde\sconfiance|intervallo\sdi\sconfidenza|置信区间)(?![a-z])",
+    r"|intervalo\sde\sconfianza|intervalle\sde\sconfiance|intervallo\sdi\sconfidenza|intervalo\sde\sconfiança|vertrauensintervall"
+    r"|betrouwbaarheidsinterval|konfidensintervall?|luottamusväli|przedział\sufności|güven\saralığı|信頼区間|신뢰구간|置信区间)(?![a-z])",
     re.IGNORECASE,
 )
 _LEVEL = re.compile(r"(?<![\d.])([5-9]\d(?:[.,]\d)?)(?![\d.])\s?%?")
 _OF = re.compile(
     r"\s(?:for|of|von)\s(?:the\s)?(?P<of>[\w]{1,16}(?:\s?\([\w\s]{1,9}\))?)", re.IGNORECASE
 )
-_LOW = re.compile(r"(?<![a-z])(?:lower(?:\s(?:bound|limit))?|low|ll|lb|l)(?![a-z])", re.IGNORECASE)
+_LOW = re.compile(
+    r"(?<![a-z])(?:lower(?:\s(?:bound|limit))?|low|ll|lb|l|inf(?:[eé]rieure?|erior[ei]?|\.)?|untere?|undre|nedre|onder(?:grens)?|下限|하한)(?![a-z])",
+    re.IGNORECASE,
+)
 _HIGH = re.compile(
-    r"(?<![a-z])(?:upper(?:\s(?:bound|limit))?|high|ul|ub|u)(?![a-z])", re.IGNORECASE
+    r"(?<![a-z])(?:upper(?:\s(?:bound|limit))?|high|ul|ub|u|sup(?:[eé]rieure?|erior[ei]?|\.)?|obere?|övre|øvre|boven(?:grens)?|上限|상한)(?![a-z])",
+    re.IGNORECASE,
 )
 _QUANTILE = re.compile(r"(?<!\d)(0?\.0?25|2\.5(?=\s?%)|0?\.975|97\.5(?=\s?%))(?!\d)")
 _BOTH = re.compile(r"\[(0?\.025)\s{1,9}0?\.975\]")

@@ -14,7 +14,7 @@ _SCRIPTS = (
     (re.compile(r"\^\{[a-z0-9*†‡]{1,3}\}"), ""),
     (re.compile(r"[_^]\{([^{}]*)\}"), r"\1"),
 )
-_SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉ₚ∆δ", "0123456789pΔΔ")
+_SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉ₚ∆δ値", "0123456789pΔΔ值")
 
 
 def _key(text: str) -> str:

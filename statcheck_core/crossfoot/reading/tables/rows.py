@@ -16,11 +16,13 @@ _ERROR = re.compile(
     r"|(?:error|residuals?)\s?(?:\(.{1,40}\)|[×x:].{1,40}|[1-9ab]|between.{0,20}|within.{0,20})|w(?:ithin)?\.?\scells?"
     r"|(?:intra|within)[\s-]?groups?|fehler|residuen|rest|reststreuung|residual[\s-]?(?:streuung|fehler)|innerhalb(?:\s(?:der\s)?gruppen)?"
     r"|résidus?|résiduelles?|erreur|intra[\s-]?groupes?|residuos?|residual|dentro\s(?:de\s)?(?:los\s)?grupos|intra[\s-]?grupos?"
-    r"|error\sexperimental|resíduos?|erro|dentro\sdos?\sgrupos?|residui|residuo|entro\si?\s?gruppi|errore|binnen\s(?:de\s)?groepen|residu"
+    r"|error\sexperimental|resíduos?|erro|dentro\sdos?\sgrupos?|residui|residuo|residua(?:l|le)?|residualvarians|feil|fejl|fel|hata|błąd|chyba|reszidu\w+|остат\w+|ошибка"
+    r"|jäännös|virhe|inom\sgrupper|inden\sfor\sgrupper|innen(?:for)?\sgrupper|ryhmien\ssisä\w+|wewnątrz\sgrup"
+    r"|uvnitř\sskupin|grup\siçi|внутри\sгрупп|集団内|群内|entro\si?\s?gruppi|errore|binnen\s(?:de\s)?groepen|residu"
     r"|inom\sgrupper|误差项?|机误|随机误差|处理内|组内|残差|誤差|오차|잔차|error\svariance|subjects\swithin\sgroups"
 )
 _TOTAL = re.compile(
-    r"(?:grand\s)?total(?:\s(?:variation|variance|ss|sum))?|sum|gesamt(?:variation)?|insgesamt|summe|totale?|totaal|totalt|合计|总计|总和|总变异|总的|合計|全体|전체|합계"
+    r"(?:grand\s)?total(?:\s(?:variation|variance|ss|sum))?|sum|gesamt(?:variation)?|insgesamt|summe|totale?|totaal|totalt|i\salt|yhteensä|ogółem|razem|celkem|toplam|всего|итого|összesen|合计|总计|总和|总变异|总的|合計|全体|전체|합계"
 )
 _CORRECTED = re.compile(
     r"(?:corrected|cor(?:r)?\.?|c\.?|adjusted|mean[\s-]corrected)\s?total|total\s?\(?(?:corrected|corr\.?|adjusted|cor)\)?"
@@ -32,7 +34,8 @@ _UNCORRECTED = re.compile(
 _MODEL = re.compile(
     r"(?:overall\s|full\s|corrected\s)?model|regression(?:\smodel)?|(?:due\sto\s)?regression|explained|between(?:[\s-](?:groups?|samples?|treatments?|cells?))?"
     r"(?:\s\(combined\))?|(?:korrigiertes\s)?modell|modèle|modelo(?:\scorregido)?|modello|zwischen(?:\s(?:den\s)?gruppen)?|inter[\s-]?groupes?|entre\s(?:los\s)?grupos"
-    r"|inter[\s-]?grupos|tra\s(?:i\s)?gruppi|tussen\s(?:de\s)?groepen|组间|处理间|回归|모형|회귀"
+    r"|inter[\s-]?grupos|tra\s(?:i\s)?gruppi|tussen\s(?:de\s)?groepen|entre\sgrup[eo]s|mellan\sgrupper|mellem\sgrupper|mellom\sgrupper"
+    r"|ryhmien\sväli\w+|między\sgrupami|mezi\sskupinami|gruplar\sarası|между\sгруппами|集団間|群間|组间|处理间|回归|모형|회귀"
 )
 _INTERCEPT = re.compile(
     r"(?:\(?\s?(?:intercept|constant|const\.?|_cons|cons|grand\smean|konstante|achsenabschnitt|constante|costante|intercepto|ordonnée\sà\sl'origine|截距|常数项|常量|常数|상수|절편)"

@@ -23,21 +23,30 @@ class Role(NamedTuple):
 ROLES: tuple[Role, ...] = (
     Role(
         "ss",
-        "SS SSQ SumSq SQ QS SC",
+        "SS SSQ SumSq SQ QS SC SCE KT",
         "sumofsquares sumsofsqs sumofsqs sumofsq"
         " sumsofsquares sumsq ssdiff sumsquares squares ssq typeiiisumofsquares"
         " typeiisumofsquares typeisumofsquares typeiiiss typeiiss typeiss seqss adjss anovass"
         " partialss quadratsumme quadratsummen summederquadrate sommedescarrés sommecarrés"
         " sumadecuadrados sommadeiquadrati somadosquadrados somadequadrados kwadratensom"
-        " kvadratsumma 平方和 离均差平方和 제곱합",
+        " kvadratsumma 平方和 离均差平方和 제곱합"
+        " summederabweichungsquadrate summequadrate sumacuadrados sumadecuadradostipoiii"
+        " sommaquadrati devianza somaquadrados somvankwadraten somkwadraten kvadratsum"
+        " neliösumma sumakwadratów součetčtverců karelertoplamı суммаквадратов négyzetösszeg"
+        " 偏差平方和 変動",
     ),
     Role(
         "ms",
-        "MS MSS MeanSq MQ CM",
+        "MS MSS MeanSq MQ CM QM KO",
         "meansquare meansquares meansqs meansq square adjms seqms mittelderquadrate"
         " mittlerequadratsumme"
         " carrémoyen carrésmoyens mediacuadrática cuadradomedio quadradomédio quadratomedio"
-        " gemiddeldekwadraat 均方 平均平方 평균제곱",
+        " gemiddeldekwadraat 均方 平均平方 평균제곱"
+        " mittleresquadrat mittlerequadrate mediadecuadrados mediacuadratica cuadradosmedios"
+        " mediaquadratica mediadeiquadrati quadratimedi quadradosmédios quadradomedio"
+        " medelkvadrat medelkvadratsumma middelkvadrat gjennomsnittskvadrat"
+        " gennemsnitskvadrat keskineliö średnikwadrat średniakwadratów průměrnýčtverec"
+        " karelerortalaması среднийквадрат",
     ),
     Role(
         "df",
@@ -47,7 +56,9 @@ ROLES: tuple[Role, ...] = (
         " dfconstraint degreesoffreedom degreeoffreedom dfs freiheitsgrade"
         " freiheitsgrad fg"
         " degrésdeliberté degrésdeliberte gradosdelibertad grausdeliberdade gradidilibertà"
-        " vrijheidsgraden frihetsgrader 自由度 자유도",
+        " vrijheidsgraden frihetsgrader 自由度 자유도"
+        " gradosdelibertad(gl) frihedsgrader frihetsgrad vapausasteet stopnieswobody"
+        " stupněvolnosti serbestlikderecesi степенисвободы szabadságfok gradideliberta",
     ),
     Role(
         "df1",
@@ -69,7 +80,8 @@ ROLES: tuple[Role, ...] = (
         "F",
         "F F0",
         "fvalue fratio fstatistic fstat ftest fwert valeurf valeurdef valorf valoref fwaarde"
-        " approxf fvärde f值 fcalculated fcalc fstatistics fobserved estadísticof",
+        " approxf fvärde f值 fcalculated fcalc fstatistics fobserved estadísticof"
+        " fværdi fverdi farvo wartośćf fdeğeri fhodnota valoredif estatísticaf f比 f통계량",
     ),
     Role(
         "p",
@@ -80,7 +92,11 @@ ROLES: tuple[Role, ...] = (
         " sig(2tailed) sig(twotailed) punc prob(fstatistic) pwert signifikanz valeurp valeurdep"
         " valorp valordep valorep pwaarde pvärde p值 pexact sigf signifof signifofp asympsig"
         " asympsig(2sided) p(2tailed) p(twotailed) p(twosided) p(2sided) puncorr fp sigoft"
-        " pofoverallmodel asymptoticsignificance asymptoticsig exactsig exactsignificance",
+        " pofoverallmodel asymptoticsignificance asymptoticsig exactsig exactsignificance"
+        " pværdi pverdi parvo wartośćp pdeğeri phodnota pvalor valoredip significatività"
+        " significación significância signifikans p값 有意確率 显著性 유의확률"
+        " sig(bilateral) sig(2seitig) sig(zweiseitig) signifikanz(2seitig)"
+        " sig(bilatérale) sig(2zijdig) pr(>fc)",
     ),
     Role(
         "p_adjusted",
@@ -130,7 +146,12 @@ ROLES: tuple[Role, ...] = (
         " schätzung coeficiente coefficiente coëfficiënt estimateb bestimate coefficientb"
         " coefficientestimate unstandardized unstandardised bunstandardized bweight 系数 回归系数"
         " loghr logor emmean lsmean emmeans lsmeans dy/dx ey/ex dy/ex ey/dx marginaleffect"
-        " estimation estimación stima estimativa 계수 unstd",
+        " estimation estimación stima estimativa 계수 unstd"
+        " coeficientes coefficienti koefficient koeffisient regressionskoefficient"
+        " regressionskoeffizienten regresjonskoeffisient kerroin współczynnik koeficient"
+        " katsayı коэффициент steigung schätzwert helling pendiente pente pendenza"
+        " 推定值 偏回帰係数 回帰係数 係数 非標準化係数 估计值 系数估计 비표준화계수"
+        " 회귀계수 추정치",
     ),
     Role("β", "β ß β̂ β^", "beta"),
     Role(
@@ -141,7 +162,12 @@ ROLES: tuple[Role, ...] = (
         " standardisedcoefficients standardizedcoefficientsbeta standardizedcoefficientsβ"
         " stdcoef stdcoeff stdestimate betaweight standardized standardised"
         " standardizedestimate standardisedestimate βstandardized βstandardised bstandardized"
-        " 标准化系数 stdall betastd",
+        " 标准化系数 stdall betastd"
+        " standardisierterkoeffizient standardisiertekoeffizienten"
+        " standardisierteskoeffizient standardisiertesbeta coeficienteestandarizado"
+        " coefficientstandardisé bêta standardiserad"
+        " standardisertkoeffisient 標準化係数 標準偏回帰係数"
+        " 标准化回归系数 표준화계수",
     ),
     Role(
         "se",
@@ -153,7 +179,10 @@ ROLES: tuple[Role, ...] = (
         " errorestándard errorest standaardfout"
         " medelfel 标准误 标准误差 seestimate seofb seest sterror asymptoticstderr 표준오차"
         " se(coef) robustse(coef) loghrse"
-        " unstandardizedcoefficientsstderror unstandardizedcoefficientsse secoef secoeff",
+        " unstandardizedcoefficientsstderror unstandardizedcoefficientsse secoef secoeff"
+        " erreurstandard erreursstandard errortipico erroretipico erropadrao standardfel"
+        " standardfejl standardfeil keskivirhe błądstandardowy błądstd standarthata"
+        " směrodatnáchyba стандартнаяошибка 標準誤差 標準誤",
     ),
     Role(
         "se_robust",
@@ -165,7 +194,9 @@ ROLES: tuple[Role, ...] = (
         "t",
         "t T",
         "tvalue tstat tstatistic tstatistics tratio ttest twert valeurt valeurdet valort valoret"
-        " twaarde tvärde t值 studentt studentst tforh0 tforh0:parameter=0 tvalues",
+        " twaarde tvärde t值 studentt studentst tforh0 tforh0:parameter=0 tvalues"
+        " tværdi tverdi tarvo wartośćt tdeğeri thodnota valoredit estadísticot estatísticat"
+        " statistiquet t값 t통계량",
     ),
     Role("z", "z Z", "zvalue zstat zstatistic zratio waldz zwert valeurz zvalues ztest"),
     Role(
@@ -190,7 +221,9 @@ ROLES: tuple[Role, ...] = (
         " lowercl lcl lowercibound confintlow confintlower lowerconfint"
         " lower95%ci lo95 low 95%cilower 95%lower 95%cill cill lower2.5%"
         " 2.5% 0.025 [0.025 untergrenze limiteinférieure límiteinferior 95%cilow 95%cill lwr"
-        " 95%confidenceintervallowerbound 95%cilowerbound lowerlimitof95%ci q2.5 cil",
+        " 95%confidenceintervallowerbound 95%cilowerbound lowerlimitof95%ci q2.5 cil"
+        " unteregrenze limiteinferior limiteinferiore borneinférieure borneinf liminf linf"
+        " ondergrens undregräns nedregräns nedregrænse nedregrense 下限 하한",
     ),
     Role(
         "ci_high",
@@ -199,7 +232,9 @@ ROLES: tuple[Role, ...] = (
         " uppercl ucl uppercibound confintupp confintupper upperconfint"
         " upper95%ci hi95 high 95%ciupper 95%upper ciul upper97.5% 97.5%"
         " 0.975 0.975] obergrenze limitesupérieure límitesuperior 95%cihigh 95%ciul upr"
-        " 95%confidenceintervalupperbound 95%ciupperbound upperlimitof95%ci q97.5 ciu",
+        " 95%confidenceintervalupperbound 95%ciupperbound upperlimitof95%ci q97.5 ciu"
+        " oberegrenze limitesuperior limitesuperiore bornesupérieure bornesup limsup lsup"
+        " bovengrens övregräns øvregrænse øvregrense 上限 상한",
     ),
     Role(
         "odds_ratio",
@@ -226,7 +261,9 @@ ROLES: tuple[Role, ...] = (
         "R2 r2",
         "rsquare rsquared rsq multiplersquared multiplersquare multipler2 r2value"
         " coefficientofdetermination determinationcoefficient r2total totalr2 bestimmtheitsmaß"
-        " r平方 r方 cumulativer2 overallr2 modelr2 unadjustedr2",
+        " r平方 r方 cumulativer2 overallr2 modelr2 unadjustedr2"
+        " rquadrat rcuadrado rquadrato rquadrado rkvadrat rkwadraat rcarré rdeux"
+        " coeficientededeterminación 決定係数 决定系数 결정계수",
     ),
     Role(
         "R2_adj",
@@ -234,7 +271,12 @@ ROLES: tuple[Role, ...] = (
         "adjustedr2 adjr2 r2adj adjustedrsquare adjustedrsquared adjrsquare adjrsquared r2adjusted"
         " adjrsq rsqadj rsq(adj) rsquareadj rsquaredadj adjustedrsq r2(adj) r2(adjusted) r2corr"
         " adjustedr korrigiertesr2 r2korr korrr2 r2ajusté r2ajustado r2aj adjusteddr2 r2corretto"
-        " 调整后r2 调整r2 调整的r2 r2adj. rsquare(adj) adjustedmultipler2 rsquared(adj)",
+        " 调整后r2 调整r2 调整的r2 r2adj. rsquare(adj) adjustedmultipler2 rsquared(adj)"
+        " korrigiertesrquadrat angepasstesr2 adjustiertesr2 rcuadradocorregida"
+        " rcuadradoajustado rcuadradocorregido r2ajustada r2corrigé r2aggiustato justeradr2"
+        " justeratr2 justeretr2 justertr2 aangepaster2 gecorrigeerder2 skorygowaner2"
+        " düzeltilmişr2 自由度調整済みr2 調整済みr2 自由度調整済み決定係数 校正r2 수정된r2"
+        " 조정된r2",
     ),
     Role(
         "R2_change",
@@ -270,7 +312,9 @@ ROLES: tuple[Role, ...] = (
         "observations includedobservations obs numberofobs numberofobservations noobservations"
         " noofobs numobs nobs numbobs noofobservations samplesize cases noofcases numberofcases"
         " casesincluded nobservations observationsn n(listwise) 观测值 样本量 样本数"
-        " anzahlbeobachtungen beobachtungen observaciones osservazioni observações n(obs) 관측수",
+        " anzahlbeobachtungen beobachtungen observaciones osservazioni observações n(obs) 관측수"
+        " fälle beobachtungszahl numérodeobservaciones númerodeobservaciones"
+        " nombredobservations 標本数 サンプルサイズ 표본수",
     ),
     Role(
         "label",
@@ -279,7 +323,14 @@ ROLES: tuple[Role, ...] = (
         " effect effects factor factors model models step steps covariate covariates"
         " independentvariable independentvariables iv ivs sourceofvariance component measure"
         " metric item contrast quelle varianzquelle fuente parameters explanatoryvariable"
-        " explanatoryvariables variationsource modelterm 变量 变异来源 来源 block",
+        " explanatoryvariables variationsource modelterm 变量 变异来源 来源 block"
+        " fuentedevariación fuentedevariacion sourcedevariation fontedevariação"
+        " fontedivariazione fonte fv källa variationskälla kilde bron źródło zdroj kaynak"
+        " источник prädiktor prädiktoren prédicteur prédicteurs predictora predictores"
+        " preditor preditores predittore predittori prediktor prediktorer variabel variabele"
+        " variabile variabili variável variáveis muuttuja zmienna değişken переменная faktor"
+        " faktoren facteur facteurs fattore fator effekt effet efecto effetto efeito 変数 説明変数"
+        " 独立変数 要因 変動要因 自变量 因素 변인 변수 요인",
     ),
     Role("statistic", "", "statistic teststatistic"),
     Role("mean", "M", "mean means m"),
