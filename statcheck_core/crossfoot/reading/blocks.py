@@ -23,8 +23,8 @@ _WORDS = (
     "Wert", "waarde", "värde", "verdi", "værdi", "설명력", "方差", "分散", "变异", "MSE", "RSE",
     "bservations", " obs", "95 %", "95%", " SE ", "s.e. ", "dard error", "t-ratio ", "Sig.",
     "mong ", "ample of", " df", "d.f.", "elitysaste", "ariânc", "libert", "liberd", "):", "]:",
-    ") of ", " p of ", " equal to ", ") was ", ") is ", "值", "値", "自由度", "p: 0", "p: .", "p: ,", "':", '":',
-    "estimates:",
+    ") of ", " p of ", " equal to ", ") was ", ") is ", "值", "値", "自由度", "p: 0", "p: .",
+    "p: ,", "':", '":', "estimates:",
 )  # fmt: skip
 _ANY_WORD = any_of(_WORDS)
 _MARKUP = ("\\l", "\\g", "\\approx", "\\text", "&#", "&eq", "{")

@@ -61,7 +61,7 @@ _SUPPORT = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omeg
 #: Fewer degrees of freedom than this are more often the indices of a matrix.
 _FEWEST = 4.0
 #: And fewer than this may be the arguments of a function.
-_FEW = 20.0
+_FEW_ENOUGH = 20.0
 
 
 def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
@@ -159,7 +159,7 @@ def _is_f_test(anchor: str, items: Sequence[Item], quantities: set[str], text: s
         exact = any(p.quantity == "p" and p.relation == "=" for i in items for p in i.parts)
         return (plural or not exact) and bound and value.relation in "<≤>≥"
     error = next(p for item in items for p in item.parts if p.quantity == "df2")
-    if error.high < _FEW and is_function(items, text):
+    if error.high < _FEW_ENOUGH and is_function(items, text):
         return False
     if support or {"lower", "labelled"} & set(test.flags) or error.high < _FEWEST:
         return support
