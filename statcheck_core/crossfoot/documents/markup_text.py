@@ -60,7 +60,8 @@ _HIDING = expression(
     r"|doc-noteref|footnote-ref|footnote-back|visually-hidden|sr-only"
 )
 _STARS = expression(r"\s{0,9}([*∗†‡]{1,9})\s{0,9}(?=</)")
-_ISLAND = expression(r"\\[(\[]|\$\$")
+_ISLAND = expression(r"\\[(\[]|\$\$|\$(?=[^\s\d$])(?P<single>[^$\n]{1,300})(?<![\s\\])\$(?!\d)")
+_TEX = expression(r"[=<>^_\\]")
 _CLOSING = {"\\(": "\\)", "\\[": "\\]", "$$": "$$"}
 _BODY = expression(r"\\begin\{document\}([\s\S]*?)\\end\{document\}")
 _REFERENCE = expression(r"\s{0,9}(?:<xref\b[^<>]*>[^<>]*</xref>[\s,;–-]*)+</sup>")
@@ -94,6 +95,7 @@ class _Text:
         self.formula_end = start
         self.formula_has_mathml = False
         self.islands = False
+        self.apart = False  # whether a paragraph has ended
 
     def run(self) -> Visible:
         """Return what is shown."""
@@ -107,12 +109,15 @@ class _Text:
 
     def words(self, words: Words) -> None:
         """Show text."""
+        if self.apart and not self.source[words.start : words.end].isspace():
+            self.out.put(" ", words.start, words.start)
+            self.apart = False
         put_words(self.out, self.source, words)
         self.shown = True
         if not self.islands:
             source = self.source
             self.islands = any(
-                source.find(mark, words.start, words.end) >= 0 for mark in ("\\(", "\\[", "$$")
+                source.find(mark, words.start, words.end) >= 0 for mark in ("\\(", "\\[", "$")
             )
 
     def tag(self, tag: Tag) -> None:
@@ -121,6 +126,8 @@ class _Text:
         if tag.closing:
             if name in ("sup", "sub"):
                 self.out.put("}", tag.start, tag.end)
+            elif name in ("p", "div"):  # within a cell or an item
+                self.apart = True
         elif name in ("sup", "sub"):
             self.script(tag)
         elif hides(tag, self.dialect):
@@ -138,6 +145,7 @@ class _Text:
 
     def item(self, tag: Tag) -> None:
         """Start an item of a list on a line of its own; what a term stands for follows it."""
+        self.apart = False
         mark = "• " if tag.name in ("li", "list-item") else ""
         if tag.name == "dd":
             self.out.put(": ", tag.start, tag.end)
@@ -245,6 +253,15 @@ def _islands(text: str) -> Visible:
     position = 0
     while found := _ISLAND.search(text, position):
         mark = found[0]
+        if (inside := found["single"]) is not None:
+            if _TEX.search(inside):
+                out.keep(text, position, found.start())
+                show_math(out, text, *found.span("single"))
+                position = found.end()
+            else:  # two sums of money
+                out.keep(text, position, found.end() - 1)
+                position = found.end() - 1
+            continue
         stop = closings.after(_CLOSING[mark], found.end())
         if stop < 0:
             break

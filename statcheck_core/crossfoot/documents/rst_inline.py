@@ -18,6 +18,7 @@ _MARK = Marks(
     r"|(?P<stars>\*\*?)|(?P<note>\[(?:\#[\w-]{0,40}|\*|\d{1,4}|[A-Za-z][\w-]{0,40})\]_(?!\w))"
     r"|(?P<bar>\|[^|\s](?:[^|\n]{0,60}[^|\s])?\|_{0,2})|(?P<ref>(?<=[A-Za-z0-9])__?(?![\w]))",
 )
+_ESCAPE = expression(r"\\([\s\S])")
 _TARGET = expression(r"\s*<[^<>]*>$")
 _RAISED = frozenset(("sup", "superscript"))
 _LOWERED = frozenset(("sub", "subscript"))
@@ -61,6 +62,10 @@ class _Walk(Walk):
             stars = role in _RAISED and set(found["text"]) <= set("*†‡")
             before = "" if stars else "^{" if role in _RAISED else "_{"
             self.around(found, "text", (before, "" if stars else "}"))
+            base = found.start("text")
+            for escape in _ESCAPE.finditer(found["text"]):
+                end = escape.end() if escape[1].isspace() else escape.start(1)
+                self.edits.append(Edit(base + escape.start(), base + end))
         elif role in _UNSEEN:
             self.replace(found, OPAQUE)
         else:

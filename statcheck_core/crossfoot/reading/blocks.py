@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
+from functools import lru_cache
 from typing import NamedTuple
 
 from crossfoot.documents import show, table
@@ -45,6 +46,8 @@ _DIGIT = expression("[0-9]+")
 _SPACED = expression(r"\d \. \d|[=<>] \. \d|\d \d \d|, \d \d \)")
 _SPACED_RUN = expression(r"(?:[\w.,()=<>≤≥+−-] ){5,}[\w.,()=<>≤≥](?!\w)")
 _INK = expression(r"\S+")
+_NAME = expression(r"[^\W_]+")
+_TELLING = expression(r"[=<>≤≥≈]|\\[lg]")
 #: Contexts that words must stand near a result to mean.
 NEAR = frozenset(cue.context for cue in CUES if cue.near)
 #: A heading that a table without any of the words above has.
@@ -71,7 +74,9 @@ def read_block(
         depends on nothing else.
     """
     aligned = kind == "verbatim" or (language == "plain" and _may_be_aligned(source))
-    if kind == "code" or not _may_hold(source, kind, aligned):
+    if kind == "code" or not (
+        _may_hold(source, kind, aligned) or (definitions and _may_call(source, definitions))
+    ):
         return BlockReading((), cues_in(source))
     if kind == "table":
         from crossfoot.reading.tables import table_claims
@@ -143,6 +148,18 @@ def _may_hold(source: str, kind: str, aligned: bool) -> bool:
         or (")" in source and _BARE.search(source) is not None)
         or is_damaged(source)
     )
+
+
+def _may_call(source: str, definitions: tuple[tuple[str, str], ...]) -> bool:
+    """Say whether a block names a definition that tells a number."""
+    return not _telling(definitions).isdisjoint(_NAME.findall(source))
+
+
+@lru_cache(maxsize=16)
+def _telling(definitions: tuple[tuple[str, str], ...]) -> frozenset[str]:
+    """Return the names, or their first words, of what says more than a word."""
+    told = (name for name, meaning in definitions if _TELLING.search(meaning))
+    return frozenset(word[0] for name in told if (word := _NAME.search(name)))
 
 
 def _may_be_aligned(source: str) -> bool:

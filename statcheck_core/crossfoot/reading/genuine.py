@@ -186,7 +186,7 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
             return False
         if not (counted or near(_RELATED, items, text) or _is_listed(items, test, text)):
             return False
-        if (_is_lowered(test, text) or _is_index(test)) and not has_p:
+        if not has_p and (_is_lowered(test, text) or _is_index(items, test, text)):
             return False
         return _spelt(text, value) and (has_p or counted) and (possible or "df" in quantities)
     if anchor == "z":
@@ -230,9 +230,18 @@ def _is_lowered(test: Item, text: str) -> bool:
     return first is not None and text[test.start : first.start].rstrip().endswith("_{")
 
 
-def _is_index(test: Item) -> bool:
-    """Say whether the df of a test are so few that they may be an argument, a lag, an index."""
-    return any(part.quantity == "df" and part.high < _FEWEST for part in test.parts)
+def _is_index(items: Sequence[Item], test: Item, text: str) -> bool:
+    """Say whether the df of a correlation may be an argument, a lag, an index.
+
+    They are so few, or another one stands near and no word tells what the letter means.
+    """
+    if any(part.quantity == "df" and part.high < _FEWEST for part in test.parts):
+        return True
+    around = _OF_NUMBER.findall(text, max(0, test.start - 160), test.end + 160)
+    return len(around) > 1 and not near(_RELATED, items, text)
+
+
+_OF_NUMBER = expression(r"(?<!\w)r\s?\(\s?\d")
 
 
 def _is_listed(items: Sequence[Item], test: Item, text: str) -> bool:

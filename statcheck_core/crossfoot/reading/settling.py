@@ -154,7 +154,11 @@ def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item
     bare = [
         number for number in tests if not any(item.head == "p" for item in groups[number].items)
     ]
-    if len(tests) < 2 or not bare or not ps or ps[0][0] < tests[-1]:
+    if len(tests) < 2 or not bare or not ps:
+        return {}
+    if len(ps) == 1 and "plural" in ps[0][1].flags and _leads(ps[0][1], groups[tests[0]]):
+        return dict.fromkeys(tests, ps[0][1])
+    if ps[0][0] < tests[-1]:
         return {}
     if len(ps) == len(tests):
         return {number: item for number, (_, item) in zip(tests, ps, strict=True)}
@@ -163,6 +167,11 @@ def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item
     # More p than one, and not one for each, or one behind a list: whose they are is not said.
     listed = any("listed" in item.flags for item in groups[tests[-1]].items if item.head != "p")
     return {tests[-1]: None} if len(ps) > 1 or listed else {}
+
+
+def _leads(p: Item, group: Group) -> bool:
+    """Say whether a p stands before a test: ``both p ≤ .01: F(2, 61) = 5.2 and …``."""
+    return all(p.start < item.start for item in group.items if item.head == group.anchor)
 
 
 def settle(group: Group, text: str) -> Group | None:
