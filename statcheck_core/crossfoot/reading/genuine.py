@@ -220,7 +220,8 @@ def _follows_or_told(items: Sequence[Item], test: Item, value: Part, text: str) 
     if _OTHER_LETTER.match(text, p.end):
         return False
     if p.start > test.start:
-        return told or _spelt(text, value)
+        alone = "\n" in text[value.end : p.start] and not text[value.end : p.start].strip()
+        return told or (_spelt(text, value) and not alone)  # settings have a line each
     return told and _LIST_MARKS.fullmatch(text, p.end, test.start) is not None
 
 

@@ -97,6 +97,10 @@ _IN_A_MODEL = expression(
 )
 
 
+#: A p in a bracket of its own, in a new clause: `(F = 42.7), and another test did not (p = .38)`
+_OTHER_CLAUSE = expression(r"\)[^()]{0,80}(?:,\s(?:and|but|while|whereas)\s|;)[^()]{0,80}\($")
+
+
 class Group(NamedTuple):
     """Items of one claim, in printed order; ``anchor`` is the test's quantity, or None."""
 
@@ -127,6 +131,8 @@ def gap(text: str, first: Item, second: Item) -> float:
         opening = {word.lower() for word in _WORD.findall(between, end.end())}
         goes_on = opening <= _OPENING and not words and _is_listed(text, second)
         strength = max(strength, 2.5 if goes_on else APART)
+    elif second.head == "p" and _OTHER_CLAUSE.search(between):
+        strength = max(strength, APART)
     elif between.count(")") > between.count("("):
         strength += 1.0
     if re.search(r"\b(?:and|und|et|y|e|en|och|og|while|but|whereas)\b", between):

@@ -45,12 +45,12 @@ class Item(NamedTuple):
         variance), ``told`` (a sample size in words), ``lower`` (a lower-case f), ``by-name`` (a
         test by a name that means much else), ``labelled`` (a letter with a label of its own),
         ``perhaps-se`` (its last number may be an SE), ``nameless`` (an estimate told in words,
-        which may hide its sign), ``if-ratio`` and ``if-enclosed`` (an estimate only if its test
-        or its interval tells so),
-        ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in order),
-        ``grown`` (an R² told beside that of a smaller model), ``estimated`` (what the
+        which may hide its sign), ``weakly`` (in words that may mean else), ``if-ratio`` and
+        ``if-enclosed`` (an estimate only if its test or its interval tells so),
+        ``all`` (printed once for all tests of the sentence), ``dealt`` (one of several p in
+        order), ``grown`` (an R² told beside that of a smaller model), ``estimated`` (what the
         test before it is of), ``wald`` (an F that does not follow from R²), ``letter`` (a p that
-        counts predictors).
+        counts predictors), ``of-what`` (words say what it is of).
     """
 
     head: str
@@ -85,5 +85,7 @@ SCANNER_FLAGS = frozenset(
         "estimated",
         "wald",
         "letter",
+        "of-what",
+        "weakly",
     }
 )

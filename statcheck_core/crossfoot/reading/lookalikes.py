@@ -36,7 +36,7 @@ _FORM = expression(
 #: "t = 2.228 leaves .025 in each tail"
 _OF_DISTRIBUTION = expression(
     r"\b(?:each|either|upper|lower|one|right|left)\stail\b|tail\sarea|\bleaves\s(?:p\s?=|0?\.0|\d%)"
-    r"|\btabulated\b|\btables?\sof\s(?:the\s)?[tF]\b"
+    r"|(?<![Ft][\s-])\btabulated\b|\btables?\sof\s(?:the\s)?[tF]\b"
 )
 #: "a(n) = 2n, t(4) = 7.5": values of functions
 _FUNCTIONS = expression(r"\b[abcghkvxyABC]\((?:\d{1,2}|[a-z])\)\s?=")

@@ -18,7 +18,7 @@ adj ame aor ass ave bar bes bet cha chi coe coh cor cra ddl ddo deg del den dev 
 dof err est eta exp fch fin fli fre fri fst fva gdl gen gra hed hel inc int jic kat ken kes khi
 kik kji koe kon kor kru lev lik log lrt lut mar mdi mea min mse msr msw mul nob num obs odd ome
 pad par pbo pco pea pen pes pfd pho poi pon pow ppe pro ptu ptw pva qui reg res rho rms rob roo
-rse rsq rva sam sco see sem sig slo spe sta std ste sti sto stu tau tes tol tst tte tva val vap
+rse rsq rva sam sco seb see sem sig slo spe sta std ste sti sto stu tau tes tol tst tte tva val vap
 vif vri wal wsp
 """
 _OPENINGS = frozenset(_FIRST_LETTERS.split())

@@ -67,7 +67,7 @@ NOTATIONS: tuple[Notation, ...] = (
         r"(?:(?i:(?:asympto?\w*\.?\s)?sig\.(?:\s(?:asint[oó]tica|exacta|asymp\.))?(?:\s?F)?(?:\s?change)?(?:\s?\((?:2|zwei|two|bi|à\s2|a\s2)[^()\n]{2,18}\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation|cación|cância|cativité|catività|cantie)(?:\s?\((?:2|zwei|two|bi|à\s2|a\s2)[^()\n]{2,18}\))?(?=\s?[=<])"
         r"|associated\sprobability(?:\svalue)?)"
         r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
-        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P(?:r(?:ob)?)?\s?\(\s?\|[TtZz]\|\s?>=?\s?\|?[tz]\|?\s?\)|Pr(?=\s?=\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
+        r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P(?:r(?:ob)?)?\s?\(\s?\|[TtZz]\|\s?>=?\s?\|?[tz]\|?\s?\)|Pr(?=\s?=\s?[01]?\.\d)|[pP]rob(?:ability)?\.?(?=\s?[<=>]\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
         True,
         "sSPpa",
         "Prob > F = 0.0312, F(2, 57) = 3.69",
@@ -83,7 +83,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc)(?![a-z])"
+        rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc|level(?=\s?[=<]\s?0?[.](?!(?:05|01|001|10?)\b)))(?![a-z])"
         rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|Prob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
         True,
         "pPv",
@@ -162,8 +162,8 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "chi2-of",
-        r"(?:[HQ](?=\s?=\s?\d{1,4}[.,]\d+\s?[,;(]\s?d\.?f|\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
-        r"|(?:LRT?|[dD]eviance(?:\s(?:dropped|fell|decreased|declined|was\sreduced)(?=\sby\s))?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|LM|BP|卡方值?)(?=\s{0,14}[=(]|\s(?:was|of|by)\s))",
+        r"(?:[GHQ](?=\s?=\s?\d{1,4}[.,]\d+\s?[,;(]\s?d\.?f|\s?(?:\(\s?(?:df\s?=\s?)?|_\{)\d{1,3}\s?[,)}])|G(?:²|\^\{?2\}?)(?=\s?\()"
+        r"|(?:LRT?|[dD]eviance(?:\s(?:dropped|fell|decreased|declined|was\sreduced)(?=\sby\s))?|(?i:likelihood[\s-]ratio|log-?rank|score|wald)(?:\s(?:statistic|test))?(?:\s?\(log-?rank\)\stest)?|LM|BP|卡方值?)(?=\s{0,14}[=(]|\s(?:was|of|by|for)\s))",
         False,
         "HQGLlSsWwB卡dD",
         "The Kruskal–Wallis test was significant, H(2) = 9.21, p = .010",
@@ -210,7 +210,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "se",
-        rf"(?:(?i:(?:robust\s)?(?:std[._]?|standard)\s?(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.|{ERROR_NAMES}|E[EPST](?=\s?=)|(?:SE|se)(?:\s?_\{{?\w{{1,4}}\}}?|\s[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
+        rf"(?:(?i:(?:robust\s)?(?:std[._]?|standard)\s?(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.(?:\s?d\.)?|{ERROR_NAMES}|E[EPST](?=\s?=)|(?:SE|se)(?:\s?_\{{?\w{{1,4}}\}}?|\s?[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
         True,
         "rsSReEk标標표",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
@@ -254,9 +254,9 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation("tolerance", r"[Tt]olerance(?![a-z])", False, "tT", "tolerance = .54, VIF = 1.85"),
     Notation(
         "b-se",
-        r"(?:[bBβ]|(?i:estimate|slope|coefficient))\s?(?:\(\s?±?\s?(?:SE|s\.e\.|S\.E\.|standard\serror)\)|±\s?(?:1\s)?(?:SE|s\.e\.|S\.E\.|standard\serror))",
+        r"(?:[bBβ]|(?i:estimate|slope|coefficient|(?:mean\s)?(?:difference|change)|effect))\s?(?:\(\s?±?\s?(?:SE|s\.e\.|S\.E\.|standard\serror)\)|±\s?(?:1\s)?(?:SE|s\.e\.|S\.E\.|standard\serror))",
         False,
-        "bBβeEsScC",
+        "bBβeEsScCdDmM",
         "B(SE) = 0.81 (0.30), t(90) = 2.70, p = .008",
     ),
     Notation(
@@ -283,9 +283,9 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "b",
-        r"(?:(?:mean\s)?difference|(?:(?:average|mean)\s)?marginal\seffect|AME|gradient)(?=\s?=\s?[-+]?[.\d])",
+        r"(?:(?i:(?:mean\s)?difference|(?:(?:average|mean)\s)?marginal\seffect|gradient)|AME)(?=\s?=\s?[-+]?[.\d])",
         True,
-        "dmagA",
+        "dDmMaAgG",
         "difference = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(

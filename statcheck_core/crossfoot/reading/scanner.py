@@ -21,7 +21,14 @@ from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.rsquared import of_two_models, read_r_squared
 from crossfoot.reading.told import told
 from crossfoot.reading.unnamed import unnamed
-from crossfoot.reading.values import AND, count_at, known_number, number_at, value_after
+from crossfoot.reading.values import (
+    AND,
+    count_at,
+    is_of_something,
+    known_number,
+    number_at,
+    value_after,
+)
 from crossfoot.reading.words import ALL, RESPECTIVELY
 
 _RATIO = expression(
@@ -37,8 +44,15 @@ _DEALT = expression(
     rf"[^.]*?(?:[.]\d[^.]*?)*?(?:{RESPECTIVELY}|(?<!\w)p'?s\b"
     r"|(?<!\w)[pP]\s?=\s?0?[.,]\d{1,5},\s(?:and\s)?0?[.,]\d)"
 )
+#: `OR per 10-year increase = 1.31`
+_PER = expression(
+    r"\sper\s(?:\d{1,4}[-\s])?[^\W\d]\w{0,20}(?:\s(?:increase|change|rise|higher|lower))?"
+)
+_PER_UNIT = frozenset({"b", "β", "beta", "odds_ratio"})
 #: What may be printed once for all tests of a sentence.
 _ONCE_FOR_ALL = frozenset({"df-pair", "df", "n"})
+#: What belongs to the test beside it, unless it is said to be of something else.
+_OF_A_MODEL = frozenset({"R2", "R2_adj", "R2_change", "eta2", "eta2_partial", "omega2", "f2"})
 _FOR_ALL_BEFORE = expression(rf"(?<!\w){ALL}(?:\s[a-z]+){{0,2}}\s$", re.IGNORECASE)
 _FOR_ALL_BEHIND = expression(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
@@ -97,6 +111,8 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
         item = _READERS.get(name.notation.quantity, _read_plain)(text, name)
         if item is None or _is_place(text, item):
             continue
+        if item.head in _OF_A_MODEL and is_of_something(text.folded, name.match.end(), item):
+            item = item._replace(flags=(*item.flags, "of-what"))
         if item.head in _ONCE_FOR_ALL and (
             _is_for_all(text, item) or _is_of_list(text, item, listed_to)
         ):
@@ -168,7 +184,8 @@ def _read_plain(text: Text, name: Name) -> Item | None:
     """Read a name, a relation and one number; after a coefficient perhaps ``± SE``."""
     quantity = name.notation.quantity
     at = name.match.end()
-    value = value_after(text, at, quantity, name)
+    per = _PER.match(text.folded, at) if quantity in _PER_UNIT else None
+    value = value_after(text, per.end() if per is not None else at, quantity, name)
     if value is None:
         return None
     if quantity == "R" and value.low > 1 and "." not in text.folded[value.start : value.end]:

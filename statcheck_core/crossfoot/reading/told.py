@@ -17,7 +17,7 @@ _OF = (
     r"(?:of\s|der\s|de\s|da\s|do\s|della\s|des\s|van\s|av\s|af\s|in\s)?(?:the\s|la\s|el\s|l'|de\s)?"
 )
 _ADJUSTED_SHARE = (
-    rf"\(\s?(?:{ADJUSTED}[^()%\d]{{0,12}}(?P<adjusted>{_SHARE})"
+    rf"[(—-]\s?(?:{ADJUSTED}[^()%\d]{{0,12}}(?P<adjusted>{_SHARE})"
     rf"|(?P<adjusted_too>{_SHARE})\s?{ADJUSTED})"
 )
 _VARIANCE_WORD = (
@@ -26,9 +26,9 @@ _VARIANCE_WORD = (
 )
 _EXPLAINED = expression(
     # 21% of the variance
-    rf"(?P<before>{_SHARE})(?:\s{_ADJUSTED_SHARE}\s?\))?(?:的|\s{_OF}|\s?)(?:total\s|overall\s|observed\s"
+    rf"(?P<before>{_SHARE})(?:\s?{_ADJUSTED_SHARE}\s?[)—-])?(?:的|\s{_OF}|\s?)(?:total\s|overall\s|observed\s"
     rf"|explained\s|gesamten?\s|totale\s)?{_VARIANCE_WORD}"
-    rf"(?:\w{{0,8}}\s{_ADJUSTED_SHARE.replace('adjusted', 'behind')}\s?\))?"
+    rf"(?:\w{{0,8}}\s?{_ADJUSTED_SHARE.replace('adjusted', 'behind')}\s?[)—-])?"
     # 21% of rut depth variance was accounted for
     rf"|(?P<of>{_SHARE})\sof\s(?:[^\W\d]+\s){{1,4}}varia\w+\s(?:was|is|were|are|could\sbe|can\sbe)\s(?:explain|account)ed"
     # the variance explained was 21%
@@ -38,9 +38,11 @@ _EXPLAINED = expression(
     # … raised this to 24.3%; … and 8% of that in cost
     rf"|(?:rais|increas|brought|lift|improv)\w*\s(?:this|it|that)\sto\s(?P<to>{_SHARE})"
     rf"|(?<=\band\s)(?P<also>{_SHARE})\sof\s(?:that|it)\b"
+    # …, and age a further 12%
+    rf"|(?:further|additional|extra|another)\s(?P<more>{_SHARE})(?!\s?of|\w)"
     # the proportion of variance explained was .21
     rf"|(?:proportion|share|Anteil|part|proporción|quota)\s(?:of|der|de|della)\s(?:the\s|la\s)?(?:\w+\s)?{_VARIANCE_WORD}\w*"
-    rf"(?:\s[^\W\d]+){{0,2}}\s(?:{VERB}|=)\s(?P<decimal>0?[.,]\d+)",
+    rf"(?:\s[^\W\d]+){{0,7}}?\s(?:{VERB}|=)\s(?P<decimal>0?[.,]\d+)",
     re.IGNORECASE,
 )
 #: One of these stands in whatever the pattern matches; looking for them first is cheaper.
@@ -67,7 +69,13 @@ _FURTHER = expression(
 )
 #: Beside what the share is one of: the number of predictors, or other variables already in.
 _ADJUSTING = expression(
-    r"[^.;(]{0,60}?(?:adjust|correct)\w*(?:\sfor\s(?:the\s)?(?:number\sof|degrees\sof|df)|(?!\sfor)\b)",
+    r"[^.;(]{0,60}?\b(?:after|when|once|if)\s(?:being\s)?(?:adjust|correct)\w*(?:\sfor\s(?:the\s)?(?:number\sof|degrees\sof|df)|(?!\sfor)\b)"
+    r"|[^.;(]{0,60}?\b(?:adjust|correct)ed\sfor\s(?:the\s)?(?:number\sof|degrees\sof|df)",
+    re.IGNORECASE,
+)
+#: 41% of the variation (adjusted R²)
+_NAMED_BEHIND = expression(
+    rf"\s?[(\[]\s?(?P<adjusted>{ADJUSTED}\s)?R\s?(?:²|\^\{{?2\}}?|2|-squared?)\s?[)\]]",
     re.IGNORECASE,
 )
 _BEYOND = (
@@ -82,9 +90,9 @@ _GROWN_BY = expression(
     re.IGNORECASE,
 )
 _REVERSED = expression(
-    r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
+    r"(?<![\w.])(?P<number>0?[.,]\d+)\s?(?P<sign>[=<>≤≥])\s?[pP](?!\w|\s?[<>=≤≥])"
 )
-_TURNED = {"<": ">", ">": "<", "≤": "≥", "≥": "≤"}
+_TURNED = {"=": "=", "<": ">", ">": "<", "≤": "≥", "≥": "≤"}
 _WORD_IN_BRACKETS = expression(r"\(\s?[^\W\d]")
 _ADJUSTED = expression(rf"\(\s?{ADJUSTED}:?\s?=?\s?(?P<number>0?[.,]\d+)(?=\s?[,;)])")
 _INSIGNIFICANT = expression(r"(?<=[,;(])\s?(?P<ns>n\.?\s?s\.?|NS|N\.S\.)(?![\w.]*\w)")
@@ -144,7 +152,9 @@ def told(text: Text, start: int, end: int) -> Iterator[Item]:
 
 def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
     """Yield the explained variance of ``6.8% of the variance`` or ``32% and 40% of …``."""
-    group = next(key for key in ("before", "after", "of", "to", "also", "decimal") if match[key])
+    group = next(
+        key for key in ("before", "after", "of", "to", "also", "more", "decimal") if match[key]
+    )
     first, last = match.span(group)
     if text.folded[first] == "%":  # Turkish writes the sign first
         first += 1
@@ -156,6 +166,11 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
         adjusted = _share(text, "R2_adj", *match.span(key)) if match[key] else None
         if adjusted is not None:
             yield Item("R2_adj", (adjusted,), adjusted.start, adjusted.end)
+    named = _NAMED_BEHIND.match(text.folded, match.end())
+    if named is not None:
+        part = part._replace(quantity="R2_adj" if named["adjusted"] else quantity)
+        yield Item(part.quantity, (part,), first, named.end())
+        return
     flags: tuple[str, ...] = ("percent",)
     at = first
     while (earlier := _LISTED_BEFORE.search(text.folded, max(start, at - 20), at)) is not None:
@@ -177,7 +192,8 @@ def _kind_of_share(folded: str, start: int, match: re.Match[str]) -> str:
     if _ADJUSTING.match(folded, last, last + 100):
         return "R2_adj"
     if (
-        _FURTHER.search(folded, max(start, first - 24), first)
+        match["more"]
+        or _FURTHER.search(folded, max(start, first - 24), first)
         or _BEYOND_BEFORE.search(folded, max(start, first - 120), first)
         or _BEYOND_BEHIND.match(folded, last, last + 100)
     ):

@@ -16,7 +16,7 @@ from crossfoot.reading.values import AND, known_number
 from crossfoot.reading.words import CHANGED_BY, INTERVAL
 
 _ERROR = (
-    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?|s\.\s?e\.|(?:standard|std\.?)\serr(?:ors?|\.))"
+    r"(?:(?:[A-Za-z][\w-]{2,14}\s)?(?:S\.?\s?E\.?D?|s\.\s?e\.(?:\s?d\.)?|(?:standard|std\.?)\serr(?:ors?|\.))"
     r"(?:_\{?\w{1,4}\}?)?)"
 )
 #: A standard error or an interval that opens a bracket or goes on a list.
@@ -27,7 +27,9 @@ _SPREAD = expression(
 )
 #: The number before it, with what it counts in.
 _WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
-_NUMBER = expression(rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?:{_WORD}){{0,5}}$")
+_NUMBER = expression(
+    rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?P<unit>(?:{_WORD}){{0,5}})$"
+)
 _SPREAD_SIGNS = (
     "SE",
     "S.E",
@@ -46,16 +48,18 @@ _SPREAD_SIGNS = (
 )
 #: An estimate that is said to be one, or a change by so much.
 _ESTIMATED = expression(
-    r"(?:\b(?:coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|change|gain|loss|rise|drop|fall|decline"
-    r"|increase|decrease|reduction|improvement|advantage|benefit|premium|penalty|gap)s?\b[^.;:()=\d]{0,60}[\s,(]{1,3}"
+    r"(?:\b(?:(?P<strong>coefficient|estimate[sd]?|effect|slope|elasticity|gradient|difference|gap)|change|gain|loss|rise|drop|fall|decline"
+    r"|increase|decrease|reduction|improvement|advantage|benefit|premium|penalty)s?\b[^.;:()=\d]{0,60}[\s,(]{1,3}"
     rf"|{CHANGED_BY}\s|\b(?:Differenz|Unterschied|différence|diferencia|differenza|diferença|verschil|skillnad|forskel"
     r"|forskjell)(?:en)?\b[^.;:()=\d]{0,40}\s|\bby\s|\bassociated\swith\s|\b(?:add|cost|sav|gain|lost|los|cut)(?:ed|e?s|t|ing)?\s)(?:an?\s)?(?:(?:average|further|additional|extra)\s(?:of\s)?|about\s|only\s)?$",
     re.IGNORECASE,
 )
-_GOES_ON = expression(rf"[^()\[\]]{{0,40}}[)\]]\s?(?:,\s?)?(?:{AND}\s|,\s)(?:{AND}\s)?(?:by\s)?")
+_GOES_ON = expression(
+    rf"[^()\[\]]{{0,40}}[)\]]\s?(?:,\s?)?(?:{AND}\s|,\s)(?:{AND}\s)?(?:[^\W\d_]+\s){{0,4}}"
+)
 #: A ratio is no coefficient, and the spread of a mean no test of it.
 _OTHERWISE = expression(
-    r"ratio|odds|hazard|\brisk\b|-fold|\btimes\b|\b(?:mean|average|median)\b(?!\s(?:difference|change|effect))"
+    r"ratio|factor|\b(?:a?OR|RR|HR|IRR)\b|odds|hazard|\brisk\b|-fold|\btimes\b|\b(?:mean|average|median)\b(?!\s(?:difference|change|effect))"
     r"|\bR\b|\bcorrelat",
     re.IGNORECASE,
 )
@@ -90,7 +94,7 @@ def _candidates(text: Text, start: int, end: int) -> Iterator[Item]:
     if folded.find("±", start, end) >= 0 or folded.find("+/-", start, end) >= 0:
         for match in _WITH_TEST.finditer(folded, start, end):
             pair = known_number(text, match, "b", "b"), known_number(text, match, "se", "se")
-            yield from _item(*pair, "if-ratio")
+            yield from _item(*pair, "weakly", "if-ratio")
 
 
 #: How far back the number, and the words that tell what it is, may begin, in characters.
@@ -109,12 +113,17 @@ def _told_before(text: Text, spread: re.Match[str], start: int, earlier: int) ->
     first = match.start("b")
     lead = folded[max(0, first - _LEAD) : first]
     told = _ESTIMATED.search(lead)
-    if (told is None or _OTHERWISE.search(told.group())) and not (
-        0 <= earlier <= first and _GOES_ON.fullmatch(folded, earlier, first)
-    ):
+    additive = "point" in match["unit"]
+    if told is not None and not additive and _OTHERWISE.search(told.group() + match["unit"]):
+        told = None
+    if told is None and not (0 <= earlier <= first and _GOES_ON.fullmatch(folded, earlier, first)):
         return
     error = known_number(text, spread, "se", "se") if spread["se"] else None
-    flags = () if error is not None or folded[spread.end() - 1].isdigit() else ("if-enclosed",)
+    flags = []
+    if told is None or not told["strong"]:
+        flags.append("weakly")
+    if error is None and not folded[spread.end() - 1].isdigit():
+        flags.append("if-enclosed")
     yield from _item(known_number(text, match, "b", "b"), error, *flags)
 
 

@@ -7,7 +7,7 @@ import re
 from crossfoot.expressions import expression
 from crossfoot.reading import numerals
 from crossfoot.reading.fold import HARD_SPACE
-from crossfoot.reading.items import WHOLE, Part, Text
+from crossfoot.reading.items import WHOLE, Item, Part, Text
 from crossfoot.reading.names import Name
 from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.words import ABOVE, BELOW, COMPUTED, COPULA, OF, VERB, VERB_UNSPACED
@@ -42,10 +42,14 @@ _OPERATION = expression(r"[\d}]\s?[/×*+-]\s?\(?[.\d]|\)\s?[(/]|[-+/]\s?\(|MS\w?
 _NUMERAL = expression(NUMERAL)
 _NOT_SIGNIFICANT = expression(r"(?:n\.?\s?s\.?|NS|N\.S\.)(?![A-Za-z])")
 #: What a name is of, before its number, or the bracket that closes behind a name.
+#: What is told so is of something else than the test beside it: `p for trend was .03`.
+_NEVER_OF = frozenset({"p", "n", "df", "df1", "df2", "se", "s", "ms"})
 _WHAT = expression(
     rf"(?:\)(?=\s)|\s(?:global\w?|omnibus|overall|{COMPUTED})|\s{OF}(?:\s[^\s\d.,;:()=<>][^\s.,;:()=<>]{{0,30}}(?:\s\d(?=\s))?){{1,7}}?)"
     rf"(?:(?<!\s[A-Za-zα-ωΔ])(?<![²}}])(?=\s?[=<>≤≥])|(?=\s{COPULA}\s))"
 )
+_OF_WHAT = expression(rf"\s{OF}\s")
+_PREPOSITION = expression(r"\b(?:with|on|to|between|from|by|than|of)\s$")
 _UNIT = expression(
     r"\s?(?:[kMGmµnc]?(?:Hz|Pa|V|W|Ω|A|g|m|s|J|N|L|eV|K|C|mol)|bar|min|sec|hours?|h|days?|weeks?"
     r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=('-]|\.(?!\s|$)|\s?[=<>(])"
@@ -94,6 +98,8 @@ def value_after(
     if damaged is not None:
         return number_at(text, damaged.end(), quantity, _DAMAGE[damaged["sign"]])
     match = _WORDS.match(folded, at)
+    if match is not None and _is_object(folded, name, match):
+        return None
     if match is None and _may_stand_bare(folded, quantity, name):
         match = _SPACES.match(folded, at)
     if match is not None:
@@ -104,9 +110,19 @@ def value_after(
     return _after_words(text, at, quantity)
 
 
+def _is_object(folded: str, name: Name, verb: re.Match[str]) -> bool:
+    """Say whether a letter is no subject of the verb behind it: ``that with Z was .42``."""
+    start, end = name.match.span()
+    if end - start > 1 or verb.start() != end or verb.group().startswith((" of", " equal", ":")):
+        return False
+    return _PREPOSITION.search(folded, max(0, start - 9), start) is not None
+
+
 def _after_words(text: Text, at: int, quantity: str) -> Part | None:
     """Return the number that words separate from its name: ``R² for the full model was .34``."""
     folded = text.folded
+    if quantity in _NEVER_OF:
+        return None
     led = folded[at : at + 1] == ")" or (
         folded[at : at + 1] == " " and folded[at + 1 : at + 2].isalpha()
     )
@@ -215,3 +231,11 @@ def _relation(match: re.Match[str]) -> str:
     if ">" in plain:
         return ">"
     return "≈" if plain == "≈" else "="
+
+
+def is_of_something(folded: str, at: int, item: Item) -> bool:
+    """Say whether words between a name that ends at ``at`` and its number say what it is of."""
+    if _OF_WHAT.match(folded, at) is None:
+        return False
+    match = _WHAT.match(folded, at)
+    return match is not None and match.end() <= item.parts[0].start
