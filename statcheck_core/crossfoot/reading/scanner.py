@@ -63,7 +63,7 @@ _OF_SOMETHING = expression(
 )
 _EXACT_BEHIND = expression(r"\s?[(\[,]\s?[pP]\s?=\s?(?=0?[.,]\d)")
 _COUNTED = expression(r"\s(?:[a-z]{2,14}\s){0,2}(?:predictor|regressor|covariate|variable|feature)")
-_ALL = expression(rf"(?<![^\W\d_]){ALL}\s$|[均都もて]\s?$")
+_ALL = expression(rf"(?<![^\W\d_]){ALL}\s$|[均都もて]\s?$", re.IGNORECASE)
 _SIDED = expression(r"\s?\(?(?P<one>one|two|1|2)-?\s?(?:sided|tailed)\)?", re.IGNORECASE)
 _ADJUSTED_NAME = expression(r"adj|corr|bonf|holm|tukey|fdr", re.IGNORECASE)
 _ADJUSTED_BEFORE = expression(
