@@ -84,7 +84,7 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "p",
         rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc)(?![a-z])"
-        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|Prob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
+        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|[Pp]rob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
         True,
         "pPv",
         "F(2, 57) = 3.90, p-value: .026",

@@ -76,7 +76,7 @@ class Word(NamedTuple):
 
 
 #: The label of a row: what stands before the first wide gap.
-_FIRST = re.compile(r"\s*(\S+(?: \S+)*)(?=  )")
+_FIRST = re.compile(r"\s*(\S+(?: \S+){0,8}?)(?=  | [-<]?\d)")
 
 
 class Line(NamedTuple):
@@ -248,7 +248,7 @@ def parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
 
 
 def label_in(line: Line) -> str | None:
-    """Return what stands before the first wide gap of a line."""
+    """Return what stands before the first wide gap, or number, of a line."""
     found = _FIRST.match(line.text)
     return found.group(1) if found is not None else None
 

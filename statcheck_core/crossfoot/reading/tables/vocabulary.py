@@ -97,7 +97,7 @@ ROLES: tuple[Role, ...] = (
         " significación significância signifikans p값 有意確率 显著性 유의확률"
         " sig(bilateral) sig(2seitig) sig(zweiseitig) signifikanz(2seitig)"
         " sig(bilatérale) sig(2zijdig) pr(>fc)"
-        " pvaluef fpvalue pcritique",
+        " pvaluef fpvalue pcritique prf prt prz prchisq",
     ),
     Role(
         "p_adjusted",
