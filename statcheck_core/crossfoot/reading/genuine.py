@@ -111,6 +111,8 @@ def _supports(items: Sequence[Item], test: Item, text: str) -> bool:
     p = next((item for item in items if item.head == "p"), None)
     if p is None or not _is_probability(p.parts[0]):
         return False
+    if "|" in text[p.start : p.end]:
+        return True  # Pr(|Z| > |z|) names its test
     first, second = (p, test) if p.start < test.start else (test, p)
     return _side(first, second, text) or near(_STATISTICAL, items, text, _BESIDE)
 

@@ -74,7 +74,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "F",
-        rf"(?:[Ff]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z])|{COMPUTED})|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})(?:\sgave)?"
+        rf"(?:[Ff]\s?(?i:[\s_-]?(?:statisti(?:c|k|ek|que|ca)|stat\.?(?![a-z])|ratio|test(?![a-z])|{COMPUTED})|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})(?:\sgave)?"
         rf"(?:\svs\.\sconstant\smodel)?|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?F(?![\w(])"
         r"|F\s?Statistic|Wald\s(?:test|F)(?=\s?:\s?\d{1,9}(?:\.\d{1,9})?\son\s\d{1,5}\sand))",
         True,
@@ -84,7 +84,7 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "p",
         rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc|level(?=\s?[=<]\s?0?[.](?!(?:05|01|001|10?)\b)))(?![a-z])"
-        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|Prob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
+        rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|[Pp]rob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
         True,
         "pPv",
         "F(2, 57) = 3.90, p-value: .026",
@@ -202,10 +202,10 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "s",
-        r"(?:(?i:residual\s(?:standard|std\.?)\s(?:error|deviation)|root\s(?:mean\ssquared?(?:\serror)?|MSE))|RMSE|RSE|SEE"
-        r"|(?i:standard\serror\sof\s(?:the\s)?(?:estimate|regression))|S(?=\s=\s[\d.]+\s+R-Sq)|s(?=\s?=\s?[\d.]))",
+        r"(?:(?i:residual\s(?:standard|std\.?)\s(?:error|deviation)|residuen-?standardfehler|error\sest[áa]ndar\sresidual|erreur\s(?:standard|type)\srésiduelle|errore\sstandard\sresiduo|root\s(?:mean\ssquared?(?:\serror)?|MSE))|RMSE|RSE|SEE"
+        r"|(?i:(?:standard|std\.?)\s?error\sof\s(?:the\s)?(?:estimate|regression))|S(?=\s=\s[\d.]+\s+R-Sq)|s(?=\s?=\s?[\d.]))",
         True,
-        "rRsS",
+        "rRsSeE",
         "residual standard error = 4.653, R² = .3251, F(2, 57) = 13.73",
     ),
     Notation(
@@ -320,7 +320,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "t",
-        rf"(?:(?:[tT]\s?(?i:[\s_-]?(?:statistic|stat\.?(?![a-z])|ratio|test(?![a-z])|{COMPUTED})"
+        rf"(?:(?:[tT]\s?(?i:[\s_-]?(?:statisti(?:c|k|ek|que|ca)|stat\.?(?![a-z])|ratio|test(?![a-z])|{COMPUTED})"
         rf"|(?:[\s_-]?(?=v)|[\s-]|(?=[値值])){VALUE})|(?:{VALUE_BEFORE})\s(?:de\s|di\s)?t"
         r")(?![a-z])"
         rf"|t(?:s|'s)?(?:(?![\w²-]|'\w)|{_SCRIPT})|t(?:[12]|_\{{[12]\}})(?=\s?\()|T(?=\s?[(\[]\s?\d)|t(?=[_₀-₉])|t(?=\d{{1,4}}(?:\.\d{{1,3}})?\s?=))",

@@ -12,6 +12,8 @@ from crossfoot.reading.tables.together import joined
 #: Longest printout whose words speak for all its tables; in a longer one those near a table do.
 _LONGEST = 20_000
 _NEAR = 800
+#: More rows are no names of tests.
+_MOST = 60
 
 
 def printout_claims(visible: Visible, prose: Prose) -> tuple[Claim, ...]:
@@ -39,8 +41,11 @@ def printout_claims(visible: Visible, prose: Prose) -> tuple[Claim, ...]:
 
 
 def _around(text: str, table: Table) -> str:
-    """Return the words that speak of a table."""
+    """Return the words that speak of a table; those of its rows speak of themselves alone."""
     if len(text) <= _LONGEST:
+        labels = [c for c in table.cells if c.column == 0 and not c.head and c.end > c.start]
+        for cell in labels if len(labels) <= _MOST else ():
+            text = text[: cell.start] + " " * (cell.end - cell.start) + text[cell.end :]
         return text
     places = [cell.start for cell in table.cells if cell.end > cell.start]
     return text[max(0, min(places) - _NEAR) : max(places) + _NEAR] if places else ""

@@ -18,7 +18,7 @@ _BEFORE = expression(
     re.IGNORECASE,
 )
 _AFTER = expression(
-    rf"[\s-]?_?[{{(]?\s?(?:(?P<adjusted>{ADJUSTED})|(?P<changed>change)|(?P<pseudo>{PSEUDO}))(?![a-z])"
+    rf"[\s-]?_?[{{(]?\s?(?:(?P<adjusted>{ADJUSTED})|(?P<changed>change)|(?P<whole>m[úu]ltiple|multiple)|(?P<pseudo>{PSEUDO}))(?![a-z])"
     r"\.?\s?[})]?",
     re.IGNORECASE,
 )

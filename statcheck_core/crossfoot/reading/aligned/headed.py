@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Sequence
 
+from crossfoot.reading.aligned.behind import HEAD_BEHIND, with_heading_below, with_words_behind
 from crossfoot.reading.aligned.lines import (
     MARKS,
     NOTE,
@@ -17,10 +18,9 @@ from crossfoot.reading.aligned.lines import (
     parted,
     starts_panel,
     tokens_of,
-    values_of,
     words_of,
 )
-from crossfoot.reading.aligned.placing import Columns, Row, placed, with_marks
+from crossfoot.reading.aligned.placing import Columns, Row, with_marks
 from crossfoot.reading.tables.headings import NOTHING, parse
 
 #: The types of columns, as some data frames print them.
@@ -100,9 +100,10 @@ def _fields(line: Line, tokens: Sequence[Token], text: str, below: Sequence[Line
         return []
     rows = [parted(text, row) for row in body]
     counts = [len(with_marks(text, values)) + bool(label) for label, values in rows if values]
-    if not counts or len(found) != max(counts):
+    named = any(label for label, values in rows if values)  # the labels may have no heading
+    if not counts:
         return []
-    return [
+    parsed = [
         Token(
             field.group(),
             line.start + field.start(),
@@ -111,6 +112,9 @@ def _fields(line: Line, tokens: Sequence[Token], text: str, below: Sequence[Line
         )
         for field in found
     ]
+    # Where the labels have no heading, each other column must have a known one.
+    spare = 1 if named and all(token.heading.roles for token in parsed) else 0
+    return parsed if 0 <= max(counts) - len(found) <= spare else []
 
 
 def matrix_in(text: str, lines: Sequence[Line], number: int) -> Columns | None:
@@ -172,6 +176,7 @@ def rows_below(
         From :func:`headings_in`.
     """
     raw: list[tuple[int, list[Word], list[Word]]] = []
+    below: tuple[int, Word] | None = None
     number = first
     end = first
     blanks = 0
@@ -183,9 +188,14 @@ def rows_below(
                 break
             number += 1
             continue
+        under = HEAD_BEHIND.search(line.text) if raw and below is None else None
+        if under is not None:  # a further heading, at the end of a row
+            word = Word(under.group(1), line.start + under.start(1), line.start + under.end(1))
+            below = number, word
+            line = Line(line.start, word.start, text[line.start : word.start])
         label, values = parted(text, line)
         if not values and columns.heads and not columns.heads[-1].heading.roles:
-            label, values = _with_words_behind(text, line, columns)
+            label, values = with_words_behind(text, line, columns)
         if NOTE.match(line.text) or _is_sentence(label, values):
             break
         if raw and blanks and len(values) < 2 and _indent(line) > _indent(lines[raw[0][0]]) + 8:
@@ -211,27 +221,8 @@ def rows_below(
     columns = _with_unnamed(
         columns, [len(with_marks(text, values)) for _, _, values in raw if values]
     )
-    return placed(text, lines, raw, columns, first), columns, end
-
-
-def _with_words_behind(text: str, line: Line, columns: Columns) -> tuple[list[Word], list[Word]]:
-    """Return label and values of a row whose last columns hold words: the name of a method."""
-    words = values_of(text, words_of(text, line.start, line.end))
-    wanted = len(columns.heads)
-    while wanted and not columns.heads[wanted - 1].heading.roles:
-        wanted -= 1
-    last = len(words)
-    while last and not is_value(words[last - 1].text):
-        last -= 1
-    first = last
-    while first and is_value(words[first - 1].text):
-        first -= 1
-    if last - first == wanted + 1 and words[first].text.isdigit():
-        first += 1  # the number of the row
-    if last - first != wanted or wanted < 2 or last == len(words):
-        return words, []
-    behind = Word(text[words[last].start : words[-1].end], words[last].start, words[-1].end)
-    return words[:first], [*words[first:last], behind]
+    rows, columns = with_heading_below(text, lines, raw, columns, first, below)
+    return rows, columns, end
 
 
 def _indent(line: Line) -> int:

@@ -208,6 +208,10 @@ class _Finder:
         for head in columns.heads:
             match = next((f for f in fields if _over(f, head, above, self.lines[number])), None)
             upper.append(match)
+        if len(fields) == 1 and not any(
+            m and not head.heading.roles for m, head in zip(upper[1:], columns.heads, strict=True)
+        ):
+            return [own]  # a title
         used = len(set(upper) - {None})
         return [tuple(upper), own] if used >= len(fields) - 1 and used else [own]
 
@@ -229,7 +233,7 @@ class _Finder:
             enough = count >= 3 or (count == 2 and pairs.tells_test(labels))
             if count > 0 and not enough:
                 waiting.append((first, number - 1, run))
-            if enough:
+            if enough and not (run and self.under_brackets(first)):
                 for begin, end, item in waiting:
                     run = [*item, *run]
                     for passed in range(begin, end + 1):
@@ -244,6 +248,13 @@ class _Finder:
                 padded = [(*row, *(None,) * (width - len(row))) for row in rows]
                 self.take(first, number - 1, self.table((), padded))
             run = []
+
+    def under_brackets(self, first: int) -> bool:
+        """Say whether numbers in brackets stand above a line, as errors of coefficients do."""
+        above = first - 1
+        while above >= 0 and self.lines[above].rule:
+            above -= 1
+        return above >= 0 and self.free[above] and self.lines[above].text.lstrip()[:1] == "("
 
     def unheaded(self, number: int) -> None:
         """Take a table without headings that has a row on this line."""

@@ -10,7 +10,11 @@ from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.tables import headings
 from crossfoot.reading.tables.headings import Heading
 
-_INK = re.compile(r"\S+")
+#: A word, or a test written out that wide gaps part from its neighbours: ``F (2, 57) = 4.312``.
+_INK = re.compile(
+    r"(?<=\s\s)[Ft]\s?\(\d[\d.]{0,9}(?:,\s?\d[\d.]{0,9})?\)\s?=\s?\d[\d.]{0,12}(?=\s\s|$)|\S+"
+)
+_WRITTEN_OUT = re.compile(r"[Ft]\s?\(.{1,24}\)\s?=\s?[\d.]+|P\s?[=<>]\s?0?\.\d+")
 #: Words that a line of headings has; two of them make it worth a closer look.
 _HEADISH = re.compile(
     r"(?i:\bdf\d?\b|\bdof\b|ddof|\bsum|\bmean[\s_]?sq|\bsq(?:uares?)?\b|\bcoeff?(?:icient)?s?\b|\bestimates?\b|std|standard|\berr(?:or)?\b|r-?sq"
@@ -55,7 +59,7 @@ _EMPTY = frozenset(
 )
 #: Lines after a table that explain it.
 NOTE = re.compile(
-    r"\s*(?:signif|note|anm|source:|legend|\*{1,3}\s?p?\s?[<=]|†|[a-e]\.\s"
+    r"\s*(?:signif|note|anm|source:|legend|\*{1,3}\s?p?\s?[<=]|†|[a-e]\.\s(?!total)"
     r"|.{0,40}in parenthes|.{0,40}in brackets|(?:robust )?standard errors)",
     re.IGNORECASE,
 )
@@ -72,7 +76,7 @@ class Word(NamedTuple):
 
 
 #: The label of a row: what stands before the first wide gap.
-_FIRST = re.compile(r"\s*(\S+(?: \S+)*)(?=  )")
+_FIRST = re.compile(r"\s*(\S+(?: \S+){0,8}?)(?=  | [-<]?\d)")
 
 
 class Line(NamedTuple):
@@ -184,6 +188,8 @@ def is_value(word: str) -> bool:
     """Say whether a word can stand in a column of numbers."""
     if word in _EMPTY:
         return True
+    if word[:1] in "FtP" and _WRITTEN_OUT.fullmatch(word):
+        return True
     if len(word) > 40 or not any(char.isdigit() for char in word):
         return False
     bare = _POINT.sub("", _DF_TAIL.sub("", word).lstrip("<>≤≥= "))
@@ -242,7 +248,7 @@ def parted(text: str, line: Line) -> tuple[list[Word], list[Word]]:
 
 
 def label_in(line: Line) -> str | None:
-    """Return what stands before the first wide gap of a line."""
+    """Return what stands before the first wide gap, or number, of a line."""
     found = _FIRST.match(line.text)
     return found.group(1) if found is not None else None
 

@@ -11,7 +11,7 @@ from crossfoot.reading.numerals import NUMERAL
 from crossfoot.reading.tables import headings
 from crossfoot.reading.tables.fits import FIT
 
-_ROLES = FIT | {"p"}
+_ROLES = FIT | {"p", "df_residual"}
 #: What is told of one test in a few lines.
 _OF_TEST = frozenset({"t", "z", "chi2", "F", "df", "df1", "df2", "statistic"})
 #: ``R-squared     =  0.3244`` at the end of a line, apart from what stands before it.

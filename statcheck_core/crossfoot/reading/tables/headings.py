@@ -83,6 +83,7 @@ _SIDED = re.compile(
     r",?\s?(?:[(\[]|(?<=[\s)]))(?P<side>one|two|1|2)[-\s]?(?:tail|side)d?(?:ed)?[)\]]?$",
     re.IGNORECASE,
 )
+_SIDED_BEFORE = re.compile(r"(?P<side>one|two|1|2)[-\s]?(?:tailed|sided)\s(?=p)", re.IGNORECASE)
 
 #: Pairs that one cell may hold; the second stands in brackets or after a comma.
 _PAIRS = frozenset(
@@ -124,8 +125,9 @@ def parse(text: str) -> Heading:
         if inner.roles and inner.roles != ("label",) and not (inner.df or inner.level):
             return inner
     sided = _SIDED.search(text)
+    sided = sided or _SIDED_BEFORE.match(text)
     if sided is not None:
-        found = parse(text[: sided.start()])
+        found = parse(text[: sided.start()] or text[sided.end() :])
         side = "one-sided" if sided["side"].lower() in {"one", "1"} else "two-sided"
         return found._replace(contexts=(*found.contexts, side)) if found.roles else NOTHING
     if _TAIL.fullmatch(text):

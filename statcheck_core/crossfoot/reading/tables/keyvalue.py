@@ -13,6 +13,8 @@ from crossfoot.reading.tables.making import Found, Sheet
 from crossfoot.reading.tables.steps import Entry, Model
 
 _ROLES = FIT | {"p", "se"}
+#: What a summary calls otherwise.
+_AS = {("se",): ("s",), ("df_residual",): ("df2",)}
 #: F and p alone, or R² alone, may be anything.
 _MORE = FIT - {"F", "R2"}
 #: A summary has no more rows, so that a list of a thousand numbers is none.
@@ -31,10 +33,10 @@ def key_values(sheet: Sheet) -> Found | None:
     for number, row in enumerate((*panel.heads, *panel.rows), start=-len(panel.heads)):
         for head, box in pairs_in(row):
             heading = headings.parse_label(head.text)
-            if not heading.roles or heading.roles[0] not in _ROLES:
+            if not heading.roles or heading.roles[0] not in {*_ROLES, "df_residual"}:
                 continue
-            if heading.roles == ("se",):
-                heading = heading._replace(roles=("s",))
+            if heading.roles in _AS:
+                heading = heading._replace(roles=_AS[heading.roles])
             found = entries_of(sheet, heading, head, box, contexts)
             entries += found
             if found:
@@ -67,7 +69,7 @@ def _apart(
 def pairs_in(row: Sequence[Box]) -> list[tuple[Box, Box]]:
     """Return the labels of a row, each with the value beside it."""
     pairs: list[tuple[Box, Box]] = []
-    for head, box in itertools.pairwise(row):
+    for head, box in itertools.pairwise([box for box in row if box.text]):
         valued = not is_blank(box.text) and content_of(box.text) is not None
         if head.text and valued and content_of(head.text) is None:
             pairs.append((head, box))

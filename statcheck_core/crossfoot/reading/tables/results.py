@@ -63,8 +63,14 @@ def _tests(sheet: Sheet, rows: frozenset[int]) -> Found:
     wanted = _ROLES | _LIMITS if _are_of_differences(sheet) else _ROLES
     several = [] if "r" in roles else each_test(sheet.columns)
     groups = side_by_side(sheet.columns, wanted) if len(several) < 2 else several
+    # A multivariate test has df of its own beside those of its effect.
+    own_df = {("df1",), ("df2",)} <= {column.heading.roles for column in sheet.columns}
     for group in groups:
-        group = [column for column in group if column.heading.roles]
+        group = [
+            column
+            for column in group
+            if column.heading.roles and not (own_df and column.heading.roles == ("df",))
+        ]
         own = {role for column in group for role in column.heading.roles}
         tests = [key for key in _KINDS if key in own and not (key == "t" and "r" in own)]
         if len(tests) == 1 and supported(sheet, tests[0], own, group):

@@ -33,6 +33,8 @@ def _named_in_words() -> Iterable[tuple[str, str]]:
     for role, stems in _STEMS.items():
         behind = _BEHIND if role in {"p", "r"} else f"{_BEHIND} {_BEHIND_TEST}"
         yield from ((stem + word, role) for stem in stems.split() for word in behind.split())
+        if role not in {"p", "r"}:
+            yield from (("teststatistic" + stem, role) for stem in stems.split())
 
 
 def _keys() -> tuple[Mapping[str, str], Mapping[str, str]]:

@@ -26,7 +26,9 @@ def by_statistic(sheet: Sheet) -> list[tuple[Sheet, frozenset[int]]]:
     """
     everything = frozenset(range(len(sheet.panel.rows)))
     place = next((n for n, c in enumerate(sheet.columns) if _is_statistic(sheet, c)), None)
-    if place is None:
+    if place is None or any(
+        c.heading.roles[:1] and c.heading.roles[0] in _TESTS for c in sheet.columns
+    ):
         return [(sheet, everything)]
     kinds: dict[str, set[int]] = {}
     for row in everything:

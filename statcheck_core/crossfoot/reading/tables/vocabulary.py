@@ -96,7 +96,8 @@ ROLES: tuple[Role, ...] = (
         " pværdi pverdi parvo wartośćp pdeğeri phodnota pvalor valoredip significatività"
         " significación significância signifikans p값 有意確率 显著性 유의확률"
         " sig(bilateral) sig(2seitig) sig(zweiseitig) signifikanz(2seitig)"
-        " sig(bilatérale) sig(2zijdig) pr(>fc)",
+        " sig(bilatérale) sig(2zijdig) pr(>fc)"
+        " pvaluef fpvalue pcritique prf prt prz prchisq",
     ),
     Role(
         "p_adjusted",
@@ -182,7 +183,8 @@ ROLES: tuple[Role, ...] = (
         " unstandardizedcoefficientsstderror unstandardizedcoefficientsse secoef secoeff"
         " erreurstandard erreursstandard errortipico erroretipico erropadrao standardfel"
         " standardfejl standardfeil keskivirhe błądstandardowy błądstd standarthata"
-        " směrodatnáchyba стандартнаяошибка 標準誤差 標準誤",
+        " směrodatnáchyba стандартнаяошибка 標準誤差 標準誤"
+        " desvtípica éctype",
     ),
     Role(
         "se_robust",
@@ -196,7 +198,8 @@ ROLES: tuple[Role, ...] = (
         "tvalue tstat tstatistic tstatistics tratio ttest twert valeurt valeurdet valort valoret"
         " twaarde tvärde t值 studentt studentst tforh0 tforh0:parameter=0 tvalues"
         " tværdi tverdi tarvo wartośćt tdeğeri thodnota valoredit estadísticot estatísticat"
-        " statistiquet t값 t통계량",
+        " statistiquet t값 t통계량"
+        " rapportot tquotient tdestudent tstudenta razãot",
     ),
     Role("z", "z Z", "zvalue zstat zstatistic zratio waldz zwert valeurz zvalues ztest"),
     Role(
@@ -255,7 +258,12 @@ ROLES: tuple[Role, ...] = (
     ),
     Role("vif", "VIF", "vif gvif varianceinflationfactor"),
     Role("tolerance", "", "tolerance tol toleranz"),
-    Role("R", "R", "multipler multiplecorrelation multiplecorrelationcoefficient"),
+    Role(
+        "R",
+        "R",
+        "multipler multiplerkorrelationskoeffizient multiplecorrelation"
+        " multiplecorrelationcoefficient",
+    ),
     Role(
         "R2",
         "R2 r2",
@@ -263,7 +271,8 @@ ROLES: tuple[Role, ...] = (
         " coefficientofdetermination determinationcoefficient r2total totalr2 bestimmtheitsmaß"
         " r平方 r方 cumulativer2 overallr2 modelr2 unadjustedr2"
         " rquadrat rcuadrado rquadrato rquadrado rkvadrat rkwadraat rcarré rdeux"
-        " coeficientededeterminación 決定係数 决定系数 결정계수",
+        " coeficientededeterminación 決定係数 决定系数 결정계수"
+        " rquadro rkwadrat",
     ),
     Role(
         "R2_adj",
@@ -276,7 +285,9 @@ ROLES: tuple[Role, ...] = (
         " rcuadradoajustado rcuadradocorregido r2ajustada r2corrigé r2aggiustato justeradr2"
         " justeratr2 justeretr2 justertr2 aangepaster2 gecorrigeerder2 skorygowaner2"
         " düzeltilmişr2 自由度調整済みr2 調整済みr2 自由度調整済み決定係数 校正r2 수정된r2"
-        " 조정된r2",
+        " 조정된r2"
+        " rquadrocorretto rquadradoajustado skorygowanyrkwadrat adjustiertesbestimmtheitsmaß"
+        " korrigiertesbestimmtheitsmaß rdeuxajusté angepasstesrquadrat",
     ),
     Role(
         "R2_change",
@@ -301,7 +312,8 @@ ROLES: tuple[Role, ...] = (
         "s",
         "S SEE RSE RMSE",
         "rmse rse see rootmse residualstandarderror residualstderror residualse residualstderr"
-        " stderroroftheestimate standarderroroftheestimate stderrorofestimate"
+        " stderroroftheestimate standardfehlerdesschätzers standarderroroftheestimate"
+        " stderrorofestimate"
         " standarderrorofestimate sigma seoftheestimate seofestimate seofregression"
         " rootmeansquareerror"
         " rootmeansquarederror residualstandarddeviation residsd residstderror",
