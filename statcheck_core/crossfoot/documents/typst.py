@@ -23,6 +23,7 @@ _STATEMENT = expression(
     r"|state|metadata|line|image|lorem)\b"
 )
 _CALL = expression(r"[ \t]*#(figure|table|align|block|box|grid|rect)[ \t]*\(")
+_FLOAT = expression(r"[ \t]*#(?:figure|table)[ \t]*\(")
 _TABLE = expression(r"\btable[ \t]*\(")
 _CAPTION = expression(r"\bcaption:[ \t\n]*(?:figure\.caption\([^()\n]{0,200}\))?\[")
 _BALANCE = expression(r'"(?:[^"\\\n]|\\.){0,2000}"|[()\[\]{}]')
@@ -124,7 +125,8 @@ class _Splitter:
         """Handle a paragraph."""
         last = number + 1
         while last < len(self.lines.lines) and not self.lines.blank(last):
-            if _HEADING.match(self.lines.lines[last]) or _FENCE.match(self.lines.lines[last]):
+            line = self.lines.lines[last]
+            if _HEADING.match(line) or _FENCE.match(line) or _FLOAT.match(line):
                 break
             last += 1
         return self.lines.add("prose", number, last)

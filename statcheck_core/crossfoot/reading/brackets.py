@@ -59,7 +59,7 @@ _PAIR_BEFORE = expression(
     r"(?P<b>\d+(?:[.,]\d+)?)\s?\)?\s?$"
 )
 _ONE_BEFORE = expression(r"(?<![\d.,])(?P<a>\d+(?:[.,]\d+)?)\s?$")
-_TRAILING_PAIR = expression(rf"\*{{0,4}}\s?\((?P<a>{COUNT})\s?[,;]\s?(?P<b>{COUNT})\)")
+_TRAILING_PAIR = expression(rf"\*{{0,4}}\s?(?:_\{{)?\((?P<a>{COUNT})\s?[,;]\s?(?P<b>{COUNT})\)\}}?")
 _ONE_DECIMAL = expression(r"\s?[=:]?\s?\d+,\d+(?!\d)")
 _TURKISH = expression(r"[ıİşŞğĞ]")
 _F_BEFORE = expression(r"(?<![A-Za-z])F(?![A-Za-z])")

@@ -106,7 +106,7 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
     done, listed_to = start, -_NEAR
     listed = False  # whether several numbers of one test have been read
     for name in names(text.folded, start, end):
-        if name.match.start() < done:
+        if name.match.start() < done or _is_event(text.folded, name.match.start()):
             continue
         item = _READERS.get(name.notation.quantity, _read_plain)(text, name)
         if item is None or _is_place(text, item):
@@ -143,6 +143,17 @@ def _is_place(text: Text, item: Item) -> bool:
         and not before[:-3].isalpha()
         and len(item.parts) == 1
     )
+
+
+def _is_event(folded: str, start: int) -> bool:
+    """Say whether what starts here is an event, whose probability is told: ``P(F > 3.16)``."""
+    return (
+        folded[start - 1 : start] in {"(", "|"}
+        and _PROBABILITY_OF.search(folded, max(0, start - 8), start) is not None
+    )
+
+
+_PROBABILITY_OF = expression(r"(?<![A-Za-z])[pP](?:r|rob)?\s?\(\s?\|?$")
 
 
 def _is_for_all(text: Text, item: Item) -> bool:

@@ -55,7 +55,7 @@ _UNIT = expression(
     r"|years?|°[CF]?|µ|pounds?|euros?|dollars?|feet|inch(?:es)?|miles?|cups?|tsp|tbsp|pints?|folds?|per\s(?:annum|year|month|week|day|hour))(?![\w=('-]|\.(?!\s|$)|\s?[=<>(])"
 )
 _RATE = expression(r"\s?[A-Za-zµ]{1,4}[23²³]?\s?/\s?[a-zµ]{1,4}[23²³]?(?![\w(])")
-_GLUED = expression(r"[A-Za-z_°]|[.:]\d|\s?[×x/]\s?\(?\d")
+_GLUED = expression(r"[A-Za-z°]|_(?!\{\(\d)|[.:]\d|\s?[×x/]\s?\(?\d")
 # After a numeral without a point, a comma and a digit are more of it; after one with, a list.
 _GOES_ON = expression(r",\d")
 _COUNTED = expression(r"\s?d\.?f\b(?!\s?[=:])")
