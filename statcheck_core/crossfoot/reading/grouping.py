@@ -97,6 +97,8 @@ _IN_A_MODEL = expression(
 )
 
 
+#: What spreads around the estimate before it.
+_SPREADS = frozenset({"ci", "se"})
 #: A p in a bracket of its own, in a new clause: `(F = 42.7), and another test did not (p = .38)`
 _OTHER_CLAUSE = expression(r"\)[^()]{0,80}(?:,\s(?:and|but|while|whereas)\s|;)[^()]{0,80}\($")
 
@@ -131,13 +133,24 @@ def gap(text: str, first: Item, second: Item) -> float:
         opening = {word.lower() for word in _WORD.findall(between, end.end())}
         goes_on = opening <= _OPENING and not words and _is_listed(text, second)
         strength = max(strength, 2.5 if goes_on else APART)
+    elif (
+        first.head in _SPREADS
+        and second.head in _COEFFICIENT
+        and _closes(text[first.start : second.start])
+    ):
+        strength = max(strength, APART)  # `4.2 mg (95% CI 3.1-5.6), slope 1.3`
     elif second.head == "p" and _OTHER_CLAUSE.search(between):
         strength = max(strength, APART)
-    elif between.count(")") > between.count("("):
+    elif _closes(between):
         strength += 1.0
     if re.search(r"\b(?:and|und|et|y|e|en|och|og|while|but|whereas)\b", between):
         strength += 1.5
     return strength
+
+
+def _closes(between: str) -> bool:
+    """Say whether a bracket that is open before a text is closed in it."""
+    return between.count(")") > between.count("(")
 
 
 def _is_listed(text: str, item: Item) -> bool:

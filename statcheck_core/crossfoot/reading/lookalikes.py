@@ -41,7 +41,9 @@ _OF_DISTRIBUTION = expression(
 #: "a(n) = 2n, t(4) = 7.5": values of functions
 _FUNCTIONS = expression(r"\b[abcghkvxyABC]\((?:\d{1,2}|[a-z])\)\s?=")
 #: "A value of t = 2.0 was used as cut-off."
-_USED = expression(r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion)\b")
+_USED = expression(
+    r"[^.;(]{0,30}\b(?:cut-?off|threshold|criterion|(?:is|are|was|were|be)\s(?:needed|required|necessary))\b"
+)
 #: F as a function of two numbers: `F(x, y)`, "the value of the function".
 _FUNCTION = expression(
     r"(?<![A-Za-z])F\(\s?[a-z]\s?,\s?[a-z]\s?\)|\b(?:of|der|de|della|da|av)\s(?:the\s|la\s)?"

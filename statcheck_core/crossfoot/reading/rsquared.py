@@ -34,8 +34,8 @@ _GREW = expression(
 )
 #: R² rose from .12 in Model 1 to .20 in Model 2; the variance explained grew from 12% to 20%.
 _FROM_TO = expression(
-    rf"(?P<name>(?P<adjusted>{ADJUSTED}[\s-])?R\s?(?:²|\^\{{?2\}}?|2|-squared?)|varia(?:nce|tion)(?:\sexplained)?)(?:\s\w+ly)?"
-    r"\s(?:increased|rose|improved|grew|went|climbed|changed|dropped|fell|decreased)(?:\s\w+ly)?"
+    rf"(?P<raised>(?:rais|increas|improv|lift|boost|brought|lower|reduc)\w*\s(?:the\s)?)?(?P<name>(?P<adjusted>{ADJUSTED}[\s-])?R\s?(?:²|\^\{{?2\}}?|2|-squared?)|varia(?:nce|tion)(?:\sexplained)?)"
+    r"(?(raised)|(?:\s\w+ly)?\s(?:increased|rose|improved|grew|went|climbed|changed|dropped|fell|decreased)(?:\s\w+ly)?)"
     rf"\sfrom\s(?P<first>{NUMERAL})(?:\s[^.;()=<>]{{1,40}}?)??\sto\s(?P<second>{NUMERAL})",
     re.IGNORECASE,
 )
