@@ -27,6 +27,7 @@ class TestMethodsToldLast:
         holm = "All pairwise *p* values were adjusted by Holm's method."
         assert found("# Results", TRIPLED) == [("conflict", "p-from-t")]
         assert found("# Results", TRIPLED, "# Methods", holm) == []
+        assert found("# Results", TRIPLED.replace("35", "01"), "# Methods", holm) != []
         robust = "We used robust standard errors."
         assert contexts("# Results", FIT, "# Methods", robust) == [("robust",)]
 
@@ -48,6 +49,7 @@ class TestWhatIsSpokenOfElsewhere:
         told = "Effects were followed up with Bonferroni-corrected comparisons."
         assert found(told, TRIPLED) == []
         assert found(told, FALSE) == [("doubt", "p-from-t")]
+        assert found(told, TRIPLED.replace(".035", ".001")) == [("conflict", "p-from-t")]
 
     def test_any_larger_p_may_be_a_corrected_one_and_none_that_is_smaller(self) -> None:
         told = "Tukey's HSD followed."
@@ -75,9 +77,14 @@ class TestWhatIsSpokenOfElsewhere:
 
 class TestASentenceAmongResults:
     def test_it_speaks_for_the_section_if_it_speaks_of_all(self) -> None:
-        said = f"{FIT} Comparisons were Bonferroni-corrected."
+        said = f"{FIT} All *p* values were Bonferroni-corrected."
         assert contexts(said, TRIPLED)[1] == ("adjusted-p",)
         assert contexts(said, "# Another", TRIPLED)[1] == ()
+
+    def test_of_comparisons_alone_it_explains_what_is_larger(self) -> None:
+        said = f"{FIT.replace('8.74', '22.24')} Comparisons were Tukey-adjusted."
+        assert found(said, TUKEY) == []
+        assert found(said, "# Another", TUKEY) == [("doubt", "p-from-t")]
 
     def test_one_test_of_several_in_a_sentence_may_be_one_sided(self) -> None:
         both = (

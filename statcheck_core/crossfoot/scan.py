@@ -96,6 +96,5 @@ def _in_scope(
     for start, claims, held in found:
         for claim in claims:
             number += 1
-            claim = in_scope(claim, held, whole)
-            elsewhere = whole.spoken.difference(claim.context)
+            claim, elsewhere = in_scope(claim, held, whole)
             yield Placed(f"c{number}", start, audit_claim(claim, level, elsewhere))

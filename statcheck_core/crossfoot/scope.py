@@ -8,7 +8,15 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.model import Block, Claim, Document
-from crossfoot.reading.contexts import above, aside, concerning, is_methods, spreading, titled
+from crossfoot.reading.contexts import (
+    COMPARISONS,
+    above,
+    aside,
+    concerning,
+    is_methods,
+    spreading,
+    titled,
+)
 
 if TYPE_CHECKING:
     from crossfoot.reading import BlockReading
@@ -141,8 +149,11 @@ class Scope:
         return Whole(self._methods, self._several, spoken, self._alpha)
 
 
-def in_scope(claim: Claim, held: Held, whole: Whole) -> Claim:
-    """Return a claim with the contexts and the level that hold where it stands."""
+def in_scope(claim: Claim, held: Held, whole: Whole) -> tuple[Claim, frozenset[str]]:
+    """Return a claim with the contexts and the level that hold where it stands.
+
+    With it what the document speaks of elsewhere.
+    """
     alpha = claim.alpha or held.alpha or (None if whole.several else whole.alpha)
     contexts = held.contexts
     if not whole.several:
@@ -151,13 +162,19 @@ def in_scope(claim: Claim, held: Held, whole: Whole) -> Claim:
         contexts |= _loosened(whole.methods)
     if not _several_df(claim):
         contexts |= held.printed
+    elsewhere = whole.spoken
+    if COMPARISONS in contexts:
+        contexts -= {COMPARISONS}
+        if claim.kind == "mean-comparison":
+            elsewhere |= {COMPARISONS}
     if contexts:
-        contexts = concerning(claim.kind, contexts - _opposed(claim.context))
+        quantities = [reading.quantity for reading in claim.readings]
+        contexts = concerning(claim.kind, contexts - _opposed(claim.context), quantities)
         if claim.kind == "anova-table" and not _has_several_effects(claim):
             contexts -= {"partial-sums"}  # what one effect adds is what it has
-    if not contexts and alpha == claim.alpha:
-        return claim
-    return claim._replace(context=tuple(sorted({*claim.context, *contexts})), alpha=alpha)
+    if contexts or alpha != claim.alpha:
+        claim = claim._replace(context=tuple(sorted({*claim.context, *contexts})), alpha=alpha)
+    return claim, elsewhere.difference(claim.context)
 
 
 def _loosened(contexts: frozenset[str]) -> frozenset[str]:
@@ -201,4 +218,4 @@ def _note_below(document: Document, index: int) -> frozenset[str]:
     following = document.blocks[index + 1].source
     if len(following) > _LONGEST_NOTE or "djust" not in following:
         return _NONE
-    return spreading(following) & {"adjusted-p"}
+    return spreading(following) & {"adjusted-p", COMPARISONS}

@@ -25,6 +25,8 @@ MOST = 9
 #: share of it; a coarser one is a multiple of anything.
 PRECISE = 0.02
 
+#: How many times as large as that of its test an adjusted p is at most taken to be.
+_LARGEST = 10.0
 _SINGLE = Interval(1.0, 1.0)
 _HALVED = (
     "The printed p fits a one-sided test {}; the text does not say that the test is one-sided."
@@ -101,6 +103,11 @@ def _by_itself(case: Case, fault: Fault, elsewhere: Collection[str]) -> Explanat
 
 def _by_elsewhere(case: Case, fault: Fault, elsewhere: Collection[str]) -> Explanation | None:
     """Say which context, of which the document speaks elsewhere, would make a fault none."""
+    step = _test(case, fault)
+    if step is not None and "adjusted-comparisons" in elsewhere and _is_enlarged(case, step):
+        return Explanation(
+            "The document says that p values of comparisons are adjusted.", None, True
+        )
     for context in _ELSEWHERE:
         if context in elsewhere and _vanishes(case, fault, context):
             said = CONTEXTS[context]
@@ -110,6 +117,13 @@ def _by_elsewhere(case: Case, fault: Fault, elsewhere: Collection[str]) -> Expla
             )
             return Explanation(text, None)
     return None
+
+
+def _is_enlarged(case: Case, step: Step) -> bool:
+    """Say whether p is larger than that of the test alone, as corrections make it."""
+    printed, recomputed = case.box[step.target], evaluate(step, case.box)
+    single = step.form.takes[0] not in _UNSIGNED or case.box[step.inputs[1]] == _SINGLE
+    return single and recomputed.high < printed.low <= _LARGEST * recomputed.high
 
 
 def _vanishes(case: Case, fault: Fault, context: str) -> bool:

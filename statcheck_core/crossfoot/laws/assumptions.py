@@ -32,6 +32,9 @@ CONTEXTS: Mapping[str, str] = {
     "by-item": "The analysis takes the means of items.",
     "imputed": "Missing values are imputed and the results pooled.",
     "rank-correlation": "The correlation is one of ranks.",
+    "own-limits": "The interval is from a profile of the likelihood, a penalty or a posterior.",
+    "rank-test": "The test is one of ranks.",
+    "missing-cases": "The text tells of cases that are missing.",
     "normal-limits": "The limits are taken from the normal distribution.",
     "own-distribution": "The statistic has a distribution of its own, whatever its letter.",
     "partialled": "Other variables are held constant.",
@@ -159,7 +162,7 @@ _ASSUMPTIONS = (
     _assumption(
         "zero-null",
         "The test asks whether the coefficient is zero.",
-        "other-null",
+        "other-null rank-test",
     ),
     _assumption(
         "product-moment",
@@ -205,7 +208,7 @@ _ASSUMPTIONS = (
     _assumption(
         "no-missing-cases",
         "The number of cases printed is that of the cases in the fit.",
-        "imputed",
+        "imputed missing-cases",
     ),
     _assumption(
         "independent-cases",
@@ -249,18 +252,19 @@ _ASSUMPTIONS = (
     _assumption(
         "symmetric-limits",
         "The limits lie at equal distances from the estimate.",
-        "resampled generalised mixed",
+        "resampled generalised mixed own-limits rank-test",
     ),
     _assumption(
         "t-limits",
         "The limits are taken from the t distribution rather than from the normal one.",
-        "resampled generalised mixed survey instrumental imputed normal-limits",
+        "resampled generalised mixed survey instrumental imputed normal-limits own-limits "
+        "rank-test",
     ),
     _assumption(
         "wald-limits",
         "The limits of the ratio are those of the coefficient, its estimate plus or minus a "
         "multiple of its standard error, raised to powers of e.",
-        "resampled",
+        "resampled own-limits",
     ),
     _assumption(
         "limits-of-ratio",

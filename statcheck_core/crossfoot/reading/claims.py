@@ -77,7 +77,8 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
     if "adjusted-p" in contexts - stated and _several_df(unique):
         # "…, F(2, 57) = 7.41, p = .001. Tukey's test …": corrections concern what follows.
         contexts -= {"adjusted-p"} - cues_in(sentence).contexts
-    kind = _kind(group.anchor, {part.quantity for part in unique}, sentence)
+    quantities = {part.quantity for part in unique}
+    kind = _kind(group.anchor, quantities, sentence)
     if kind == "model-change" and _is_of_whole(unique):
         kind = "overall-model"
     if kind == "overall-model" and group.anchor == "F" and _of_one_effect(group, folded, start):
@@ -88,7 +89,7 @@ def _claim(group: Group, folded: str, visible: str) -> Claim:
         text=_plain(visible[first:last]),
         span=Span(first, last),
         readings=tuple(_reading(part, visible) for part in unique),
-        context=tuple(sorted(concerning(kind, frozenset(contexts)))),
+        context=tuple(sorted(concerning(kind, frozenset(contexts), quantities))),
         alpha=alpha_of(sentence, folded),
     )
 

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Iterable, Sequence
+from collections.abc import Collection, Iterable, Sequence
 from functools import lru_cache
 from operator import itemgetter
 from typing import NamedTuple
@@ -11,7 +11,7 @@ from typing import NamedTuple
 from crossfoot.expressions import expression
 from crossfoot.model import Claim
 from crossfoot.reading.cues import ALL_TESTS, CUES
-from crossfoot.reading.sentences import sentence_around
+from crossfoot.reading.sentences import SENTENCE_END, sentence_around
 
 # Patterns are compiled when first used: most documents need none of them, and start-up counts.
 _CITATION = r"[A-Z][\w'’-]{1,30}[^()]{0,60}?\b(?:19|20)\d\d[a-z]?\s?[,;:]"
@@ -27,6 +27,19 @@ _ALPHA = (
 )
 #: Contexts that matter to claims of one kind alone.
 _CONCERN = {"partialled": "correlation", "partial-sums": "anova-table"}
+#: Said of comparisons alone: their p values are adjusted, and not those of other tests.
+COMPARISONS = "adjusted-comparisons"
+_COMPARED = expression(
+    r"pairwise|post[- ]?hoc|comparison|contrast|followed (?:up )?(?:by|with)"
+    r"|compared (?:by|with|using)"
+    r"|paarvergleich|einzelvergleich|par paires|por pares|a coppie|paarsgewijze"
+)
+#: Contexts of one kind of model, and words that tell of an ordinary one beside it.
+_OF_ONE_MODEL = frozenset({"mixed", "instrumental", "weighted"})
+_ORDINARY = expression(
+    r"ordinary least squares|\bOLS\b|\b(?:multiple|simple|linear) (?:linear )?regression",
+    re.IGNORECASE,
+)
 _WORD_OF_LEVEL = expression(r"level|\bset\b|signific", re.IGNORECASE)
 #: A significance level that no word calls one is smaller than this.
 _LARGEST = 0.1001
@@ -101,9 +114,16 @@ def contexts_of(sentence: str, block: str, lead: str) -> frozenset[str]:
     return found
 
 
-def concerning(kind: str, contexts: frozenset[str]) -> frozenset[str]:
-    """Return those of some contexts that matter to a kind of claim."""
-    return contexts - {context for context, of in _CONCERN.items() if kind != of}
+def concerning(
+    kind: str, contexts: frozenset[str], quantities: Collection[str] = ()
+) -> frozenset[str]:
+    """Return those of some contexts that matter to a claim of a kind with some quantities."""
+    idle = {context for context, of in _CONCERN.items() if context in contexts and kind != of}
+    if "rank-test" in contexts and kind != "coefficient" and "ci_low" not in quantities:
+        idle.add("rank-test")
+    if "missing-cases" in contexts and "n" not in quantities:
+        idle.add("missing-cases")
+    return contexts - idle
 
 
 def alpha_of(sentence: str, block: str) -> float | None:
@@ -120,16 +140,30 @@ def is_methods(heading: str) -> bool:
 def spreading(text: str) -> frozenset[str]:
     """Return the contexts that a paragraph without a result states for those that follow."""
     contexts = cues_in(text).contexts & _SPREADS
-    low = text.lower() if contexts else ""
-    found = {
-        cue.context
-        for cue in CUES
-        if cue.spreads
-        and cue.context in contexts
-        and (not cue.general or re.search(cue.general, low))
-    }
+    if not contexts:
+        return contexts
+    found = {cue.context for cue in CUES if cue.spreads and not cue.general} & contexts
+    if found & _OF_ONE_MODEL and _ORDINARY.search(text):
+        found -= _OF_ONE_MODEL  # there are models of several kinds
+    if contexts - found:
+        for sentence in SENTENCE_END.split(text):
+            found |= _general(sentence, contexts)
     # A test that is one-sided, if not all: which, the results may not say again.
     return frozenset(found | ({"either-sided"} if "one-sided" in contexts - found else set()))
+
+
+def _general(sentence: str, contexts: frozenset[str]) -> set[str]:
+    """Return the contexts that a sentence states of all tests, or of all comparisons."""
+    own = cues_in(sentence).contexts & contexts
+    if not own:
+        return set()
+    low = sentence.lower()
+    found = {
+        c.context for c in CUES if c.context in own and c.general and re.search(c.general, low)
+    }
+    if "adjusted-p" in own and _COMPARED.search(low):
+        found = (found - {"adjusted-p"}) | {COMPARISONS}
+    return found
 
 
 def aside(text: str, claims: Sequence[Claim]) -> frozenset[str]:

@@ -278,6 +278,29 @@ CUES: tuple[Cue, ...] = (
         confirm=r"type[ -](?:iii?|[23])[ -](?:sum|ss|anova|analysis|test|f)|\btype[ -](?:iii?)\b",
     ),
     Cue(
+        "own-limits",
+        _stems(
+            "profile; credible; hdi; hpd; posterior; clopper; penali; firth; percentile interval"
+        ),
+        near=True,
+        confirm=r"profil\w{0,3}[- ](?:likelihood|ci\b|conf|interval|95)|credible|\bhdi\b"
+        r"|\bhpd\b|posterior|clopper|penali[sz]ed|firth|percentile interval",
+    ),
+    Cue(
+        "rank-test",
+        _stems("mann; wilcoxon; hodges; rank; u =; w ="),
+        near=True,
+        confirm=r"mann[- –]whitney|wilcoxon|hodges|rank[- ](?:sum|test|based)|signed[- ]rank"
+        r"|\b[uw] = \d",
+    ),
+    Cue(
+        "missing-cases",
+        _stems(
+            "missing; exclud; exclusion; incomplete; dropout; drop-out; dropped out; listwise; "
+            "pairwise deletion; attrition; lost to follow; without data; cases without; unavailable"
+        ),
+    ),
+    Cue(
         "normal-limits",
         _stems("normal-theory; normal theory; normal approx; wald; 1.96; z-based; asymptotic"),
         near=True,

@@ -19,6 +19,7 @@ from crossfoot.reading.lookalikes import (
     is_logged,
     is_of_classifier,
     is_of_functions,
+    is_of_items,
     is_power,
     is_supposed,
     near,
@@ -84,6 +85,8 @@ def is_result(anchor: str | None, items: Sequence[Item], text: str) -> bool:
     if any(p.quantity == "df" and p.high < _LEAST_DF for item in items for p in item.parts):
         return False
     if not items or in_call(text, items[0].start):
+        return False
+    if anchor in {"b", "β", "beta", "t"} and is_of_items(items, text):
         return False
     if anchor in {"F", "F_change"}:
         return _is_f_test(anchor, items, quantities, text)

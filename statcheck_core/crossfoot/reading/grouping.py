@@ -83,11 +83,12 @@ _OPENING = frozenset({"note", "adjusted", "adj", "multiple", "total", "overall",
 
 
 #: What is said between a number and an F that tests another thing than the number measures.
-_OTHER_TEST = expression(
+OTHER_TEST = expression(
     r"\btests?\s(?:for|of|that|against|whether|on)\s(?!(?:the\s)?(?:overall|whole|full|model|fit|regression"
     r"|signific|all\b|R\b|null))"
     r"|\b(?!The|This|Overall|Omnibus|Global|Fisher|Model|Regression|Full)[A-Z][a-z]{2,}(?:[-–][A-Z][a-z]+)?(?:['’]s)?\s(?:F[\s-])?tests?\b"
-    r"|\b[Ll]ack[\s-]of[\s-]fit|\b(?:RESET|Wald|[Jj]oint\sF|[Pp]artial\sF)\b",
+    r"|\b[Ll]ack[\s-]of[\s-]fit|\b(?!ANC?OVA)[A-Z]{2,6}\stests?\b|\b[Ee]xtra[\s-]sum|\b[Pp]re-?trend|\b[Pp]lacebo"
+    r"|\b(?:RESET|Wald|[Jj]oint\sF|[Pp]artial\sF)\b",
 )
 
 
@@ -120,7 +121,7 @@ def gap(text: str, first: Item, second: Item) -> float:
         return 0.25 if between.strip(" ,") else 0.1
     if not between.strip(" ;\n"):
         return 0.6
-    apart = {"F": _OTHER_TEST}.get(second.head, _IN_A_MODEL if second.head in _MODEL_ONLY else None)
+    apart = {"F": OTHER_TEST}.get(second.head, _IN_A_MODEL if second.head in _MODEL_ONLY else None)
     if apart is not None and apart.search(between) is not None:
         return APART
     words = [word for word in _WORD.findall(between) if word.lower() not in _LINK]

@@ -38,6 +38,9 @@ _OF_DISTRIBUTION = expression(
     r"\b(?:each|either|upper|lower|one|right|left)\stail\b|tail\sarea|\bleaves\s(?:p\s?=|0?\.0|\d%)"
     r"|(?<![Ft][\s-])\btabulated\b|\btables?\sof\s(?:the\s)?[tF]\b"
 )
+_ITEMS = expression(
+    r"\binfit\b|\boutfit\b|\bRasch\b|\bitem\s(?:difficulty|response|discrimin)", re.IGNORECASE
+)
 #: "a(n) = 2n, t(4) = 7.5": values of functions
 _FUNCTIONS = expression(r"\b[abcghkvxyABC]\((?:\d{1,2}|[a-z])\)\s?=")
 #: "A value of t = 2.0 was used as cut-off."
@@ -91,6 +94,11 @@ def is_supposed(item: Item, text: str) -> bool:
 def is_of_classifier(items: Sequence[Item], text: str) -> bool:
     """Say whether words speak of a classifier, whose F, p and r are other things."""
     return near(_CLASSIFIER, items, text)
+
+
+def is_of_items(items: Sequence[Item], text: str) -> bool:
+    """Say whether the difficulty of test items is told, whose b and t are no coefficient's."""
+    return near(_ITEMS, items, text, 80)
 
 
 def is_of_functions(items: Sequence[Item], text: str) -> bool:

@@ -22,7 +22,7 @@ rse rsq rva sam sco seb see sem sig slo spe sta std ste sti sto stu tau tes tol 
 vif vri wal wsp
 """
 _OPENINGS = frozenset(_FIRST_LETTERS.split())
-_WORD_START = expression(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я])[{re.escape(_INITIALS)}]")
+_WORD_START = expression(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я²])[{re.escape(_INITIALS)}]")
 
 
 _COMPILED = tuple((notation, expression(notation.pattern)) for notation in NOTATIONS)

@@ -57,6 +57,10 @@ _FOR_ALL_BEFORE = expression(rf"(?<!\w){ALL}(?:\s[a-z]+){{0,2}}\s$", re.IGNORECA
 _FOR_ALL_BEHIND = expression(
     r"\)?,?\s(?:(?:for|in|with|on)\s(?:both|all|each)|throughout|each|(?:in\s)?both)\b"
 )
+#: at t = 0.31; x = -42, y = 18, z = 22
+_PLACED = expression(
+    r"(?<![A-Za-z])[Aa]t\s$|[yY]\s?=\s?-?\d{1,4}(?:\.\d{1,3})?\s?(?:mm)?,?\s(?:and\s)?$"
+)
 #: "p = 0.04 of default": the probability of something else than a test's result
 _OF_SOMETHING = expression(
     r"\sof\s(?!(?:the|this|that|an?|all|both|each|F|t|r|z)\b|interact|effect|slope|differ|trend|test)[a-z]{3}"
@@ -136,13 +140,10 @@ def _is_of_list(text: Text, item: Item, listed_to: int) -> bool:
 
 def _is_place(text: Text, item: Item) -> bool:
     """Say whether a letter is where or when something is, and no test: ``at z = 1.42``."""
-    before = text.folded[max(0, item.start - 4) : item.start].lower()
-    return (
-        item.head in {"t", "z"}
-        and before.endswith("at ")
-        and not before[:-3].isalpha()
-        and len(item.parts) == 1
-    )
+    if item.head not in {"t", "z"} or len(item.parts) > 1:
+        return False
+    before = text.folded[max(0, item.start - 24) : item.start]
+    return _PLACED.search(before) is not None
 
 
 def _is_event(folded: str, start: int) -> bool:

@@ -7,11 +7,10 @@ from collections.abc import Iterable, Sequence
 from itertools import pairwise
 
 from crossfoot.expressions import expression
-from crossfoot.reading import numerals
 from crossfoot.reading.genuine import is_result
 from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import Item, Part
-from crossfoot.reading.numerals import NUMERAL
+from crossfoot.reading.others import of_its_own, parted
 from crossfoot.reading.sentences import same_sentence
 
 _TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
@@ -20,13 +19,11 @@ _COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
 _OWN_INTERVAL = frozenset(
     {"d", "phi", "cramers_v", "eta2", "eta2_partial", "omega2", "R2", "R2_adj", "R2_change", "f2"}
 )
-_SHARES = frozenset({"R2", "R2_adj"})
 #: Effect sizes that belong to χ² alone.
 _OF_COUNTS = frozenset({"phi", "cramers_v"})
 #: Counts, which may be of the tests in the sentence before.
 _LEFT_OVER = frozenset({"n", "df", "df-pair"})
 #: A residual standard deviation is read beside one of these.
-_ANOTHER_NUMBER = expression(rf"[A-Za-z]\s(?:=\s)?(?P<number>{NUMERAL})\s?[%×x]?\s?[(\[,]\s?$")
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
 #: Beside one of these k counts predictors.
 _WITH_K = frozenset({"R2", "R2_adj"})
@@ -41,7 +38,7 @@ def shared(groups: Sequence[Group], text: str) -> Iterable[Group]:
     tests in order, listed p values likewise, and one plural p to each test that has none.
     """
     for sentence in _sentences(_given_to_all(groups, text), text):
-        yield from _dealt(_of_unknown_model(sentence, text))
+        yield from _dealt(parted(sentence, text))
 
 
 def _sentences(groups: Sequence[Group], text: str) -> Iterable[Sequence[Group]]:
@@ -59,33 +56,6 @@ def _sentences(groups: Sequence[Group], text: str) -> Iterable[Sequence[Group]]:
 def _is_left_over(item: Item) -> bool:
     """Say whether an item in a sentence of its own speaks of the tests in the one before."""
     return item.head in _LEFT_OVER or (item.head == "p" and "plural" in item.flags)
-
-
-def _of_unknown_model(groups: Sequence[Group], text: str) -> Sequence[Group]:
-    """Part an F from the R² in a bracket before it where another model's stands so, too.
-
-    ``Model 2 (R² = .32) beat Model 1 (R² = .19), and its F(3, 116) was …``: which is not said.
-    """
-    settled: list[Group] = []
-    for group in groups:
-        test = next((item for item in group.items if item.head in {"F", "F_change"}), None)
-        led = [i for i in group.items if test and i.head in _SHARES and i.end < test.start]
-        before = settled[-1] if settled and group.anchor == "F" else None
-        if test and led and before is not None and before.anchor is None:
-            rivals = [
-                i for i in before.items if i.head == led[-1].head and "percent" not in i.flags
-            ]
-            if rivals and all(_is_closed(text, i.end, test.start) for i in (rivals[-1], led[-1])):
-                settled.append(Group(tuple(i for i in group.items if i.end <= led[-1].end), None))
-                group = Group(tuple(i for i in group.items if i.end > led[-1].end), "F")
-        settled.append(group)
-    return settled
-
-
-def _is_closed(text: str, start: int, end: int) -> bool:
-    """Say whether the bracket that a place stands in closes before another."""
-    closing, opening = text.find(")", start, end), text.find("(", start, end)
-    return closing >= 0 and not 0 <= opening < closing
 
 
 def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
@@ -183,7 +153,7 @@ def settle(group: Group, text: str) -> Group | None:
     items = _p_of_interval(items)
     items = _of_this_test(items, group.anchor)
     items = _own_interval(items, group.anchor)
-    items = _without_interval_of_another(items, text)
+    items = of_its_own(items, group.anchor, text)
     items = _one_sample_size(items, text)
     if not {item.head for item in items} & _WITH_S:
         items = [item for item in items if item.head != "s"]
@@ -315,41 +285,6 @@ def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
         kept.append(item)
     unread = {"d"} if anchor == "chi2" else {"d", *_OF_COUNTS}
     return [item for item in kept if item.head not in unread]
-
-
-def _without_interval_of_another(items: list[Item], text: str) -> list[Item]:
-    """Drop an interval right behind a number that is none of the coefficient's.
-
-    ``b = 0.18, SE = 0.06, i.e. a factor of 1.20 (95% CI 1.06 to 1.36)``.
-    """
-    estimates = {p.low for i in items for p in i.parts if p.quantity in {"b", "beta"}}
-    if not estimates:
-        return items
-    kept = []
-    for number, item in enumerate(items):
-        if item.head == "ci" and _is_of_beta(item, items):
-            continue
-        if item.head == "ci" and number:
-            between = text[items[number - 1].end : item.start]
-            found = _ANOTHER_NUMBER.search(between)
-            number_there = numerals.parse(found["number"]) if found is not None else None
-            if number_there is not None and number_there.low not in estimates:
-                continue
-        kept.append(item)
-    return kept
-
-
-def _is_of_beta(interval: Item, items: Sequence[Item]) -> bool:
-    """Say whether an interval lies around β, where b is printed as well, and not around b."""
-    parts = {part.quantity: part for item in items for part in item.parts}
-    if not {"b", "beta"} <= parts.keys():
-        return False
-    low, high = (p for p in interval.parts if p.quantity in {"ci_low", "ci_high"})
-
-    def fits(estimate: Part) -> bool:
-        return low.low + high.low <= 2 * estimate.high and 2 * estimate.low <= low.high + high.high
-
-    return fits(parts["beta"]) and not fits(parts["b"])
 
 
 def _doubled(item: Item, items: Sequence[Item]) -> bool:

@@ -213,13 +213,14 @@ def claim(
     if any(found.quantity == "df1" and found.low > 1 for found in ordered):
         found_contexts.discard("adjusted-p")  # corrections are of single contrasts
     own = [found.span for found in ordered]
+    quantities = {found.quantity for found in (*ordered, *given)}
     return Claim(
         kind=kind,
         label=label,
         text=_text(sheet, boxes),
         span=Span(own[0].start, max(span.end for span in own)),
         readings=tuple(ordered),
-        context=tuple(sorted(concerning(kind, frozenset(found_contexts)))),
+        context=tuple(sorted(concerning(kind, frozenset(found_contexts), quantities))),
         alpha=sheet.legend.alpha,
         given=tuple(given),
         row=row,
