@@ -164,7 +164,9 @@ def _telling(definitions: tuple[tuple[str, str], ...]) -> frozenset[str]:
 
 def _may_be_aligned(source: str) -> bool:
     """Say whether a text can hold a table: wide gaps, or the headings of one."""
-    return "  " in source or "\t" in source or _HEADS.search(source) is not None
+    return (
+        "  " in source or "\t" in source or " ...." in source or _HEADS.search(source) is not None
+    )
 
 
 def _zones(text: str) -> list[tuple[int, int]]:

@@ -103,12 +103,12 @@ CUES: tuple[Cue, ...] = (
             "robust; hc0; hc1; hc2; hc3; hc4; clustered; cluster-; sandwich; huber; newey; "
             "driscoll; heteroskedasticity-consistent; heteroscedasticity-consistent; white-; "
             "white standard; white's; hac; eicker; robuste; robusti; robustos; robustas; robuust; "
-            "robusta; 稳健; 頑健"
+            "robusta; clusters in; 稳健; 頑健"
         ),
         spreads=True,
         confirm=r"robust (?:standard |std\.? )?(?:errors?|s\.?e|variance|f\b|inference|regression"
         r"|estimat|fit|linear)|(?:sk|sc)edastic\w*[- ](?:robust|consistent)|\bhc[0-4]\b"
-        r"|cluster(?:ed|-robust)|cluster\w* (?:at|by|on)\b|sandwich"
+        r"|cluster(?:ed|-robust)|adjusted for [\d,]+ clusters|cluster\w* (?:at|by|on)\b|sandwich"
         r"|huber|newey|driscoll|eicker|\bhac\b|white(?:'s)?[- ](?:correct|standard|robust|heterosk)"
         r"|\|\s+robust\b|robust\s*\n|稳健|頑健"
         r"|robuste[nr]? standardfehler|erreurs?[- ]types? robustes"
@@ -188,6 +188,12 @@ CUES: tuple[Cue, ...] = (
             "brown–forsythe; unequal varianc; not assuming equal; sphericity; "
             "corrected degrees; corrected df; adjusted degrees; adjusted df"
         ),
+    ),
+    # The summary prints the residual df; the tests have those of the clusters.
+    Cue(
+        "adjusted-df",
+        _stems("covariance type; robust to cluster"),
+        confirm=r"covariance type:\s+(?:cluster|hac-|nw-)|robust to cluster",
     ),
     Cue(
         "scaled-df",

@@ -22,6 +22,8 @@ _SIDE = re.compile(
 )
 #: What two spaces or a tab part.
 _FIELD = re.compile(r"\S+(?: \S+)*")
+#: Dots that lead the eye from a label to its value.
+_LEADERS = re.compile(r"(?<=[\w)]) ?\.{3,}(?= )")
 _COLON = re.compile(r"[^:=]{1,40}:")
 
 
@@ -75,7 +77,8 @@ def in_fields(line: Line, number: int) -> list[Pair] | None:
     """
     if line.blank or len(line.text) > 200:
         return None
-    fields = [part for match in _FIELD.finditer(line.text) for part in _halves(line.text, match)]
+    text = _LEADERS.sub(lambda dots: " " * len(dots.group()), line.text)
+    fields = [part for match in _FIELD.finditer(text) for part in _halves(line.text, match)]
     if not 2 <= len(fields) <= 8 or len(fields) % 2:
         return [] if line.text.count(":") > 1 and len(fields) > 2 else None
     texts = [line.text[a:b] for a, b in fields]

@@ -42,13 +42,21 @@ def key_values(sheet: Sheet) -> Found | None:
             if found:
                 boxes += [head, box]
                 read.add(number)
-    if "robust" in sheet.legend.contexts:
+    if "robust" in sheet.legend.contexts or _is_of_clusters(entries):
         return _apart(sheet, entries, boxes, contexts, read)
     if not {entry.role for entry in entries} & _MORE:
         return None
     model = Model("", tuple(entries), tuple(boxes), tuple(contexts))
     claims = model_claims(sheet, [model])
     return Found(tuple(claims), frozenset(read)) if claims else None
+
+
+def _is_of_clusters(entries: Sequence[Entry]) -> bool:
+    """Say whether F has far fewer degrees of freedom than there are cases, as of clusters."""
+    known = {entry.role: entry.reading.low for entry in entries}
+    if not {"n", "df1", "df2"} <= known.keys():
+        return False
+    return known["n"] > 2 * (known["df1"] + known["df2"] + 1)
 
 
 def _apart(

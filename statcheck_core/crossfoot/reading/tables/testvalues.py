@@ -32,7 +32,7 @@ class _Pair(NamedTuple):
 def test_values(sheet: Sheet) -> Found | None:
     """Return the claims of tests in labels and values, or None where there is none."""
     panel = sheet.panel
-    if panel.width > 4 or not panel.rows or len(panel.rows) > _MOST:
+    if panel.width > 6 or not panel.rows or len(panel.rows) > _MOST:
         return None
     rows: list[tuple[int, list[_Pair]]] = [
         (number, [_Pair(a, b, headings.parse_label(a.text)) for a, b in pairs_in(row)])
