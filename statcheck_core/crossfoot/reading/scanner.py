@@ -115,6 +115,9 @@ def _named(text: Text, start: int, end: int) -> Iterator[Item]:
         item = _READERS.get(name.notation.quantity, _read_plain)(text, name)
         if item is None or _is_place(text, item):
             continue
+        if item.head == "p" and _explains_marks(text, item):
+            done = item.end
+            continue
         if item.head in _OF_A_MODEL and is_of_something(text.folded, name.match.end(), item):
             item = item._replace(flags=(*item.flags, "of-what"))
         if item.head in _ONCE_FOR_ALL and (
@@ -155,6 +158,26 @@ def _is_event(folded: str, start: int) -> bool:
 
 
 _PROBABILITY_OF = expression(r"(?<![A-Za-z])[pP](?:r|rob)?\s?\(\s?\|?$")
+#: A mark that starts a sentence or a list, before a p; emphasis of p has a mark behind it too.
+_MARKED = expression(r"(?:^|[.;:(\n]\s?|(?P<comma>,\s?))[*†‡]{1,4} ?$")
+_MARKED_ALSO = expression(r"[*†‡] ?[pP]\s?[<≤][^a-zA-Z]{1,12}$")
+_MARKED_NEXT = expression(r"[,;.]?\s?[*†‡]{1,4} ?[pP]\s?[<≤]")
+
+
+def _explains_marks(text: Text, item: Item) -> bool:
+    """Say whether a p is what marks of significance stand for: ``* p < .05, ** p < .01``."""
+    folded, start = text.folded, item.start
+    emphasis = "*" in {folded[start + 1], folded[item.end : item.end + 1]}
+    if emphasis or folded[max(0, start - 1) : start] not in {"*", "†", "‡", " "}:
+        return False
+    marked = _MARKED.search(folded, max(0, start - 8), start)
+    if marked is None:
+        return False
+    return (
+        marked["comma"] is None
+        or _MARKED_NEXT.match(folded, item.end) is not None
+        or _MARKED_ALSO.search(folded, max(0, marked.start() - 24), marked.start()) is not None
+    )
 
 
 def _is_for_all(text: Text, item: Item) -> bool:
