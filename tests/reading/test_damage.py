@@ -5,7 +5,7 @@ from __future__ import annotations
 import pytest
 
 from crossfoot.documents.visible import place, verbatim
-from crossfoot.reading.damage import is_damaged, mended, rejoined
+from crossfoot.reading.damage import grouped, is_damaged, mended, rejoined
 
 
 @pytest.mark.parametrize(
@@ -13,10 +13,15 @@ from crossfoot.reading.damage import is_damaged, mended, rejoined
     [
         ("F(2, 57) 5 4.36, p 5 .017", "F(2, 57) = 4.36, p = .017"),
         ("F(2, 57) 5 4.36, p , .05", "F(2, 57) = 4.36, p < .05"),
+        ("b 5 0.84, t(86) 5 2.71, F(1, 86) 5 24.1", "b = 0.84, t(86) = 2.71, F(1, 86) = 24.1"),
+        ("b 5 20.84, SE 5 0.31, t(86) 5 22.71", "b 5 20.84, SE = 0.31, t(86) 5 22.71"),
+        ("r(98) 5 2.41, p 5 .001", "r(98) 5 2.41, p = .001"),
         ("t(58)Z2.41, pZ0.019", "t(58)=2.41, p=0.019"),
         ("t(58)Z4.41, p!0.001", "t(58)=4.41, p<0.001"),
         ("t(58) \ufffd 2.41, p \ufffd 0.019", "t(58) = 2.41, p \ufffd 0.019"),
         ("r \x01 0.44, n \x01 45, p \x01 0.002", "r = 0.44, n = 45, p = 0.002"),
+        ("rZ0.46, nZ40, pZ0.003", "r=0.46, n=40, p=0.003"),
+        ("R2 ¼ .25, F3,96 ¼ 10.67", "R2 = .25, F3,96 = 10.67"),
         ("t(58) \ue5fb 2.41, d \ue5fb 0.63", "t(58) = 2.41, d = 0.63"),
     ],
 )
@@ -34,6 +39,8 @@ def test_mended(text: str, wanted: str) -> None:
         "t \ufffd 2.41, p \ufffd 0.019",
         "the plots (2, 57) 5 4.36 m apart",
         "K(2, 57)Z4.36",
+        "rZ0.46 and tZ2, pZ and nZ40 are bolts",
+        "¼ of the plots",
     ],
 )
 def test_left_alone(text: str) -> None:
@@ -46,6 +53,8 @@ def test_left_alone(text: str) -> None:
         ("p = 0.\n045 for", "p = 0.045 for"),
         ("F(3, 96) = 10.\n85, p = 0,\n  001", "F(3, 96) = 10.85, p = 0,001"),
         ("p = 0. 045)", "p = 0.045)"),
+        ("t(58) = 2. 41, p = 0. 019)", "t(58) = 2.41, p = 0.019)"),
+        ("F = 5,\n00; p = 0,010", "F = 5,00; p = 0,010"),
         ("p = 0.0\u00ad19 for dif\u00adferent", "p = 0.019 for different"),
     ],
 )
@@ -61,3 +70,10 @@ def test_rejoined(text: str, wanted: str) -> None:
 def test_not_rejoined(text: str) -> None:
     shown = verbatim(text)
     assert rejoined(shown) is shown
+
+
+def test_spaces_within_a_number_become_hard() -> None:
+    assert (
+        grouped("F(1, 98) = 2 212,02; n = 12 480)") == "F(1, 98) = 2\u00a0212,02; n = 12\u00a0480)"
+    )
+    assert grouped("b = 4 12 and n = 12 4800") == "b = 4 12 and n = 12 4800"

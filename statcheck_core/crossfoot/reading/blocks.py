@@ -13,7 +13,7 @@ from crossfoot.memo import remembered
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.contexts import Cues, cues_in
 from crossfoot.reading.cues import CUES
-from crossfoot.reading.damage import is_damaged, mended, rejoined
+from crossfoot.reading.damage import grouped, is_damaged, mended, rejoined
 from crossfoot.reading.fold import fold
 
 #: Nothing is read in a block without one of these: a relation, or a word or markup that stands
@@ -133,6 +133,7 @@ def _claims(folded: str, shown: str) -> list[Claim]:
     from crossfoot.reading.grouping import group
     from crossfoot.reading.scanner import items_in
 
+    folded = grouped(folded)
     items = items_in(folded, zones)
     return claims_of(group(folded, items), folded, shown) if items else []
 

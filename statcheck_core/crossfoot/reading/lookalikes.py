@@ -12,13 +12,13 @@ from crossfoot.reading.items import Item
 _CALL = expression(r"(?<![A-Za-z])[a-z_][\w.]{2,}\([^()\s=,]+,\s?(?:\w+=[^\s,]+,\s?)*$")
 #: "If t(28) = 2.05 were found …", "would need r = .41 to …", "beyond the cut-off χ²(4) = 18.47"
 _SUPPOSED = expression(
-    r"(?:\b(?:[Ll]et|[Ss]ei(?:en)?|[Ss]oi(?:t|ent)|[Ss]ean?|[Ss]ejam?|[Ss]ia(?:no)?|[Ll]åt|[Ll]aat|[Nn]iech|[Oo]lkoon)"
+    r"(?:\b(?:[Ll]et|[Ss]ei(?:en)?|[Ss]oient|[Ss]ejam?|[Ss]iano|[Ll]åt|[Ll]aat|[Nn]iech|[Oo]lkoon)"
     r"|\b[Ii]f|\b[Ss]uppose|\b[Ww]hen|\b[Ff]or\s(?:which|what)"
     r"|\b(?:would|must|should|to)\s(?:need|reach|exceed|detect|have|be|obtain|find)"
     r"|\b(?:point|percentile|quantile|distribution)(?:\s(?:of|is|was))?|\bwould\sbe\s\w+\s(?:for|at|with|if)"
     r"|\b[Aa]ssum(?:e|ing)|\b[Hh]ypothetical(?:ly)?,?|\b[Ee]\.g\.,?"
     r"|\b(?:above|beyond|below|over|under|exceeds|exceeding|than)"
-    r"|\b(?:cut-?off|threshold|criterion|critical)\w*(?:\s\w+){0,2})"
+    r"|(?<![FtT]-)\b(?:cut-?off|threshold|criterion|critical)\w*(?:\s\w+){0,2})"
     r"\s(?:an?\s|the\s)?(?:cut-?off\s)?\|?$"
 )
 #: "Suppose a referee is told that F(2, 30) = 3.32 …": a sentence that makes its numbers up.

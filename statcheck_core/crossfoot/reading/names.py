@@ -16,10 +16,10 @@ _INITIALS = "".join(sorted(set("".join(n.initials for n in NOTATIONS))))
 _FIRST_LETTERS = """
 adj ame aor ass ave bar bes bet cha chi coe coh cor cra ddl ddo deg del den dev dfd dfn dfs dif
 dof err est eta exp fch fin fli fre fri fst fva gdl gen gra hed hel inc int jic kat ken kes khi
-kik kji koe kon kor kru lev lik log lrt lut mar mdi mea min mse msr msw mul nob num obs odd ome
-pad par pbo pco pea pen pes pfd pho poi pon pow ppe pro ptu ptw pva qui reg res rho rms rob roo
-rse rsq rva sam sco seb see sem sig slo spe sta std ste sti sto stu tau tes tol tst tte tva val vap
-vif vri wal wsp
+kik kji koe kon kor kru lev lik log lrt lut mar mdi mea med min mse msr msw mul nob num obs odd
+ome ove pad par pbo pco pea pen pes pfd pho poi pon pow ppe pro ptu ptw pva qui reg res rho rms
+rob roo rse rsq rva sam sco seb see sem sig slo spe sta std ste sti sto stu tau tes tol tst tte
+tva val vap vif vri wal wsp
 """
 _OPENINGS = frozenset(_FIRST_LETTERS.split())
 _WORD_START = expression(rf"(?<![A-Za-z0-9_$?&À-ɏΑ-ωА-я²])[{re.escape(_INITIALS)}]")

@@ -12,14 +12,18 @@ from typing import NamedTuple
 from crossfoot.reading.words import (
     COEFFICIENT,
     COMPUTED,
+    CORRELATION,
     DEGREES,
     DETERMINATION,
     ERROR_NAMES,
     INTERVAL,
     PARTIAL,
+    SIGNIFICANCE,
     SQUARE,
     VALUE,
     VALUE_BEFORE,
+    VERB,
+    VERB_UNSPACED,
 )
 
 _SQUARED = r"(?:\s?²|\s?\^\s?(?:\{\s?2\s?\}|2)|2(?![\d.,]?\d))"
@@ -65,11 +69,11 @@ NOTATIONS: tuple[Notation, ...] = (
     Notation(
         "p",
         r"(?:(?i:(?:asympto?\w*\.?\s)?sig\.(?:\s(?:asint[oó]tica|exacta|asymp\.))?(?:\s?F)?(?:\s?change)?(?:\s?\((?:2|zwei|two|bi|à\s2|a\s2)[^()\n]{2,18}\))?|sig(?=\s?=)|sig(?:nificance|nifikanz)?\s?F(?:\s?change)?|signifi(?:cance|kanz|cation|cación|cância|cativité|catività|cantie)(?:\s?\((?:2|zwei|two|bi|à\s2|a\s2)[^()\n]{2,18}\))?(?=\s?[=<])"
-        r"|associated\sprobability(?:\svalue)?)"
+        rf"|associated\sprobability(?:\svalue)?|{SIGNIFICANCE})"
         r"|Prob(?:ability)?\s?(?:>|\()\s?(?:F|chi-?2|\|[tz]\|)(?:-statistic\s?\))?|Prob\s?\(F-statistic\)"
         r"|Pr\s?\(?>\s?\|?(?:F|[tz]|Chisq)\|?\)?|P(?:r(?:ob)?)?\s?\(\s?\|[TtZz]\|\s?>=?\s?\|?[tz]\|?\s?\)|Pr(?=\s?=\s?[01]?\.\d)|[pP]rob(?:ability)?\.?(?=\s?[<=>]\s?[01]?\.\d)|P\s?>\s?\|[tz]\||[pP]\s?\(\s?>?\s?\|?[FtzT]\|?\s?\))",
         True,
-        "sSPpa",
+        "sSPpaÜo有显유",
         "Prob > F = 0.0312, F(2, 57) = 3.69",
     ),
     Notation(
@@ -83,7 +87,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc|level(?=\s?[=<]\s?0?[.](?!(?:05|01|001|10?)\b)))(?![a-z])"
+        rf"(?:[pP](?:s|'s)?[\s_-]?(?i:{VALUE}|valor(?:es)?|val\.?|unc|level(?=\s?[=<]\s?0?[.,](?!(?:05|01|001|10?)\b)))(?![a-z])"
         rf"|(?:{VALUE_BEFORE})[\s-](?:de\s|di\s)?p(?![a-z])|pvalue|Prob\.|[Pp]rob(?=\s{{0,9}}=\s{{0,9}}[01]?\.\d))",
         True,
         "pPv",
@@ -180,22 +184,22 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "df1",
-        r"(?:df_?\{?1\}?|df[\s_]?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
+        r"(?:(?:df|ddl|gdl|gl|FG)_?\{?1\}?(?!\d)|df[\s_]?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
         True,
-        "dnDN",
+        "dnDNgF",
         "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
     ),
     Notation(
         "df2",
-        r"(?:df_?\{?2\}?|df[\s_]?\(?(?:den(?:om)?|error|resid(?:uals?)?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
+        r"(?:(?:df|ddl|gdl|gl|FG)_?\{?2\}?(?!\d)|df[\s_]?\(?(?:den(?:om)?|error|resid(?:uals?)?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
         r"|Df\s?Residuals|(?i:(?:error|residual)\s(?:df|degrees\sof\sfreedom)))",
         True,
-        "dnDeErR",
+        "dnDeErRgF",
         "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
     ),
     Notation(
         "df",
-        rf"(?:Δ\s?)?{DEGREES}(?![a-z12])|ν(?=\s?=\s?\d{{1,4}}(?![\d.]|\s?[^\W\d]))",
+        rf"(?:Δ\s?)?{DEGREES}(?![a-z]|[12](?![\d.,]))|ν(?=\s?=\s?\d{{1,4}}(?![\d.]|\s?[^\W\d]))",
         True,
         "ΔdgFfvsSbс自자Dν",
         "t = -1.926; df = 21.4; P = 0.068",
@@ -212,7 +216,7 @@ NOTATIONS: tuple[Notation, ...] = (
         "se",
         rf"(?:(?i:(?:robust\s)?(?:std[._]?|standard)\s?(?:error|err\.?))|S\.\s?E\.|s\.\s?e\.(?:\s?d\.)?|{ERROR_NAMES}|E[EPST](?=\s?=)|(?:SE|se)(?:\s?_\{{?\w{{1,4}}\}}?|\s?[Bb](?=\s?=)|\([bBβ]\))?)(?![a-zA-Z])",
         True,
-        "rsSReEk标標표",
+        "rsSReEkm标標표",
         "b = 0.42, SE = 0.11, t(96) = 3.82, p < .001",
     ),
     Notation(
@@ -313,9 +317,10 @@ NOTATIONS: tuple[Notation, ...] = (
         "r",
         rf"(?:(?:(?:Pearson(?:'s)?|partial|correlation)\s)?r(?:_\{{?(?:s|p|xy|partial)\}}?|[ₛs](?=\())?(?:(?![\w²^.-]|'\w)|{_SCRIPT})|r(?=_\{{?\(?\d|[₀-₉]|\d{{1,4}}\s?=|_\{{[^{{}}\n]{{1,14}}\}}\s?\(\d)|(?:Spearman(?:'s)?\s(?:r|rho|ρ)|ρ|rho)(?:_\{{?s\}}?)?(?:(?![\w²^.-])|{_SCRIPT})"
         r"|[rR][_-]?value(?=\s?[=:])|cor(?=\s*\n\s*-?0?\.\d)|(?:rho|tau)(?=\s*\n\s*-?0?\.\d)"
+        rf"|(?i:{CORRELATION})(?=\s(?:{VERB}|=)\s|\s?{VERB_UNSPACED})"
         r"|(?:Pearson(?:'s)?\s)?[cC]orrelation(?:\scoefficient)?(?:\sof\s\w{1,20}\sand\s\w{1,20}(?=\s=\s))?(?=\s(?:was|is|of|=|between|with|for)\s))",
         False,
-        "rPpcCSKρ",
+        "rPpcCSKkRw相상ρ",
         "r(98) = .41, p < .001",
     ),
     Notation(

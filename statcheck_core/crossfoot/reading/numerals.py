@@ -13,7 +13,7 @@ from crossfoot.reading.fold import HARD_SPACE
 
 _GROUP = rf"[,'{HARD_SPACE}]"
 _GROUPED_TEXT = (
-    rf"(?:[1-9]\d{{0,2}}(?:{HARD_SPACE}\d{{3}})+,\d+"  # 1 237,76
+    rf"(?:[1-9]\d{{0,2}}(?:['{HARD_SPACE}]\d{{3}})+,\d+"  # 1 237,76 and 1'237,76
     r"|[1-9]\d{0,2}(?:[.]\d{3})+,\d+"  # 1.237,76
     rf"|[1-9]\d{{0,2}}(?:{_GROUP}\d{{3}})+(?:[.]\d+)?)"  # 1,237.76
 )

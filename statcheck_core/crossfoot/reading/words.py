@@ -6,7 +6,7 @@ Each is a regular expression for use inside others; none takes a group.
 from __future__ import annotations
 
 #: An effect size that leaves the other effects out, in the forms of several languages.
-PARTIAL = r"(?:[pP]art(?:i[^\W\d_]{1,8}|\.)|[pP]ar[cz]ial\w{0,2}|část\w+|部分|부분|偏)"
+PARTIAL = r"(?:[pP]art(?:i[^\W\d_]{1,8}|\.)|[pP]ar[cz]i[aá]l\w{0,3}|část\w+|部分|부분|偏)"
 
 #: Corrected for the number of predictors.
 ADJUSTED = (
@@ -40,8 +40,9 @@ VALUE_BEFORE = (
 
 #: What stands between a name and its number instead of "=".
 VERB = (
-    r"(?:of|by|was|is|are|were|equals?|equal(?:led)?\sto|being|came\sto|comes\sto|reached|amount(?:s|ed)\sto"
-    r"|von|war|ist|betrug|beträgt|liegt\sbei|lag\sbei|de|était|est\sde|était\sde|valait|vaut|est|égal\sà"
+    r"(?:(?:is|was|est|è|es|é|foi|fue|wird|wurde|är|er)\s(?:estimated\sat|estimée?\sà|stimat[oa]\s(?:a|in)|estimad[oa]\se[mn]|auf)"
+    r"|of|by|was|is|are|were|equals?|equal(?:led)?\sto|being|came\sto|comes\sto|reached|amount(?:s|ed)\sto"
+    r"|von|war|ist|betrug|beträgt|liegt\sbei|lag\sbei|de|était|est\sde|était\sde|valait|vaut|est|(?:è|es|é|fue|foi)\sdel|égal\sà"
     r"|van|was|di|av|på|var|är|er|fue(?:\sde)?|fut|foi(?:\sde)?|è(?:\spari\sa)?|é(?:\sde)?|era|es(?:\sde)?|igual\sa|oli|on|bedroeg|bedraagt)"
 )
 
@@ -60,7 +61,7 @@ DEGREES = (
 
 #: Standard errors, by name and by sign.
 ERROR_NAMES = (
-    r"Standardfehler|erreur[\s-](?:type|standard)|error\s(?:est[áa]ndar|típico)|erro[\s-]padrão|errore\s(?:standard|tipico)|błąd\sstandardowy|standart\shata|směrodatná\schyba|стандартная\sошибка"
+    r"Standardfehler|medelfel|erreur[\s-](?:type|standard)|error\s(?:est[áa]ndar|típico)|erro[\s-]padrão|errore\s(?:standard|tipico)|błąd\sstandardowy|standart\shata|směrodatná\schyba|стандартная\sошибка"
     r"|standaardfout|standardfe(?:l|il|jl)|keskivirhe|标准误|標準誤差?|표준오차"
 )
 
@@ -150,3 +151,15 @@ DETERMINATION = (
     r"|determinationskoefficient(?:en)?|forklaringsgrad(?:en)?|förklaringsgrad(?:en)?|selitysaste"
     r"|współczynnik\sdeterminacji|koeficient\sdeterminace|決定係数|决定系数|결정계수)"
 )
+
+#: A correlation, by its name.
+CORRELATION = (
+    r"(?:(?:coefficient\sde\s)?corrélation|(?:coeficiente\sde\s)?correla(?:ción|ção)"
+    r"|(?:coefficiente\sdi\s)?correlazione|(?:Rang)?[Kk]orrelation(?:skoeffizient|skoefficient|en)?(?:en)?"
+    r"|correlatie(?:coëfficiënt)?|korrelasjon(?:skoeffisient)?(?:en)?|korrelaatio(?:kerroin)?"
+    r"|(?:współczynnik\s)?korelacj[ai]|相关系数|相関係数|상관계수)"
+    r"(?:\s(?:(?:de|di|von|nach|van|av|af)\s)?(?:Pearson|Spearman))?"
+)
+
+#: The probability of a test's result, by its name.
+SIGNIFICANCE = r"(?:有意確率|显著性|유의확률|Überschreitungswahrscheinlichkeit|overschrijdingskans)"

@@ -23,7 +23,7 @@ class Role(NamedTuple):
 ROLES: tuple[Role, ...] = (
     Role(
         "ss",
-        "SS SSQ SumSq SQ QS SC SCE KT",
+        "SS SSQ SumSq SQ QS SC SCE KT KS",
         "sumofsquares sumsofsqs sumofsqs sumofsq"
         " sumsofsquares sumsq ssdiff sumsquares squares ssq typeiiisumofsquares"
         " typeiisumofsquares typeisumofsquares typeiiiss typeiiss typeiss seqss adjss anovass"
@@ -37,7 +37,7 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "ms",
-        "MS MSS MeanSq MQ CM QM KO",
+        "MS MSS MeanSq MQ CM QM KO GK MK",
         "meansquare meansquares meansqs meansq square adjms seqms mittelderquadrate"
         " mittlerequadratsumme"
         " carrémoyen carrésmoyens mediacuadrática cuadradomedio quadradomédio quadratomedio"
@@ -151,7 +151,7 @@ ROLES: tuple[Role, ...] = (
         " coeficientes coefficienti koefficient koeffisient regressionskoefficient"
         " regressionskoeffizienten regresjonskoeffisient kerroin współczynnik koeficient"
         " katsayı коэффициент steigung schätzwert helling pendiente pente pendenza"
-        " 推定值 偏回帰係数 回帰係数 係数 非標準化係数 估计值 系数估计 비표준화계수"
+        " 推定值 非标准化系数 偏回帰係数 回帰係数 係数 非標準化係数 估计值 系数估计 비표준화계수"
         " 회귀계수 추정치",
     ),
     Role("β", "β ß β̂ β^", "beta"),
@@ -172,7 +172,7 @@ ROLES: tuple[Role, ...] = (
     ),
     Role(
         "se",
-        "SE se S.E. s.e. EE",
+        "SE se S.E. s.e. EE EP",
         "stderror standarderror stderr standarderr sterr seb seβ sebeta se(b) se(β) se(beta) bse"
         " stderrorb standarderrorb stderrors standarderrors standardfehler stdfehler erreurtype"
         " errortípico errorestándar errorestandar errestándar errorestd errorestd"
