@@ -22,6 +22,8 @@ BRACKETS = expression(
 _LABEL = expression(
     r"\s?(?:[_^]\{\s?(?P<label>[^\W\d_][^{}\n=<>]{0,30})\}|_(?P<bare>[A-Za-z]{2,12}))(?=\s?[(\[]\s?\d)"
 )
+#: A letter between the stars of markup that is shown as it stands: `*F*(2, 57)`.
+_STARRED = expression(r"\*[A-Za-z]\*(?=\s?[(\[]\s?\d)")
 _ADJUSTED = expression(r"GG|HF|[Gg]reenhouse|[Hh]uynh")
 _NO_TEST = expression(r"(?:[ck]rit|tab|max|theor|α|[XYZ](?:,|$))", re.IGNORECASE)
 _FLAT_PAIR = expression(
@@ -90,6 +92,8 @@ def degrees_after(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
 
     ``keys`` names them: two for F, one for t and r, one and perhaps the sample size for χ².
     """
+    if _STARRED.match(text.folded, max(0, at - 2)) is not None:
+        at += 1
     label = _LABEL.match(text.folded, at)
     if label is None:
         return _unlabelled(text, at, keys)

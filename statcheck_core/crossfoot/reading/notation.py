@@ -184,17 +184,17 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "df1",
-        r"(?:(?:df|ddl|gdl|gl|FG)_?\{?1\}?(?!\d)|df[\s_]?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
+        r"(?:(?:df|ddl|gdl|gl|FG|ν)_?\{?1\}?(?!\d)|df[\s_]?\(?(?:num|model|between)\)?|num(?:erator|\.)?\s?(?:df|DF)|ddof1|DF?n|Df\s?Model)",
         True,
-        "dnDNgF",
+        "dnDNgFν",
         "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
     ),
     Notation(
         "df2",
-        r"(?:(?:df|ddl|gdl|gl|FG)_?\{?2\}?(?!\d)|df[\s_]?\(?(?:den(?:om)?|error|resid(?:uals?)?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
+        r"(?:(?:df|ddl|gdl|gl|FG|ν)_?\{?2\}?(?!\d)|df[\s_]?\(?(?:den(?:om)?|error|resid(?:uals?)?|within)\)?|den(?:om(?:inator)?|\.)?\s?(?:df|DF)|ddof2|DFd"
         r"|Df\s?Residuals|(?i:(?:error|residual)\s(?:df|degrees\sof\sfreedom)))",
         True,
-        "dnDeErRgF",
+        "dnDeErRgFν",
         "F = 4.156, num df = 2.000, denom df = 19.204, p-value = 0.03163",
     ),
     Notation(
