@@ -23,7 +23,7 @@ _AFTER = expression(
     re.IGNORECASE,
 )
 _INSIDE = expression(
-    r"_\{?\s?(?:(?P<adjusted>[aA]dj\.?|a|[aA]djusted|korr|corr|c)(?![A-Za-z])|(?P<changed>change|inc|Δ)"
+    rf"_\{{?\s?(?:(?P<adjusted>[aA]dj\.?|a|korr|corr|kor|c|(?i:{ADJUSTED}))(?![A-Za-z])|(?P<changed>change|inc|Δ)"
     r"|(?P<pseudo>[A-Za-z]{1,12}))\s?\}?"
 )
 #: The same for an index c that stands for "conditional".

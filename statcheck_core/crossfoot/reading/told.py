@@ -21,7 +21,7 @@ _ADJUSTED_SHARE = (
     rf"|(?P<adjusted_too>{_SHARE})\s?{ADJUSTED})"
 )
 _VARIANCE_WORD = (
-    r"(?:varian|variânc|variation|variabil|Streuung|wariancj|rozptyl|дисперс"
+    r"(?:varian|variânc|varia(?:tion|ção|ción|zione|tie|sjon)|variabil|Streuung|wariancj|rozptyl|дисперс"
     r"|vaihtelu|zmiennoś|方差|变异|分散)"
 )
 _EXPLAINED = expression(

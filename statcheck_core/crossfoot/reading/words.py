@@ -43,7 +43,7 @@ VERB = (
     r"(?:(?:is|was|est|è|es|é|foi|fue|wird|wurde|är|er)\s(?:estimated\sat|estimée?\sà|stimat[oa]\s(?:a|in)|estimad[oa]\se[mn]|auf)"
     r"|of|by|was|is|are|were|equals?|equal(?:led)?\sto|being|came\sto|comes\sto|reached|amount(?:s|ed)\sto"
     r"|von|war|ist|betrug|beträgt|liegt\sbei|lag\sbei|de|était|est\sde|était\sde|valait|vaut|est|(?:è|es|é|fue|foi)\sdel|égal\sà"
-    r"|van|was|di|av|på|var|är|er|fue(?:\sde)?|fut|foi(?:\sde)?|è(?:\spari\sa)?|é(?:\sde)?|era|es(?:\sde)?|igual\sa|oli|on|bedroeg|bedraagt)"
+    r"|van|was|di|av|på|var|är|er|fue(?:\sde)?|fut|foi(?:\sde)?|è(?:\spari\sa)?|é(?:\sde)?|era|es(?:\sde)?|igual\sa|oli|on|bedroeg|bedraagt|blev|ble|wurde|resultó|risulta|resultou)"
 )
 
 #: The same in scripts without spaces.
@@ -134,7 +134,7 @@ OF = (
 #: Verbs between what a quantity is of and its number.
 COPULA = (
     r"(?:was|is|were|equal(?:s|led)|war|ist|betrug|beträgt|lag\sbei|est|était|vaut|valait|es|fue|era"
-    r"|foi|é|è|bedroeg|bedraagt|var|är|er|oli|on|wynosi|wynosił|byl)"
+    r"|foi|é|è|bedroeg|bedraagt|var|är|er|oli|on|blev|ble|wynosi|wynosił|byl)"
 )
 
 #: What changed by the number that follows.
