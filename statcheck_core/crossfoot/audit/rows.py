@@ -47,12 +47,20 @@ def bind_rows(identity: Identity, cells: Sequence[Cell], unprinted: frozenset[st
         return _once(identity, effects, printed, unprinted)
     if identity.slug == "bounds":
         return [(identity, row) for row in _single_cells(cells)]
+    if len(effects) > 1:
+        identity = _of_several(identity)
     bound = []
     for effect in effects:
         names = _named(identity, effect, printed)
         if len(names) > 1:
             bound.append((identity, names))
     return bound
+
+
+@lru_cache(maxsize=64)
+def _of_several(identity: Identity) -> Identity:
+    """Return an identity without what holds for the only effect of a design."""
+    return identity._replace(forms=tuple(f for f in identity.forms if "one-way" not in f.assumed))
 
 
 def _effects(cells: Sequence[Cell]) -> list[str | None]:

@@ -21,7 +21,7 @@ from crossfoot.reading.tables.making import (
     reading,
 )
 from crossfoot.reading.tables.ratios import Line, is_mean, is_ratio
-from crossfoot.reading.tables.rows import correction_of, kind_of, label_of
+from crossfoot.reading.tables.rows import correction_of, is_by_subjects, kind_of, label_of
 
 #: Roles that a column of such a table may have, and the quantity that each is.
 _QUANTITIES = {
@@ -108,6 +108,8 @@ def _lines(sheet: Sheet, columns: Sequence[Column]) -> list[Line]:
             _read(sheet, column, row[column.number], cells, contexts, has_p=has_p)
         if cells:
             kind = kind_of(label)
+            if kind == "effect" and is_by_subjects(label) and not {"F", "p"} & cells.keys():
+                kind = "error"
             own = section if over else ""
             lines.append(Line(index, label, kind, cells, (*words, *boxes), tuple(contexts), own))
     return _settled(lines)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import itertools
+import re
 from collections.abc import Sequence
 
 from crossfoot.model import Claim, Reading
@@ -42,6 +43,7 @@ _LIMITS = frozenset({"ci_low", "ci_high"})
 _AS = {"wald": "chi2", "statistic": "t", "ratio": "b"}
 #: What holds of the estimates of a column of ratios.
 _OF_RATIOS = ("ratio-scale", "other-null")
+_MODEL = re.compile(r"regress|coefficient|predict|model|standardi|estimate", re.IGNORECASE)
 _OTHERS = frozenset({"p_adjusted", "df2", "df"})
 
 
@@ -82,6 +84,8 @@ def _is_model(sheet: Sheet, columns: Sequence[Column]) -> bool:
         beside = _BESIDE & set(roles)
         if beside == {"p"} and "R2" in roles_in(sheet.columns):
             return False  # p is that of the model which each row tells of
+        if beside == {"se"} and not {"b", "odds_ratio", "ratio"} & set(roles):
+            return _MODEL.search(sheet.words) is not None  # a letter and an error may be anything
         return bool(beside) or _has_marks(sheet, columns)
     return bool({"se", "vif", "tolerance"} & set(roles)) and bool(
         {"t", "z", "tolerance"} & set(roles)

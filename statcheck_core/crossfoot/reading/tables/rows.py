@@ -19,8 +19,10 @@ _ERROR = re.compile(
     r"|error\sexperimental|resíduos?|erro|dentro\sdos?\sgrupos?|residui|residuo|residua(?:l|le)?|residualvarians|feil|fejl|fel|hata|błąd|chyba|reszidu\w+|остат\w+|ошибка"
     r"|jäännös|virhe|inom\sgrupper|inden\sfor\sgrupper|innen(?:for)?\sgrupper|ryhmien\ssisä\w+|wewnątrz\sgrup"
     r"|uvnitř\sskupin|grup\siçi|внутри\sгрупп|集団内|群内|entro\si?\s?gruppi|errore|binnen\s(?:de\s)?groepen|residu"
-    r"|inom\sgrupper|误差项?|机误|随机误差|处理内|组内|残差|誤差|오차|잔차|error\svariance|subjects\swithin\sgroups"
+    r"|inom\sgrupper|误差项?|机误|随机误差|处理内|组内|残差|誤差|오차|잔차|error\svariance|(?:.{1,40}\s?[×x*]\s?)?(?:subjects?|participants?|ss)\s(?:within|w\.?)\s?(?:groups?|cells)?"
 )
+#: The error within subjects, unless it is tested itself: then ``subject`` is a factor.
+_BY_SUBJECTS = re.compile(r".{1,40}\s?[×x*]\s?(?:subjects?|participants?)")
 _TOTAL = re.compile(
     r"(?:grand\s)?total(?:\s(?:variation|variance|ss|sum))?|sum|gesamt(?:variation)?|insgesamt|summe|totale?|totaal|totalt|i\salt|yhteensä|ogółem|razem|celkem|toplam|всего|итого|összesen|合计|总计|总和|总变异|总的|合計|全体|전체|합계"
 )
@@ -87,6 +89,11 @@ def kind_of(label: str) -> str:
         if pattern.fullmatch(low):
             return kind
     return "effect"
+
+
+def is_by_subjects(label: str) -> bool:
+    """Say whether a row is the interaction of an effect with subjects."""
+    return _BY_SUBJECTS.fullmatch(plain(label).lower().strip(" .:*")) is not None
 
 
 def is_lack_of_fit(label: str) -> bool:
