@@ -32,6 +32,7 @@ CONTEXTS: Mapping[str, str] = {
     "by-item": "The analysis takes the means of items.",
     "imputed": "Missing values are imputed and the results pooled.",
     "rank-correlation": "The correlation is one of ranks.",
+    "several-effects": "Other effects of the design are tested against the same error.",
     "own-limits": "The interval is from a profile of the likelihood, a penalty or a posterior.",
     "rank-test": "The test is one of ranks.",
     "missing-cases": "The text tells of cases that are missing.",
@@ -228,7 +229,7 @@ _ASSUMPTIONS = (
     _assumption(
         "one-way",
         "The effect is the only one in the design.",
-        "repeated-measures mixed",
+        "repeated-measures mixed several-effects",
     ),
     _assumption(
         "orthogonal-effects",

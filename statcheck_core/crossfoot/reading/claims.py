@@ -183,7 +183,25 @@ def _overall(claims: list[Claim], text: str) -> list[Claim]:
             ):
                 claim = claim._replace(kind="effect")
         settled.append(claim)
-    return settled
+    return [
+        _one_of_several(claim, settled[max(0, number - 1) : number + 2], text)
+        for number, claim in enumerate(settled)
+    ]
+
+
+def _one_of_several(claim: Claim, around: Sequence[Claim], text: str) -> Claim:
+    """Say of an effect with its share of the variance that another has the same error."""
+    error = _value(claim, "df2")
+    shared = claim.kind == "effect" and error is not None and _value(claim, "eta2") is not None
+    if not shared or not any(
+        other is not claim
+        and other.kind == "effect"
+        and _value(other, "df2") == error
+        and same_sentence(text, claim.span, other.span)
+        for other in around
+    ):
+        return claim
+    return claim._replace(context=tuple(sorted({*claim.context, "several-effects"})))
 
 
 def _sided(claims: list[Claim], groups: Sequence[Group], text: str) -> list[Claim]:

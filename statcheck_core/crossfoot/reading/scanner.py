@@ -61,6 +61,7 @@ _FOR_ALL_BEHIND = expression(
 _PLACED = expression(
     r"(?<![A-Za-z])[Aa]t\s$|[yY]\s?=\s?-?\d{1,4}(?:\.\d{1,3})?\s?(?:mm)?,?\s(?:and\s)?$"
 )
+_OR_LESS = expression(r"\sor\s(?:less|lower|smaller|below|better)\b")
 #: "p = 0.04 of default": the probability of something else than a test's result
 _OF_SOMETHING = expression(
     r"\sof\s(?!(?:the|this|that|an?|all|both|each|F|t|r|z)\b|interact|effect|slope|differ|trend|test)[a-z]{3}"
@@ -385,6 +386,8 @@ def _read_p(text: Text, name: Name) -> Item | None:
     if sided is not None:
         end = sided.end()
         flags = (*flags, "one-sided" if sided["one"].lower() in {"one", "1"} else "two-sided")
+    if value.relation == "=" and _OR_LESS.match(text.folded, value.end):
+        value = value._replace(relation="≤", low=-float("inf"))
     exact = _EXACT_BEHIND.match(text.folded, end) if value.relation != "=" else None
     value = (exact and number_at(text, exact.end(), "p", "=")) or value  # p < .05 (p = .026)
     if printed.lower() in {"ps", "p's"} or _is_of_all(text.folded, start):

@@ -62,6 +62,11 @@ _VARIANCE = (
     "miennoś",
     "дисперс",
 )
+#: What explains variance and is no model: "the first axis explained 42% of the variance"
+_AXES = expression(
+    r"\b(?:ax[ie]s|(?:principal|variance)\scomponents?|PCs?\s?\d?|dimensions?|[RCN]DA\d?|eigen\w{0,8})\b"
+    r"[^.;]{0,40}$"
+)
 _LISTED_BEFORE = expression(rf"(?P<share>\d+(?:[.,]\d+)?\s?%)(?:\s{AND}|\s?,(?:\s{AND})?)\s$")
 _FURTHER = expression(
     r"(?:additional|further|another|extra|incremental|more|zusätzlich\w*|weitere)\s?(?:an?\s)?$",
@@ -160,7 +165,7 @@ def _shares(text: Text, match: re.Match[str], start: int) -> Iterator[Item]:
         first += 1
     quantity = _kind_of_share(text.folded, start, match)
     part = _share(text, quantity, first, last)
-    if part is None:
+    if part is None or _AXES.search(text.folded, max(start, first - 60), first) is not None:
         return
     for key in ("adjusted", "adjusted_too", "behind", "behind_too"):
         adjusted = _share(text, "R2_adj", *match.span(key)) if match[key] else None

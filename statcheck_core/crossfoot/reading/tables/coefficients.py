@@ -47,8 +47,16 @@ _MODEL = re.compile(r"regress|coefficient|predict|model|standardi|estimate", re.
 _OTHERS = frozenset({"p_adjusted", "df2", "df"})
 
 
+#: Headings of what a simulation tells of a test or an estimate.
+_SIMULATED = re.compile(
+    r"\brejection|\bcoverage\b|\btype\sI\serror|\breplications\b", re.IGNORECASE
+)
+
+
 def coefficients(sheet: Sheet) -> Found | None:
     """Return the claims of a table of coefficients, or None where it is none."""
+    if _SIMULATED.search(sheet.words):
+        return None  # what is set is estimated of nothing
     groups = side_by_side(with_own_p(sheet.columns), _ESTIMATES | _BESIDE | _OTHERS)
     groups = [group for group in groups if _is_model(sheet, group)]
     if not groups:

@@ -157,6 +157,12 @@ def _degrees(sheet: Sheet, heading: Heading, head: Box, content: Content, box: B
     ]
 
 
+#: Headings of what tells how well a program classifies.
+_OF_CLASSIFIER = re.compile(
+    r"\bF1\b|\bprecision\b|\brecall\b|\baccuracy\b|\bdropout\b", re.IGNORECASE
+)
+
+
 def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     """Return the models that rows tell of under headings such as R² and ΔF."""
     roles = (
@@ -165,7 +171,9 @@ def fit_columns(sheet: Sheet, *, beside_coefficients: bool = False) -> Found:
     columns = _of_selection(
         [c for c in sheet.columns if c.heading.roles and c.heading.roles[0] in {*roles, "R2_part"}]
     )
-    if not any(c.heading.roles[0] in _STRONG for c in columns):
+    if not any(c.heading.roles[0] in _STRONG for c in columns) or _OF_CLASSIFIER.search(
+        sheet.words
+    ):
         return Found(())
     labels = labels_of(sheet.panel, sheet.columns)
     models: list[Model] = []
