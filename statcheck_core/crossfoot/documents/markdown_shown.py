@@ -15,6 +15,8 @@ _HEADING_END = expression(r"(?:[ \t]+#+)?(?:[ \t]*\{[^{}\n]{0,200}\})?[ \t]*$")
 _UNDERLINE = expression(r"\n[ \t>]*[=-]+[ \t]*$")
 _QUOTE = expression(r"(?:[ \t]{0,3}> ?)+")
 _BULLET = expression(r"[ \t]*([-+*])[ \t]+(?=(\S))")
+#: A dash of two hyphens in the place of a sign.
+_MINUS = expression(r"(?:(?<=[=<>≈(\[])|(?<=[=<>≈(\[] ))--(?=\.?\d)")
 _LABEL = expression(r"[ \t]*(?:\[\^[^\s\[\]]{1,60}\]:|:(?!:)|Table:)[ \t]*")
 
 
@@ -77,4 +79,7 @@ def _line_edits(source: str, start: int, end: int) -> list[Edit]:
         if feed < 0:
             break
         position = feed + 1
+    if "--" in source:
+        edits += [Edit(*sign.span(), "−") for sign in _MINUS.finditer(source, start, end)]
+        edits.sort(key=lambda edit: edit[:2])
     return edits

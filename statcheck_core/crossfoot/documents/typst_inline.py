@@ -6,7 +6,7 @@ import re
 from collections.abc import Iterable
 
 from crossfoot.documents.edits import Edit, Marks, Walk, show_marked
-from crossfoot.documents.typst_math import show_typst_math
+from crossfoot.documents.typst_math import NAMES, show_typst_math
 from crossfoot.documents.visible import OPAQUE, Builder
 from crossfoot.expressions import expression
 
@@ -80,7 +80,9 @@ class _Walk(Walk):
             self.edits.append(Edit(number.end(1), found.end()))
             return
         if not found["open"]:
-            self.replace(found, " " if name in ("h", "v") and found["args"] else OPAQUE)
+            gap = " " if name in ("h", "v") and found["args"] else None
+            sign = NAMES.get(name[4:]) if name.startswith("sym.") else None
+            self.replace(found, gap or sign or OPAQUE)
             return
         before, close = _AROUND.get(name, ("", ""))
         stars = re.compile(r"[*†‡\\]{1,9}\]").match(self.source, found.end(), self.end)

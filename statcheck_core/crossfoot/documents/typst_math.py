@@ -17,7 +17,8 @@ _TOKEN = expression(
 
 _SIGNS = {"<=": "≤", ">=": "≥", "!=": "≠", "->": "→", "=>": "⇒", "~=": "≈", "...": "…"}
 
-_NAMES = {
+#: What names stand for, in formulas and in the module of signs.
+NAMES = {
     **{name: SYMBOLS[name] for name in LETTERS},
     "plus.minus": "±",
     "minus.plus": "∓",
@@ -107,7 +108,8 @@ class _Setter:
             self.out.put(" ", at, after)
             return after
         elif found["run"]:
-            self.out.put(OPAQUE, at, after)
+            sign = NAMES.get(found["run"].removeprefix("#sym."))
+            self.out.put(sign or OPAQUE, at, after)
         else:
             self.out.keep(self.source, at + bool(found["escape"]), after)
         self.finish(after)
@@ -149,8 +151,8 @@ class _Setter:
             if name == "frac":
                 return self.fraction(after + 1)
             return after + 1
-        if name in _NAMES:
-            self.out.put(_NAMES[name], at, after)
+        if name in NAMES:
+            self.out.put(NAMES[name], at, after)
         else:
             self.out.keep(self.source, at, after)
         self.finish(after)

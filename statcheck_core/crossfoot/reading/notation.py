@@ -356,7 +356,7 @@ NOTATIONS: tuple[Notation, ...] = (
     ),
     Notation(
         "p",
-        rf"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}}?)?(?:(?![\w²]|'\w)|{_SCRIPT})|[pP](?=_\{{[^\W\d][^{{}}\n]{{0,24}}\}})",
+        rf"[Pp](?=[bo]0?\.\d)|(?:P|p)(?:s|'s)?(?:[\s-]?_?\{{?(?i:adj|corr|bonf(?:erroni)?|holm|tukey|fdr|perm|one-tailed|two-tailed)\.?\}}?)?(?:(?![\w²]|'\w)|{_SCRIPT})|[pP](?=_\{{\(?[^\W\d][^{{}}\n]{{0,24}}\}})",
         False,
         "pP",
         "F(2, 57) = 3.90, p = .026",

@@ -65,7 +65,7 @@ _GROUPED = expression(r",\d{3}(?!\d)")
 
 #: Quantities that have no unit: a unit behind the number makes it something else.
 _UNITLESS = frozenset(
-    {"F", "p", "t", "r", "z", "chi2", "R", "R2", "R2_adj", "R2_change", "F_change", "β", "beta"}
+    {"F", "p", "t", "r", "z", "chi2", "R", "R2", "R2_adj", "R2_change", "F_change", "beta"}
 )
 #: Of those, the ones that may be printed as a percentage.
 _SHARES = frozenset({"R2", "R2_adj", "R2_change", "p"})
