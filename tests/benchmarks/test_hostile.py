@@ -20,7 +20,7 @@ from crossfoot.audit import audit_claim
 from crossfoot.documents import FORMATS
 from crossfoot.documents.markdown import _remembered
 from crossfoot.reading import read_block
-from crossfoot.reading.cues import cues_in
+from crossfoot.reading.contexts import cues_in
 from crossfoot.scan import scan_text
 
 MEGABYTE = 1_000_000
