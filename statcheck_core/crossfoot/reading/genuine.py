@@ -52,7 +52,7 @@ _FEW = 2
 _BESIDE = 200
 _DECIMALS = expression(r"[.,·]\d")
 #: Between a coefficient and a p that alone supports it: nothing but list marks.
-_LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}")
+_LIST_MARKS = expression(r"[\s,;()\[\]]{1,4}|\*{1,4}[\s,;()\[\]]{1,4}")
 #: … or a word that says as much, on one line or the next.
 _LISTED_NEXT = expression(
     r"(?!\s*\n\s*[\n*•-])[\s,;()\[\]–-]{0,4}(?:(?:at|with)\s(?:an?\s|the\s)?)?[\s,;()\[\]]{0,2}"
@@ -187,7 +187,9 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
         possible = value.high >= -1.0 and value.low <= 1.0
         if counted and not has_p and "df" not in quantities and not _side_by_side(items, text):
             return False
-        if "df" not in quantities and (is_of_classifier(items, text) or is_power(items, text)):
+        sure = has_p and "n" in quantities
+        another = is_power(items, text) or (not sure and is_of_classifier(items, text))
+        if "df" not in quantities and another:
             return False
         if not (counted or near(_RELATED, items, text) or _is_listed(items, test, text)):
             return False
@@ -208,6 +210,9 @@ def _is_test(anchor: str, items: Sequence[Item], quantities: set[str], text: str
         return spelt and not is_of_functions(items, text)
     if anchor == "t" and quantities & {"b", "beta", "se"}:
         return _together(items, text)
+    of_fit = "n" in quantities and bool(quantities & {"R2", "R2_adj"})
+    if of_fit and "p" not in quantities and _side_by_side(items, text):
+        return True  # (t = 3.9; R² = .17; N = 76)
     return has_p and _follows_or_told(items, test, value, text) and not is_function(items, text)
 
 

@@ -345,7 +345,7 @@ def _one_sample_size(items: list[Item], text: str) -> list[Item]:
 
 #: What has a sample of its own: `(R² = .93, n = 56, p < .001)`.
 _SAMPLED = frozenset({"R2", "R2_adj", "r", "chi2"})
-_MARKS = expression(r"[\s,;(]{1,3}")
+_MARKS = expression(r"\*{0,4}[\s,;(]{1,3}")
 _NO_SECOND = expression(r"(?![^=<>()]{0,40}n\s?=)")
 
 

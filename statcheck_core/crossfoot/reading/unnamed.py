@@ -28,7 +28,7 @@ _SPREAD = expression(
 #: The number before it, with what it counts in.
 _WORD = r"[^\S\n][^\s\d,;:.()\[\]=<>±][^\s,;:()\[\]=<>±]{0,20}"
 _NUMBER = expression(
-    rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?P<unit>(?:{_WORD}){{0,5}})$"
+    rf"(?:(?<=[\s(])|^)(?<![=<>≤≥≈±]\s)(?P<b>{NUMERAL})(?P<unit>(?:{_WORD}){{0,7}})$"
 )
 _SPREAD_SIGNS = (
     "SE",
@@ -98,7 +98,7 @@ def _candidates(text: Text, start: int, end: int) -> Iterator[Item]:
 
 
 #: How far back the number, and the words that tell what it is, may begin, in characters.
-_REACH, _LEAD = 60, 110
+_REACH, _LEAD = 80, 110
 
 
 def _told_before(text: Text, spread: re.Match[str], start: int, earlier: int) -> Iterator[Item]:
