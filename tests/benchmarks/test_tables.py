@@ -13,7 +13,7 @@ import pytest
 
 from crossfoot.audit import _judged, audit_claim
 from crossfoot.reading import read_block
-from crossfoot.reading.cues import cues_in
+from crossfoot.reading.contexts import cues_in
 from crossfoot.scan import scan_text
 
 Rows = Sequence[Sequence[str]]
