@@ -8,10 +8,11 @@ from collections.abc import Sequence
 from crossfoot.expressions import expression
 from crossfoot.model import Claim, Reading, Span
 from crossfoot.reading.contexts import alpha_of, concerning, contexts_of, cues_in
+from crossfoot.reading.dealing import shared
 from crossfoot.reading.grouping import Group
 from crossfoot.reading.items import SCANNER_FLAGS, Item, Part
 from crossfoot.reading.sentences import same_sentence, sentence_around
-from crossfoot.reading.settling import settle, shared
+from crossfoot.reading.settling import settle
 
 _MODEL = expression(
     r"\bmodel|regress|overall|predict|explain|\bfit\b|fitted|accounted|modell|modèle|modelo|modello"

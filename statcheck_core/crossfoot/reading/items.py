@@ -7,6 +7,9 @@ from typing import NamedTuple
 #: Quantities that are counts: exact when printed without decimals.
 WHOLE = frozenset({"n", "k", "df", "df1", "df2"})
 
+#: Heads of items that estimate the coefficient of one predictor.
+COEFFICIENTS = frozenset({"b", "β", "beta", "odds_ratio"})
+
 
 class Text(NamedTuple):
     """Folded visible text of a block, and whether it writes decimals with a comma."""

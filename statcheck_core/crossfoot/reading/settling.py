@@ -1,147 +1,28 @@
-"""Settling groups: what was printed once for several, what a name meant, what is no result."""
+"""Settling groups: what belongs together, what a name meant, what is no result."""
 
 from __future__ import annotations
 
 import re
-from collections.abc import Iterable, Sequence
-from itertools import pairwise
+from collections.abc import Sequence
 
 from crossfoot.expressions import expression
 from crossfoot.reading.genuine import is_result
 from crossfoot.reading.grouping import Group
-from crossfoot.reading.items import Item, Part
-from crossfoot.reading.others import of_its_own, parted
-from crossfoot.reading.sentences import same_sentence
+from crossfoot.reading.items import COEFFICIENTS, Item, Part
+from crossfoot.reading.others import of_its_own
 
-_TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
-_COEFFICIENT = frozenset({"b", "β", "beta", "odds_ratio"})
 #: An interval right behind one of these is the interval of that effect size.
 _OWN_INTERVAL = frozenset(
     {"d", "phi", "cramers_v", "eta2", "eta2_partial", "omega2", "R2", "R2_adj", "R2_change", "f2"}
 )
 #: Effect sizes that belong to χ² alone.
 _OF_COUNTS = frozenset({"phi", "cramers_v"})
-#: Counts, which may be of the tests in the sentence before.
-_LEFT_OVER = frozenset({"n", "df", "df-pair"})
 #: A residual standard deviation is read beside one of these.
 _WITH_S = frozenset({"F", "F_change", "R2", "R2_adj", "R"})
 #: Beside one of these k counts predictors.
 _WITH_K = frozenset({"R2", "R2_adj"})
 #: What a Wald F says nothing of.
 _OF_FIT = frozenset({"R2", "R2_adj", "R", "s"})
-
-
-def shared(groups: Sequence[Group], text: str) -> Iterable[Group]:
-    """Deal out what is printed once for several tests of a sentence.
-
-    ``32% and 40% … F = …, F = …, respectively; both ps < .001``: listed percentages go to the
-    tests in order, listed p values likewise, and one plural p to each test that has none.
-    """
-    for sentence in _sentences(_given_to_all(groups, text), text):
-        yield from _dealt(parted(sentence, text))
-
-
-def _sentences(groups: Sequence[Group], text: str) -> Iterable[Sequence[Group]]:
-    """Yield the groups of each sentence with a test, and with it what belongs to no test."""
-    run: list[Group] = []
-    for group in groups:
-        apart = run and not same_sentence(text, _place(run[-1].items[-1]), _place(group.items[0]))
-        if apart and not all(_is_left_over(item) for item in group.items):
-            yield run
-            run = []
-        run.append(group)
-    yield run
-
-
-def _is_left_over(item: Item) -> bool:
-    """Say whether an item in a sentence of its own speaks of the tests in the one before."""
-    return item.head in _LEFT_OVER or (item.head == "p" and "plural" in item.flags)
-
-
-def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
-    tests = [n for n, group in enumerate(groups) if group.anchor in _TESTS | _COEFFICIENT]
-    shares = [
-        item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
-    ]
-    given = _p_in_order(groups, tests)
-    deal = dict(zip(tests, shares, strict=True)) if len(shares) == len(tests) > 1 else {}
-    dealt, handed = set(deal.values()), set(given.values())
-    for number, group in enumerate(groups):
-        items = [item for item in group.items if item not in dealt]
-        if number in given:
-            own = given[number]
-            items = [item for item in items if item.head != "p"]
-            items += [own._replace(flags=(*own.flags, "dealt"))] if own else []
-        elif given and group.anchor is None:
-            items = [item for item in items if item not in handed]
-        if number in deal:
-            items.insert(0, deal[number])
-        if items:
-            yield Group(tuple(items), group.anchor)
-
-
-def _given_to_all(groups: Sequence[Group], text: str) -> Sequence[Group]:
-    """Give each count that is printed once for all to every test of its sentence without one."""
-    for item in [item for group in groups for item in _for_all(group.items)]:
-        keys = {part.quantity for part in item.parts}
-        takers = [
-            group
-            for group in groups
-            if group.anchor in _TESTS
-            and same_sentence(text, (group.items[0].start, group.items[-1].end), _place(item))
-            and keys.isdisjoint(p.quantity for i in group.items for p in i.parts if i != item)
-            and (group.anchor in {"F", "F_change"}) >= (item.head == "df-pair")
-        ]
-        if len(takers) > 1:
-            groups = [_with(group, item, group in takers) for group in groups]
-    return [group for group in groups if group.items]
-
-
-def _for_all(items: Sequence[Item]) -> list[Item]:
-    """Return what words give to all tests, or a p that is one for all has right behind it."""
-    behind = [b for a, b in pairwise(items) if "plural" in a.flags and a.head == "p"]
-    return [item for item in items if "all" in item.flags or (item.head == "n" and item in behind)]
-
-
-def _place(item: Item) -> tuple[int, int]:
-    return item.start, item.end
-
-
-def _with(group: Group, item: Item, given: bool) -> Group:
-    """Return a group with an item, or without it."""
-    items = tuple(other for other in group.items if other != item)
-    return group._replace(items=(*items, item) if given else items)
-
-
-def _p_in_order(groups: Sequence[Group], tests: Sequence[int]) -> dict[int, Item | None]:
-    """Return the p of each test where tests are followed by as many p, or one for all."""
-    ps = [
-        (number, item)
-        for number, group in enumerate(groups)
-        for item in group.items
-        if item.head == "p"
-    ]
-    bare = [
-        number for number in tests if not any(item.head == "p" for item in groups[number].items)
-    ]
-    if len(tests) < 2 or not bare or not ps:
-        return {}
-    if len(ps) == 1 and "plural" in ps[0][1].flags and _leads(ps[0][1], groups[tests[0]]):
-        return dict.fromkeys(tests, ps[0][1])
-    if ps[0][0] < tests[-1]:
-        return {}
-    if len(ps) == len(tests):
-        return {number: item for number, (_, item) in zip(tests, ps, strict=True)}
-    if len(ps) == 1 and "plural" in ps[0][1].flags:
-        return dict.fromkeys(tests, ps[0][1])
-    # More p than one, and not one for each, or one behind a list: whose they are is not said.
-    listed = any("listed" in item.flags for item in groups[tests[-1]].items if item.head != "p")
-    return {tests[-1]: None} if len(ps) > 1 or listed else {}
-
-
-def _leads(p: Item, group: Group) -> bool:
-    """Say whether a p stands before a test: ``both p ≤ .01: F(2, 61) = 5.2 and …``."""
-    return all(p.start < item.start for item in group.items if item.head == group.anchor)
 
 
 def settle(group: Group, text: str) -> Group | None:
@@ -167,7 +48,7 @@ def settle(group: Group, text: str) -> Group | None:
         items = _df_of_f(items)
         if any("wald" in item.flags for item in items):
             items = [item for item in items if item.head not in _OF_FIT]
-    if group.anchor in _COEFFICIENT:
+    if group.anchor in COEFFICIENTS:
         items = [item for item in items if not _of_a_single_slope(item)]
         items = _on_one_scale(items, text)
     return Group(tuple(items), group.anchor) if is_result(group.anchor, items, text) else None
@@ -279,7 +160,7 @@ def _own_interval(items: Sequence[Item], anchor: str | None) -> list[Item]:
     kept = []
     for number, item in enumerate(items):
         before = items[number - 1].head if number else None
-        other_test = anchor in {"F", "F_change", "chi2"} and before not in _COEFFICIENT
+        other_test = anchor in {"F", "F_change", "chi2"} and before not in COEFFICIENTS
         if item.head == "ci" and (before in _OWN_INTERVAL or other_test):
             continue
         kept.append(item)
