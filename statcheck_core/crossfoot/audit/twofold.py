@@ -59,9 +59,10 @@ def _turned(reading: Reading, mark: str, marks: set[str]) -> Reading | None:
 
     A test is read in thousands only where another numeral shows that its mark is not the decimal
     mark: any p below a bound goes with one a thousand times as great. A count may be in thousands
-    anywhere, and what has a unit unless all others show the mark to be the decimal one.
+    anywhere, and what has a unit unless decimals are set off by points: commas do both for some.
     """
-    whole = reading.quantity in WHOLE
+    whole, scaled = reading.quantity in WHOLE, reading.quantity in _SCALED
+    pointed = mark == "." and marks == {"."}
     literal = fold(reading.literal)
     decimal = numerals.parse(literal.replace(mark, "."))
     grouped = numerals.parse(literal.replace(mark, ""), whole=whole)
@@ -69,9 +70,7 @@ def _turned(reading: Reading, mark: str, marks: set[str]) -> Reading | None:
         return None
     if numerals.bounds(reading.relation, decimal) != (reading.low, reading.high):
         low, high = numerals.bounds(reading.relation, decimal)
-    elif (
-        whole or (reading.quantity in _SCALED and marks != {mark}) or (marks and mark not in marks)
-    ):
+    elif whole or (scaled and not pointed) or (marks and mark not in marks):
         low, high = numerals.bounds(reading.relation, grouped)
     else:
         return None
