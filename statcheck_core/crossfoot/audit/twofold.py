@@ -58,8 +58,8 @@ def _turned(reading: Reading, mark: str, marks: set[str]) -> Reading | None:
     """Return a reading with its decimals read as a group of digits, or the other way about.
 
     A test is read in thousands only where another numeral shows that its mark is not the decimal
-    mark: any p below a bound goes with one a thousand times as great. A count may be in thousands
-    anywhere, and what has a unit unless decimals are set off by points: commas do both for some.
+    mark: any p below a bound goes with one a thousand times as great. A count, and what has a
+    unit, may be in thousands unless decimals are set off by points: commas do both for some.
     """
     whole, scaled = reading.quantity in WHOLE, reading.quantity in _SCALED
     pointed = mark == "." and marks == {"."}
@@ -70,7 +70,7 @@ def _turned(reading: Reading, mark: str, marks: set[str]) -> Reading | None:
         return None
     if numerals.bounds(reading.relation, decimal) != (reading.low, reading.high):
         low, high = numerals.bounds(reading.relation, decimal)
-    elif whole or (scaled and not pointed) or (marks and mark not in marks):
+    elif ((whole or scaled) and not pointed) or (marks and mark not in marks):
         low, high = numerals.bounds(reading.relation, grouped)
     else:
         return None
