@@ -112,3 +112,19 @@ class TestPartialCorrelations:
         assert found(f"Over all plots, {result}") == [("doubt", "n-from-df")]
         assert found(f"Controlling for age and size, {result}") == []
         assert found("Partial correlations are reported.", f"Over all plots, {result}") == []
+
+
+class TestTheBootstrap:
+    MEDIATED = "We tested mediation with bootstrapped confidence intervals (5,000 draws)."
+
+    def test_its_intervals_say_nothing_of_p(self) -> None:
+        assert found("# Methods", self.MEDIATED, "# Results", FALSE) == [("reversal", "p-from-t")]
+
+    def test_its_intervals_need_not_be_even(self) -> None:
+        slope = "The slope was *b* = 0.84, *SE* = 0.31, 95% CI [0.31, 1.62]."
+        assert found("# Results", slope) != []
+        assert found("# Methods", self.MEDIATED, "# Results", slope) == []
+
+    def test_its_p_values_need_not_follow(self) -> None:
+        told = "All *p* values were obtained with the bootstrap."
+        assert found("# Methods", told, "# Results", FALSE) == []

@@ -33,7 +33,8 @@ CONTEXTS: Mapping[str, str] = {
     "imputed": "Missing values are imputed and the results pooled.",
     "rank-correlation": "The correlation is one of ranks.",
     "several-effects": "Other effects of the design are tested against the same error.",
-    "own-limits": "The interval is from a profile of the likelihood, a penalty or a posterior.",
+    "own-limits": "The interval is from a profile of the likelihood, a penalty, a posterior or the "
+    "bootstrap.",
     "rank-test": "The test is one of ranks.",
     "missing-cases": "The text tells of cases that are missing.",
     "normal-limits": "The limits are taken from the normal distribution.",

@@ -10,7 +10,7 @@ from typing import NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.model import Claim
-from crossfoot.reading.cues import ALL_TESTS, CUES
+from crossfoot.reading.cues import ALL_TESTS, CUES, Cue
 from crossfoot.reading.sentences import SENTENCE_END, sentence_around
 
 # Patterns are compiled when first used: most documents need none of them, and start-up counts.
@@ -142,7 +142,12 @@ def spreading(text: str) -> frozenset[str]:
     contexts = cues_in(text).contexts & _SPREADS
     if not contexts:
         return contexts
-    found = {cue.context for cue in CUES if cue.spreads and not cue.general} & contexts
+    low = text.lower()
+    found = {
+        cue.context
+        for cue in CUES
+        if cue.spreads and not cue.general and cue.context in contexts and _says(cue, low)
+    }
     if found & _OF_ONE_MODEL and _ORDINARY.search(text):
         found -= _OF_ONE_MODEL  # there are models of several kinds
     if contexts - found:
@@ -152,6 +157,13 @@ def spreading(text: str) -> frozenset[str]:
     return frozenset(found | ({"either-sided"} if "one-sided" in contexts - found else set()))
 
 
+def _says(cue: Cue, low: str) -> bool:
+    """Say whether the words of this cue, and not of another for its context, stand in a text."""
+    return any(stem in low for stem in cue.stems) and (
+        not cue.confirm or re.search(cue.confirm, low) is not None
+    )
+
+
 def _general(sentence: str, contexts: frozenset[str]) -> set[str]:
     """Return the contexts that a sentence states of all tests, or of all comparisons."""
     own = cues_in(sentence).contexts & contexts
@@ -159,7 +171,9 @@ def _general(sentence: str, contexts: frozenset[str]) -> set[str]:
         return set()
     low = sentence.lower()
     found = {
-        c.context for c in CUES if c.context in own and c.general and re.search(c.general, low)
+        cue.context
+        for cue in CUES
+        if cue.context in own and cue.general and _says(cue, low) and re.search(cue.general, low)
     }
     if "adjusted-p" in own and _COMPARED.search(low):
         found = (found - {"adjusted-p"}) | {COMPARISONS}

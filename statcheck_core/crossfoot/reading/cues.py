@@ -47,7 +47,7 @@ _LATERAL = (
 )
 #: What says of a statement that it is one of all tests.
 ALL_TESTS = (
-    r"\ball\b|throughout|\btests? (?:were|are)\b|p[- ]?values? (?:were|are|have been)"
+    r"\ball\b|throughout|\btests? (?:were|are)\b|p\W{0,3}values? (?:were|are|have been)"
     r"|\balle\b|\btous\b|\btodos\b|\btutti\b"
 )
 
@@ -82,7 +82,7 @@ CUES: tuple[Cue, ...] = (
         ),
         spreads=True,
         confirm=r"\btost\b|equivalence (?:test|bound|margin|limit|was|held)|for equivalence"
-        r"|non-?inferiority|superiority test|mixture of|p[- ]values? (?:was|were|is|are) halved"
+        r"|non-?inferiority|superiority test|mixture of|p\W{1,3}values? (?:was|were|is|are) halved"
         r"|halved p|halved the p|chi-bar|(?:on|at|of) the boundary",
     ),
     Cue(
@@ -215,7 +215,7 @@ CUES: tuple[Cue, ...] = (
             "multiple sammenlig; 多重比较; 多重比較; 多重檢定"
         ),
         spreads=True,
-        general=ALL_TESTS + r"|adjust\w*\s?[=:]|p\.adjust|p[- ]values? adjust|adjustment"
+        general=ALL_TESTS + r"|adjust\w*\s?[=:]|p\.adjust|p\W{1,3}values? adjust|adjustment"
         r"|(?:comparisons|contrasts|probabilities) (?:were|are)\b",
     ),
     Cue(
@@ -347,13 +347,27 @@ CUES: tuple[Cue, ...] = (
     ),
     Cue(
         "resampled",
+        _stems("bootstrap; resampl; monte carlo"),
+        spreads=True,
+        general=r"\bp\W{1,3}values?\b|\bsignifican|\binference"
+        r"|(?:bootstrap\w*|resampling|monte carlo) (?:p\b|tests?|standard errors?|procedure)"
+        r"|tested (?:by|with) (?:the |a )?(?:bootstrap|resampl|monte carlo)",
+    ),
+    Cue(
+        "own-limits",
+        _stems("bootstrap; resampl; monte carlo"),
+        spreads=True,
+        confirm=r"interval|\blimits\b|\bcis?\b",
+    ),
+    Cue(
+        "resampled",
         _stems(
             "permut; permanova; adonis; anosim; mantel; mrpp; rda; dbrda; db-rda; redundancy; "
             "canonical corresp; randomization test; randomisation test; randomization p; "
             "randomisation p"
         ),
         spreads=True,
-        general=ALL_TESTS + r"|p[- ]values? (?:from|by|based)|assessed|obtained|tested",
+        general=ALL_TESTS + r"|p\W{1,3}values? (?:from|by|based)|assessed|obtained|tested",
         confirm=r"\bpermut|permanova|adonis|anosim|\bmantel\b(?![- –]haenszel)|mrpp"
         r"|\b(?:db-?)?rda\b|redundancy anal|canonical corresp|randomi[sz]ation (?:test|p)",
     ),
