@@ -77,11 +77,14 @@ def _audited(document: Document, assumed: Sequence[Assume], settings: Settings) 
     found: list[tuple[int, Sequence[Claim], Held]] = []
     for index, block in enumerate(document.blocks):
         kind, start, source, _ = block
-        scope.enter(block)
+        if assumed or kind == "heading":
+            scope.enter(block)
         reading = read_block(language, kind, source, definitions)
-        if reading.claims:
-            found.append((start, reading.claims, scope.held(index)))
-        scope.leave(block, reading)
+        claims, cues = reading
+        if claims:
+            found.append((start, claims, scope.held(index)))
+        if cues.contexts or cues.alpha or (claims and kind == "verbatim"):
+            scope.leave(block, reading)
     if found:
         yield from _in_scope(found, scope.whole(), settings.alpha)
 

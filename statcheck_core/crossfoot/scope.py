@@ -127,8 +127,6 @@ class Scope:
         self._spoken |= contexts
         if claims and block.kind == "verbatim":
             self._printed = _RETOLD.intersection(*(claim.context for claim in claims))
-        if not contexts and not alpha:
-            return
         if claims:
             said = aside(block.source, claims) if contexts and block.kind == "prose" else _NONE
             alpha = None
@@ -160,7 +158,7 @@ def in_scope(claim: Claim, held: Held, whole: Whole) -> tuple[Claim, frozenset[s
         contexts |= whole.methods
     elif held.early:  # an abstract speaks of all studies
         contexts |= _loosened(whole.methods)
-    if not _several_df(claim):
+    if held.printed and not _several_df(claim):
         contexts |= held.printed
     elsewhere = whole.spoken
     if COMPARISONS in contexts:
@@ -174,7 +172,7 @@ def in_scope(claim: Claim, held: Held, whole: Whole) -> tuple[Claim, frozenset[s
             contexts -= {"partial-sums"}  # what one effect adds is what it has
     if contexts or alpha != claim.alpha:
         claim = claim._replace(context=tuple(sorted({*claim.context, *contexts})), alpha=alpha)
-    return claim, elsewhere.difference(claim.context)
+    return claim, elsewhere.difference(claim.context) if elsewhere else _NONE
 
 
 def _loosened(contexts: frozenset[str]) -> frozenset[str]:
@@ -203,8 +201,10 @@ def _opposed(context: Iterable[str]) -> frozenset[str]:
 
 def _beside(document: Document, index: int) -> frozenset[str]:
     """Return what the paragraphs right above and below a table or printout say of it."""
+    if document.blocks[index].kind not in {"table", "verbatim"}:
+        return _NONE
     found = _note_below(document, index)
-    if document.blocks[index].kind in {"table", "verbatim"} and index > 0:
+    if index > 0:
         before = document.blocks[index - 1]
         if before.kind in {"prose", "heading"}:
             found |= above(before.source)
