@@ -128,3 +128,17 @@ class TestTheBootstrap:
     def test_its_p_values_need_not_follow(self) -> None:
         told = "All *p* values were obtained with the bootstrap."
         assert found("# Methods", told, "# Results", FALSE) == []
+
+
+class TestAboveATable:
+    TABLE = "| Source | SS | df | MS | F | p |\n|---|---|---|---|---|---|\n"
+    ROWS = "| Depth | 12.4 | 1 | 12.4 | 11.8 | .300 |\n| Error | 96.7 | 92 | 1.05 | | |"
+
+    def test_a_line_is_its_caption(self) -> None:
+        line = "Welch's analysis of variance."
+        assert "adjusted-df" in contexts(line, self.TABLE + self.ROWS)[0]
+
+    def test_a_line_with_results_is_none(self) -> None:
+        line = "Boats differed, Welch's *F*(4, 31.2) = 3.05, *p* = .031."
+        assert "adjusted-df" not in contexts(line, self.TABLE + self.ROWS)[1]
+        assert ("reversal", "p-from-f") in found(line, self.TABLE + self.ROWS)

@@ -8,6 +8,7 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from crossfoot.expressions import expression
 from crossfoot.model import Block, Claim, Document
+from crossfoot.reading import read_block
 from crossfoot.reading.contexts import (
     COMPARISONS,
     above,
@@ -207,8 +208,15 @@ def _beside(document: Document, index: int) -> frozenset[str]:
     if index > 0:
         before = document.blocks[index - 1]
         if before.kind in {"prose", "heading"}:
-            found |= above(before.source)
+            found |= above(before.source, caption=not _holds_results(document, before))
     return found
+
+
+def _holds_results(document: Document, block: Block) -> bool:
+    """Say whether a paragraph reports results of its own, and so is no caption."""
+    return bool(
+        read_block(document.language, block.kind, block.source, document.definitions).claims
+    )
 
 
 def _note_below(document: Document, index: int) -> frozenset[str]:

@@ -198,10 +198,13 @@ def titled(text: str) -> frozenset[str]:
     return spreading(text) | (cues_in(text).contexts & _OF_MODELS)
 
 
-def above(text: str) -> frozenset[str]:
-    """Return the contexts that a paragraph states for the table or printout right below it."""
+def above(text: str, *, caption: bool = True) -> frozenset[str]:
+    """Return the contexts that a paragraph states for the table or printout right below it.
+
+    ``caption`` says whether it may be the caption of that.
+    """
     contexts = cues_in(text).contexts
-    if len(text) > _LONGEST_LINE:
+    if not caption or len(text) > _LONGEST_LINE:
         return contexts & _OF_MODELS
     # A line alone is a caption. Where it speaks of ratios, they are what the table estimates.
     return contexts | {"other-null"} if "ratio-scale" in contexts else contexts
