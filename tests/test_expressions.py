@@ -27,4 +27,4 @@ def test_it_is_compiled_at_its_first_use() -> None:
 
 def test_it_has_what_an_expression_has_and_no_more() -> None:
     with pytest.raises(AttributeError):
-        expression("a").groups_and_more  # type: ignore[attr-defined]  # noqa: B018
+        expression("a").groups_and_more  # type: ignore[attr-defined]  # noqa: B018 - that it fails is the point

@@ -17,10 +17,10 @@ from crossfoot.expressions import expression
 from crossfoot.laws.quantities import QUANTITIES
 from crossfoot.mentions import single
 from crossfoot.model import SEVERITIES, Check, Document, Finding, Placed, Reading, Span
+from crossfoot.reading.items import TESTS
 
 #: Quantities that different results often share.
 _COMMON = frozenset({"df", "df1", "df2", "n", "k", "ci_level", "alpha"})
-_TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
 #: Digits that two mentions must share, and quantities that have them.
 _DIGITS, _SHARED = 5, 2
 #: A number that more results than this print tells none from the others.
@@ -94,7 +94,7 @@ def _restated(
         common = here.keys() & there.keys()
         apart = [key for key in common if not _meet(here[key], there[key])]
         alike = [key for key in common if key not in apart and key not in _COMMON]
-        if not _TESTS.isdisjoint(alike):
+        if not TESTS.isdisjoint(alike):
             alike = [key for key in alike if key != "p"]  # it follows from what it is the p of
         digits = sum(min(_digits(here[key]), _digits(there[key])) for key in alike)
         if len(alike) < _SHARED or digits < _DIGITS:

@@ -11,6 +11,7 @@ import re
 
 from crossfoot.laws.quantities import QUANTITIES
 from crossfoot.model import Claim, Reading, Span
+from crossfoot.reading.fold import ON_THE_LINE
 from crossfoot.reading.numerals import bounds, parse
 
 _KIND = re.compile(r"\s*([a-z-]+):\s*")
@@ -57,7 +58,7 @@ def reading(
     quantity: str, relation: str, literal: str, term: str | None = None, place: int = 0
 ) -> Reading:
     """Return a reading as the reading layer makes it."""
-    folded = literal.replace("−", "-").translate(str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789"))
+    folded = literal.replace("−", "-").translate(ON_THE_LINE)
     numeral = parse(folded, decimal_comma="," in literal, whole=QUANTITIES[quantity].whole)
     assert numeral is not None, literal
     low, high = bounds(relation, numeral)

@@ -16,6 +16,7 @@ from crossfoot.expressions import expression
 from crossfoot.laws.interval import Interval
 from crossfoot.laws.quantities import domain
 from crossfoot.model import Reading
+from crossfoot.reading.fold import ON_THE_LINE
 
 _SHAPE = expression(
     r"([-−–+]?)\s?"  # a sign
@@ -27,7 +28,6 @@ _EXPONENT = expression(r"([eE]|\s?[×x·]\s?10\^?\{?)([-−–+]?)(\d{1,3})(\}?)
 _MARKS = ".,·"
 _MINUS = "-−–"
 
-_ON_THE_LINE = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
 _BELOW = str.maketrans("0123456789", "₀₁₂₃₄₅₆₇₈₉")
 
 #: Longer literals are no numerals that anybody has typed.
@@ -118,7 +118,7 @@ class Numeral(NamedTuple):
 
 def on_the_line(literal: str) -> str:
     """Return a literal with digits that are printed below the line as usual ones."""
-    return literal.translate(_ON_THE_LINE)
+    return literal.translate(ON_THE_LINE)
 
 
 def numeral(reading: Reading) -> Numeral | None:

@@ -6,6 +6,7 @@ import re
 from typing import NamedTuple
 
 from crossfoot.expressions import expression
+from crossfoot.reading.fold import ON_THE_LINE
 from crossfoot.reading.items import AS_GOOD_AS, INFINITE, Item, Part, Text
 from crossfoot.reading.names import Name
 from crossfoot.reading.values import AND, COUNT, count_at, value_after
@@ -34,7 +35,6 @@ _THOUSANDS = expression(r"\d{1,3}(?:,\d{3})+")
 # One df before a decimal comma: `t(38,4)`, after Welch. A 1 before it is the df1 of an F.
 _DASHED = expression(r"(\d{1,3})\s?-\s?(\d{1,6})")
 _FRACTIONAL = expression(r"(?!1,)\d{1,4},\d{1,3}")
-_SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
 _DF = (
     rf"(?:d\.?f\.?[nd]?|ν|{DEGREES})\s?_?"
     r"\{?(?:\d|num|den|between|within|model|error)?\}?\s?[=:]?\s?"
@@ -115,7 +115,7 @@ def _unlabelled(text: Text, at: int, keys: tuple[str, ...]) -> Degrees:
         return Degrees(pair, match.end(), possible=bool(pair))
     last = match.lastgroup or ""
     group = "lowered" if last == "more" else last
-    inner = match[group].translate(_SUBSCRIPTS)
+    inner = match[group].translate(ON_THE_LINE)
     start = match.start(group)
     dashed = _DASHED.fullmatch(inner) if two else None
     pieces = (

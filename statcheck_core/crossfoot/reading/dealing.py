@@ -6,11 +6,10 @@ from collections.abc import Iterable, Sequence
 from itertools import pairwise
 
 from crossfoot.reading.grouping import Group
-from crossfoot.reading.items import COEFFICIENTS, Item
+from crossfoot.reading.items import COEFFICIENTS, TESTS, Item
 from crossfoot.reading.others import parted
 from crossfoot.reading.sentences import same_sentence
 
-_TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
 #: Counts, which may be of the tests in the sentence before.
 _LEFT_OVER = frozenset({"n", "df", "df-pair"})
 
@@ -43,7 +42,7 @@ def _is_left_over(item: Item) -> bool:
 
 
 def _dealt(groups: Sequence[Group]) -> Iterable[Group]:
-    tests = [n for n, group in enumerate(groups) if group.anchor in _TESTS | COEFFICIENTS]
+    tests = [n for n, group in enumerate(groups) if group.anchor in TESTS | COEFFICIENTS]
     shares = [
         item for group in groups for item in group.items if {"percent", "listed"} <= set(item.flags)
     ]
@@ -71,7 +70,7 @@ def _given_to_all(groups: Sequence[Group], text: str) -> Sequence[Group]:
         takers = [
             group
             for group in groups
-            if group.anchor in _TESTS
+            if group.anchor in TESTS
             and same_sentence(text, (group.items[0].start, group.items[-1].end), _place(item))
             and keys.isdisjoint(p.quantity for i in group.items for p in i.parts if i != item)
             and (group.anchor in {"F", "F_change"}) >= (item.head == "df-pair")

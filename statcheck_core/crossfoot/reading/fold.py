@@ -46,6 +46,10 @@ _GROUPS = {
 _PERSIAN = "۰"
 _SLASH = re.compile(r"(?<=[۰-۹])/(?=[۰-۹])")
 
+#: Digits below the line as usual ones. Folding keeps them, since they show where degrees of
+#: freedom stand.
+ON_THE_LINE = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
+
 
 def _table() -> dict[int, str]:
     table = {ord(char): plain for plain, group in _GROUPS.items() for char in group}

@@ -7,6 +7,9 @@ from typing import NamedTuple
 #: Quantities that are counts: exact when printed without decimals.
 WHOLE = frozenset({"n", "k", "df", "df1", "df2"})
 
+#: Quantities that are test statistics.
+TESTS = frozenset({"F", "F_change", "t", "r", "z", "chi2"})
+
 #: Heads of items that estimate the coefficient of one predictor.
 COEFFICIENTS = frozenset({"b", "β", "beta", "odds_ratio"})
 
